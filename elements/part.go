@@ -1,0 +1,111 @@
+package elements
+
+// Part is one resistance in a line.
+type Part interface {
+	Element
+	// Drop returns the total pressure lost in the line's direction, Pa, and its slope, Pa·s/m³, at flow q, m³/s.
+	// Passive parts: increasing in q, C¹, slope > 0, zero at zero, linear through zero. No state between calls, no allocation.
+	Drop(q float64, at *Local) (dp, slope float64)
+}
+
+// Local is all a law may read besides its own parameters.
+type Local struct {
+	Fluid   Fluid
+	Opening float64 // of this part's actuator: travel of a valve 0..1, running state of a pump 0..1
+	Gravity float64 // m/s²
+	Band    float64 // Pa: drop under which a quadratic loss is made linear through zero (see Quadratic)
+}
+
+// Place is where a part stands in its line; the line tells it once, before Ready.
+type Place struct {
+	BoreBefore, BoreAfter float64 // m, of the nearest part with a bore on either side; 0 for none
+	First, Last           bool    // no part before it, none after it
+	FromWall, ToWall      bool    // the line's end on that side is a vessel or a body of water or a free fall (not a tee), and the part stands there
+}
+
+// The capabilities below are asked for by interface assertion, once, when a plant is compiled. What is not a passive resistance says so
+// with one of them and has tests of its own.
+type (
+	// Bored gives the line a bore, m.
+	Bored interface{ Bore() float64 }
+	// Placed wants to know its place.
+	Placed interface{ SetPlace(Place) }
+	// OwnEnd is a part whose law includes the end loss where it stands at the end of its line: orifices, nozzles, weirs.
+	OwnEnd interface{ OwnEnd() bool }
+	// Tagged has a tag of its own: valves, pumps, check valves.
+	Tagged interface{ Tag() string }
+	// Holds is the liquid inside, m³, when full.
+	Holds interface{ Holds() float64 }
+	// Long has a length along the line, m.
+	Long interface{ Length() float64 }
+	// Inertial resists a change of flow: ρL/A·dQ/dt, Pa; Inertance returns ρL/A, kg/m⁴, or 0 when switched off.
+	Inertial interface{ Inertance(f *Fluid) float64 }
+	// Actuated moves: a valve. Opening in Local is its travel.
+	Actuated interface{ Actuator() *Actuator }
+	// Shuts tells whether the part as it stands lets nothing through in either direction.
+	Shuts interface{ Shut(at *Local) bool }
+	// OneWay lets liquid through in the line's direction only, once the pressure across it passes Cracking, Pa; Leak is the drop law in
+	// reverse as a share (0: tight).
+	OneWay interface {
+		Cracking() float64
+		Leak() float64
+	}
+	// Chokes is a part with a throat: flow is limited when its drop passes Recovery·(p₁ − CriticalRatio·p_v), p₁ its upstream static pressure.
+	Chokes interface {
+		Recovery(at *Local) float64 // F_L²
+		CriticalRatio(f *Fluid) float64
+	}
+	// Crest is a line whose flow is set by depth over it, not by pressure: a weir. The first part of its line.
+	Crest interface {
+		// Spill returns the flow, m³/s, for a surface h over the crest on the side it comes from and hd on the other, both m, and its partials.
+		Spill(h, hd float64, at *Local) (q, byH, byHd float64)
+	}
+	// Pumps is a source of head: starts and stops, modes. Drop is negative where it lifts. Opening in Local is 1 running, 0 stopped.
+	Pumps interface{ Drive() *Drive }
+	// Humps is a high point: an elevation in the line at which a pressure is looked at.
+	Humps interface{ Crown() *Crown }
+)
+
+// Actuator is what moves a valve.
+type Actuator struct {
+	Tag      string
+	Open     float64 // travel at the start, 0..1
+	Normally float64 // its usual travel
+	Stroke   float64 // s for full travel; 0 moves at once
+	Turns    float64 // of the handwheel for full travel; 0 unknown
+	Location string
+	Lock     string
+}
+
+// Mode of a pump.
+type Mode int
+
+const (
+	Off Mode = iota
+	On
+	Auto
+	Standby
+)
+
+var modeWords = []string{"off", "on", "auto", "standby"}
+
+// String returns the word of the file format.
+func (m Mode) String() string { return modeWords[m] }
+
+// Drive is what starts and stops a pump.
+type Drive struct {
+	Tag           string
+	Mode          Mode
+	Starts, Stops LevelSwitch
+	StandbyFor    string  // tag of the pump it takes over from
+	Passes        bool    // stopped: lets liquid through both ways
+	Rate          float64 // m³/s nominal, for display; 0 for a curve
+}
+
+// Crown is the top of a high point.
+type Crown struct {
+	Elevation float64 // m over the site datum
+	Vent      Device
+	Primed    bool // full of liquid at the start although no end stands above it
+	PrimedSet bool // primed: was written
+}

@@ -1,0 +1,29 @@
+package network
+
+import (
+	"context"
+	"time"
+)
+
+// Options are what a compiled plant keeps for its life.
+type Options struct {
+	Method    string  // rodas5p (default), rodas4p, bdf
+	Tolerance float64 // relative; 0 takes the default
+}
+
+// RunOptions are of one run.
+type RunOptions struct {
+	Series   bool               // keep the series
+	Progress func(done float64) // called now and then with the share of run_for done; may be nil
+	Now      func() time.Time   // for the wall time; nil takes time.Now
+}
+
+// The engine's entry points, in the order of use:
+//
+//	err   := plant.Refresh()                    // elements ready, shapes built; again whenever a Number changed
+//	probs := plant.Validate()                   // every problem of the whole plant; fatal ones and warnings
+//	model, err := Compile(plant, Options{})     // once
+//	res, err   := model.Run(ctx, RunOptions{})  // often; err is a *Failure when the calculation could not finish (res then holds what was computed)
+//
+// Judge (in package study) runs a model at zero wait and at up_to, samples the doubts and gives the verdict.
+var _ = context.Background
