@@ -17,6 +17,7 @@ const (
 	Counts                // any key of Words with a count; into Count
 	LevelRows             // one quantity, or rows [[time, quantity], …] (straight lines; two rows at one time are a step); into Rows
 	OwnDevice             // {tag: …, open: yes|no}: a small operable vent; into Device
+	Group                 // a mapping of parameters of its own, such as rectangular: {width: …}; into Inner
 )
 
 // Need tells whether a parameter must be written.
@@ -53,7 +54,8 @@ type Param struct {
 	Switch *LevelSwitch
 	Count  map[string]int
 	Device *Device
-	Given  *bool // set true when the key was written; may be nil
+	Inner  *Params // of Group
+	Given  *bool   // set true when the key was written; may be nil
 }
 
 // LevelSwitch is a bound on the level of a vessel: a pump's start or stop.
@@ -116,8 +118,43 @@ func (p *Params) Nested(set func(e Element, kind string) error, key string, room
 	return p.add(&Param{Key: key, Form: Nested, Need: need, Help: help, Room: room, Set: set})
 }
 
+// Series declares a list of elements of one room.
+func (p *Params) Series(add func(e Element, kind string) error, key string, room Room, need Need, help string) *Param {
+	return p.add(&Param{Key: key, Form: Series, Need: need, Help: help, Room: room, Add: add})
+}
+
+// Levels declares a bound on a level.
+func (p *Params) Levels(v *LevelSwitch, key string, help string) *Param {
+	return p.add(&Param{Key: key, Form: Levels, Help: help, Switch: v, Given: &v.Given})
+}
+
+// Counts declares that any of the words may be a key, with a count.
+func (p *Params) Counts(v map[string]int, help string, words ...string) *Param {
+	return p.add(&Param{Form: Counts, Help: help, Words: words, Count: v})
+}
+
+// LevelRows declares a quantity of dimension dim that is constant or follows rows of {time s, value}.
+func (p *Params) LevelRows(v *[][]float64, key string, dim quantity.Dim, need Need, help string) *Param {
+	return p.add(&Param{Key: key, Form: LevelRows, Dim: dim, Need: need, Help: help, Rows: v})
+}
+
+// OwnDevice declares a small operable device.
+func (p *Params) OwnDevice(v *Device, key string, help string) *Param {
+	return p.add(&Param{Key: key, Form: OwnDevice, Help: help, Device: v, Given: &v.Given})
+}
+
+// Group declares a mapping of parameters of its own; bind declares them. A group that is not written needs none of them.
+func (p *Params) Group(given *bool, key string, need Need, help string, bind func(inner *Params)) *Param {
+	inner := &Params{}
+	bind(inner)
+	return p.add(&Param{Key: key, Form: Group, Need: need, Help: help, Inner: inner, Given: given})
+}
+
 // Or notes the default, as it would be written; the caller has set the number itself.
 func (q *Param) Or(text string) *Param { q.Default = text; return q }
+
+// With notes where to leave the value as it was written, with its doubt and what a pressure or viscosity refers to.
+func (q *Param) With(v *quantity.Value) *Param { q.Doubt = v; return q }
 
 // Was notes where to say that the key was written.
 func (q *Param) Was(given *bool) *Param { q.Given = given; return q }
@@ -144,4 +181,12 @@ func Share(v float64) string {
 		return ""
 	}
 	return "from 0 % to 100 %"
+}
+
+// Coefficient wants more than nothing and at most 1.
+func Coefficient(v float64) string {
+	if v > 0 && v <= 1 {
+		return ""
+	}
+	return "more than 0 and at most 1"
 }

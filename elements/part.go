@@ -26,7 +26,7 @@ type Place struct {
 // The capabilities below are asked for by interface assertion, once, when a plant is compiled. What is not a passive resistance says so
 // with one of them and has tests of its own.
 type (
-	// Bored gives the line a bore, m.
+	// Bored gives the line a bore, m; 0 when this specimen has none of its own.
 	Bored interface{ Bore() float64 }
 	// Placed wants to know its place.
 	Placed interface{ SetPlace(Place) }
@@ -42,6 +42,8 @@ type (
 	Inertial interface{ Inertance(f *Fluid) float64 }
 	// Actuated moves: a valve. Opening in Local is its travel.
 	Actuated interface{ Actuator() *Actuator }
+	// Mouthed is a part whose own opening admits the liquid where it stands at an end of its line: orifices and nozzles.
+	Mouthed interface{ Mouth() Mouth }
 	// Shuts tells whether the part as it stands lets nothing through in either direction.
 	Shuts interface{ Shut(at *Local) bool }
 	// OneWay lets liquid through in the line's direction only, once the pressure across it passes Cracking, Pa; Leak is the drop law in
@@ -65,6 +67,9 @@ type (
 	// Humps is a high point: an elevation in the line at which a pressure is looked at.
 	Humps interface{ Crown() *Crown }
 )
+
+// Mouth is the clear opening of an orifice or nozzle: a circle, or a rectangle when Width is more than 0; m.
+type Mouth struct{ Diameter, Width, Height float64 }
 
 // Actuator is what moves a valve.
 type Actuator struct {
@@ -99,6 +104,8 @@ type Drive struct {
 	Starts, Stops LevelSwitch
 	StandbyFor    string  // tag of the pump it takes over from
 	Passes        bool    // stopped: lets liquid through both ways
+	Stated        bool    // when_stopped was written
+	Curved        bool    // given by a curve, not by a rate
 	Rate          float64 // m³/s nominal, for display; 0 for a curve
 }
 
@@ -108,4 +115,9 @@ type Crown struct {
 	Vent      Device
 	Primed    bool // full of liquid at the start although no end stands above it
 	PrimedSet bool // primed: was written
+}
+
+// Throttles is a part that knows how its drop moves with its opening: ∂Drop/∂opening, Pa, at flow q.
+type Throttles interface {
+	DropByOpening(q float64, at *Local) float64
 }
