@@ -1,6 +1,9 @@
 package quantity
 
-import "math"
+import (
+	"math"
+	"strings"
+)
 
 // Echo returns a text in plain typography that reads back to the same value and
 // doubt: the author's own figures where there are any, else the shortest ones.
@@ -10,13 +13,7 @@ func (v Value) Echo() string {
 			return q.write()
 		}
 	}
-	u := tables[v.Dim].find(v.Unit)
-	if u == nil || u.kinematic != v.Kinematic {
-		u = tables[v.Dim].si
-		if v.Kinematic {
-			u = tables[v.Dim].find("m2/s")
-		}
-	}
+	u := v.unit()
 	value := shortest(v.SI, v.Dim, u, false)
 	switch v.Doubt.Kind {
 	case Normal95:
@@ -27,6 +24,25 @@ func (v Value) Echo() string {
 		return value + timesOver.spelling() + exactText(v.Doubt.Factor, Number, tables[Number].si, false)
 	}
 	return value
+}
+
+// unit finds the unit a value is to be written in: its own, or the SI unit, with the
+// reference of a pressure where it is known.
+func (v Value) unit() *unit {
+	t := &tables[v.Dim]
+	u := t.find(v.Unit)
+	switch {
+	case u == nil && v.Kinematic, u != nil && v.Kinematic && !u.kinematic:
+		return t.find("m2/s")
+	case u == nil, u.kinematic && !v.Kinematic:
+		u = t.si
+	}
+	if v.Gauge != u.gauge {
+		if with := t.find(strings.TrimSuffix(u.name, u.gauge.String()) + v.Gauge.String()); with != nil {
+			return with
+		}
+	}
+	return u
 }
 
 // shortest is exactText, but for durations a sum where that reads better.

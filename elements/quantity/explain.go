@@ -55,7 +55,7 @@ func (p *parser) leftover(i int) *Error {
 	case rest[0] == '-' || rest[0] == '+':
 		msg, hint = "sums are not read", "write the result, or ± for a doubt"
 	case isDigit(rest[0]) && p.d != Time:
-		msg, hint = "only durations are written in parts", hint
+		msg = "only durations are written in parts"
 	}
 	return fault(p.s, i, len(p.s), msg, hint)
 }
