@@ -62,6 +62,7 @@ var mistakes = []struct {
 	{"2 M3/H", Flow, `unknown unit "M3/H", write 2 m3/h`, 2, 4},
 	{"1.2 mpas", Viscosity, `unknown unit "mpas", write 1.2 mPa.s`, 4, 4},
 	{"2 Bar(g)", Pressure, `unknown unit "Bar(g)", write 2 bar(g)`, 2, 6},
+	{"0.4 mpa", Pressure, `unknown unit "mpa", write 0.4 MPa`, 4, 3},
 	{"3 mWS", Pressure, `unknown unit "mWS", write 3 mH2O`, 2, 3},
 	{"4 furlong", Length, `unknown unit "furlong", units of a length: m mm cm km µm in ft`, 2, 7},
 	{"4 m ± 5 furlong", Length, `unknown unit "furlong", units of a length: m mm cm km µm in ft`, 8, 7},

@@ -8,9 +8,9 @@ import (
 )
 
 // Format writes si for reading, with sig significant digits (at least 1) in the
-// given unit: "4.20 m". Ordinary numbers have no exponent and whole digits are never
-// left out: 12 345.6 with three digits is 12346 only when sig is 5, else 12300.
-// A unit that is not known is replaced by the SI unit.
+// given unit: "4.20 m". Digits before the point beyond sig are noughts ("12300 m3"), and
+// there is no exponent from 10⁻⁷ to below 10¹⁵. A unit that is not known is replaced by
+// the SI unit; what is no number is "n/a".
 func Format(si float64, d Dim, unit string, sig int) string {
 	u := unitOr(unit, d)
 	x := fromSI(si, u, false)

@@ -37,7 +37,10 @@ func meant(name string, d Dim) string {
 func nearest(name string, d Dim, caseOnly bool) string {
 	best, least := "", 1+2*max(1, min(2, len(name)/2))
 	if caseOnly {
-		least = 2
+		least = len(name) + 1
+	}
+	if len(name) > 24 {
+		return "" // longer than any unit
 	}
 	for _, u := range tables[d].list {
 		if u.name == "" {
