@@ -72,7 +72,7 @@ func TestPublishedFactors(t *testing.T) {
 	}
 }
 
-// Temperatures of defining and well-known points: SP 811, B.8 and the SI Brochure.
+// Temperatures of defining and well-known points (from memory).
 func TestTemperatureScales(t *testing.T) {
 	for _, c := range []struct {
 		text   string
@@ -145,7 +145,7 @@ func TestUnitsOfTheFormat(t *testing.T) {
 	}
 }
 
-// Length and velocity tables must not disagree with what composites are made of.
+// One SI unit of every dimension is 1.
 func TestSIUnits(t *testing.T) {
 	for d := range numDims {
 		v, err := Parse("1 "+SIUnit(d), d)
