@@ -1,0 +1,139 @@
+package text
+
+import (
+	"math"
+	"strings"
+
+	"headfall/elements/quantity"
+	"headfall/network"
+)
+
+// nouns are what a limit looks at, as it is spoken of after the tag.
+var nouns = map[string]string{
+	"level": "level", "flow": "flow", "velocity": "velocity", "pressure": "gas pressure", "crest": "head at the high point",
+	"opening": "opening", "difference": "difference of levels", "rising": "rate of rise", "falling": "rate of fall",
+	"passed": "volume passed", "backflow": "volume run back", "spilled": "volume spilled", "starts": "starts", "emptied": "time to empty",
+}
+
+// value writes a number of a limit's kind; apart is a difference, not a reading.
+func (p *page) value(l *network.LimitResult, si float64, apart bool, dir Dir) string {
+	switch l.Subject {
+	case "level", "difference", "crest":
+		return p.units.LevelOf(si, dir)
+	case "flow":
+		return p.units.FlowOf(si, dir)
+	case "passed", "backflow", "spilled":
+		return p.units.VolumeOf(si, dir)
+	case "pressure":
+		if apart {
+			return p.units.PressureBy(si, dir)
+		}
+		return p.units.PressureOf(si, dir)
+	case "opening":
+		return figures(si*100, 3, 1, dir) + " %"
+	case "velocity", "rising", "falling":
+		return inUnit(si, quantity.Velocity, rateUnit(l), dir)
+	case "emptied":
+		if apart {
+			return Duration(si, dir)
+		}
+		return p.clock.When(si, dir)
+	}
+	return strings.TrimSpace(figures(si, 3, 0.001, dir) + " " + l.UnitSI)
+}
+
+// rateUnit is the unit the limit was written in, so that both can be compared by eye.
+func rateUnit(l *network.LimitResult) string {
+	if v, err := quantity.Parse(l.AsWritten, quantity.Velocity); err == nil && v.Unit != "" {
+		return v.Unit
+	}
+	if l.Subject == "velocity" {
+		return "m/s"
+	}
+	return "mm/min"
+}
+
+// name writes "SUMP level", "T-1 and T-2 difference of levels".
+func (p *page) name(l *network.LimitResult) string {
+	noun, known := nouns[l.Subject]
+	if !known {
+		noun = l.Subject
+	}
+	return strings.Join(l.Of, " and ") + " " + noun
+}
+
+// named writes the limit in full: "SUMP level below 1.9 m".
+func (p *page) named(l *network.LimitResult) string {
+	if l.AsWritten == "" || len(l.Of) == 0 {
+		return l.Says
+	}
+	return join([]string{p.name(l), l.Bound, keep(l.AsWritten)}, " ")
+}
+
+// broken writes what happens when a limit fails: "SUMP level goes over 1.9 m".
+func (p *page) broken(l *network.LimitResult) string {
+	verb := map[string]string{"below": "goes over", "above": "goes under"}[l.Bound]
+	switch {
+	case l.Subject == "emptied" && len(l.Of) > 0:
+		return join([]string{l.Of[0], "is not empty", l.Bound, keep(l.AsWritten)}, " ")
+	case verb == "" || l.AsWritten == "" || len(l.Of) == 0:
+		return l.Says + " does not hold"
+	}
+	return join([]string{p.name(l), verb, keep(l.AsWritten)}, " ")
+}
+
+// worst writes the worst value and when: ", worst 2.91 m at 06:55".
+func (p *page) worst(l *network.LimitResult) string {
+	if l.Worst == nil || l.Subject == "emptied" {
+		return ""
+	}
+	dir := Down
+	if l.Bound == "below" {
+		dir = Up
+	}
+	said := "comes to " + keep(p.value(l, *l.Worst, false, dir))
+	if l.WorstAt != nil {
+		said += " at " + keep(p.clock.At(*l.WorstAt, Near))
+	}
+	return said
+}
+
+// share is a limit's margin as a share of its bound, for ranking limits of different kinds.
+func share(l *network.LimitResult) float64 {
+	if l.Margin == nil {
+		return math.Inf(1)
+	}
+	scale := 1.0
+	if l.BoundSI != nil && *l.BoundSI != 0 {
+		scale = math.Abs(*l.BoundSI)
+	}
+	return *l.Margin / scale
+}
+
+// gravity ranks verdicts, the worst first.
+func gravity(v network.Verdict) int {
+	switch v {
+	case network.Fails:
+		return 0
+	case network.TooClose:
+		return 1
+	case network.NotJudged:
+		return 2
+	}
+	return 3
+}
+
+// tightest returns the limit with the least in hand, or nil.
+func tightest(limits []*network.LimitResult) *network.LimitResult {
+	var least *network.LimitResult
+	for _, l := range limits {
+		if l.Margin == nil {
+			continue
+		}
+		if least == nil || gravity(l.Verdict) < gravity(least.Verdict) ||
+			gravity(l.Verdict) == gravity(least.Verdict) && share(l) < share(least) {
+			least = l
+		}
+	}
+	return least
+}
