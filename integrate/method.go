@@ -1,0 +1,28 @@
+package integrate
+
+// Method is a way to step through time: a *Tableau or BDF.
+type Method interface {
+	Name() string
+	stepper(s *Solver) stepper
+}
+
+// Methods returns the methods that there are, the default first.
+func Methods() []Method { return []Method{Rodas5P, Rodas4P, Rodas4P2} }
+
+// stepper is what a method does for the Solver, which owns the state, the linearisation, the factor and the step loop.
+type stepper interface {
+	// order is the order of the error estimate at the first step after a restart.
+	order() int
+	// restart forgets all history: state or rates have changed.
+	restart()
+	// attempt tries a step of h from (t, y0, z0), fills y1 and z1, and returns the norm of the error estimate, NaN if it is not finite.
+	attempt(h float64) (float64, error)
+	// accept takes the last attempt as the step that was made and returns the next step.
+	accept(norm float64) float64
+	// reject returns the step to try instead of the last attempt of norm, which is infinite when the result was refused.
+	reject(norm float64) float64
+	// polynomial fills the inner coefficients of the dense output of the last attempt, for the unknowns and the integrals.
+	polynomial(k, kz [][]float64)
+	// degree returns how many inner coefficients there may be.
+	degree() int
+}
