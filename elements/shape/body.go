@@ -15,6 +15,12 @@ type slice struct {
 	bent  bool                    // its outline is curved
 }
 
+// at returns volume, m³, and area, m², at z, m over its bottom.
+func (s *slice) at(z float64) (v, area float64) {
+	v, area, _ = s.eval(z)
+	return v, area
+}
+
 // body is a pile of slices; all shapes are bodies.
 //
 //	V(h) = V_i + P_i(h − z_i)   in slice i
@@ -109,8 +115,8 @@ func (b *body) Level(v float64) (h, slope float64) {
 		return b.height + (v-b.volume)/b.above, 1 / b.above
 	}
 	s := b.sliceOf(v)
-	z, area := s.level(v - s.v)
-	return s.z + z, 1 / area
+	h, slope = s.level(v - s.v)
+	return s.z + h, slope
 }
 
 // few is the number of slices up to which looking at each beats halving.

@@ -16,7 +16,7 @@ func Box(length, width, height float64) (Shape, error) {
 		return nil, err
 	}
 	return pile([]slice{{
-		piece: prism{length * width}, h: height,
+		piece: prismOf(length * width), h: height,
 		half: always(length / 2), rim: always(2 * (length + width)),
 	}}), nil
 }

@@ -17,7 +17,7 @@ func quadratic(a, b, c, h float64) slice {
 	case h <= 0:
 		return slice{}
 	case math.Abs(c*h) <= 1e-13*math.Abs(b) && math.Abs(b*h) <= 1e-13*a:
-		return slice{piece: prism{a}, h: h}
+		return slice{piece: prismOf(a), h: h}
 	case math.Abs(c*h) <= 1e-13*math.Abs(b):
 		return slice{piece: wedge{a, b}, h: h}
 	}
@@ -35,9 +35,9 @@ func capOf(r, d, h, tip float64) []slice {
 	// Where the area is that of the tip; in the form without cancellation, from 2dz − z² = q·d.
 	z := q / (1 + math.Sqrt(math.Max(1-q/d, 0)))
 	if q >= d || z >= h {
-		return []slice{{piece: prism{math.Max(tip, p*h*(2*d-h))}, h: h}}
+		return []slice{{piece: prismOf(math.Max(tip, p*h*(2*d-h))), h: h}}
 	}
-	pole := slice{piece: prism{tip}, h: z, bent: true}
+	pole := slice{piece: prismOf(tip), h: z, bent: true}
 	pole.half = func(z float64) float64 { return r / d * math.Sqrt(math.Max(z*(2*d-z), 0)) }
 	rest := quadratic(tip, 2*p*(d-z), -p, h-z)
 	rest.bent = true

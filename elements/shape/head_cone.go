@@ -62,9 +62,7 @@ func (c *cone) top() []slice {
 	d, depth := c.bore(), c.down(0)
 	tip := depth * d / c.diameter
 	return []slice{
-		{piece: prism{circle(d)}, h: tip, half: func(z float64) float64 { return z * c.diameter / depth / 2 }},
+		{piece: prismOf(circle(d)), h: tip, half: func(z float64) float64 { return z * c.diameter / depth / 2 }},
 		tapered(circle(d), circle(c.diameter), depth-tip),
 	}
 }
-
-func (c *cone) ends() endPair { return nil }

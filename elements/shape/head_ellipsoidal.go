@@ -41,5 +41,3 @@ func (e *ellipsoidal) Depth() float64  { return e.depth }
 func (e *ellipsoidal) Volume() float64 { return volumeOf(e.bottom()) }
 func (e *ellipsoidal) bottom() []slice { return capOf(e.diameter/2, e.depth, e.depth, e.tip) }
 func (e *ellipsoidal) top() []slice    { return e.bottom() }
-
-func (e *ellipsoidal) ends() endPair { return nil }

@@ -2,17 +2,25 @@ package shape
 
 // piece is the geometry of one slice, z in m over its bottom, v in m³ from there.
 type piece interface {
-	at(z float64) (v, area float64)    // volume up to z and area there, m²
-	level(v float64) (z, area float64) // inverse
+	law
+	level(v float64) (z, slope float64) // inverse of eval, and dz/dV = 1/A, 1/m²
+}
+
+// law is volume, m³, area A, m², and dA/dz, m, of a slice at z, m over its bottom. A is over zero.
+type law interface {
+	eval(z float64) (v, area, grow float64)
 }
 
 // prism has the same area all the way up: V = A·z.
 type prism struct {
-	area float64 // m²
+	area  float64 // m²
+	slope float64 // 1/m², 1/area
 }
 
-func (p prism) at(z float64) (v, area float64)    { return p.area * z, p.area }
-func (p prism) level(v float64) (z, area float64) { return v / p.area, p.area }
+func prismOf(area float64) prism { return prism{area, 1 / area} }
+
+func (p prism) eval(z float64) (v, area, grow float64) { return p.area * z, p.area, 0 }
+func (p prism) level(v float64) (z, slope float64)     { return v * p.slope, p.slope }
 
 // flipped is a piece upside down:
 //
@@ -22,21 +30,25 @@ type flipped struct {
 	h, dv float64 // height, m, and volume, m³
 }
 
-func (f *flipped) at(z float64) (v, area float64) {
-	v, area = f.piece.at(f.h - z)
-	return f.dv - v, area
+func (f *flipped) eval(z float64) (v, area, grow float64) {
+	v, area, grow = f.piece.eval(f.h - z)
+	return f.dv - v, area, -grow
 }
 
-func (f *flipped) level(v float64) (z, area float64) {
-	z, area = f.piece.level(max(f.dv-v, 0))
-	return f.h - z, area
+func (f *flipped) level(v float64) (z, slope float64) {
+	z, slope = f.piece.level(max(f.dv-v, 0))
+	return f.h - z, slope
 }
 
 // flip turns a slice upside down.
 func flip(s slice) slice {
-	if _, same := s.piece.(prism); !same {
+	switch p := s.piece.(type) {
+	case prism:
+	case *flipped:
+		s.piece = p.piece
+	default:
 		dv, _ := s.at(s.h)
-		s.piece = &flipped{piece: s.piece, h: s.h, dv: dv}
+		s.piece = &flipped{piece: p, h: s.h, dv: dv}
 	}
 	upside := func(f func(float64) float64) func(float64) float64 {
 		if f == nil {

@@ -2,16 +2,11 @@ package shape
 
 import "math"
 
-// law is a slice without a closed inverse: volume, m³, area A, m², and dA/dz, m, at z, m over its bottom. A must be over zero.
-type law interface {
-	eval(z float64) (v, area, grow float64)
-}
-
-// searched is a law with its inverse.
+// searched is a law without a closed inverse, and that inverse.
 //
 // A start value comes from a table of z against V, cubic Hermite between nodes that know dz/dV = 1/A. Its cells halve seven times an octave of V
 // towards zero, since near a tip z goes as V^½ or V^⅓ and would not be met by even cells; the cell is found from the bits of the number. It is good to
-// about 1e-6 of z. One step of Halley's method, of third order,
+// about 1e-6 of z. One step of Chebyshev's method, of third order,
 //
 //	e = V(z) − v,  z ← z − (e/A)/(1 − e·A′/(2A²))
 //
@@ -23,14 +18,15 @@ type searched struct {
 	nodes []node
 }
 
-type node struct{ v, z, slope float64 } // m³, m, 1/m²
+type node struct{ v, z, slope, inv float64 } // m³, m, 1/m², 1/m³: one over the width of the cell above
 
 const (
-	cellBits   = 3 // 2³ cells an octave
-	minOctaves = 4
-	maxOctaves = 44
-	settled    = 1e-5 // of z: a step smaller than this leaves an error of the order of its cube
-	maxSteps   = 80
+	cellBits    = 3 // 2³ cells an octave
+	minOctaves  = 4
+	maxOctaves  = 44
+	settled     = 1e-5 // of z: a step smaller than this leaves an error of the order of its cube
+	settledArea = 2e-6 // of A: the slope is then right to the order of its square
+	maxSteps    = 80
 )
 
 // search returns the piece of a law over height h, m.
@@ -41,7 +37,7 @@ func search(l law, h float64) piece {
 	cells := s.octaves(h) << cellBits
 	s.nodes = make([]node, cells+2)
 	_, tip, _ := l.eval(0)
-	s.nodes[0] = node{0, 0, 1 / tip}
+	s.nodes[0] = node{slope: 1 / tip}
 	for i := 0; i <= cells; i++ {
 		v := s.full * fraction(i, cells)
 		z := h
@@ -49,7 +45,8 @@ func search(l law, h float64) piece {
 			z = s.bisect(v, s.nodes[i].z, h)
 		}
 		_, a, _ := l.eval(z)
-		s.nodes[i+1] = node{v, z, 1 / a}
+		s.nodes[i].inv = 1 / (v - s.nodes[i].v)
+		s.nodes[i+1] = node{v: v, z: z, slope: 1 / a}
 	}
 	return s
 }
@@ -98,39 +95,38 @@ func (s *searched) bisect(v, lo, hi float64) float64 {
 	return (lo + hi) / 2
 }
 
-func (s *searched) at(z float64) (v, area float64) {
-	v, area, _ = s.eval(z)
-	return v, area
-}
-
-func (s *searched) level(v float64) (z, area float64) {
+func (s *searched) level(v float64) (z, slope float64) {
 	i := s.cell(v * s.scale)
 	n, m := &s.nodes[i], &s.nodes[i+1]
 	lo, hi := n.z, m.z
+	t := (v - n.v) * n.inv
 	w := m.v - n.v
-	t := (v - n.v) / w
 	rise, p, q := hi-lo, w*n.slope, w*m.slope
 	z = lo + t*(p+t*(3*rise-2*p-q+t*(p+q-2*rise)))
+	z = math.Max(lo, math.Min(z, hi))
 	for range maxSteps {
 		at, a, grow := s.eval(z)
-		e := at - v
-		if e < 0 {
-			lo = math.Max(lo, z)
-		} else {
-			hi = math.Min(hi, z)
-		}
-		step := e / (a - e*grow/(2*a))
+		e, r := at-v, 1/a
+		newton, bend := e*r, grow*r
+		step := newton * (1 + newton*bend/2)
 		next := z - step
-		if !(next >= lo && next <= hi) && math.Abs(step) > 1e-14*m.z {
+		if x := step * bend; math.Abs(step) <= settled*z && math.Abs(x) <= settledArea {
+			// A at the new place: a·(1 − x), to second order.
+			return next, r * (1 + x + x*x)
+		}
+		if e < 0 {
+			lo = z
+		} else {
+			hi = z
+		}
+		if !(next >= lo && next <= hi) {
 			next = (lo + hi) / 2
-		} else if math.Abs(step) <= settled*z {
-			return next, a - step*grow
 		}
 		if next == z {
-			return z, a
+			break
 		}
 		z = next
 	}
-	_, area = s.at(z)
-	return z, area
+	_, area, _ := s.eval(z)
+	return z, 1 / area
 }

@@ -20,7 +20,7 @@ func Table(rows [][2]float64, smooth bool) (Shape, error) {
 	} else {
 		for i := 1; i < len(rows); i++ {
 			h := rows[i][0] - rows[i-1][0]
-			slices = append(slices, slice{piece: prism{(rows[i][1] - rows[i-1][1]) / h}, h: h})
+			slices = append(slices, slice{piece: prismOf((rows[i][1] - rows[i-1][1]) / h), h: h})
 		}
 		slices = soften(slices)
 	}

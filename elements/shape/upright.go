@@ -39,6 +39,6 @@ func UprightCylinder(diameter, height, straight float64, bottom, top Head) (Shap
 			return nil, f.err("upright_cylinder")
 		}
 	}
-	slices := append(low, slice{piece: prism{circle(diameter)}, h: straight})
+	slices := append(low, slice{piece: prismOf(circle(diameter)), h: straight})
 	return pile(append(slices, high...)), nil
 }
