@@ -88,6 +88,11 @@ func (p *Params) Length(v *float64, key string, need Need, help string, checks .
 	return p.Number(v, key, quantity.Length, need, help, checks...)
 }
 
+// area declares an optional area, m².
+func (p *Params) area(v *float64, key string, help string) *Param {
+	return p.Number(v, key, quantity.Area, Optional, help, Positive)
+}
+
 // Ratio declares a dimensionless value, bare or per cent.
 func (p *Params) Ratio(v *float64, key string, need Need, help string, checks ...Check) *Param {
 	return p.Number(v, key, quantity.Ratio, need, help, checks...)

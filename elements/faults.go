@@ -1,0 +1,28 @@
+package elements
+
+import (
+	"errors"
+	"math"
+	"strings"
+)
+
+// faults collects what is wrong with the parameters of one element, so that all of it is said at once.
+type faults []string
+
+// when adds a fault if it holds.
+func (f *faults) when(bad bool, says string) {
+	if bad {
+		*f = append(*f, says)
+	}
+}
+
+// err returns the faults as one error, or nil.
+func (f faults) err() error {
+	if len(f) == 0 {
+		return nil
+	}
+	return errors.New(strings.Join(f, "; "))
+}
+
+// circle is the area, m², of a circle of diameter d, m.
+func circle(d float64) float64 { return math.Pi / 4 * d * d }
