@@ -1,0 +1,137 @@
+package scenarios
+
+import (
+	"fmt"
+	"math"
+	"strings"
+
+	"headfall/elements"
+	"headfall/elements/quantity"
+	"headfall/network"
+)
+
+// circles finds steps that wait for each other.
+func (d *decoder) circles() {
+	byID := make(map[string]*network.Step, len(d.plant.Steps))
+	for _, s := range d.plant.Steps {
+		byID[s.ID] = s
+	}
+	clear := map[string]bool{} // steps known not to lead into a circle
+	for _, s := range d.plant.Steps {
+		seen := map[string]bool{}
+		path := []string{}
+		at := s
+		for at != nil && at.After != "" && !clear[at.ID] && !seen[at.ID] {
+			seen[at.ID] = true
+			path = append(path, at.ID)
+			at = byID[at.After]
+		}
+		if at != nil && at == s && seen[at.ID] {
+			n := d.things[s.ID].at
+			d.problem(n, fmt.Sprintf("after goes round in a circle: %s", strings.Join(append(path, s.ID), " waits for ")), "give one of them another trigger")
+		}
+		for _, id := range path {
+			clear[id] = true
+		}
+	}
+}
+
+// whole checks what shows only when elements and shapes are ready.
+func (d *decoder) whole(root *node) {
+	if !d.lineParts() {
+		return
+	}
+	if err := d.plant.Refresh(); err != nil {
+		d.refreshFault(root, err)
+		return
+	}
+	for _, v := range d.plant.Vessels {
+		if v.Shape != nil {
+			d.startOf(root.get("vessels").get(v.Tag), v)
+		}
+	}
+}
+
+// lineParts makes the parts of every line ready in their places, so that each one's faults are told where it stands.
+func (d *decoder) lineParts() bool {
+	ok := true
+	for _, l := range d.plant.Lines {
+		parts := d.parts[l]
+		for pass := range 2 { // parts without a bore take their neighbour's, which may stand behind them
+			for i, f := range l.Parts {
+				if p, placed := f.Part.(elements.Placed); placed {
+					p.SetPlace(d.placeOf(l, i))
+				}
+				err := f.Part.Ready()
+				if err == nil || pass == 0 {
+					continue
+				}
+				ok = false
+				for _, says := range strings.Split(err.Error(), "; ") {
+					d.problem(parts[i], says, "")
+				}
+			}
+		}
+	}
+	return ok
+}
+
+// placeOf tells where a part stands.
+func (d *decoder) placeOf(l *network.Line, i int) elements.Place {
+	bore := func(k int) float64 {
+		if b, ok := l.Parts[k].Part.(elements.Bored); ok {
+			return b.Bore()
+		}
+		return 0
+	}
+	at := elements.Place{First: i == 0, Last: i == len(l.Parts)-1}
+	for k := i - 1; k >= 0 && at.BoreBefore == 0; k-- {
+		at.BoreBefore = bore(k)
+	}
+	for k := i + 1; k < len(l.Parts) && at.BoreAfter == 0; k++ {
+		at.BoreAfter = bore(k)
+	}
+	from, to := d.things[l.From], d.things[l.To]
+	at.FromWall = at.First && from != nil && from.class != aTee
+	at.ToWall = at.Last && to != nil && to.class != aTee
+	return at
+}
+
+// refreshFault notes a fault that a plant found when it was made ready; it begins with the name of what has it.
+func (d *decoder) refreshFault(root *node, err error) {
+	n := root
+	if name, _, ok := strings.Cut(err.Error(), ":"); ok {
+		tag, _, _ := strings.Cut(name, ".")
+		if t := d.things[tag]; t != nil {
+			n = t.at
+		}
+	}
+	d.problem(n, err.Error(), "")
+}
+
+// startOf checks what is in a vessel at the start against its shape.
+func (d *decoder) startOf(n *node, v *network.Vessel) {
+	top := v.Shape.Height()
+	place := func(key string) *node { return first(n.get(key), n) }
+	if !math.IsNaN(v.Rim) {
+		if v.Rim > top*(1+1e-9) {
+			d.problem(place("rim"), fmt.Sprintf("the rim is above the top of the shape, %s", metres(top)), "")
+			return
+		}
+		top = v.Rim
+	}
+	if v.Level > top*(1+1e-9) {
+		d.problem(place("level"), fmt.Sprintf("the start level, %s, is above the rim, %s", metres(v.Level), metres(top)), "levels are above the vessel's base")
+	}
+	if most, _ := v.Shape.Volume(top); v.Contents > most*(1+1e-9) {
+		d.problem(place("contents"), fmt.Sprintf("the start contents are more than the vessel holds to its rim, %s", quantity.Format(most, quantity.Volume, "m3", 4)), "")
+	}
+	if v.EmptyAt > top {
+		d.problem(place("empty_at"), fmt.Sprintf("empty_at is above the rim, %s", metres(top)), "")
+	}
+	if v.SpillsTo == v.Tag {
+		d.problem(place("spills_to"), v.Tag+" cannot spill into itself", "")
+	}
+}
+
+func metres(x float64) string { return quantity.Format(x, quantity.Length, "m", 4) }

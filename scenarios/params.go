@@ -1,0 +1,190 @@
+package scenarios
+
+import (
+	"fmt"
+	"math"
+
+	"headfall/elements"
+	"headfall/elements/quantity"
+)
+
+// params turns the parameters of an element into fields.
+func (d *decoder) params(e elements.Element) []field {
+	var p elements.Params
+	e.Bind(&p)
+	return d.paramsOf(&p)
+}
+
+func (d *decoder) paramsOf(p *elements.Params) []field {
+	fields := make([]field, 0, len(p.List))
+	for _, q := range p.List {
+		if q.Form == elements.Counts {
+			fields = append(fields, d.counts(q)...)
+			continue
+		}
+		f := d.param(q)
+		f.key, f.need, f.help = q.Key, q.Need, q.Help
+		f.absent = d.defaulted(q)
+		if read := f.read; q.Given != nil {
+			f.read = func(n *node, owner string) { *q.Given = true; read(n, owner) }
+		}
+		fields = append(fields, f)
+	}
+	return fields
+}
+
+// param makes the field of one parameter by its form.
+func (d *decoder) param(q *elements.Param) field {
+	switch q.Form {
+	case elements.Number:
+		return d.numberParam(q)
+	case elements.YesNo:
+		return d.yesNo(q.Bool, q.Key, q.Need, q.Help)
+	case elements.Word:
+		return d.word(q.Text, q.Key, q.Need, q.Help, q.Words...)
+	case elements.Name:
+		return d.freeText(q.Text, q.Key, q.Need, q.Help)
+	case elements.Table:
+		return d.tableParam(q)
+	case elements.Nested:
+		return d.nestedParam(q)
+	case elements.Series:
+		return d.seriesParam(q)
+	case elements.Levels:
+		return d.switchParam(q)
+	case elements.LevelRows:
+		return d.courseParam(q)
+	case elements.OwnDevice:
+		return d.deviceParam(q)
+	case elements.Group:
+		return d.groupParam(q)
+	}
+	panic(fmt.Sprintf("scenarios: parameter %s has a form that is not read: %d", q.Key, q.Form))
+}
+
+func (d *decoder) numberParam(q *elements.Param) field {
+	f := d.number(q.Num, q.Key, q.Dim, q.Need, q.Help, q.Checks...)
+	read := f.read
+	f.read = func(n *node, owner string) {
+		read(n, owner)
+		if q.Doubt != nil && n.form == scalar {
+			*q.Doubt = d.cache[written{n.text, q.Dim}].value
+		}
+	}
+	return f
+}
+
+// defaulted notes a parameter that has a default and was not written, and enters its number.
+func (d *decoder) defaulted(q *elements.Param) func(n *node, owner string) {
+	if q.Default == "" {
+		return nil
+	}
+	return func(n *node, owner string) {
+		d.assumed(owner, q.Key, q.Default)
+		if q.Form == elements.Number {
+			d.unwritten(n, owner, q.Key, q.Dim, q.Num, q.Checks)
+		}
+	}
+}
+
+// groupParam reads parameters that belong together, under a key of their own.
+func (d *decoder) groupParam(q *elements.Param) field {
+	inner := func() []field { return d.paramsOf(q.Inner) }
+	return field{written: writing{style: anObject, name: q.Key, fields: inner}, read: func(n *node, owner string) {
+		d.mapping(n, q.Key, sub(owner, q.Key), inner())
+	}}
+}
+
+func (d *decoder) tableParam(q *elements.Param) field {
+	return field{written: writing{style: aTable, cols: q.Cols}, read: func(n *node, _ string) {
+		if rows, ok := d.table(n, q.Key, q.Cols); ok && d.increasing(n, q.Key, rows, false) {
+			*q.Rows = rows
+		}
+	}}
+}
+
+func (d *decoder) nestedParam(q *elements.Param) field {
+	return d.kindField(q.Room, q.Key, q.Need, q.Help, func(c chosen, n *node) {
+		if err := q.Set(c.element, c.kind); err != nil {
+			d.problem(n, q.Key+": "+err.Error(), "")
+		}
+	})
+}
+
+func (d *decoder) seriesParam(q *elements.Param) field {
+	item := writing{style: aKind, room: q.Room}
+	return field{written: writing{style: aList, item: &item, least: 1}, read: func(n *node, owner string) {
+		d.list(n, q.Key, func(i int, entry *node) {
+			name := func(string, *node) string { return fmt.Sprintf("%s.%s[%d]", owner, q.Key, i+1) }
+			c, ok := d.element(q.Room, entry, q.Key, name)
+			if !ok || !d.ready(c, entry) {
+				return
+			}
+			if err := q.Add(c.element, c.kind); err != nil {
+				d.problem(entry, q.Key+": "+err.Error(), "")
+			}
+		})
+	}}
+}
+
+// switchParam reads a level at which something starts or stops.
+func (d *decoder) switchParam(q *elements.Param) field {
+	return field{written: writing{style: aCondition, words: []string{"level"}}, read: func(n *node, owner string) {
+		height, above := math.NaN(), false
+		side := func(key string, up bool) field {
+			f := d.number(&q.Switch.Level, key, quantity.Length, elements.Optional, "")
+			read := f.read
+			f.read = func(n *node, owner string) { read(n, owner); height, above = q.Switch.Level, up }
+			f.absent = nil
+			return f
+		}
+		fields := []field{d.tagField(&q.Switch.Vessel, "level", elements.Required, "", aVessel), side("above", true), side("below", false)}
+		if _, ok := d.one(n, q.Key, "above", "below"); d.mapping(n, q.Key, sub(owner, q.Key), fields) && ok && !math.IsNaN(height) {
+			q.Switch.Above, q.Switch.Given = above, true
+		}
+	}}
+}
+
+func (d *decoder) courseParam(q *elements.Param) field {
+	quantities := writing{style: aQuantity, dim: q.Dim, or: &writing{style: aTable, cols: []quantity.Dim{quantity.Time, q.Dim}}}
+	return field{written: quantities, read: func(n *node, owner string) { d.course(n, owner, q.Key, q.Dim, q.Rows, q.Checks) }}
+}
+
+// deviceParam reads a small vent that people open and shut.
+func (d *decoder) deviceParam(q *elements.Param) field {
+	return field{written: writing{style: anObject, name: q.Key, fields: func() []field { return d.deviceFields(new(elements.Device)) }},
+		read: func(n *node, owner string) {
+			if d.mapping(n, q.Key, sub(owner, q.Key), d.deviceFields(q.Device)) {
+				q.Device.Given = true
+			}
+		}}
+}
+
+func (d *decoder) deviceFields(v *elements.Device) []field {
+	return []field{
+		{key: "tag", need: elements.Required, help: "tag of the vent, which steps name", written: writing{style: aTag}, read: func(n *node, _ string) {
+			if t := d.declare(n, aDevice); t != nil {
+				v.Tag, t.device = n.text, v
+			}
+		}},
+		d.openShut(&v.Open, "open", "whether it is open at the start"),
+	}
+}
+
+// counts makes a field of every word that is counted.
+func (d *decoder) counts(q *elements.Param) []field {
+	fields := make([]field, 0, len(q.Words))
+	for _, w := range q.Words {
+		fields = append(fields, field{key: w, help: q.Help, written: writing{style: aQuantity, dim: quantity.Count}, read: func(n *node, _ string) {
+			if v, ok := d.fixed(n, w, quantity.Count, elements.NotNegative); ok && v.SI > 1e6 {
+				d.problem(n, w+" is more than anyone has", "")
+			} else if ok {
+				q.Count[w] = int(v.SI)
+				if q.Given != nil {
+					*q.Given = true
+				}
+			}
+		}})
+	}
+	return fields
+}

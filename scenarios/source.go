@@ -1,0 +1,21 @@
+package scenarios
+
+import "strings"
+
+// source is a text that nodes come from: the file, or an argument of --set.
+type source struct {
+	name  string
+	text  string
+	lines []string // filled when first asked for
+}
+
+// line returns a line of the text by its number from 1, without its end.
+func (s *source) line(n int) string {
+	if s.lines == nil {
+		s.lines = strings.Split(s.text, "\n")
+	}
+	if n < 1 || n > len(s.lines) {
+		return ""
+	}
+	return strings.TrimRight(s.lines[n-1], "\r")
+}

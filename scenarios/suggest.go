@@ -1,0 +1,57 @@
+package scenarios
+
+import (
+	"strings"
+	"unicode/utf8"
+
+	"github.com/agnivade/levenshtein"
+)
+
+const longestWord = 64 // runes; longer words are not compared
+
+// nearest returns the word spelled most like w, the first of equals; "" when none has much in common with it.
+func nearest(w string, words []string) string {
+	if utf8.RuneCountInString(w) > longestWord {
+		return ""
+	}
+	low := strings.ToLower(w)
+	best, least := "", 1+max(1, utf8.RuneCountInString(w)/3)
+	for _, word := range words {
+		if len(word) > longestWord*4 {
+			continue
+		}
+		if d := levenshtein.ComputeDistance(low, strings.ToLower(word)); d < least {
+			best, least = word, d
+		}
+	}
+	if best != "" || len(low) < 3 {
+		return best
+	}
+	for _, word := range words { // "dia" for diameter
+		if strings.HasPrefix(strings.ToLower(word), low) {
+			return word
+		}
+	}
+	return ""
+}
+
+// didYouMean makes a hint of the nearest word, or of the whole list when it is short.
+func didYouMean(w string, words []string) string {
+	if near := nearest(w, words); near != "" {
+		return "did you mean " + near + "?"
+	}
+	return oneOf(words)
+}
+
+const shortList = 24 // words that are still listed in a hint
+
+// oneOf lists the words to choose from.
+func oneOf(words []string) string {
+	switch {
+	case len(words) == 0 || len(words) > shortList:
+		return ""
+	case len(words) == 1:
+		return "write " + words[0]
+	}
+	return "one of " + strings.Join(words, ", ")
+}

@@ -1,0 +1,156 @@
+package scenarios
+
+import (
+	"fmt"
+	"slices"
+	"strings"
+	"unicode"
+
+	"headfall/elements"
+	"headfall/network"
+)
+
+// class is what a tag names.
+type class string
+
+const (
+	aVessel     class = "vessel"
+	aTee        class = "tee"
+	anOutside   class = "outside point"
+	aLine       class = "line"
+	aValve      class = "valve"
+	aPump       class = "pump"
+	aCheckValve class = "check valve"
+	aPart       class = "part"
+	aVent       class = "vent"
+	aDevice     class = "vent of a line"
+	aStep       class = "step"
+	aHold       class = "hold"
+	aBatch      class = "batch"
+	aGauge      class = "gauge"
+)
+
+// thing is what a tag stands for.
+type thing struct {
+	class  class
+	tag    string
+	at     *node
+	vessel *network.Vessel // a vessel, or the one a gauge belongs to
+	line   *network.Line
+	device *elements.Device
+	lines  int // that meet at a tee
+}
+
+// reference is a tag that must be known when the file has been read.
+type reference struct {
+	n       *node
+	key     string
+	classes []class
+	then    func(*thing)
+}
+
+// turned are the words that readers of YAML make something else of.
+var turned = []string{"yes", "no", "on", "off", "true", "false", "null"}
+
+// declare enters a tag; it returns nil when it cannot be one.
+func (d *decoder) declare(n *node, c class) *thing {
+	if !d.text(n, "tag") || !d.fit(n, c) {
+		return nil
+	}
+	if old := d.things[n.text]; old != nil {
+		d.problem(n, fmt.Sprintf("%s is the tag of a %s already", n.text, old.class), fmt.Sprintf("it stands in line %d; tags are unique over the whole file", old.at.at.Line))
+		return nil
+	}
+	t := &thing{class: c, tag: n.text, at: n}
+	d.things[n.text] = t
+	return t
+}
+
+// fit reports whether a text can be a tag.
+func (d *decoder) fit(n *node, c class) bool {
+	if slices.Contains(turned, strings.ToLower(n.text)) {
+		d.problem(n, fmt.Sprintf("%s cannot be a tag: readers of YAML make something else of it", n.text), "add a number or a letter, e.g. "+n.text+"-1")
+		return false
+	}
+	for i, r := range n.text {
+		letter := unicode.IsLetter(r)
+		switch {
+		case i == 0 && !letter:
+			d.problem(n, fmt.Sprintf("%s cannot be a tag: it begins with no letter", quoted(n.text)), "e.g. "+tagOf(c, n.text))
+			return false
+		case !letter && !unicode.IsDigit(r) && !strings.ContainsRune("-_/", r):
+			d.within(n, len([]rune(n.text[:i])), 1, fmt.Sprintf("%s cannot be a tag", quoted(n.text)), "a tag has letters, digits, -, _ and /")
+			return false
+		}
+	}
+	return n.text != ""
+}
+
+// tagOf makes a tag of one that lacks its letter.
+func tagOf(c class, text string) string {
+	rest := strings.Map(func(r rune) rune {
+		if unicode.IsLetter(r) || unicode.IsDigit(r) {
+			return r
+		}
+		return '-'
+	}, text)
+	return strings.ToUpper(string(c[:1])) + "-" + strings.Trim(rest, "-")
+}
+
+// refer notes a tag to be looked up later and returns it.
+func (d *decoder) refer(n *node, key string, then func(*thing), classes ...class) string {
+	if !d.text(n, key) {
+		return ""
+	}
+	if strings.ContainsAny(n.text, "±") {
+		d.problem(n, key+": a tag carries no doubt", "")
+		return ""
+	}
+	d.refs = append(d.refs, reference{n, key, classes, then})
+	return n.text
+}
+
+// tagField makes a field for the tag of another thing.
+func (d *decoder) tagField(p *string, key string, need elements.Need, help string, classes ...class) field {
+	return field{key: key, need: need, help: help, written: writing{style: aTag}, read: func(n *node, _ string) {
+		*p = d.refer(n, key, nil, classes...)
+	}}
+}
+
+// resolve looks up what was referred to.
+func (d *decoder) resolve() {
+	for _, r := range d.refs {
+		t := d.things[r.n.text]
+		switch {
+		case t == nil:
+			d.problem(r.n, fmt.Sprintf("%s: there is no %s %s", r.key, classes(r.classes), quoted(r.n.text)), d.hint(r.n.text, d.tagsOf(r.classes)))
+		case !slices.Contains(r.classes, t.class):
+			d.problem(r.n, fmt.Sprintf("%s: %s is a %s, not a %s", r.key, r.n.text, t.class, classes(r.classes)), d.hint(r.n.text, d.tagsOf(r.classes)))
+		case r.then != nil:
+			r.then(t)
+		}
+	}
+}
+
+func classes(all []class) string {
+	words := make([]string, len(all))
+	for i, c := range all {
+		words[i] = string(c)
+	}
+	return listed(words, "or")
+}
+
+// tagsOf returns the tags of some classes, in alphabetical order.
+func (d *decoder) tagsOf(classes []class) []string {
+	if d.advice > enoughAdvice {
+		return nil
+	}
+	var tags []string
+	for tag, t := range d.things {
+		if slices.Contains(classes, t.class) {
+			tags = append(tags, tag)
+		}
+	}
+	slices.Sort(tags)
+	return tags
+}
