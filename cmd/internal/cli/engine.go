@@ -1,0 +1,45 @@
+package cli
+
+import (
+	"context"
+	"errors"
+
+	"headfall/network"
+	"headfall/scenarios"
+)
+
+// engine is what the commands call; tests put something quick in its place.
+type engine struct {
+	// load reads a plant; err holds every fault of the file.
+	load func(src *source, o *options) (*network.Plant, error)
+	// judge answers whether the sequence can run as written. With an error the result holds what was computed so far, or is nil.
+	judge func(ctx context.Context, load func() (*network.Plant, error), o *options, progress func(float64)) (*network.Result, error)
+}
+
+func standard() *engine { return &engine{load: load, judge: judge} }
+
+func load(src *source, o *options) (*network.Plant, error) {
+	plant, err := scenarios.Load(src.name, src.data, scenarios.Options{Set: o.set, Case: o.caseName})
+	if err != nil {
+		return nil, &Exit{Code: ExitBad, Err: err}
+	}
+	return plant, nil
+}
+
+func judge(ctx context.Context, load func() (*network.Plant, error), o *options, progress func(float64)) (*network.Result, error) {
+	plant, err := load()
+	if err != nil {
+		return nil, err
+	}
+	model, err := network.Compile(plant, network.Options{Method: o.method, Tolerance: o.tolerance})
+	if err != nil {
+		return nil, err
+	}
+	return model.Run(ctx, network.RunOptions{Series: true, Progress: progress})
+}
+
+// faults tells whether an error is a list of faults of a file, each with its place.
+func faults(err error) bool {
+	var p *scenarios.Problems
+	return errors.As(err, &p)
+}

@@ -1,0 +1,31 @@
+package cli
+
+import (
+	"fmt"
+
+	"github.com/spf13/cobra"
+)
+
+// Version of the program; it stands on every report.
+const Version = "0.1.0"
+
+func init() { register(groupAbout, newVersion) }
+
+func newVersion(a *app) *cobra.Command {
+	notices := false
+	c := &cobra.Command{
+		Use:     "version",
+		Short:   "Version of the program, and the notices of what it is built from",
+		Example: "  headfall version\n  headfall version --notices",
+		Args:    none,
+		RunE: func(*cobra.Command, []string) error {
+			if notices {
+				return writeNotices(a.Out)
+			}
+			_, err := fmt.Fprintln(a.Out, "headfall", Version)
+			return err
+		},
+	}
+	c.Flags().BoolVar(&notices, "notices", false, "print the licences of the libraries that are part of the program")
+	return c
+}

@@ -1,0 +1,167 @@
+package text
+
+import (
+	"fmt"
+	"strings"
+
+	"headfall/elements"
+	"headfall/network"
+)
+
+// lineUp writes how everything that can be moved stands before the first step.
+func (e *echo) lineUp() {
+	var said []string
+	for _, l := range e.plant.Lines {
+		for _, f := range l.Parts {
+			if x, ok := f.Part.(elements.Actuated); ok {
+				said = append(said, keep(x.Actuator().Tag+" "+Position(x.Actuator().Open)))
+			}
+			if x, ok := f.Part.(elements.Pumps); ok {
+				said = append(said, keep(x.Drive().Tag+" "+x.Drive().Mode.String()))
+			}
+			if x, ok := f.Part.(elements.Humps); ok && x.Crown().Vent.Tag != "" {
+				said = append(said, keep(x.Crown().Vent.Tag+" "+openOrShut(x.Crown().Vent.Open)))
+			}
+		}
+	}
+	if len(said) > 0 {
+		e.put("Line-up", "%s", strings.Join(said, ", "))
+	}
+}
+
+// Position writes a travel: shut, open, 35 %.
+func Position(travel float64) string {
+	switch travel {
+	case 0:
+		return "shut"
+	case 1:
+		return "open"
+	}
+	return figures(100*travel, 3, 0.1, Near) + " %"
+}
+
+func openOrShut(open bool) string {
+	if open {
+		return "open"
+	}
+	return "shut"
+}
+
+// steps writes what people do, in the order of the file.
+func (e *echo) steps() {
+	for i, s := range e.plant.Steps {
+		said := []string{s.ID + ": " + trigger(s), action(s)}
+		if s.Optional {
+			said = append(said, "optional")
+		}
+		e.put(first(i, "Steps"), "%s", join(said, ", "))
+	}
+}
+
+func trigger(s *network.Step) string {
+	var said []string
+	if s.At.Given {
+		said = append(said, "at "+keep(s.At.Text))
+	}
+	if s.When != nil {
+		said = append(said, "when "+condition(*s.When))
+	}
+	if s.After != "" {
+		said = append(said, "after "+s.After)
+	}
+	if s.Wait > 0 {
+		said = append(said, "and "+keep(Duration(s.Wait, Near))+" more")
+	}
+	return join(said, " ")
+}
+
+func action(s *network.Step) string {
+	switch s.Action {
+	case network.HoldPoint:
+		return fmt.Sprintf("hold: %s, up to %s", s.Hold, keep(Duration(s.UpTo, Near)))
+	case network.CancelBatch:
+		return "cancel " + s.Target
+	case network.SetPump:
+		return s.Target + " " + s.Mode.String()
+	case network.SetVent:
+		return s.Target + " " + openOrShut(s.To > 0)
+	}
+	said := s.Target + " to " + keep(s.ToText)
+	if s.Over > 0 {
+		said += " over " + keep(Duration(s.Over, Near))
+	}
+	return said
+}
+
+// subjects are the words of conditions.
+var subjects = map[network.Subject]string{
+	network.Level: "level", network.Flow: "flow", network.Velocity: "velocity", network.Pressure: "pressure", network.CrestHead: "crest",
+	network.Opening: "opening", network.Difference: "difference", network.Rising: "rising", network.Falling: "falling",
+	network.Passed: "passed", network.Backflow: "backflow", network.Spilled: "spilled", network.Starts: "starts", network.Emptied: "emptied",
+}
+
+func condition(c network.Condition) string {
+	said := strings.Join(c.Of, " and ") + " " + subjects[c.Subject]
+	if c.Text == "" {
+		return said
+	}
+	if c.Above {
+		return said + " above " + keep(c.Text)
+	}
+	return said + " below " + keep(c.Text)
+}
+
+// limits writes what must hold; rims and cover ratings are watched besides.
+func (e *echo) limits() {
+	for i, l := range e.plant.Limits {
+		said := []string{limitWords(l), window(l)}
+		if l.Why != "" {
+			said = append(said, "("+l.Why+")")
+		}
+		e.put(first(i, "Limits"), "%s", join(said, " "))
+	}
+	e.put(first(len(e.plant.Limits), "Limits"), "every rim, and every rating of a cover")
+}
+
+func limitWords(l *network.Limit) string {
+	of := strings.Join(l.Must.Of, " and ")
+	switch {
+	case l.Permitted:
+		return of + " flows only between " + keep(l.OnlyBetween[0].Text) + " and " + keep(l.OnlyBetween[1].Text)
+	case l.Must.Subject == network.Emptied && l.Within.Clock:
+		return of + " emptied by " + keep(l.Within.Text)
+	case l.Must.Subject == network.Emptied:
+		return of + " emptied within " + keep(l.Within.Text)
+	}
+	return condition(l.Must)
+}
+
+// window writes over what time a limit counts.
+func window(l *network.Limit) string {
+	var said []string
+	if l.AveragedOver > 0 {
+		said = append(said, "averaged over "+keep(Duration(l.AveragedOver, Near)))
+	}
+	if l.EachDay {
+		said = append(said, "each day")
+	}
+	if l.EachHour {
+		said = append(said, "each hour")
+	}
+	if l.InAny > 0 {
+		said = append(said, "in any "+keep(Duration(l.InAny, Near)))
+	}
+	return join(append(said, edge("since", l.Since), edge("until", l.Until)), " ")
+}
+
+func edge(word string, e network.Edge) string {
+	switch {
+	case e.When != nil:
+		return word + " " + condition(*e.When)
+	case e.After != "":
+		return word + " " + e.After + " is done"
+	case e.At.Given:
+		return word + " " + keep(e.At.Text)
+	}
+	return ""
+}
