@@ -27,3 +27,19 @@ func BenchmarkLevel(b *testing.B) {
 		})
 	}
 }
+
+// BenchmarkBuild is what a changed diameter costs.
+func BenchmarkBuild(b *testing.B) {
+	for name, head := range heads(2.4) {
+		b.Run("upright "+name, func(b *testing.B) {
+			for b.Loop() {
+				must(UprightCylinder(2.4, 0, 5, head, nil))
+			}
+		})
+		b.Run("lying "+name, func(b *testing.B) {
+			for b.Loop() {
+				must(LyingCylinder(2.4, 6, 0, head))
+			}
+		})
+	}
+}

@@ -95,7 +95,7 @@ func (b *body) Corners() []float64 { return b.corners }
 
 // Volume returns the volume, m³, and the area, m², at level h, m.
 func (b *body) Volume(h float64) (v, area float64) {
-	if !(h >= 0) {
+	if !(h > 0) {
 		return b.tip * h, b.tip
 	}
 	if h > b.height {
@@ -108,7 +108,7 @@ func (b *body) Volume(h float64) (v, area float64) {
 
 // Level returns the level, m, and its slope 1/A, 1/m², at volume v, m³.
 func (b *body) Level(v float64) (h, slope float64) {
-	if !(v >= 0) {
+	if !(v > 0) {
 		return v / b.tip, 1 / b.tip
 	}
 	if v > b.volume {
@@ -116,7 +116,7 @@ func (b *body) Level(v float64) (h, slope float64) {
 	}
 	s := b.sliceOf(v)
 	h, slope = s.level(v - s.v)
-	return s.z + h, slope
+	return s.z + min(h, s.h), slope
 }
 
 // few is the number of slices up to which looking at each beats halving.

@@ -23,12 +23,3 @@ func newGauss(n int) gauss {
 	}
 	return g
 }
-
-// over returns the integral of f from lo to hi.
-func (g gauss) over(lo, hi float64, f func(x float64) float64) (sum float64) {
-	mid, half := (lo+hi)/2, (hi-lo)/2
-	for i, x := range g.x {
-		sum += g.w[i] * f(mid+half*x)
-	}
-	return sum * half
-}

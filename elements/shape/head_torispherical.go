@@ -69,6 +69,9 @@ func Torispherical(diameter, crown, knuckle, outlet float64) (Head, error) {
 	if crown-r < 1e-9*r || r-knuckle < 1e-9*r {
 		return ellipsoid("torispherical", diameter, r, outlet)
 	}
+	if knuckle < 1e-6*diameter {
+		knuckle = 0
+	}
 	c := r - knuckle
 	d := &torispherical{headBase: headBase{"torispherical", diameter}, crown: crown, knuckle: knuckle}
 	d.angle = math.Asin(c / (crown - knuckle))
@@ -100,7 +103,7 @@ func (d *torispherical) bottom() []slice {
 	up := d.knuckle * math.Cos(d.angle) // of the joint below the tangent line
 	slices := capOf(d.crown, d.crown, d.depth-up, d.tip)
 	if d.knuckle > 0 {
-		slices = append(slices, slice{piece: search(newKnuckle(d.diameter/2-d.knuckle, d.knuckle, up), up), h: up, bent: true})
+		slices = append(slices, slice{piece: search(newKnuckle(d.diameter/2-d.knuckle, d.knuckle, d.angle), up), h: up, bent: true})
 	}
 	return slices
 }

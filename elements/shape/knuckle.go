@@ -2,29 +2,31 @@ package shape
 
 import "math"
 
-// knuckle is the slice of a torus that joins a crown to the straight side; z over the joint, y = up − z below the tangent line:
+// knuckle is the slice of a torus that joins a crown to the straight side, y below the tangent line, from the joint at y = u (z = u − y, w = w₀ there):
 //
 //	A = π·(c + w)²,  w = √(k² − y²),  dA/dz = 2·π·y·(1 + c/w)
-//	V = G(up) − G(y),  G(y) = π·((c² + k²)·y − y³/3 + c·(y·w + k²·arcsin(y/k)))
+//	V = π·∫(c² + w² + 2·c·w)dy = G(u) − G(y),  G(y) = π·((c² + k²)·y − y³/3 + c·(y·w + k²·arcsin(y/k)))
+//
+// The differences are taken in closed form, so that no digits are lost near the joint:
+//
+//	w² = w₀² + z·(u + y)
+//	V = π·(z·(c² + w₀² + u·z − z²/3) + c·(z·w₀ − y·(w − w₀) + k²·φ)),  sin φ = z·(u + y)/(u·w + y·w₀)
 type knuckle struct {
-	c, k, up float64 // m, radius of the circle of knuckle centres, knuckle radius, height of the joint below the tangent line
-	all      float64 // m³, G(up)
+	c, k  float64 // m, radius of the circle of knuckle centres, knuckle radius
+	u, w0 float64 // m
 }
 
-func newKnuckle(c, k, up float64) *knuckle {
-	n := &knuckle{c: c, k: k, up: up}
-	n.all = n.below(up, n.width(up))
-	return n
+// newKnuckle returns the knuckle whose joint lies at an angle, rad, from the axis, seen from the centre of the crown.
+func newKnuckle(c, k, angle float64) knuckle {
+	sin, cos := math.Sincos(angle)
+	return knuckle{c: c, k: k, u: k * cos, w0: k * sin}
 }
 
-func (n *knuckle) width(y float64) float64 { return math.Sqrt((n.k - y) * (n.k + y)) }
-
-func (n *knuckle) below(y, w float64) float64 {
-	return math.Pi * (y*(n.c*n.c+n.k*n.k-y*y/3) + n.c*(y*w+n.k*n.k*math.Atan2(y, w)))
-}
-
-func (n *knuckle) eval(z float64) (v, area, grow float64) {
-	y := n.up - z
-	w := n.width(y)
-	return n.all - n.below(y, w), math.Pi * (n.c + w) * (n.c + w), 2 * math.Pi * y * (1 + n.c/w)
+func (n knuckle) eval(z float64) (v, area, grow float64) {
+	y := n.u - z
+	rise := z * (n.u + y)
+	w := math.Sqrt(n.w0*n.w0 + rise)
+	phi := math.Atan2(rise/(n.u*w+y*n.w0), (n.w0*w+n.u*y)/(n.k*n.k))
+	v = z*(n.c*n.c+n.w0*n.w0+n.u*z-z*z/3) + n.c*(z*n.w0-y*rise/(w+n.w0)+n.k*n.k*phi)
+	return math.Pi * v, math.Pi * (n.c + w) * (n.c + w), 2 * math.Pi * y * (1 + n.c/w)
 }

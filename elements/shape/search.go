@@ -42,7 +42,7 @@ func search(l law, h float64) piece {
 		v := s.full * fraction(i, cells)
 		z := h
 		if i < cells {
-			z = s.bisect(v, s.nodes[i].z, h)
+			z = s.solve(v, s.nodes[i].z, h)
 		}
 		_, a, _ := l.eval(z)
 		s.nodes[i].inv = 1 / (v - s.nodes[i].v)
@@ -80,19 +80,26 @@ func (s *searched) cell(x float64) int {
 	return min(max(i, 0), len(s.nodes)-2)
 }
 
-func (s *searched) bisect(v, lo, hi float64) float64 {
-	for range 200 {
-		mid := (lo + hi) / 2
-		if mid <= lo || mid >= hi {
-			break
-		}
-		if at, _, _ := s.eval(mid); at < v {
-			lo = mid
+// solve finds z between lo and hi with volume v by Newton's method, halving where a step would leave them. It is for building only.
+func (s *searched) solve(v, lo, hi float64) float64 {
+	z := lo
+	for range maxSteps {
+		at, a, _ := s.eval(z)
+		if at < v {
+			lo = z
 		} else {
-			hi = mid
+			hi = z
 		}
+		next := z - (at-v)/a
+		if !(next >= lo && next <= hi) {
+			next = (lo + hi) / 2
+		}
+		if math.Abs(next-z) <= 2e-16*z {
+			return next
+		}
+		z = next
 	}
-	return (lo + hi) / 2
+	return z
 }
 
 func (s *searched) level(v float64) (z, slope float64) {

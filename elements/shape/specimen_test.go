@@ -32,6 +32,8 @@ func heads(d float64) map[string]Head {
 		"din_28011":     must(TorisphericalForm(d, "din_28011", 0)),
 		"din_28013":     must(TorisphericalForm(d, "din_28013", 0)),
 		"dished":        must(Torispherical(d, 0.8*d, 0, 0)),
+		"tight_knuckle": must(Torispherical(d, d, 0.001*d, 0)),
+		"near_sphere":   must(Torispherical(d, 0.52*d, 0.4*d, 0)),
 		"long_knuckle":  must(Torispherical(d, 0.9*d, 0.3*d, 0)),
 	}
 }

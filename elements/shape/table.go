@@ -38,7 +38,7 @@ func checkRows(rows [][2]float64) ([][2]float64, error) {
 		f.add("rows are missing: give level and volume, two rows at least")
 		return nil, f.err("table")
 	}
-	first := rows[0]
+	first, added := rows[0], 0
 	switch {
 	case first[0] < 0 || first[1] < 0:
 		f.add("row 1: levels and volumes start at 0, the lowest inside point")
@@ -47,13 +47,13 @@ func checkRows(rows [][2]float64) ([][2]float64, error) {
 	case first[0] > 0 && first[1] == 0:
 		f.add("row 1: there is no volume at level %s; levels are above the lowest inside point", metres(first[0]))
 	case first[0] > 0:
-		rows = append([][2]float64{{}}, rows...)
+		rows, added = append([][2]float64{{}}, rows...), 1
 	}
 	if len(rows) < 2 {
 		f.add("two rows at least are needed, there is one")
 	}
 	for i := 1; i < len(rows); i++ {
-		row := fmt.Sprintf("row %d", i+1)
+		row := fmt.Sprintf("row %d", i+1-added)
 		dh, dv := rows[i][0]-rows[i-1][0], rows[i][1]-rows[i-1][1]
 		if !(dh > 0) || !(dv > 0) {
 			f.add("%s: level and volume must both increase from row to row", row)
