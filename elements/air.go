@@ -21,19 +21,12 @@ const (
 //
 // Within 1 Pa of balance a cubic on either side with one slope at zero: C¹. Source: isentropic nozzle, compressible-flow textbooks.
 func airIn(p, p0, T float64) (g, byP float64) {
-	perRoot := 1 / math.Sqrt(AirConstant*T)
 	d := p0 - p
 	if math.Abs(d) >= airBand {
-		if d > 0 { // inwards: p₁ outside is constant
-			v, byR := throat(p/p0, d/p0)
-			return perRoot * p0 * v, perRoot * byR
-		}
-		r := p0 / p
-		v, byR := throat(r, -d/p)
-		return -perRoot * p * v, -perRoot * (v - r*byR)
+		return airBeyond(d, p0, T)
 	}
-	in, inBy := airIn(p0-airBand, p0, T)
-	out, outBy := airIn(p0+airBand, p0, T)
+	in, inBy := airBeyond(airBand, p0, T)
+	out, outBy := airBeyond(-airBand, p0, T)
 	// In u = d/band: the odd cubics of the two sides differ by a part in 10⁵ in their slope at zero; both take the mean.
 	s := (3*(in-out) + airBand*(inBy+outBy)) / 4
 	end, t := in, -inBy*airBand
@@ -43,6 +36,19 @@ func airIn(p, p0, T float64) (g, byP float64) {
 	}
 	a, b := 3*end-t-2*s, t+s-2*end
 	return math.Copysign(u*(s+u*(a+u*b)), d), -(s + u*(2*a+u*3*b)) / airBand
+}
+
+// airBeyond is airIn at a difference d = p0 − p, Pa, outside the band.
+func airBeyond(d, p0, T float64) (g, byP float64) {
+	perRoot := 1 / math.Sqrt(AirConstant*T)
+	if d > 0 { // inwards: p₁ outside is constant
+		v, byR := throat(1-d/p0, d/p0)
+		return perRoot * p0 * v, perRoot * byR
+	}
+	p := p0 - d
+	r := p0 / p
+	v, byR := throat(r, -d/p)
+	return -perRoot * p * v, -perRoot * (v - r*byR)
 }
 
 // throat returns ψ(r) and dψ/dr, −, for r = p₂/p₁ and the drop 1 − r, given on its own so that it keeps its digits.

@@ -122,11 +122,6 @@ type Throttles interface {
 	DropByOpening(q float64, at *Local) float64
 }
 
-// Slot is an opening with a width and a height, m; both 0 when it is round.
-type Slot interface {
-	Slot() (width, height float64)
-}
-
 // Reduces is a part that may contain a reducer or expander, so that the bores on its two sides may differ without further loss.
 type Reduces interface {
 	Reduces() bool

@@ -138,7 +138,23 @@ func (e *valve) DropByOpening(q float64, at *Local) float64 {
 	phi, byX := e.Opens(at.Opening)
 	phi = max(phi, leastShare)
 	dp, slope, bend := e.drop(q, phi, at)
-	return -(q*slope + bend*dp) / phi * byX
+	return (e.bends(q, phi, at) - q*slope - bend*dp) / phi * byX
+}
+
+// bends is what the change of F_R's own slope adds within the band: there the law is a cubic to its edge, whose Re_v moves as √φ.
+func (e *valve) bends(q, phi float64, at *Local) float64 {
+	c := e.law.square * at.Fluid.Density / (phi * phi)
+	edge := math.Sqrt(at.Band / c)
+	re := e.law.thick.re * at.Fluid.Density / (at.Fluid.Dynamic * math.Sqrt(phi)) * edge
+	if math.Abs(q) >= edge || re >= e.law.thick.turbulent {
+		return 0
+	}
+	const d = 1e-4
+	factor, _ := e.law.thick.at(re)
+	_, more := e.law.thick.at(re * (1 + d))
+	_, less := e.law.thick.at(re * (1 - d))
+	u := q / edge
+	return at.Band / (factor * factor) * (more - less) / (4 * d) * u * (1 - u*u)
 }
 
 // drop is the law at a share φ; bend is d ln F_R/d ln Re_v.
