@@ -65,7 +65,7 @@ func (a *app) check(path string, normalise bool) error {
 }
 
 func (a *app) normalise(src *source) error {
-	plain, err := scenarios.Normalise(src.data)
+	plain, err := scenarios.Normalise(src.name, src.data)
 	if err != nil {
 		return &Exit{Code: ExitBad, Err: err}
 	}

@@ -125,6 +125,7 @@ func (a *app) answer(ctx context.Context, src *source) (*network.Result, error) 
 	res, err := a.judge(ctx, func() (*network.Plant, error) { return a.load(src, &a.opt) }, &a.opt, bar.done)
 	bar.end()
 	if err == nil {
+		res.ExitCode = exitOf(res.Verdict)
 		return res, nil
 	}
 	if res == nil {
@@ -140,6 +141,17 @@ func (a *app) answer(ctx context.Context, src *source) (*network.Result, error) 
 		res.Stopped, res.Trouble = "failed", err.Error()
 	}
 	return res, nil
+}
+
+// exitOf is the exit code of a calculation that was finished.
+func exitOf(v network.Verdict) int {
+	switch v {
+	case network.Run:
+		return ExitHolds
+	case network.DoNotRun, network.TooClose:
+		return ExitFails
+	}
+	return ExitUnfinished
 }
 
 // within bounds the time of a calculation.

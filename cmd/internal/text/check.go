@@ -118,7 +118,7 @@ func (e *echo) lines() {
 		}
 		v := LineVolume(l)
 		total += v
-		e.put(first(i, "Lines"), "%s  %s to %s: %s; holds %s", l.Tag, l.From, l.To, join(parts, ", "), keep(e.units.VolumeOf(v, Near)))
+		e.put(first(i, "Lines"), "%s%s to %s: %s; holds %s", stamp(l.Tag), l.From, l.To, join(parts, ", "), keep(e.units.VolumeOf(v, Near)))
 	}
 	for _, v := range e.plant.Vessels {
 		if v.Shape != nil {
