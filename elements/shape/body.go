@@ -26,6 +26,9 @@ func (s *slice) at(z float64) (v, area float64) {
 //	V(h) = V_i + P_i(h − z_i)   in slice i
 //	V(h) = A(0)·h               below 0
 //	V(h) = V(H) + A_top·(h − H) above H,  A_top = max(A(H), 1 % of the largest section)
+//
+// Level(Volume(h)) gives h back to 1e-12, but no better than the rounding of V itself allows: ε·V/A, which is 3e-9 m under the very pole of a tank of
+// 50 000 m³.
 type body struct {
 	slices  []slice
 	height  float64 // m

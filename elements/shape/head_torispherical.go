@@ -84,7 +84,10 @@ func Torispherical(diameter, crown, knuckle, outlet float64) (Head, error) {
 	if d.tip = tipArea(bore); d.tip > circle(2*d.joint)*(1+1e-12) {
 		f.add("outlet %s is wider than the crown, %s", metres(bore), metres(2*d.joint))
 	}
-	return d, f.err("torispherical")
+	if err := f.err("torispherical"); err != nil {
+		return nil, err
+	}
+	return d, nil
 }
 
 type torispherical struct {

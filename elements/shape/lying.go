@@ -37,8 +37,9 @@ func LyingCylinder(diameter, length, outlet float64, ends Head) (Shape, error) {
 type lying struct {
 	length, r float64 // m
 	ends      endPair // nil: flat
-	split     float64 // m, level of the joint of the strips
+	split     float64 // m, level of the joint of the strips; +Inf: only one
 	low, high strip
+	z0, v0    float64 // m, m³: where the slice starts
 }
 
 // section returns the area, m², and dA/dh, m, at level h, m.
@@ -56,14 +57,14 @@ func (l *lying) section(h float64) (area, grow float64) {
 const stripCells = 128
 
 func (l *lying) table() {
-	l.split = l.r
+	l.split = math.Inf(1)
 	root := true
 	if l.ends != nil {
 		if h, withRoot := l.ends.split(); h > 0 {
 			l.split, root = h, withRoot
 		}
 	}
-	l.low = newStrip(0, l.split, 0, true, stripCells, l.section)
+	l.low = newStrip(0, min(l.split, l.r), 0, true, stripCells, l.section)
 	if l.split < l.r {
 		cells := stripCells
 		if !root {
@@ -74,11 +75,13 @@ func (l *lying) table() {
 	}
 }
 
-func (l *lying) eval(h float64) (v, area, grow float64) {
-	if h <= l.split {
-		return l.low.eval(h)
+func (l *lying) eval(z float64) (v, area, grow float64) {
+	s := &l.low
+	if z+l.z0 > l.split {
+		s = &l.high
 	}
-	return l.high.eval(h)
+	v, area, grow = s.eval(z + l.z0)
+	return v - l.v0, area, grow
 }
 
 // lowerHalf returns the slices up to the axis: a prism as wide as the tip until the cylinder is that wide, then the cylinder.
@@ -103,22 +106,11 @@ func (l *lying) lowerHalf(tip, most float64) []slice {
 		}
 		return x
 	}
-	above := &raised{law: l, z: hi}
-	above.v, _, _ = l.eval(hi)
+	v, _, _ := l.eval(hi)
+	l.z0, l.v0 = hi, v
 	curved := l.ends != nil
 	return []slice{
 		{piece: prismOf(tip), h: hi, half: width, rim: rim, bent: curved},
-		{piece: search(above, l.r-hi), h: l.r - hi, half: func(z float64) float64 { return width(z + hi) }, rim: rim, bent: curved},
+		{piece: search(l, l.r-hi), h: l.r - hi, half: func(z float64) float64 { return width(z + hi) }, rim: rim, bent: curved},
 	}
-}
-
-// raised is a law counted from z, m, over its bottom, where its volume is v, m³.
-type raised struct {
-	law
-	z, v float64
-}
-
-func (s *raised) eval(z float64) (v, area, grow float64) {
-	v, area, grow = s.law.eval(z + s.z)
-	return v - s.v, area, grow
 }

@@ -3,6 +3,7 @@ package shape
 import (
 	"math"
 	"sort"
+	"strings"
 	"testing"
 
 	"pgregory.net/rapid"
@@ -115,7 +116,7 @@ func TestAreaIsDerivative(t *testing.T) {
 	}
 }
 
-// The area jumps nowhere but at corners, and the volume nowhere at all.
+// The area jumps nowhere but at corners; in tanks of one piece, at knuckle, pole and axis, nowhere at all.
 func TestJumpsOnlyAtCorners(t *testing.T) {
 	for _, s := range specimens() {
 		b := s.shape.(*body)
@@ -129,7 +130,11 @@ func TestJumpsOnlyAtCorners(t *testing.T) {
 		for i := 1; i < len(b.slices); i++ {
 			_, below := b.slices[i-1].at(b.slices[i-1].h)
 			_, above := b.slices[i].at(0)
-			if jump := math.Abs(above/below - 1); jump > 1e-9 && !corners[b.slices[i].z] && jump > cornerJump {
+			jump, allowed := math.Abs(above/below-1), 1e-9
+			if strings.HasPrefix(s.name, "stack") || strings.HasPrefix(s.name, "inside") || strings.HasPrefix(s.name, "table") {
+				allowed = cornerJump
+			}
+			if jump > allowed && !corners[b.slices[i].z] {
 				t.Errorf("%s: area jumps from %g to %g at %g, no corner", s.name, below, above, b.slices[i].z)
 			}
 		}

@@ -110,7 +110,7 @@ func (s *searched) level(v float64) (z, slope float64) {
 	w := m.v - n.v
 	rise, p, q := hi-lo, w*n.slope, w*m.slope
 	z = lo + t*(p+t*(3*rise-2*p-q+t*(p+q-2*rise)))
-	z = math.Max(lo, math.Min(z, hi))
+	z = max(lo, min(z, hi))
 	for range maxSteps {
 		at, a, grow := s.eval(z)
 		e, r := at-v, 1/a

@@ -53,24 +53,26 @@ func newStrip(h0, h1, v0 float64, root bool, n int, area func(h float64) (a, gro
 }
 
 func (s *strip) eval(h float64) (v, area, grow float64) {
-	u := math.Max(h-s.h0, 0)
+	u := max(h-s.h0, 0)
 	if s.root {
 		u = math.Sqrt(u)
 	}
-	i := max(min(int(u*s.inv), len(s.cells)-1), 0)
+	i := min(int(u*s.inv), len(s.cells)-1)
 	return s.in(i, u-float64(i)*s.du)
 }
 
 // in evaluates cell i at t past its start.
 func (s *strip) in(i int, t float64) (v, area, grow float64) {
 	c := &s.cells[i]
-	area = c.a0 + t*(c.a1+t*(c.a2+t*c.a3))
+	t2 := t * t
+	area = c.a0 + t*c.a1 + t2*(c.a2+t*c.a3)
 	grow = c.a1 + t*(2*c.a2+t*3*c.a3)
-	v = t * (c.a0 + t*(c.a1*(1./2)+t*(c.a2*(1./3)+t*c.a3*(1./4))))
+	v = t * (c.a0 + t*(c.a1*(1./2)) + t2*(c.a2*(1./3)+t*(c.a3*(1./4))))
 	if !s.root {
 		return c.v + v, area, grow
 	}
+	// ∫A·2u du with u = u₀ + t.
 	u0 := float64(i) * s.du
-	moment := t * t * (c.a0*(1./2) + t*(c.a1*(1./3)+t*(c.a2*(1./4)+t*c.a3*(1./5))))
-	return c.v + 2*(u0*v+moment), area, grow / math.Max(2*(u0+t), 1e-150)
+	moment := t2 * (c.a0*(1./2) + t*(c.a1*(1./3)) + t2*(c.a2*(1./4)+t*(c.a3*(1./5))))
+	return c.v + 2*(u0*v+moment), area, grow / max(2*(u0+t), 1e-150)
 }
