@@ -78,6 +78,16 @@ func (d *Dense) One(i int, t float64) float64 {
 	return (1-x)*d.Y0[i] + x*(d.Y1[i]+(1-x)*inner)
 }
 
+// OneZ returns integral i at time t.
+func (d *Dense) OneZ(i int, t float64) float64 {
+	x := d.place(t)
+	inner := 0.0
+	for k := len(d.KZ) - 1; k >= 0; k-- {
+		inner = inner*x + d.KZ[k][i]
+	}
+	return (1-x)*d.Z0[i] + x*(d.Z1[i]+(1-x)*inner)
+}
+
 // Rate returns the time derivative of unknown i at time t.
 func (d *Dense) Rate(i int, t float64) float64 {
 	if d.H == 0 {

@@ -57,7 +57,7 @@ func (s *Solver) fire(ev Events, lead int, t float64) {
 	w.fired, w.firedAt = w.fired[:0], t
 	near, tol := s.poly.H/1024, s.tolerance()
 	for i, v := range w.at {
-		side := w.side[i]
+		side := w.walk[i] // shortly before the crossing
 		w.side[i] = sign(v)
 		wait := -v * near / (v - w.before[i]) // until the crossing
 		hit := i == lead || crossed(side, v, ev.Direction(i)) ||

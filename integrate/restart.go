@@ -9,6 +9,7 @@ import (
 
 const (
 	settled    = 1e-6 // size of a Newton correction, in tolerances, that is not worth making
+	rounding   = 1e-2 // size below which a correction that does not shrink is taken for rounding
 	iterations = 40   // of Newton at a restart
 	halvings   = 12   // of a Newton correction
 )
@@ -53,6 +54,7 @@ func firstBad(a, b []float64) int {
 // follow it with the same Jacobian (Deuflhard, Newton Methods for Nonlinear Problems, Springer 2004, algorithm NLEQ-ERR).
 func (s *Solver) settle() error {
 	d, trial := s.err, s.y1
+	before := math.Inf(1)
 	for range iterations {
 		if err := s.factoriseAlgebraic(); err != nil {
 			return s.singular(0, err)
@@ -60,10 +62,15 @@ func (s *Solver) settle() error {
 		s.algebraicResidual(d, s.f)
 		s.factor.Solve(d)
 		size := norm(d, s.scale)
-		if size <= settled {
-			return nil
+		if size <= settled || size <= rounding && size > before/4 {
+			return nil // the latter where rounding keeps the correction from shrinking
 		}
-		if !s.damped(d, trial, size) {
+		before = size
+		if size <= rounding {
+			for i := range trial {
+				trial[i] = s.y[i] + d[i]
+			}
+		} else if !s.damped(d, trial, size) {
 			break
 		}
 		copy(s.y, trial)
@@ -71,6 +78,15 @@ func (s *Solver) settle() error {
 		s.linearise()
 	}
 	return s.fail(NotSettled, 0, worst(d, s.scale), nil)
+}
+
+// resettle makes the algebraic unknowns at the present time consistent.
+func (s *Solver) resettle() error {
+	if err := s.settle(); err != nil {
+		return err
+	}
+	s.step.restart()
+	return nil
 }
 
 // damped puts into trial the state after as much of the correction d as helps; false if none does.

@@ -5,6 +5,10 @@ import "math"
 // attempts is the number of rejections in a row after which a step is given up.
 const attempts = 60
 
+// resettle is the number of rejections in a row after which the algebraic unknowns are made consistent again. They are so to the tolerance only, and
+// where flows turn round even that can be too far off for a linearisation: the error of a step then does not fall with its length.
+const resettle = 3
+
 // Step takes one accepted step. It does not pass tEnd; when it reaches tEnd, T is tEnd to the bit. Sign changes of the functions of ev, which may be
 // nil, end the step; see Events and watch for what counts. Called at tEnd it does nothing and returns ReachedEnd.
 func (s *Solver) Step(tEnd float64, ev Events) (Outcome, error) {
@@ -71,6 +75,11 @@ func (s *Solver) advance(tEnd float64) (h float64, held bool, e float64, err err
 		s.stats.Rejected++
 		h = s.step.reject(e)
 		s.free = h
+		if s.algebraic && k%resettle == resettle-1 {
+			if err := s.resettle(); err != nil {
+				return h, held, e, err
+			}
+		}
 	}
 	if err != nil {
 		return h, held, e, s.singular(h, err)

@@ -18,38 +18,40 @@ func ProtheroRobinson(lambda float64) *Problem {
 	}
 }
 
-// Circle is y' = z, 0 = y² + z² − 1 with the solution y = sin t, z = cos t.
-func Circle() *Problem {
+// Oscillator is x' = v, v' = −ln z, 0 = z − exp x with the solution x = cos t, z = exp(cos t).
+func Oscillator() *Problem {
 	return &Problem{
-		Name: "circle", T0: 0, T1: 1, Y0: []float64{0, 1}, Algebraic: []bool{false, true},
+		Name: "oscillator", T0: 0, T1: 3, Y0: []float64{1, 0, math.E}, Algebraic: []bool{false, false, true},
 		F: func(_ float64, y, f, _ []float64) {
-			f[0], f[1] = y[1], y[0]*y[0]+y[1]*y[1]-1
+			f[0], f[1], f[2] = y[1], -math.Log(y[2]), y[2]-math.Exp(y[0])
 		},
 		D: func(_ float64, y []float64, fy, _ [][]float64, _, _ []float64) {
-			fy[0][1], fy[1][0], fy[1][1] = 1, 2*y[0], 2*y[1]
-		},
-		Exact: func(t float64, y []float64) { y[0], y[1] = math.Sin(t), math.Cos(t) },
-	}
-}
-
-// Swing is y' = z, 0 = z²/y − y cos²t with the solution y = exp(sin t), z = y cos t: nonlinear, with time in the algebraic equation.
-func Swing() *Problem {
-	return &Problem{
-		Name: "swing", T0: 0, T1: 1, Y0: []float64{1, 1}, Algebraic: []bool{false, true},
-		F: func(t float64, y, f, _ []float64) {
-			c := math.Cos(t)
-			f[0], f[1] = y[1], y[1]*y[1]/y[0]-y[0]*c*c
-		},
-		D: func(t float64, y []float64, fy, _ [][]float64, ft, _ []float64) {
-			s, c := math.Sincos(t)
 			fy[0][1] = 1
-			fy[1][0], fy[1][1] = -y[1]*y[1]/(y[0]*y[0])-c*c, 2*y[1]/y[0]
-			ft[1] = 2 * y[0] * c * s
+			fy[1][2] = -1 / y[2]
+			fy[2][0], fy[2][2] = -math.Exp(y[0]), 1
 		},
 		Exact: func(t float64, y []float64) {
 			s, c := math.Sincos(t)
-			y[0] = math.Exp(s)
-			y[1] = y[0] * c
+			y[0], y[1], y[2] = c, -s, math.Exp(c)
+		},
+	}
+}
+
+// Swing is y' = y z, 0 = z + z³/3 − cos t − cos³t/3 with the solution y = exp(sin t), z = cos t: time moves the algebraic equation.
+func Swing() *Problem {
+	return &Problem{
+		Name: "swing", T0: 0, T1: 2, Y0: []float64{1, 1}, Algebraic: []bool{false, true},
+		F: func(t float64, y, f, _ []float64) {
+			c := math.Cos(t)
+			f[0], f[1] = y[0]*y[1], y[1]+y[1]*y[1]*y[1]/3-c-c*c*c/3
+		},
+		D: func(t float64, y []float64, fy, _ [][]float64, ft, _ []float64) {
+			s, c := math.Sincos(t)
+			fy[0][0], fy[0][1], fy[1][1] = y[1], y[0], 1+y[1]*y[1]
+			ft[1] = s + c*c*s
+		},
+		Exact: func(t float64, y []float64) {
+			y[0], y[1] = math.Exp(math.Sin(t)), math.Cos(t)
 		},
 	}
 }
