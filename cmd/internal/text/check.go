@@ -102,7 +102,9 @@ func (e *echo) vessels() {
 			e.units.LevelOf(v.RimLevel(), Near), e.units.VolumeOf(full, Near), empty, shape,
 		})
 	}
-	e.raw("\n" + table(rows, len(rows[0])-1) + "\n")
+	if len(rows) > 1 {
+		e.raw("\n" + table(rows, len(rows[0])-1) + "\n")
+	}
 }
 
 // noticed is the share of the liquid from which what stands in the lines is worth a warning.

@@ -37,7 +37,7 @@ func Position(travel float64) string {
 	case 1:
 		return "open"
 	}
-	return figures(100*travel, 3, 0.1, Near) + " %"
+	return strings.TrimSuffix(inSteps(100*travel, 0.1, Near), ".0") + " %"
 }
 
 func openOrShut(open bool) string {
@@ -50,11 +50,11 @@ func openOrShut(open bool) string {
 // steps writes what people do, in the order of the file.
 func (e *echo) steps() {
 	for i, s := range e.plant.Steps {
-		said := []string{s.ID + ": " + trigger(s), action(s)}
+		said := []string{trigger(s), action(s)}
 		if s.Optional {
 			said = append(said, "optional")
 		}
-		e.put(first(i, "Steps"), "%s", join(said, ", "))
+		e.put(first(i, "Steps"), "%s: %s", s.ID, join(said, ", "))
 	}
 }
 
