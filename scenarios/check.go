@@ -7,6 +7,7 @@ import (
 
 	"headfall/elements"
 	"headfall/elements/quantity"
+	"headfall/elements/shape"
 	"headfall/network"
 )
 
@@ -38,23 +39,34 @@ func (d *decoder) circles() {
 
 // whole checks what shows only when elements and shapes are ready.
 func (d *decoder) whole(root *node) {
-	if !d.lineParts() {
-		return
-	}
-	if err := d.plant.Refresh(); err != nil {
-		d.refreshFault(root, err)
-		return
-	}
-	for _, v := range d.plant.Vessels {
-		if v.Shape != nil {
-			d.startOf(root.get("vessels").get(v.Tag), v)
+	d.lineParts()
+	var err error
+	if len(d.probs) == 0 {
+		if err = d.plant.Refresh(); err == nil {
+			for _, v := range d.plant.Vessels {
+				d.startOf(root.get("vessels").get(v.Tag), v, v.Shape)
+			}
+			return
 		}
+	}
+	for _, v := range d.plant.Vessels { // one by one, so that each one's faults are told
+		n := root.get("vessels").get(v.Tag)
+		s, fault := v.Element.Shape(0)
+		if fault != nil {
+			for _, one := range split(fault) {
+				d.problem(first(n.get("shape"), n), one.Error(), "")
+			}
+			continue
+		}
+		d.startOf(n, v, s)
+	}
+	if len(d.probs) == 0 {
+		d.refreshFault(root, err)
 	}
 }
 
 // lineParts makes the parts of every line ready in their places, so that each one's faults are told where it stands.
-func (d *decoder) lineParts() bool {
-	ok := true
+func (d *decoder) lineParts() {
 	for _, l := range d.plant.Lines {
 		parts := d.parts[l]
 		for pass := range 2 { // parts without a bore take their neighbour's, which may stand behind them
@@ -66,14 +78,12 @@ func (d *decoder) lineParts() bool {
 				if err == nil || pass == 0 {
 					continue
 				}
-				ok = false
 				for _, says := range strings.Split(err.Error(), "; ") {
 					d.problem(parts[i], says, "")
 				}
 			}
 		}
 	}
-	return ok
 }
 
 // placeOf tells where a part stands.
@@ -110,8 +120,8 @@ func (d *decoder) refreshFault(root *node, err error) {
 }
 
 // startOf checks what is in a vessel at the start against its shape.
-func (d *decoder) startOf(n *node, v *network.Vessel) {
-	top := v.Shape.Height()
+func (d *decoder) startOf(n *node, v *network.Vessel, s shape.Shape) {
+	top := s.Height()
 	place := func(key string) *node { return first(n.get(key), n) }
 	if !math.IsNaN(v.Rim) {
 		if v.Rim > top*(1+1e-9) {
@@ -123,7 +133,7 @@ func (d *decoder) startOf(n *node, v *network.Vessel) {
 	if v.Level > top*(1+1e-9) {
 		d.problem(place("level"), fmt.Sprintf("the start level, %s, is above the rim, %s", metres(v.Level), metres(top)), "levels are above the vessel's base")
 	}
-	if most, _ := v.Shape.Volume(top); v.Contents > most*(1+1e-9) {
+	if most, _ := s.Volume(top); v.Contents > most*(1+1e-9) {
 		d.problem(place("contents"), fmt.Sprintf("the start contents are more than the vessel holds to its rim, %s", quantity.Format(most, quantity.Volume, "m3", 4)), "")
 	}
 	if v.EmptyAt > top {

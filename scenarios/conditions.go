@@ -41,6 +41,7 @@ type bound struct {
 	kind         *subject
 	above, below *node
 	vessel       *network.Vessel // a level's own vessel, of an alarm
+	typo         bool            // the mapping had faults: what seems to be missing may be misspelt
 }
 
 // conditionFields are the keys that every condition has: one subject, one bound.
@@ -79,6 +80,9 @@ func (d *decoder) looksAt(n *node, s *subject) []string {
 // finish reads the bound, whose dimension is known now, and reports whether the condition is whole.
 func (d *decoder) finish(n *node, what string, b *bound) bool {
 	b.to.Place = n.at
+	if n.form != mapping {
+		return false
+	}
 	count := 0
 	for i := range subjects {
 		if n.get(subjects[i].key) != nil {
@@ -90,7 +94,7 @@ func (d *decoder) finish(n *node, what string, b *bound) bool {
 		d.problem(n, what+" looks at more than one thing", "write one for each")
 		return false
 	case b.kind == nil && b.vessel == nil:
-		if count == 0 {
+		if count == 0 && !b.typo {
 			d.problem(n, what+" looks at nothing", "e.g. {level: T-1, above: 1.2 m}")
 		}
 		return false
@@ -107,6 +111,8 @@ func (d *decoder) finish(n *node, what string, b *bound) bool {
 	switch {
 	case b.above != nil && b.below != nil:
 		d.problem(n, what+" has two bounds", "write one with above and one with below")
+		return false
+	case b.above == nil && b.below == nil && b.typo:
 		return false
 	case b.above == nil && b.below == nil:
 		d.problem(n, fmt.Sprintf("%s needs a bound: above or below", what), "e.g. below: 1.2 "+exampleUnit(b.kind.dim))
@@ -191,7 +197,8 @@ func (d *decoder) conditionField(p **network.Condition, key, help string) field 
 // condition reads a condition that stands alone; nil when it had a fault.
 func (d *decoder) condition(n *node, key string) *network.Condition {
 	b := &bound{to: &network.Condition{}}
-	if !d.mapping(n, key, "", d.conditionFields(b)) || !d.finish(n, key, b) {
+	b.typo = !d.mapping(n, key, "", d.conditionFields(b))
+	if !d.finish(n, key, b) || b.typo {
 		return nil
 	}
 	return b.to

@@ -135,6 +135,9 @@ func (d *decoder) override(owner string, fields []field, values []*node) {
 	}
 }
 
+// set reports whether a value comes from outside.
+func (d *decoder) set(owner, key string) bool { return owner != "" && d.sets[owner+"."+key] != nil }
+
 // unknown notes a key that is not in the table.
 func (d *decoder) unknown(k, v *node, what string, fields []field) {
 	if k.form != scalar {

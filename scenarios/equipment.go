@@ -52,20 +52,23 @@ func (d *decoder) batchFields(b *batch) []field {
 
 // alarm is an alarm as it is being read.
 type alarm struct {
-	to    *network.Alarm
-	when  bound
-	place *node
+	to   *network.Alarm
+	when bound
 }
 
 func (d *decoder) alarmsField(v *network.Vessel) field {
-	return objects(d, "alarms", "levels with a name, and what people do when they come", "alarm",
-		func(a *alarm) []field { return d.alarmFields(v, a) },
-		func(a *alarm, n *node) {
-			if d.finish(n, "alarm", &a.when) {
-				a.to.Place = n.at
+	item := writing{style: anObject, name: "alarm", fields: func() []field { return d.alarmFields(v, &alarm{}) }}
+	return field{key: "alarms", help: "levels with a name, and what people do when they come", written: writing{style: aList, item: &item}, read: func(n *node, _ string) {
+		d.list(n, "alarms", func(_ int, entry *node) {
+			a := &alarm{}
+			whole := d.mapping(entry, "alarm", "", d.alarmFields(v, a))
+			a.when.typo = !whole
+			if d.finish(entry, "alarm", &a.when) && whole {
+				a.to.Place = entry.at
 				v.Alarms = append(v.Alarms, a.to)
 			}
 		})
+	}}
 }
 
 func (d *decoder) alarmFields(v *network.Vessel, a *alarm) []field {

@@ -24,7 +24,9 @@ var eachWords = []string{"day", "hour"}
 func (d *decoder) limit(n *node) {
 	l := &limit{Limit: &network.Limit{Place: n.at}}
 	l.must.to = &l.Must
-	if d.mapping(n, "limit", "", d.limitFields(l)) && d.wholeLimit(l, n) && d.window(l, n) {
+	whole := d.mapping(n, "limit", "", d.limitFields(l))
+	l.must.typo = !whole
+	if n.form == mapping && d.wholeLimit(l, n) && d.window(l, n) && whole {
 		d.plant.Limits = append(d.plant.Limits, l.Limit)
 	}
 }
@@ -104,6 +106,9 @@ func (d *decoder) permitted(l *limit, n *node) bool {
 			d.problem(v, "only_between does not go with "+key, "write two limits")
 			return false
 		}
+	}
+	if l.must.kind == nil && l.must.typo {
+		return false
 	}
 	if l.must.kind == nil || l.must.kind.is != network.Flow {
 		d.problem(n, "only_between goes with flow only", `e.g. {flow: AIR, only_between: ["06:00", "22:00"]}`)

@@ -115,7 +115,7 @@ func (d *decoder) part(l *network.Line, n *node, name string) {
 // tagPart declares the tag of a part and looks up what it refers to.
 func (d *decoder) tagPart(c chosen, n *node) {
 	cl := aPart
-	pump, isPump := c.element.(elements.Pumps)
+	_, isPump := c.element.(elements.Pumps)
 	_, isValve := c.element.(elements.Actuated)
 	_, oneWay := c.element.(elements.OneWay)
 	switch {
@@ -133,18 +133,5 @@ func (d *decoder) tagPart(c chosen, n *node) {
 		if other := c.body.get("standby_for"); other != nil {
 			d.refer(other, "standby_for", nil, aPump)
 		}
-		d.pumpLevels(pump.Drive(), c.body)
 	}
-}
-
-// pumpLevels refuses levels at which a pump would start and stop at once.
-func (d *decoder) pumpLevels(p *elements.Drive, body *node) {
-	if p == nil || !p.Starts.Given || !p.Stops.Given || p.Starts.Vessel != p.Stops.Vessel {
-		return
-	}
-	up, down := p.Starts.Above && !p.Stops.Above, !p.Starts.Above && p.Stops.Above
-	if up && p.Starts.Level > p.Stops.Level || down && p.Starts.Level < p.Stops.Level {
-		return
-	}
-	d.problem(body.get("stops"), "the pump's levels cross: where it starts it would stop at once", "a pump that empties starts above a level and stops below a lower one")
 }

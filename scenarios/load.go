@@ -194,9 +194,7 @@ func (d *decoder) decode(root *node) {
 	}
 	d.circles()
 	d.doubts()
-	if len(d.probs) == 0 {
-		d.whole(root)
-	}
+	d.whole(root)
 }
 
 // defaultsOf fills in what the file leaves out.

@@ -25,7 +25,10 @@ func (d *decoder) table(n *node, key string, cols []quantity.Dim) ([][]float64, 
 		row := make([]float64, len(cols))
 		for i, cell := range r.items {
 			v, good := d.fixed(cell, key, cols[i])
-			row[i], ok = v.SI, ok && good
+			if v.Kinematic {
+				d.problem(cell, key+": a dynamic viscosity is wanted here", "e.g. 24 mPa.s")
+			}
+			row[i], ok = v.SI, ok && good && !v.Kinematic
 		}
 		rows = append(rows, row)
 	}

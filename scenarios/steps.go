@@ -20,11 +20,12 @@ type step struct {
 // step reads one step or hold.
 func (d *decoder) step(n *node) {
 	s := &step{Step: &network.Step{Place: n.at, Over: nan, CheckAfter: nan}}
-	if !d.mapping(n, "step", idOf(n), d.stepFields(s)) {
+	whole := d.mapping(n, "step", idOf(n), d.stepFields(s))
+	if n.form != mapping {
 		return
 	}
 	ok := d.trigger(s, n)
-	if d.action(s, n) && ok {
+	if d.action(s, n) && ok && whole {
 		d.plant.Steps = append(d.plant.Steps, s.Step)
 	}
 }
@@ -104,6 +105,8 @@ func (d *decoder) readField(s *step) field {
 func (d *decoder) trigger(s *step, n *node) bool {
 	at, when, after := n.get("at") != nil, n.get("when") != nil, n.get("after") != nil
 	switch {
+	case d.set(s.ID, "at"):
+		return true
 	case !at && !when && !after:
 		d.problem(n, fmt.Sprintf("step %s has no trigger", s.ID), `it needs at: "06:20" or 20 min, when: a condition, or after: another step`)
 		return false

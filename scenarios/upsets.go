@@ -92,7 +92,9 @@ func (d *decoder) wholeUpset(u *upset, what string, n *node) bool {
 func (d *decoder) milestone(n *node) {
 	m := &network.Milestone{Place: n.at}
 	b := &bound{to: &m.When}
-	if d.mapping(n, "milestone", "", d.milestoneFields(m, b)) && d.finish(n, "milestone", b) {
+	whole := d.mapping(n, "milestone", "", d.milestoneFields(m, b))
+	b.typo = !whole
+	if d.finish(n, "milestone", b) && whole {
 		d.plant.Milestones = append(d.plant.Milestones, m)
 	}
 }

@@ -23,7 +23,8 @@ func (d *decoder) vessel(key, n *node) {
 		t.vessel = v
 	}
 	before := len(d.probs)
-	if d.mapping(n, "vessel "+v.Tag, v.Tag, d.vesselFields(v)) && d.sets[v.Tag+".level"] == nil && d.sets[v.Tag+".contents"] == nil {
+	d.mapping(n, "vessel "+v.Tag, v.Tag, d.vesselFields(v))
+	if n.form == mapping && d.sets[v.Tag+".level"] == nil && d.sets[v.Tag+".contents"] == nil {
 		d.one(n, "vessel "+v.Tag, "level", "contents")
 	}
 	if len(d.probs) == before && v.Element != nil {
