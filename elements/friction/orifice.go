@@ -85,3 +85,13 @@ func LongOrifice(ratio, re float64) float64 {
 	l := math.Log10(0.00015 * re)
 	return 1 / (1/(0.827-0.0085*ratio) + 20/re*(1+2.25*ratio) - 0.005*ratio/(1+7.5*l*l))
 }
+
+// SharpOrifice returns the discharge coefficient (−) measured on sharp-edged round orifices discharging freely under a head h, m, for a diameter d, m:
+//
+//	C = 0.6075 + 0.0098/√h − 0.0037·d, h in feet and d in inches.
+//
+// It helps to choose a Cd; no part uses it. Valid: d from 25 to 75 mm, h from 0.2 to 3 m, less sure beyond.
+// Source: Mair, Proc. Inst. Civil Engineers 84, fitted by W. C. Unwin, Hydraulics, Encyclopaedia Britannica, 11th ed., 1911.
+func SharpOrifice(head, diameter float64) float64 {
+	return 0.6075 + 0.0098/math.Sqrt(head/0.3048) - 0.0037*diameter/0.0254
+}
