@@ -1,6 +1,7 @@
 package cli
 
 import (
+	"context"
 	"fmt"
 	"io"
 
@@ -28,14 +29,14 @@ With --normalise it writes the file in plain block form, everything quoted that 
   headfall check plant.yaml --set V-1.kv=80
   headfall check plant.yaml --normalise > plain.yaml`,
 		Args: oneFile,
-		RunE: func(c *cobra.Command, args []string) error { return a.check(args[0], normalise) },
+		RunE: func(c *cobra.Command, args []string) error { return a.check(c.Context(), args[0], normalise) },
 	}
 	c.Flags().BoolVar(&normalise, "normalise", false, "write the file in plain quoted block form to standard output")
 	return c
 }
 
-func (a *app) check(path string, normalise bool) error {
-	src, err := a.read(path)
+func (a *app) check(ctx context.Context, path string, normalise bool) error {
+	src, err := a.read(ctx, path)
 	if err != nil {
 		return err
 	}

@@ -189,10 +189,5 @@ func (a *app) kindsJSON(kinds []*elements.Kind) error {
 		}
 		answer.Kinds = append(answer.Kinds, one)
 	}
-	var files outputs
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, answer) })
-	if err := files.check(&source{}); err != nil {
-		return err
-	}
-	return files.save(a.Out)
+	return a.only(a.opt.json, func(w io.Writer) error { return export.JSON(w, answer) })
 }

@@ -21,14 +21,17 @@ func newNew(a *app) *cobra.Command {
 		Long:    "New writes a small plant that runs, with a comment on every key, to FILE or to standard output. A FILE that is there already is left alone.",
 		Example: "  headfall new plant.yaml\n  headfall new > plant.yaml",
 		RunE: func(c *cobra.Command, args []string) error {
+			if a.opt.json != "" {
+				return bad("headfall schema --json PATH writes the schema", "new has nothing to write as JSON")
+			}
 			if len(args) > 1 {
 				return bad("headfall new plant.yaml", "new takes one FILE, got %d", len(args))
 			}
 			if len(args) == 0 || args[0] == "-" {
-				_, err := io.WriteString(a.Out, scenarios.Starter())
+				_, err := a.Out.Write(scenarios.Starter())
 				return err
 			}
-			return a.create(args[0], []byte(scenarios.Starter()))
+			return a.create(args[0], scenarios.Starter())
 		},
 	}
 }
@@ -38,15 +41,18 @@ func (a *app) create(path string, data []byte) error {
 	if _, err := os.Lstat(path); err == nil {
 		return bad("give another name", "%s is there already; it is not written over", path)
 	}
-	files := outputs{{path, func(w io.Writer) error { _, err := w.Write(data); return err }}}
-	if err := files.check(&source{}); err != nil {
-		return err
-	}
-	if err := files.save(a.Out); err != nil {
+	if err := a.only(path, func(w io.Writer) error { _, err := w.Write(data); return err }); err != nil {
 		return err
 	}
 	_, err := io.WriteString(a.Out, "wrote "+path+"; next: headfall check "+path+"\n")
 	return err
+}
+
+func or(a, b string) string {
+	if a == "" {
+		return b
+	}
+	return a
 }
 
 func newSchema(a *app) *cobra.Command {
@@ -60,8 +66,7 @@ shows what each one means and marks what does not fit while it is typed.`,
   # yaml-language-server: $schema=headfall.schema.json`,
 		Args: none,
 		RunE: func(*cobra.Command, []string) error {
-			_, err := a.Out.Write(scenarios.Schema())
-			return err
+			return a.only(or(a.opt.json, "-"), func(w io.Writer) error { _, err := w.Write(scenarios.Schema()); return err })
 		},
 	}
 }

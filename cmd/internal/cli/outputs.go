@@ -93,6 +93,15 @@ func (o outputs) save(out io.Writer) error {
 	return nil
 }
 
+// only writes one file, with nothing to print besides.
+func (a *app) only(path string, write func(io.Writer) error) error {
+	files := outputs{{path, write}}
+	if err := files.check(&source{}); err != nil {
+		return err
+	}
+	return files.save(a.Out)
+}
+
 // stage is a file written beside its place.
 type stage struct{ path, temp string }
 

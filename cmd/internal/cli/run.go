@@ -56,7 +56,7 @@ func (a *app) run(ctx context.Context, path string, o runOptions) error {
 	if o.html != "" && o.noReport {
 		return bad("leave one of them out", "--html and --no-report do not go together")
 	}
-	src, err := a.read(path)
+	src, err := a.read(ctx, path)
 	if err != nil {
 		return err
 	}

@@ -106,17 +106,17 @@ func TestRefusedBeforeAnythingIsComputed(t *testing.T) {
 
 // What was computed before an interruption, the end of the time or a failure is kept and marked.
 func TestPartialAnswers(t *testing.T) {
+	stopped, cancel := context.WithCancel(t.Context())
 	partial := func(wait bool, err error) func(context.Context, func() (*network.Plant, error), *options, func(float64)) (*network.Result, error) {
 		return func(ctx context.Context, _ func() (*network.Plant, error), _ *options, _ func(float64)) (*network.Result, error) {
 			if wait {
+				cancel()
 				<-ctx.Done()
 				err = ctx.Err()
 			}
 			return answerOf(network.Run, 0), err
 		}
 	}
-	stopped, cancel := context.WithCancel(t.Context())
-	cancel()
 	for _, c := range []struct {
 		name  string
 		ctx   context.Context

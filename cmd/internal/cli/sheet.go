@@ -37,7 +37,7 @@ func (a *app) sheet(ctx context.Context, path, html string, plain bool) error {
 	if html != "" && plain {
 		return bad("leave one of them out", "--html and --text do not go together")
 	}
-	src, err := a.read(path)
+	src, err := a.read(ctx, path)
 	if err != nil {
 		return err
 	}

@@ -1,6 +1,7 @@
 package cli
 
 import (
+	"context"
 	"errors"
 	"io"
 	"io/fs"
@@ -18,10 +19,10 @@ type source struct {
 
 const largest = 16 << 20 // bytes; no plant file is larger
 
-// read reads FILE or standard input.
-func (a *app) read(path string) (*source, error) {
+// read reads FILE or standard input, until it ends or the program is interrupted.
+func (a *app) read(ctx context.Context, path string) (*source, error) {
 	s := &source{path: path, name: filepath.Base(path)}
-	var from io.Reader = a.In
+	from := a.In
 	if path == "-" {
 		s.name = "standard input"
 	} else {
@@ -32,8 +33,10 @@ func (a *app) read(path string) (*source, error) {
 		defer f.Close()
 		from = f
 	}
-	data, err := io.ReadAll(io.LimitReader(from, largest+1))
+	data, err := readAll(ctx, from)
 	switch {
+	case ctx.Err() != nil:
+		return nil, &Exit{Code: ExitInterrupted, Err: errInterrupted}
 	case err != nil:
 		return nil, bad("", "cannot read %s: %w", s.name, reason(err))
 	case len(data) > largest:
@@ -41,6 +44,21 @@ func (a *app) read(path string) (*source, error) {
 	}
 	s.data = data
 	return s, nil
+}
+
+// readAll reads to the end, but does not wait for it once the program is interrupted: a terminal or a pipe may never end.
+func readAll(ctx context.Context, from io.Reader) (data []byte, err error) {
+	done := make(chan struct{})
+	go func() {
+		defer close(done)
+		data, err = io.ReadAll(io.LimitReader(from, largest+1))
+	}()
+	select {
+	case <-done:
+		return data, err
+	case <-ctx.Done():
+		return nil, ctx.Err()
+	}
 }
 
 // base is the file's name without its ending, for the names of what is written.

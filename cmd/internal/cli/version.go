@@ -2,6 +2,7 @@ package cli
 
 import (
 	"fmt"
+	"io"
 
 	"github.com/spf13/cobra"
 )
@@ -21,6 +22,12 @@ func newVersion(a *app) *cobra.Command {
 		RunE: func(*cobra.Command, []string) error {
 			if notices {
 				return writeNotices(a.Out)
+			}
+			if a.opt.json != "" {
+				return a.only(a.opt.json, func(w io.Writer) error {
+					_, err := fmt.Fprintf(w, "{\"schema\": 1, \"command\": \"version\", \"name\": \"headfall\", \"version\": %q}\n", Version)
+					return err
+				})
 			}
 			_, err := fmt.Fprintln(a.Out, "headfall", Version)
 			return err
