@@ -98,14 +98,18 @@ func (p *page) worst(l *network.LimitResult) string {
 	return said
 }
 
-// share is a limit's margin as a share of its bound, for ranking limits of different kinds.
+// share is a limit's margin as a share of its bound, or of its worst value where the bound is nothing, for ranking limits of different kinds. The
+// report ranks them alike.
 func share(l *network.LimitResult) float64 {
-	if l.Margin == nil {
-		return math.Inf(1)
-	}
-	scale := 1.0
-	if l.BoundSI != nil && *l.BoundSI != 0 {
+	scale := 0.0
+	if l.BoundSI != nil {
 		scale = math.Abs(*l.BoundSI)
+	}
+	if scale == 0 && l.Worst != nil {
+		scale = math.Abs(*l.Worst)
+	}
+	if scale == 0 {
+		scale = math.Max(math.Abs(*l.Margin), math.SmallestNonzeroFloat64)
 	}
 	return *l.Margin / scale
 }
@@ -130,8 +134,7 @@ func tightest(limits []*network.LimitResult) *network.LimitResult {
 		if l.Margin == nil {
 			continue
 		}
-		if least == nil || gravity(l.Verdict) < gravity(least.Verdict) ||
-			gravity(l.Verdict) == gravity(least.Verdict) && share(l) < share(least) {
+		if least == nil || share(l) < share(least) {
 			least = l
 		}
 	}
