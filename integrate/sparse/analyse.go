@@ -1,5 +1,10 @@
 package sparse
 
+import (
+	"math"
+	"slices"
+)
+
 // Factor holds the LU factors of matrices with one pattern. Its memory is allocated by Analyse; Refactor and Solve allocate nothing,
 // unless a matrix needs other pivots than its diagonal and more room than any before it.
 //
@@ -10,6 +15,7 @@ type Factor struct {
 	n      int
 	pat    *Pattern
 	order  []int32 // unknown eliminated k-th
+	plain  bool    // they are eliminated as they come
 	panels []panel
 	runs   []run
 	rows   []int32 // row lists of the panels, ascending
@@ -21,10 +27,14 @@ type Factor struct {
 	x      []float64
 	buf    []float64 // two rows of an update
 	values []float64 // the matrix of the last Refactor
-	check  []residue
+	rptr   []int32   // the pattern by rows: columns, and places in the pattern
+	rcol   []int32
+	rpos   []int32
 	rhs    []float64
+	left   []float64 // residual
 	pivots *pivoting // nil until a matrix needed it
 	mode   mode
+	wild   bool // elimination met multipliers beyond tame
 	counts Counts
 }
 
@@ -58,26 +68,36 @@ type cut struct {
 	at      int32
 }
 
-// Analyse prepares the factorisation of matrices with pattern p: it chooses an order, finds the fill, and allocates.
+// Analyse prepares the factorisation of matrices with pattern p: it chooses an order, finds the fill, and allocates. Where the unknowns are
+// numbered so that elimination as they come fills hardly more than the order found, and waits no longer, they are taken as they come,
+// which saves Solve two passes.
 func Analyse(p *Pattern) *Factor {
-	return analyse(p, Order(p))
+	order := Order(p)
+	cols := columns(p, order, math.MaxInt)
+	fill := 0
+	for _, c := range cols {
+		fill += len(c)
+	}
+	as := make([]int32, p.N)
+	for i := range as {
+		as[i] = int32(i)
+	}
+	if c := columns(p, as, fill+fill/8); c != nil && height(c) <= height(cols)+height(cols)/8 {
+		order, cols = as, c
+	}
+	return analyse(p, order, cols)
 }
 
-// AnalyseInOrder is Analyse with a given order of elimination.
-func AnalyseInOrder(p *Pattern, order []int32) *Factor {
-	return analyse(p, order)
-}
-
-func analyse(p *Pattern, order []int32) *Factor {
+func analyse(p *Pattern, order []int32, cols [][]int32) *Factor {
 	f := &Factor{n: p.N, pat: p}
-	cols := columns(p, order)
-	groups := amalgamate(cols)
+	groups := amalgamate(cols, slices.IsSorted(order))
 	f.order = make([]int32, 0, f.n)
 	for _, g := range groups {
 		for _, c := range g.cols {
 			f.order = append(f.order, order[c])
 		}
 	}
+	f.plain = slices.IsSorted(f.order)
 	number := make([]int32, f.n) // from the first order to the final one
 	k := int32(0)
 	for _, g := range groups {
@@ -92,7 +112,8 @@ func analyse(p *Pattern, order []int32) *Factor {
 	f.findRuns()
 	f.x = make([]float64, f.n)
 	f.rhs = make([]float64, f.n)
-	f.check = make([]residue, f.n)
+	f.left = make([]float64, f.n)
+	f.transpose()
 	return f
 }
 
@@ -119,7 +140,7 @@ func (f *Factor) layPanels(groups []group, cols [][]int32, number []int32) {
 // Size returns the number of stored entries of the factors, zeros in panels included.
 func (f *Factor) Size() int { return len(f.v) }
 
-// Order returns the order of elimination: Order()[k] is the unknown eliminated k-th.
+// Order returns the order of elimination: Order()[k] is the unknown eliminated k-th. Unknowns renumbered like that are eliminated as they come.
 func (f *Factor) Order() []int32 { return f.order }
 
 // Counts returns what was done since Analyse.

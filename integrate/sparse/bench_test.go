@@ -13,7 +13,8 @@ func cases() []struct {
 		name string
 		p    *Pattern
 	}{
-		{"chain1000", chain(1000)}, {"tree1000", tree(1000, rand.New(rand.NewPCG(1, 1)))}, {"grid1024", grid(32)}, {"grid10000", grid(100)},
+		{"chain1000", chain(1000)}, {"bothends1000", bothEnds(1000)}, {"tree1000", tree(1000, rand.New(rand.NewPCG(1, 1)))},
+		{"grid1024", grid(32)}, {"numbered1024", renumbered(grid(32))}, {"grid10000", grid(100)},
 	}
 }
 
@@ -71,6 +72,7 @@ func BenchmarkSolveChecked(b *testing.B) {
 			if err := f.Refactor(dominant(c.p, rng)); err != nil {
 				b.Fatal(err)
 			}
+			f.wild = true
 			x := normals(c.p.N, rng)
 			y := make([]float64, len(x))
 			b.ReportAllocs()

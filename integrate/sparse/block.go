@@ -5,7 +5,7 @@ import "math"
 // eliminateBlock factorises a panel of several columns and updates its ancestors.
 func (f *Factor) eliminateBlock(p *panel) bool {
 	d, u, l := f.blocks(p)
-	if !eliminateDense(d, u, l, int(p.w), int(p.r)) {
+	if !f.eliminateDense(d, u, l, int(p.w), int(p.r)) {
 		return false
 	}
 	w, r := int(p.w), int(p.r)
@@ -36,7 +36,7 @@ func (f *Factor) eliminateBlock(p *panel) bool {
 }
 
 // eliminateDense factorises the w×(w+r) and (w+r)×w parts of a panel in place; pivots are left inverted.
-func eliminateDense(d, u, l []float64, w, r int) bool {
+func (f *Factor) eliminateDense(d, u, l []float64, w, r int) bool {
 	for k := range w {
 		pivot := d[k*w+k]
 		inv := 1 / pivot
@@ -61,7 +61,7 @@ func eliminateDense(d, u, l []float64, w, r int) bool {
 				axpy(l[i*r:(i+1)*r], lk, n)
 			}
 		}
-		if !(largest < growth) || !(math.Abs(inv) <= math.MaxFloat64) {
+		if !(largest <= tame) && !f.accept(largest) || !(math.Abs(inv) <= math.MaxFloat64) {
 			return false
 		}
 	}

@@ -11,6 +11,15 @@ func chain(n int) *Pattern {
 	return graph(n, edges)
 }
 
+// bothEnds is a chain numbered from both ends.
+func bothEnds(n int) *Pattern {
+	var edges [][2]int
+	for i := 0; i+2 < n; i++ {
+		edges = append(edges, [2]int{i, i + 2})
+	}
+	return graph(n, append(edges, [2]int{n - 2, n - 1}))
+}
+
 // grid is the pattern of m×m unknowns joined to their neighbours.
 func grid(m int) *Pattern {
 	var edges [][2]int
@@ -56,6 +65,19 @@ func fromColumns(cols [][]int32) *Pattern {
 		p.Ptr = append(p.Ptr, int32(len(p.Row)))
 	}
 	return p
+}
+
+// renumbered is a pattern with its unknowns in the order of elimination.
+func renumbered(p *Pattern) *Pattern {
+	order := Analyse(p).Order()
+	number := inverse(order)
+	cols := make([][]int32, p.N)
+	for k, j := range order {
+		for _, i := range p.Row[p.Ptr[j]:p.Ptr[j+1]] {
+			cols[k] = append(cols[k], number[i])
+		}
+	}
+	return fromColumns(cols)
 }
 
 // random is an unsymmetric pattern with the diagonal and about extra entries a column.

@@ -6,6 +6,16 @@ import "math"
 // rows may be in different units: what matters is caught by the backward error of SolveChecked.
 const growth = 1e10
 
+// tame is the largest multiplier that threshold partial pivoting would have allowed. While no multiplier is larger, elimination on the diagonal is
+// as stable, and SolveChecked trusts it.
+const tame = 1 / threshold
+
+// accept notes a multiplier that is not tame; false if it is not below growth, or not a number.
+func (f *Factor) accept(l float64) bool {
+	f.wild = true
+	return math.Abs(l) < growth
+}
+
 // Refactor factorises the matrix with these values, in the order of the pattern. The slice must not change before the next Refactor:
 // SolveChecked measures its residual with it. It eliminates on the diagonal while the pivots allow, and with threshold partial
 // pivoting otherwise.
@@ -37,6 +47,7 @@ func (f *Factor) pivot() error {
 func (f *Factor) eliminate() bool {
 	v := f.v
 	clear(v)
+	f.wild = false
 	for k, s := range f.slot {
 		v[s] = f.values[k]
 	}
@@ -47,6 +58,8 @@ func (f *Factor) eliminate() bool {
 			ok = f.eliminateLone(r)
 		case leaf:
 			ok = f.eliminateLeaves(r)
+		case path:
+			ok = f.eliminatePath(r)
 		case twig:
 			ok = f.eliminateTwigs(r)
 		default:
@@ -85,7 +98,7 @@ func (f *Factor) eliminateLeaves(r run) bool {
 		d, u, l := w[0], w[1], w[2]
 		inv := 1 / d
 		l *= inv
-		if !(math.Abs(l) < growth) || d == 0 {
+		if !(math.Abs(l) <= tame) && !f.accept(l) || d == 0 {
 			return false
 		}
 		v[t] -= l * u
@@ -106,7 +119,7 @@ func (f *Factor) eliminateTwigs(r run) bool {
 		inv := 1 / d
 		l0 *= inv
 		l1 *= inv
-		if !(math.Abs(l0) < growth && math.Abs(l1) < growth) || d == 0 {
+		if l := max(math.Abs(l0), math.Abs(l1)); !(l <= tame) && !f.accept(l) || d == 0 {
 			return false
 		}
 		t := spots[:4]
@@ -132,7 +145,7 @@ func (f *Factor) eliminateColumn(p *panel) bool {
 		l[i] *= inv
 		largest = max(largest, math.Abs(l[i]))
 	}
-	if !(largest < growth) || d == 0 {
+	if !(largest <= tame) && !f.accept(largest) || d == 0 {
 		return false
 	}
 	for _, c := range f.cuts[p.cut : p.cut+p.ncut] {

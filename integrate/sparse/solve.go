@@ -13,9 +13,12 @@ func (f *Factor) Solve(b []float64) {
 }
 
 func (f *Factor) solve(b []float64) {
-	x := f.x
-	for k, i := range f.order {
-		x[k] = b[i]
+	x := b
+	if !f.plain {
+		x = f.x
+		for k, i := range f.order {
+			x[k] = b[i]
+		}
 	}
 	for _, r := range f.runs {
 		f.forward(r, x)
@@ -23,8 +26,10 @@ func (f *Factor) solve(b []float64) {
 	for k := len(f.runs) - 1; k >= 0; k-- {
 		f.backward(f.runs[k], x)
 	}
-	for k, i := range f.order {
-		b[i] = x[k]
+	if !f.plain {
+		for k, i := range f.order {
+			b[i] = x[k]
+		}
 	}
 }
 
@@ -41,6 +46,8 @@ func (f *Factor) forward(r run, x []float64) {
 			x[i] -= w[2] * own[k]
 			w = w[3:]
 		}
+	case path:
+		forwardPath(x[p.col:int(p.col)+n+int(r.stride)], f.v[p.at:int(p.at)+3*n], int(r.stride))
 	case twig:
 		w := f.v[p.at : int(p.at)+5*n]
 		rows := f.rows[p.row : int(p.row)+2*n]
@@ -76,6 +83,8 @@ func (f *Factor) backward(r run, x []float64) {
 			q := w[3*k : 3*k+2 : 3*k+2]
 			own[k] = own[k]*q[0] - q[1]*x[rows[k]]
 		}
+	case path:
+		backwardPath(x[p.col:int(p.col)+n+int(r.stride)], f.v[p.at:int(p.at)+3*n], int(r.stride))
 	case twig:
 		w := f.v[p.at : int(p.at)+5*n]
 		rows := f.rows[p.row : int(p.row)+2*n]

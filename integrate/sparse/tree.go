@@ -2,8 +2,8 @@ package sparse
 
 // columns returns, for the symmetric pattern p + pᵀ renumbered by order, the rows below the diagonal of each column of the factor, ascending:
 // struct(j) = adj(j) ∪ ⋃ struct(c)\{j} over the children c of j, the parent of a column being its first row (Liu, SIAM J. Matrix Anal.
-// Appl. 11:134, 1990).
-func columns(p *Pattern, order []int32) [][]int32 {
+// Appl. 11:134, 1990). It gives up, returning nil, beyond limit rows in all.
+func columns(p *Pattern, order []int32, limit int) [][]int32 {
 	n := p.N
 	number := inverse(order)
 	adj := adjacency(p)
@@ -27,12 +27,29 @@ func columns(p *Pattern, order []int32) [][]int32 {
 				add(i)
 			}
 		}
+		if limit -= len(s); limit < 0 {
+			return nil
+		}
 		cols[j] = sortedSet(s)
 		if len(s) > 0 {
 			children[cols[j][0]] = append(children[cols[j][0]], j)
 		}
 	}
 	return cols
+}
+
+// height returns the largest number of columns of which each waits for the one before: the height of the elimination tree.
+func height(cols [][]int32) int {
+	h := make([]int, len(cols))
+	most := 0
+	for j, c := range cols {
+		h[j]++
+		most = max(most, h[j])
+		if len(c) > 0 {
+			h[c[0]] = max(h[c[0]], h[j])
+		}
+	}
+	return most
 }
 
 func inverse(order []int32) []int32 {
@@ -50,8 +67,8 @@ type group struct {
 }
 
 // amalgamate joins columns with their parents' where the panel then holds few zeros (Ashcraft and Grimes, ACM Trans. Math. Softw. 15:291,
-// 1989). Columns with one or two rows below the diagonal stay alone: trees have only such, and have their own loops.
-func amalgamate(cols [][]int32) []group {
+// 1989), if asked only where that does not change the order of columns. Columns with one or two rows below the diagonal stay alone: trees have only such, and have their own loops.
+func amalgamate(cols [][]int32, inOrder bool) []group {
 	groups := make([]group, len(cols))
 	for j := range cols {
 		groups[j] = group{cols: []int32{int32(j)}, nnz: 1 + len(cols[j])}
@@ -61,6 +78,9 @@ func amalgamate(cols [][]int32) []group {
 			continue
 		}
 		g, p := &groups[j], &groups[s[0]]
+		if inOrder && p.cols[0] != int32(j)+1 {
+			continue
+		}
 		w, r := len(g.cols)+len(p.cols), len(cols[s[0]])
 		stored, nnz := w*(w+1)/2+w*r, g.nnz+p.nnz
 		if worthJoining(w, stored, nnz) {
