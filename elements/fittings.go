@@ -65,6 +65,9 @@ func (e *fittingSet) Drop(q float64, at *Local) (dp, slope float64) {
 // Bore returns the bore that was written; 0 when the fittings take that of their neighbour.
 func (e *fittingSet) Bore() float64 { return e.bore }
 
+// Reduces tells that a reducer or an expander is among them.
+func (e *fittingSet) Reduces() bool { return e.counts["reducer"] > 0 || e.counts["expander"] > 0 }
+
 // Coefficient returns the sum of the loss coefficients, −.
 func (e *fittingSet) Coefficient() float64 { return e.total }
 

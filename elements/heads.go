@@ -64,7 +64,7 @@ func (e *coneHead) Head(diameter, outlet float64) (shape.Head, error) {
 type ellipsoidalHead struct{ depth float64 } // m
 
 func (e *ellipsoidalHead) Bind(p *Params) {
-	p.Length(&e.depth, "depth", Optional, "depth", Positive).Or("a quarter of the diameter")
+	p.Length(&e.depth, "depth", Optional, "depth; default a quarter of the diameter", Positive)
 }
 func (e *ellipsoidalHead) Ready() error { return nil }
 func (e *ellipsoidalHead) Head(diameter, outlet float64) (shape.Head, error) {

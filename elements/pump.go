@@ -1,6 +1,10 @@
 package elements
 
-import "headfall/elements/quantity"
+import (
+	"math"
+
+	"headfall/elements/quantity"
+)
 
 func init() {
 	Register(Kind{
@@ -89,33 +93,33 @@ func (e *pump) fit(f *faults) {
 	}
 }
 
-// head is the lift, m, and its slope at flow q, m³/s.
-func (e *pump) head(q float64) (h, slope float64) {
+// head is the lift, m, and its slope at flow q, m³/s, of a pump that has a share of its head, or of its rate, left.
+func (e *pump) head(q, left float64) (h, slope float64) {
 	if e.byRate {
 		const stiff = 1e5 // m of head at which the flow of a rate would be nothing
-		return stiff * (1 - q/e.rate), -stiff / e.rate
+		rate := e.rate * left
+		return stiff * (1 - q/rate), -stiff / rate
 	}
-	return e.curve.at(q)
+	h, slope = e.curve.at(q)
+	return left * h, left * slope
 }
 
 // Drop is the lift with its sign turned, as far as the pump runs; as far as it stands still it is the fall of its curve, the pump's inner losses.
 func (e *pump) Drop(q float64, at *Local) (dp, slope float64) {
 	k := at.Fluid.Density * at.Gravity
-	on := at.Opening
-	h, s := e.head(q)
-	dp, slope = -on*k*h, -on*k*s
+	on, left := at.Opening, at.Strength
+	if left <= 0 {
+		left = 1
+	}
+	if on > 0 {
+		h, s := e.head(q, left)
+		dp, slope = -on*k*h, -on*k*s
+	}
 	if on < 1 {
-		h0, _ := e.head(0)
-		a := q
-		if q < 0 {
-			a = -q
-		}
-		h, s = e.head(a)
-		h = h0 - h
-		if q < 0 {
-			h = -h
-		}
-		dp, slope = dp+(1-on)*k*h, slope-(1-on)*k*s
+		top, _ := e.head(0, 1)
+		h, s := e.head(math.Abs(q), 1)
+		dp += (1 - on) * k * math.Copysign(top-h, q)
+		slope -= (1 - on) * k * s
 	}
 	return dp, slope
 }
