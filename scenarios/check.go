@@ -6,7 +6,6 @@ import (
 	"strings"
 
 	"headfall/elements"
-	"headfall/elements/quantity"
 	"headfall/elements/shape"
 	"headfall/network"
 )
@@ -134,7 +133,7 @@ func (d *decoder) startOf(n *node, v *network.Vessel, s shape.Shape) {
 		d.problem(place("level"), fmt.Sprintf("the start level, %s, is above the rim, %s", metres(v.Level), metres(top)), "levels are above the vessel's base")
 	}
 	if most, _ := s.Volume(top); v.Contents > most*(1+1e-9) {
-		d.problem(place("contents"), fmt.Sprintf("the start contents are more than the vessel holds to its rim, %s", quantity.Format(most, quantity.Volume, "m3", 4)), "")
+		d.problem(place("contents"), fmt.Sprintf("the start contents are more than the vessel holds to its rim, %s", fmt.Sprintf("%.4g m3", most)), "")
 	}
 	if v.EmptyAt > top {
 		d.problem(place("empty_at"), fmt.Sprintf("empty_at is above the rim, %s", metres(top)), "")
@@ -144,4 +143,4 @@ func (d *decoder) startOf(n *node, v *network.Vessel, s shape.Shape) {
 	}
 }
 
-func metres(x float64) string { return quantity.Format(x, quantity.Length, "m", 4) }
+func metres(x float64) string { return fmt.Sprintf("%.4g m", x) }

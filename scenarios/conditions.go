@@ -60,7 +60,7 @@ func (d *decoder) conditionFields(b *bound) []field {
 		}})
 	}
 	side := func(key, help string, to **node) field {
-		return field{key: key, help: help, written: writing{style: aQuantity, dim: quantity.Length}, read: func(n *node, _ string) { *to = n }}
+		return field{key: key, help: help, written: writing{style: anyText}, read: func(n *node, _ string) { *to = n }}
 	}
 	return append(fields, side("above", "the bound: true, or held, when above it", &b.above), side("below", "the bound: true, or held, when below it", &b.below))
 }

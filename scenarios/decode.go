@@ -79,11 +79,14 @@ func (d *decoder) mapping(n *node, what, owner string, fields []field) bool {
 		return false
 	}
 	values := make([]*node, len(fields))
+	meant := map[string]bool(nil) // keys that misspelt ones stand for
 	for i, k := range n.keys {
 		j := indexOf(fields, k.text)
 		switch {
 		case j < 0:
-			d.unknown(k, n.items[i], what, fields)
+			if near := d.unknown(k, n.items[i], what, fields); near != "" {
+				meant = also(meant, near)
+			}
 		case values[j] != nil:
 			d.problem(k, fmt.Sprintf("%s is given twice", k.text), fmt.Sprintf("it stands in line %d already", values[j].at.Line))
 		case n.items[i].empty && !fields[j].mayBeEmpty():
@@ -101,6 +104,7 @@ func (d *decoder) mapping(n *node, what, owner string, fields []field) bool {
 		case v != nil && v.empty && !f.mayBeEmpty():
 		case v != nil:
 			f.read(v, owner)
+		case meant[f.key]:
 		case f.need == elements.Required:
 			missing = append(missing, f.key)
 		case f.absent != nil:
@@ -138,16 +142,27 @@ func (d *decoder) override(owner string, fields []field, values []*node) {
 // set reports whether a value comes from outside.
 func (d *decoder) set(owner, key string) bool { return owner != "" && d.sets[owner+"."+key] != nil }
 
-// unknown notes a key that is not in the table.
-func (d *decoder) unknown(k, v *node, what string, fields []field) {
-	if k.form != scalar {
-		return // noted when the tree was made
+func also(set map[string]bool, word string) map[string]bool {
+	if set == nil {
+		set = map[string]bool{}
 	}
-	hint := d.hint(k.text, keysOf(fields))
-	if v.empty && v.text == "" && k.at.Line > 0 && strings.ContainsAny(k.src.line(k.at.Line), "{[") {
+	set[word] = true
+	return set
+}
+
+// unknown notes a key that is not in the table and returns the one it is most like, or "".
+func (d *decoder) unknown(k, v *node, what string, fields []field) (near string) {
+	if k.form != scalar || k.text == "<<" {
+		return "" // noted when the tree was made
+	}
+	keys := keysOf(fields)
+	near = nearest(k.text, keys)
+	hint := d.hint(k.text, keys)
+	if v.empty && v.text == "" && near == "" && strings.ContainsAny(k.src.line(k.at.Line), "{[") {
 		hint = "a comma ends a text inside braces: put the whole text in quotes, or write one key a line"
 	}
 	d.problem(k, fmt.Sprintf("%s has no key %s", what, quoted(k.text)), hint)
+	return near
 }
 
 // one reports whether exactly one of the keys stands in the mapping, and notes it when not.

@@ -46,6 +46,7 @@ type writing struct {
 	room   elements.Room
 	name   string         // of an object, among the definitions of the schema
 	fields func() []field // of an object
+	unless string         // a key of an object that stands for those it needs
 	item   *writing       // of a list or map
 	least  int            // entries of a list at least
 	or     *writing       // another way

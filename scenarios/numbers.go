@@ -1,9 +1,7 @@
 package scenarios
 
 import (
-	"cmp"
 	"math"
-	"slices"
 
 	"headfall/elements"
 	"headfall/elements/quantity"
@@ -74,12 +72,6 @@ func (d *decoder) doubts() {
 		case "default":
 			d.assume(n)
 		}
-	}
-	inOrder := func(a, b *network.Number) int {
-		return cmp.Or(cmp.Compare(a.Place.Line, b.Place.Line), cmp.Compare(a.Place.Column, b.Place.Column))
-	}
-	if !slices.IsSortedFunc(d.plant.Numbers, inOrder) {
-		slices.SortStableFunc(d.plant.Numbers, inOrder)
 	}
 }
 

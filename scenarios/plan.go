@@ -57,7 +57,7 @@ func (d *decoder) planFields() []field {
 }
 
 func vesselWriting(d *decoder) writing {
-	return writing{style: anObject, name: "vessel", fields: func() []field {
+	return writing{style: anObject, name: "vessel", unless: "like", fields: func() []field {
 		like := field{key: "like", help: "a vessel that this one copies; other keys here take the place of its own", written: writing{style: aTag}}
 		return append(d.vesselFields(newVessel()), like)
 	}}

@@ -139,7 +139,12 @@ func (s *schemaWriter) named(w *writing) jsonObject {
 	name := w.name
 	if s.definitions[name] == nil {
 		s.definitions[name] = jsonObject{} // written now: it may contain itself
-		s.definitions[name] = s.object(fields)
+		o := s.object(fields)
+		if w.unless != "" {
+			o["anyOf"] = []any{jsonObject{"required": o["required"]}, jsonObject{"required": []string{w.unless}}}
+			delete(o, "required")
+		}
+		s.definitions[name] = o
 	}
 	return ref(name)
 }

@@ -15,7 +15,8 @@ func nearest(w string, words []string) string {
 		return ""
 	}
 	low := strings.ToLower(w)
-	best, least := "", 1+max(1, utf8.RuneCountInString(w)/3)
+	runes := utf8.RuneCountInString(w)
+	best, least := "", 2+runes/4-runes/10 // one slip in three letters, two in four: "boer" for bore
 	for _, word := range words {
 		if len(word) > longestWord*4 {
 			continue

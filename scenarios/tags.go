@@ -125,7 +125,7 @@ func (d *decoder) resolve() {
 		case t == nil:
 			d.problem(r.n, fmt.Sprintf("%s: there is no %s %s", r.key, classes(r.classes), quoted(r.n.text)), d.hint(r.n.text, d.tagsOf(r.classes)))
 		case !slices.Contains(r.classes, t.class):
-			d.problem(r.n, fmt.Sprintf("%s: %s is a %s, not a %s", r.key, r.n.text, t.class, classes(r.classes)), d.hint(r.n.text, d.tagsOf(r.classes)))
+			d.problem(r.n, fmt.Sprintf("%s: %s is a %s, not a %s", r.key, r.n.text, t.class, classes(r.classes)), oneOf(d.tagsOf(r.classes)))
 		case r.then != nil:
 			r.then(t)
 		}
