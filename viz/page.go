@@ -1,9 +1,14 @@
 package viz
 
 import (
+	"bufio"
+	"bytes"
+	"errors"
+	"html/template"
 	"io"
 
 	"headfall/network"
+	"headfall/viz/export"
 )
 
 // Page is what a report shows: a plant, what was computed for it, and the studies made of it, if any.
@@ -14,11 +19,156 @@ type Page struct {
 	Spread any // of study spread
 }
 
+// view is everything that the templates print.
+type view struct {
+	CSP, Title         string
+	CSS                template.CSS
+	Script, Echarts    template.JS
+	Cells              [][2]string
+	V                  verdictView
+	Cautions           []string
+	Contents           [][2]string
+	Headroom           []headroomRow
+	HasBands, Whiskers bool
+	Margins            []marginRow
+	Reach, StartClock  string
+	Picture            picture
+	Readings           readings
+	Lanes              []lane
+	Ticks              []tick
+	Axis               []axisLabel
+	Groups             []group
+	Sheet              []*sheetPage
+	Balance            balanceView
+	Alarms, Milestones [][]string
+	Flags              []flagRow
+	Inputs             inputsView
+	OutsideModel       []string
+	Provenance         [][2]string
+	Text, Notices      string
+	Data               dataset
+	Live, ResultJSON   template.JS
+}
+
+var templates = template.Must(template.ParseFS(assets, "assets/*.tmpl"))
+
 // Write writes the report: one self-contained HTML file, byte-identical for the same page.
-func Write(w io.Writer, p Page) error { _, err := io.WriteString(w, "<!doctype html>"); return err }
+func Write(w io.Writer, p Page) error {
+	v, err := newView(p)
+	if err != nil {
+		return err
+	}
+	lib, err := echarts()
+	if err != nil {
+		return err
+	}
+	script := asset("report.js")
+	v.Echarts, v.Script = template.JS(lib), template.JS(script)
+	v.CSS = template.CSS(asset("report.css") + asset("sheet.css"))
+	v.CSP = "default-src 'none'; script-src " + cspHash(lib) + " " + cspHash(script) +
+		"; style-src 'unsafe-inline'; img-src data:; base-uri 'none'; form-action 'none'"
+	out := bufio.NewWriterSize(w, 1<<16)
+	if err := templates.ExecuteTemplate(out, "report.html.tmpl", v); err != nil {
+		return err
+	}
+	return out.Flush()
+}
 
 // WriteSheet writes the sequence sheet alone, as HTML for print.
-func WriteSheet(w io.Writer, p Page) error { return Write(w, p) }
+func WriteSheet(w io.Writer, p Page) error {
+	if p.Plant == nil || p.Result == nil {
+		return errNothing
+	}
+	u, c := newUnits(p.Plant.Show), newClock(p)
+	v := view{Title: title(p.Plant), Sheet: sheetPages(p, sheetRows(p, u, c), c, handovers(p, u, c))}
+	v.CSS = template.CSS(asset("sheet.css"))
+	v.CSP = "default-src 'none'; style-src 'unsafe-inline'; base-uri 'none'; form-action 'none'"
+	out := bufio.NewWriter(w)
+	if err := templates.ExecuteTemplate(out, "sheetonly", v); err != nil {
+		return err
+	}
+	return out.Flush()
+}
 
-// SheetText writes the sequence sheet as plain text.
-func SheetText(w io.Writer, p Page) error { return nil }
+var errNothing = errors.New("report: no plant or no result to show")
+
+func title(plant *network.Plant) string {
+	switch {
+	case plant.Title != "":
+		return clean(plant.Title)
+	case plant.File != "":
+		return clean(plant.File)
+	}
+	return "Untitled plant"
+}
+
+// newView works out everything that the page prints.
+func newView(p Page) (*view, error) {
+	if p.Plant == nil || p.Result == nil {
+		return nil, errNothing
+	}
+	plant, r := p.Plant, p.Result
+	u, c := newUnits(plant.Show), newClock(p)
+	rows := sheetRows(p, u, c)
+	v := &view{Title: title(plant), V: newVerdict(plant, r, u, c), Cautions: append([]string{standing}, r.Cautions...)}
+	v.Cells = cells4(plant, r, c)
+	v.Headroom = headroom(plant, r, u, c)
+	for _, h := range v.Headroom {
+		v.HasBands = v.HasBands || h.Band != ""
+	}
+	v.Margins, v.Reach = margins(r, u, c)
+	for _, m := range v.Margins {
+		v.Whiskers = v.Whiskers || m.Whisker
+	}
+	v.StartClock = c.At(0, earlier)
+	v.Picture = elevation(plant, r, u, c)
+	v.Readings = newReadings(plant, r, u)
+	v.Lanes, v.Ticks, v.Axis = strip(plant, r), ticks(rows, r.End), axisLabels(r, c)
+	v.Data = newDataset(plant, r, u, c, events(plant, r, rows))
+	h := &charter{plant: plant, r: r, u: u, c: c, steps: rows, set: v.Data}
+	v.Groups = h.groups()
+	v.Sheet = sheetPages(p, rows, c, handovers(p, u, c))
+	v.Balance = balance(plant, r, u, c)
+	v.Alarms, v.Milestones = alarms(r, c), milestones(r, c)
+	v.Flags = flags(r, c)
+	v.Inputs, v.OutsideModel = inputs(plant, r, u, c), outsideModel
+	v.Provenance = provenance(plant, r)
+	v.Text, v.Notices = clean(plant.Text), Notices()
+	v.contents()
+	var err error
+	if v.Live, err = island(v.Picture.Live); err != nil {
+		return nil, err
+	}
+	bare := *r
+	bare.Series, bare.Work.Wall = nil, 0
+	v.ResultJSON, err = island(bare)
+	return v, err
+}
+
+// island writes data for a script element: JSON in which no character can end the element.
+func island(x any) (template.JS, error) {
+	var b bytes.Buffer
+	err := export.JSON(&b, x)
+	return template.JS(b.String()), err
+}
+
+// contents lists the sections that there are.
+func (v *view) contents() {
+	add := func(id, name string, there bool) {
+		if there {
+			v.Contents = append(v.Contents, [2]string{id, name})
+		}
+	}
+	add("headroom", "Headroom", true)
+	add("margins", "Margins", true)
+	add("plant", "Plant", true)
+	add("strip", "Openings in time", len(v.Lanes) > 0)
+	for _, g := range v.Groups {
+		add(g.ID, g.Title, true)
+	}
+	add("sheet", "Sequence sheet", true)
+	add("balance", "Balance", true)
+	add("flags", "What happens", true)
+	add("inputs", "Inputs", true)
+	add("provenance", "Provenance", true)
+}

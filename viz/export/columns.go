@@ -9,22 +9,22 @@ import (
 	"headfall/network"
 )
 
-// column is one series of a result.
-type column struct {
-	tag, what, unit string // T-1, level, m
-	values          []float64
+// Column is one series of a result.
+type Column struct {
+	Tag, What, Unit string // T-1, level, m
+	Values          []float64
 }
 
-// columns returns the series of r in the order of the plant: vessels, then lines with their parts, then tees.
-func columns(plant *network.Plant, r *network.Result) []column {
-	var all []column
+// Columns returns the series of r in the order of the plant: vessels, then lines with their parts, then tees.
+func Columns(plant *network.Plant, r *network.Result) []Column {
+	var all []Column
 	s := r.Series
 	if s == nil {
 		return nil
 	}
 	add := func(m map[string][]float64, tag, what, unit string) {
 		if v, ok := m[tag]; ok {
-			all = append(all, column{tag, what, unit, v})
+			all = append(all, Column{tag, what, unit, v})
 		}
 	}
 	for _, v := range plant.Vessels {
@@ -42,10 +42,18 @@ func columns(plant *network.Plant, r *network.Result) []column {
 	}
 	for _, t := range plant.Tees {
 		if v, ok := s.TeeHead[t.Tag]; ok {
-			all = append(all, column{t.Tag, "head", "m", gaps(v)})
+			all = append(all, Column{t.Tag, "head", "m", gaps(v)})
 		}
 	}
 	return all
+}
+
+// Name is the heading of the column: T-1.level_m.
+func (c Column) Name() string {
+	if c.Unit == "" {
+		return c.Tag + "." + c.What
+	}
+	return c.Tag + "." + c.What + "_" + c.Unit
 }
 
 // Movers returns the tags of everything in the lines that opens, shuts, starts or stops, in the order of the plant.

@@ -10,15 +10,11 @@ import (
 // CSV writes the series of r: one row a sample, SI units named in the header (T-1.level_m). The clock column is empty when the plant states no
 // start. A cell without a number is empty.
 func CSV(w io.Writer, plant *network.Plant, r *network.Result) error {
-	cols := columns(plant, r)
+	cols := Columns(plant, r)
 	out := csv.NewWriter(w)
 	row := []string{"time_s", "clock"}
 	for _, c := range cols {
-		name := c.tag + "." + c.what
-		if c.unit != "" {
-			name += "_" + c.unit
-		}
-		row = append(row, name)
+		row = append(row, c.Name())
 	}
 	if err := out.Write(row); err != nil {
 		return err
@@ -28,8 +24,8 @@ func CSV(w io.Writer, plant *network.Plant, r *network.Result) error {
 			row = append(row[:0], number(t), Clock(plant.Start, t))
 			for _, c := range cols {
 				cell := ""
-				if i < len(c.values) {
-					cell = number(c.values[i])
+				if i < len(c.Values) {
+					cell = number(c.Values[i])
 				}
 				row = append(row, cell)
 			}

@@ -162,15 +162,15 @@ func seriesSheets(plant *network.Plant, r *network.Result, u scales) []table {
 		{"Openings", "opening", "%", per}, {"Pumps", "running", "%", per}, {"Gas", "gas", u.pressure.unit + "(g)", u.pressure},
 		{"Crests", "crest", u.level.unit, u.level}, {"Tees", "head", u.level.unit, u.level},
 	}
-	cols := columns(plant, r)
+	cols := Columns(plant, r)
 	var all []table
 	for _, k := range kinds {
 		head := []string{"Time, s", "Clock"}
 		var mine [][]float64
 		for _, c := range cols {
-			if c.what == k.what && len(head) < 16000 {
-				head = append(head, c.tag+", "+k.unit)
-				mine = append(mine, c.values)
+			if c.What == k.what && len(head) < 16000 {
+				head = append(head, c.Tag+", "+k.unit)
+				mine = append(mine, c.Values)
 			}
 		}
 		if len(mine) == 0 {
