@@ -18,26 +18,35 @@ func Churchill(re, rough float64) (fre, slope float64) {
 	if re < 256 { // the turbulent share is under 1e-34 there
 		return Laminar, 0
 	}
-	p := math.Pow(7/re, 0.9)
-	l := -math.Log(p + 0.27*rough)
-	byLn := 0.9 * p / (p + 0.27*rough) // dl/d ln Re
-	// Everything below is in logarithms, so that no power overflows: s = ln(A/B), x = ln of the turbulent over the laminar part.
-	logB := 16 * math.Log(37530/re)
-	s := 16 * math.Log(2.457*l*re/37530)
-	sum, share := softplus(s)
-	x := 12*math.Log(re/8) - 1.5*(logB+sum)
-	byX := 12 - 1.5*(-16+share*16*(1+byLn/l))
-	up, part := softplus(x)
-	fre = Laminar * math.Exp(up/12)
-	return fre, fre * part * byX / 12 / re
+	if re > mostRe {
+		fre, _ = Churchill(mostRe, rough)
+		return fre * (re / mostRe), fre / mostRe
+	}
+	p := pointAt(re)
+	return p.churchill(rough)
 }
 
-// softplus returns ln(1+eˣ) and its derivative.
-func softplus(x float64) (v, slope float64) {
-	if x > 0 {
-		e := math.Exp(-x)
-		return x + math.Log1p(e), 1 / (1 + e)
-	}
-	e := math.Exp(x)
-	return math.Log1p(e), e / (1 + e)
+// mostRe keeps Re¹² a number; beyond it f stays as it is.
+const mostRe = 1e24
+
+// point is what the formula takes of Re alone.
+type point struct{ re, p, b, r float64 } // Re, (7/Re)^0.9, B, (Re/8)¹²
+
+func pointAt(re float64) point {
+	return point{re, math.Pow(7/re, 0.9), power16(37530 / re), power4(re/8) * power4(re/8) * power4(re/8)}
+}
+
+func power4(x float64) float64  { return x * x * (x * x) }
+func power16(x float64) float64 { return power4(power4(x)) }
+
+// churchill is the formula as 64·(1 + x)^(1/12), x = (Re/8)¹²/(A+B)^1.5, with the derivative by way of d ln x/d ln Re.
+func (n *point) churchill(rough float64) (fre, slope float64) {
+	sum := n.p + 0.27*rough
+	l := -math.Log(sum)
+	a := power16(2.457 * l)
+	both := a + n.b
+	x := n.r / (both * math.Sqrt(both))
+	byLn := 12 - 1.5*16*(a*0.9*n.p/(sum*l)-n.b)/both
+	fre = Laminar * math.Cbrt(math.Sqrt(math.Sqrt(1+x)))
+	return fre, fre * x / (1 + x) * byLn / 12 / n.re
 }

@@ -33,19 +33,30 @@ func layout(bits [30 - firstOctave]int) (all [30 - firstOctave]octave, n int) {
 	return all, n
 }
 
-// NewTable builds the table of the relative roughness ε/D (−).
-func NewTable(rough float64) *Table {
-	t := &Table{cell: make([][4]float64, cells)}
-	y0, d0 := Churchill(1<<firstOctave, rough)
+// nodes are the points where cells meet, the same for every table.
+var nodes = sync.OnceValue(func() []point {
+	all := []point{pointAt(1 << firstOctave)}
 	for i, o := range octaves {
 		low := math.Ldexp(1, firstOctave+i)
 		w := math.Ldexp(low, -o.bits)
 		for k := range 1 << o.bits {
-			y1, d1 := Churchill(low+float64(k+1)*w, rough)
-			m0, m1 := d0*w, d1*w
-			t.cell[o.start+k] = [4]float64{y0, m0, 3*(y1-y0) - 2*m0 - m1, 2*(y0-y1) + m0 + m1}
-			y0, d0 = y1, d1
+			all = append(all, pointAt(low+float64(k+1)*w))
 		}
+	}
+	return all
+})
+
+// NewTable builds the table of the relative roughness ε/D (−).
+func NewTable(rough float64) *Table {
+	t := &Table{cell: make([][4]float64, cells)}
+	at := nodes()
+	y0, d0 := at[0].churchill(rough)
+	for i := range t.cell {
+		w := at[i+1].re - at[i].re
+		y1, d1 := at[i+1].churchill(rough)
+		m0, m1 := d0*w, d1*w
+		t.cell[i] = [4]float64{y0, m0, 3*(y1-y0) - 2*m0 - m1, 2*(y0-y1) + m0 + m1}
+		y0, d0 = y1, d1
 	}
 	t.last, t.rise = y0, d0
 	return t
