@@ -116,7 +116,7 @@ func (d *decoder) freeFields(f *network.Free, action network.ActionKind) []field
 		dim, check = quantity.Flow, elements.NotNegative
 	}
 	pair := func(key, help string, to *[2]float64, w writing, one func(n *node) (float64, bool)) field {
-		return field{key: key, help: help, written: writing{style: aList, item: &w, least: 2}, read: func(n *node, _ string) { d.pair(n, key, to, one) }}
+		return field{key: key, help: help, written: &writing{style: aList, item: &w, least: 2}, read: func(n *node, _ string) { d.pair(n, key, to, one) }}
 	}
 	return []field{
 		pair("at", "earliest and latest time", &f.At, writing{style: aMoment}, func(n *node) (float64, bool) {

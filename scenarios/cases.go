@@ -110,11 +110,11 @@ func (d *decoder) caseFields() []field {
 		return func(n *node, _ string) { d.list(n, key, func(int, *node) {}) }
 	}
 	return []field{
-		{key: "set", help: "numbers and words that are other than in the plan, by name", written: writing{style: aMap, item: &writing{style: anyText}}, read: func(n *node, _ string) {
+		{key: "set", help: "numbers and words that are other than in the plan, by name", written: &writing{style: aMap, item: &writing{style: anyText}}, read: func(n *node, _ string) {
 			d.entries(n, "set", func(*node, *node) {})
 		}},
-		{key: "steps", help: "steps that take the place of those with their id, or are added", written: writing{style: aList, item: &steps}, read: entries("steps")},
-		{key: "upsets", help: "what goes wrong besides", written: writing{style: aList, item: &upsets}, read: entries("upsets")},
+		{key: "steps", help: "steps that take the place of those with their id, or are added", written: &writing{style: aList, item: &steps}, read: entries("steps")},
+		{key: "upsets", help: "what goes wrong besides", written: &writing{style: aList, item: &upsets}, read: entries("upsets")},
 		d.freeText(&note, "note", elements.Optional, "words about the case"),
 	}
 }

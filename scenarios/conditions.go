@@ -2,6 +2,7 @@ package scenarios
 
 import (
 	"fmt"
+	"strings"
 
 	"headfall/elements"
 	"headfall/elements/quantity"
@@ -53,14 +54,14 @@ func (d *decoder) conditionFields(b *bound) []field {
 		if s.is == network.Difference {
 			style = aList
 		}
-		fields = append(fields, field{key: s.key, help: s.help, written: writing{style: style, item: &writing{style: aTag}, least: 2}, read: func(n *node, _ string) {
+		fields = append(fields, field{key: s.key, help: s.help, written: &writing{style: style, item: &writing{style: aTag}, least: 2}, read: func(n *node, _ string) {
 			b.kind = s
 			b.to.Subject = s.is
 			b.to.Of = d.looksAt(n, s)
 		}})
 	}
 	side := func(key, help string, to **node) field {
-		return field{key: key, help: help, written: writing{style: anyText}, read: func(n *node, _ string) { *to = n }}
+		return field{key: key, help: help, written: asText, read: func(n *node, _ string) { *to = n }}
 	}
 	return append(fields, side("above", "the bound: true, or held, when above it", &b.above), side("below", "the bound: true, or held, when below it", &b.below))
 }
@@ -139,7 +140,7 @@ func (d *decoder) bound(n *node, b *bound) bool {
 		return false
 	}
 	b.to.Text = n.text
-	if b.kind.is == network.Level && isShare(n.text) {
+	if _, inShares := asShare(n.text); inShares && b.kind.is == network.Level {
 		return d.gaugeBound(n, key, b)
 	}
 	v, ok := d.fixed(n, key, b.kind.dim)
@@ -160,10 +161,13 @@ func (d *decoder) bound(n *node, b *bound) bool {
 	return ok
 }
 
-// isShare reports whether a text is in per cent and nothing else.
-func isShare(text string) bool {
+// asShare reads a text that is in per cent and nothing else.
+func asShare(text string) (v quantity.Value, ok bool) {
+	if !strings.Contains(text, "%") {
+		return v, false
+	}
 	v, err := quantity.Parse(text, quantity.Ratio)
-	return err == nil && v.Unit == "%"
+	return v, err == nil && v.Unit == "%"
 }
 
 // gaugeBound reads a level in per cent; the gauge is known when all vessels were read.
@@ -189,7 +193,7 @@ func (d *decoder) gaugeBound(n *node, key string, b *bound) bool {
 
 // conditionField makes a field that holds a condition.
 func (d *decoder) conditionField(p **network.Condition, key, help string) field {
-	return field{key: key, help: help, written: writing{style: aCondition}, read: func(n *node, _ string) {
+	return field{key: key, help: help, written: &writing{style: aCondition}, read: func(n *node, _ string) {
 		*p = d.condition(n, key)
 	}}
 }

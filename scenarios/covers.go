@@ -12,7 +12,7 @@ func (d *decoder) coverFields(c *network.Cover) []field {
 	*c = network.Cover{Pressure: d.plant.Atmosphere, Temperature: roomTemperature, Vacuum: nan, Overpress: nan}
 	return []field{
 		object(d, "gas", elements.Optional, "air under the cover at the start", "gas", func(*struct{}) []field { return d.gasFields(c) }, func(*struct{}, *node) {}),
-		{key: "vents", help: "openings to the air; none: sealed", written: writing{style: aMap, item: &writing{style: aKind, room: elements.Vents}}, read: func(n *node, _ string) {
+		{key: "vents", help: "openings to the air; none: sealed", written: &writing{style: aMap, item: &writing{style: aKind, room: elements.Vents}}, read: func(n *node, _ string) {
 			d.entries(n, "vents", func(key, value *node) { d.vent(c, key, value) })
 		}},
 		object(d, "withstands", elements.Optional, "what the vessel is built for", "withstands", func(*struct{}) []field { return d.ratingFields(c) }, func(*struct{}, *node) {}),
@@ -21,7 +21,7 @@ func (d *decoder) coverFields(c *network.Cover) []field {
 
 func (d *decoder) gasFields(c *network.Cover) []field {
 	return []field{
-		{key: "pressure", help: "over atmosphere, (g), or over vacuum, (a); default that of the air", written: writing{style: aQuantity, dim: quantity.Pressure},
+		{key: "pressure", help: "over atmosphere, (g), or over vacuum, (a); default that of the air", written: inUnits(quantity.Pressure),
 			read: func(n *node, owner string) { d.gasPressure(n, owner, c) }},
 		d.number(&c.Temperature, "temperature", quantity.Temperature, elements.Optional, "default 15 °C", elements.Positive),
 	}

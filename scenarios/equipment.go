@@ -10,14 +10,14 @@ func (d *decoder) gaugeFields(g *network.Gauge) []field {
 	shows := "percent"
 	g.Percent = true
 	return []field{
-		{key: "tag", help: "tag of the instrument", written: writing{style: aTag}, read: func(n *node, _ string) {
+		{key: "tag", help: "tag of the instrument", written: aTagWritten, read: func(n *node, _ string) {
 			if t := d.declare(n, aGauge); t != nil {
 				g.Tag = n.text
 			}
 		}},
 		d.number(&g.Zero, "zero", quantity.Length, elements.Required, "height over base that shows as 0 %"),
 		d.number(&g.Span, "span", quantity.Length, elements.Required, "height from 0 % to 100 %", elements.Positive),
-		{key: "shows", help: "what the panel shows", written: writing{style: aWord, words: []string{"percent", "length"}}, read: func(n *node, _ string) {
+		{key: "shows", help: "what the panel shows", written: &writing{style: aWord, words: []string{"percent", "length"}}, read: func(n *node, _ string) {
 			if w, ok := d.oneOf(n, "shows", []string{"percent", "length"}); ok {
 				shows = w
 				g.Percent = shows == "percent"
@@ -39,7 +39,7 @@ type batch struct{ to *network.Batch }
 func (d *decoder) batchFields(b *batch) []field {
 	b.to = &network.Batch{}
 	return []field{
-		{key: "id", need: elements.Required, help: "tag of the batch, which steps may cancel", written: writing{style: aTag}, read: func(n *node, _ string) {
+		{key: "id", need: elements.Required, help: "tag of the batch, which steps may cancel", written: aTagWritten, read: func(n *node, _ string) {
 			if t := d.declare(n, aBatch); t != nil {
 				b.to.ID, b.to.Place = n.text, n.at
 			}
@@ -58,7 +58,7 @@ type alarm struct {
 
 func (d *decoder) alarmsField(v *network.Vessel) field {
 	item := writing{style: anObject, name: "alarm", fields: func() []field { return d.alarmFields(v, &alarm{}) }}
-	return field{key: "alarms", help: "levels with a name, and what people do when they come", written: writing{style: aList, item: &item}, read: func(n *node, _ string) {
+	return field{key: "alarms", help: "levels with a name, and what people do when they come", written: &writing{style: aList, item: &item}, read: func(n *node, _ string) {
 		d.list(n, "alarms", func(_ int, entry *node) {
 			a := &alarm{}
 			whole := d.mapping(entry, "alarm", "", d.alarmFields(v, a))
@@ -89,7 +89,7 @@ func (d *decoder) responseFields(r *network.Response) []field {
 		d.plainNumber(&r.Walk, "walk", quantity.Time, elements.Optional, "until someone stands there", elements.NotNegative),
 		d.tagField(&r.Valve, "valve", elements.Optional, "valve that is moved", aValve),
 		d.tagField(&r.Pump, "pump", elements.Optional, "pump that is switched", aPump),
-		{key: "to", need: elements.Required, help: "travel of the valve, or mode of the pump", written: writing{style: aQuantity, dim: quantity.Ratio,
+		{key: "to", need: elements.Required, help: "travel of the valve, or mode of the pump", written: &writing{style: aQuantity, dim: quantity.Ratio,
 			or: &writing{style: aWord, words: modes}}, read: func(*node, string) {}},
 	}
 }
@@ -125,7 +125,7 @@ func (d *decoder) mode(n *node, key string) (elements.Mode, bool) {
 // openShut makes a field for a small vent that is open or shut.
 func (d *decoder) openShut(p *bool, key, help string) field {
 	words := []string{"yes", "no", "open", "shut"}
-	return field{key: key, help: help, written: writing{style: aYesNo, or: &writing{style: aWord, words: words}}, read: func(n *node, _ string) {
+	return field{key: key, help: help, written: &writing{style: aYesNo, or: &writing{style: aWord, words: words}}, read: func(n *node, _ string) {
 		if yes, ok := d.isOpen(n, key); ok {
 			*p = yes
 		}

@@ -12,7 +12,7 @@ type field struct {
 	key     string
 	need    elements.Need
 	help    string
-	written writing
+	written *writing
 	read    func(n *node, owner string)
 	absent  func(n *node, owner string) // what to do when it is not written; n is the mapping; may be nil
 	instead []string                    // keys that a value from outside takes the place of
@@ -52,9 +52,26 @@ type writing struct {
 	or     *writing       // another way
 }
 
+// The commonest ways of writing are made once.
+var (
+	asText      = &writing{style: anyText}
+	aTagWritten = &writing{style: aTag}
+	asMoment    = &writing{style: aMoment}
+	asYesNo     = &writing{style: aYesNo}
+	unitWays    = func() (all []*writing) {
+		for d := quantity.Number; d <= quantity.SurfaceTension; d++ {
+			all = append(all, &writing{style: aQuantity, dim: d})
+		}
+		return all
+	}()
+)
+
+// inUnits is how a quantity of a dimension is written.
+func inUnits(dim quantity.Dim) *writing { return unitWays[dim] }
+
 // settable reports whether a value from outside may be put here: whatever is one scalar.
 func (f *field) settable() bool {
-	for w := &f.written; w != nil; w = w.or {
+	for w := f.written; w != nil; w = w.or {
 		switch w.style {
 		case anyText, aQuantity, aMoment, aWord, aYesNo, aKind, aTag, aTable:
 			return true
@@ -129,7 +146,7 @@ func quoted(s string) string {
 
 // object makes a field that holds a mapping of its own; take gets the value when all was read.
 func object[T any](d *decoder, key string, need elements.Need, help, what string, fields func(*T) []field, take func(v *T, n *node)) field {
-	return field{key: key, need: need, help: help, written: writing{style: anObject, name: what, fields: func() []field { return fields(new(T)) }},
+	return field{key: key, need: need, help: help, written: &writing{style: anObject, name: what, fields: func() []field { return fields(new(T)) }},
 		read: func(n *node, owner string) {
 			v := new(T)
 			if d.mapping(n, what, sub(owner, key), fields(v)) {
@@ -141,7 +158,7 @@ func object[T any](d *decoder, key string, need elements.Need, help, what string
 // objects makes a field that holds a list of mappings.
 func objects[T any](d *decoder, key string, help, what string, fields func(*T) []field, take func(v *T, n *node)) field {
 	item := writing{style: anObject, name: what, fields: func() []field { return fields(new(T)) }}
-	return field{key: key, help: help, written: writing{style: aList, item: &item},
+	return field{key: key, help: help, written: &writing{style: aList, item: &item},
 		read: func(n *node, _ string) {
 			d.list(n, key, func(_ int, entry *node) {
 				v := new(T)

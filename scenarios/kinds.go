@@ -45,17 +45,13 @@ func (d *decoder) element(room elements.Room, n *node, what string, name func(ki
 
 // kindOf returns the word of a kind and the node of its parameters.
 func (d *decoder) kindOf(room elements.Room, n *node, what string) (word, body *node) {
-	example := "e.g. " + what + ": {" + d.example(room) + "}"
-	if room == elements.Parts {
-		example = "e.g. - {" + d.example(room) + "}"
-	}
 	switch {
 	case n.form == scalar && n.empty, n.form == list:
-		d.problem(n, what+" names one kind with its values", example)
+		d.problem(n, what+" names one kind with its values", d.example(room, what))
 	case n.form == scalar:
 		return n, &node{form: mapping, src: n.src, at: n.at, flow: true}
 	case len(n.keys) != 1:
-		d.problem(n, fmt.Sprintf("%s names one kind, not %d", what, len(n.keys)), example)
+		d.problem(n, fmt.Sprintf("%s names one kind, not %d", what, len(n.keys)), d.example(room, what))
 	case n.keys[0].form == scalar:
 		body = n.items[0]
 		if body.empty {
@@ -66,13 +62,17 @@ func (d *decoder) kindOf(room elements.Room, n *node, what string) (word, body *
 	return nil, nil
 }
 
-func (d *decoder) example(room elements.Room) string {
+// example shows how a kind of a room is written.
+func (d *decoder) example(room elements.Room, what string) string {
 	kinds := elements.Kinds(room)
 	if len(kinds) == 0 {
-		return "…"
+		return ""
 	}
 	k := kinds[len(kinds)-1]
-	return k.Name + ": " + braced(k.Sample)
+	if room == elements.Parts {
+		return "e.g. - " + k.Name + ": " + braced(k.Sample)
+	}
+	return "e.g. " + what + ": {" + k.Name + ": " + braced(k.Sample) + "}"
 }
 
 // braced puts braces around the parameters of a specimen that lacks them.
@@ -86,7 +86,7 @@ func braced(sample string) string {
 // shorthand makes a mapping of parameters that are written as one value, {water: 12 °C}: it is that of the first parameter that can be written so.
 func (d *decoder) shorthand(n *node, fields []field) *node {
 	for j := range fields {
-		if takes(&fields[j].written, n.form) {
+		if takes(fields[j].written, n.form) {
 			key := &node{text: fields[j].key, plain: true, src: n.src, at: n.at}
 			return &node{form: mapping, src: n.src, at: n.at, flow: true, keys: []*node{key}, items: []*node{n}}
 		}
@@ -139,7 +139,7 @@ func split(err error) []error {
 
 // kindField makes a field that holds an element.
 func (d *decoder) kindField(room elements.Room, key string, need elements.Need, help string, take func(c chosen, n *node)) field {
-	return field{key: key, need: need, help: help, written: writing{style: aKind, room: room}, read: func(n *node, owner string) {
+	return field{key: key, need: need, help: help, written: &writing{style: aKind, room: room}, read: func(n *node, owner string) {
 		name := owner + "." + key
 		if owner == "" {
 			name = key

@@ -37,7 +37,7 @@ func (d *decoder) limitFields(l *limit) []field {
 		d.plainNumber(&l.AveragedOver, "averaged_over", quantity.Time, elements.Optional, "the mean over this time is judged", elements.Positive),
 		d.word(&l.each, "each", elements.Optional, "volumes by calendar day, starts in any hour", eachWords...),
 		d.plainNumber(&l.InAny, "in_any", quantity.Time, elements.Optional, "volume in any such time", elements.Positive),
-		{key: "only_between", help: "two clock times outside which nothing may flow, every day", written: writing{style: aList, item: &writing{style: aMoment}, least: 2},
+		{key: "only_between", help: "two clock times outside which nothing may flow, every day", written: &writing{style: aList, item: &writing{style: aMoment}, least: 2},
 			read: func(n *node, _ string) {
 				if d.hours(n, "only_between", &l.OnlyBetween) {
 					l.Permitted, l.hours = true, n
@@ -60,7 +60,7 @@ func (d *decoder) momentNode(m *network.Moment, key, help string, to **node) fie
 
 // edgeField reads one end of a limit's window.
 func (d *decoder) edgeField(e *network.Edge, key, help string) field {
-	return field{key: key, help: help, written: writing{style: aMoment, or: &writing{style: aCondition, words: []string{"after"}}}, read: func(n *node, _ string) {
+	return field{key: key, help: help, written: &writing{style: aMoment, or: &writing{style: aCondition, words: []string{"after"}}}, read: func(n *node, _ string) {
 		switch {
 		case n.form == scalar:
 			e.At, e.Given = d.moment(n, key)

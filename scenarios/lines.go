@@ -38,20 +38,20 @@ func (d *decoder) lineFields(l *network.Line) []field {
 		d.endField(&l.To, "to", "vessel, tee or outside point where it ends"),
 		d.portField(&l.Leaves, "leaves", "from", &l.From),
 		d.portField(&l.Enters, "enters", "to", &l.To),
-		{key: "inlet", help: "full: an ideal opening, no limit from an uncovering inlet", written: writing{style: aWord, words: inletWords}, read: func(n *node, _ string) {
+		{key: "inlet", help: "full: an ideal opening, no limit from an uncovering inlet", written: &writing{style: aWord, words: inletWords}, read: func(n *node, _ string) {
 			inlet, _ = d.oneOf(n, "inlet", inletWords)
 			l.InletFull = inlet == "full"
 		}},
 		entry, exit,
 		{key: "parts", need: elements.Required, help: "in the order met going from `from` to `to`",
-			written: writing{style: aList, item: &writing{style: aKind, room: elements.Parts}, least: 1}, read: func(n *node, _ string) { d.fittings(l, n) }},
+			written: &writing{style: aList, item: &writing{style: aKind, room: elements.Parts}, least: 1}, read: func(n *node, _ string) { d.fittings(l, n) }},
 	}
 }
 
 var inletWords = []string{"limited", "full"}
 
 func (d *decoder) endField(p *string, key, help string) field {
-	return field{key: key, need: elements.Required, help: help, written: writing{style: aTag}, read: func(n *node, _ string) {
+	return field{key: key, need: elements.Required, help: help, written: aTagWritten, read: func(n *node, _ string) {
 		*p = d.refer(n, key, func(t *thing) { t.lines++ }, meets...)
 	}}
 }

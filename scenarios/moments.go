@@ -88,7 +88,7 @@ func (d *decoder) hasStart(n *node, key string) bool {
 
 // momentField makes a field for a moment; one of a thing with a tag is a number of the plant.
 func (d *decoder) momentField(m *network.Moment, key string, need elements.Need, help string) field {
-	return field{key: key, need: need, help: help, written: writing{style: aMoment}, read: func(n *node, owner string) {
+	return field{key: key, need: need, help: help, written: asMoment, read: func(n *node, owner string) {
 		v, ok := d.moment(n, key)
 		if !ok {
 			return

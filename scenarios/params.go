@@ -16,10 +16,16 @@ func (d *decoder) params(e elements.Element) []field {
 }
 
 func (d *decoder) paramsOf(p *elements.Params) []field {
-	fields := make([]field, 0, len(p.List))
+	size := len(p.List)
 	for _, q := range p.List {
 		if q.Form == elements.Counts {
-			fields = append(fields, d.counts(q)...)
+			size += len(q.Words)
+		}
+	}
+	fields := make([]field, 0, size)
+	for _, q := range p.List {
+		if q.Form == elements.Counts {
+			fields = d.counts(fields, q)
 			continue
 		}
 		f := d.param(q)
@@ -90,13 +96,13 @@ func (d *decoder) defaulted(q *elements.Param) func(n *node, owner string) {
 // groupParam reads parameters that belong together, under a key of their own.
 func (d *decoder) groupParam(q *elements.Param) field {
 	inner := func() []field { return d.paramsOf(q.Inner) }
-	return field{written: writing{style: anObject, name: q.Key, fields: inner}, read: func(n *node, owner string) {
+	return field{written: &writing{style: anObject, name: q.Key, fields: inner}, read: func(n *node, owner string) {
 		d.mapping(n, q.Key, sub(owner, q.Key), inner())
 	}}
 }
 
 func (d *decoder) tableParam(q *elements.Param) field {
-	return field{written: writing{style: aTable, cols: q.Cols}, read: func(n *node, _ string) {
+	return field{written: &writing{style: aTable, cols: q.Cols}, read: func(n *node, _ string) {
 		if rows, ok := d.table(n, q.Key, q.Cols); ok && d.increasing(n, q.Key, rows, false) {
 			*q.Rows = rows
 		}
@@ -113,7 +119,7 @@ func (d *decoder) nestedParam(q *elements.Param) field {
 
 func (d *decoder) seriesParam(q *elements.Param) field {
 	item := writing{style: aKind, room: q.Room}
-	return field{written: writing{style: aList, item: &item, least: 1}, read: func(n *node, owner string) {
+	return field{written: &writing{style: aList, item: &item, least: 1}, read: func(n *node, owner string) {
 		d.list(n, q.Key, func(i int, entry *node) {
 			name := func(string, *node) string { return fmt.Sprintf("%s.%s[%d]", owner, q.Key, i+1) }
 			c, ok := d.element(q.Room, entry, q.Key, name)
@@ -129,7 +135,7 @@ func (d *decoder) seriesParam(q *elements.Param) field {
 
 // switchParam reads a level at which something starts or stops.
 func (d *decoder) switchParam(q *elements.Param) field {
-	return field{written: writing{style: aCondition, words: []string{"level"}}, read: func(n *node, owner string) {
+	return field{written: &writing{style: aCondition, words: []string{"level"}}, read: func(n *node, owner string) {
 		height, above := math.NaN(), false
 		side := func(key string, up bool) field {
 			f := d.number(&q.Switch.Level, key, quantity.Length, elements.Optional, "")
@@ -147,12 +153,12 @@ func (d *decoder) switchParam(q *elements.Param) field {
 
 func (d *decoder) courseParam(q *elements.Param) field {
 	quantities := writing{style: aQuantity, dim: q.Dim, or: &writing{style: aTable, cols: []quantity.Dim{quantity.Time, q.Dim}}}
-	return field{written: quantities, read: func(n *node, owner string) { d.course(n, owner, q.Key, q.Dim, q.Rows, q.Checks) }}
+	return field{written: &quantities, read: func(n *node, owner string) { d.course(n, owner, q.Key, q.Dim, q.Rows, q.Checks) }}
 }
 
 // deviceParam reads a small vent that people open and shut.
 func (d *decoder) deviceParam(q *elements.Param) field {
-	return field{written: writing{style: anObject, name: q.Key, fields: func() []field { return d.deviceFields(new(elements.Device)) }},
+	return field{written: &writing{style: anObject, name: q.Key, fields: func() []field { return d.deviceFields(new(elements.Device)) }},
 		read: func(n *node, owner string) {
 			if d.mapping(n, q.Key, sub(owner, q.Key), d.deviceFields(q.Device)) {
 				q.Device.Given = true
@@ -162,7 +168,7 @@ func (d *decoder) deviceParam(q *elements.Param) field {
 
 func (d *decoder) deviceFields(v *elements.Device) []field {
 	return []field{
-		{key: "tag", need: elements.Required, help: "tag of the vent, which steps name", written: writing{style: aTag}, read: func(n *node, _ string) {
+		{key: "tag", need: elements.Required, help: "tag of the vent, which steps name", written: aTagWritten, read: func(n *node, _ string) {
 			if t := d.declare(n, aDevice); t != nil {
 				v.Tag, t.device = n.text, v
 			}
@@ -171,11 +177,10 @@ func (d *decoder) deviceFields(v *elements.Device) []field {
 	}
 }
 
-// counts makes a field of every word that is counted.
-func (d *decoder) counts(q *elements.Param) []field {
-	fields := make([]field, 0, len(q.Words))
+// counts adds a field for every word that is counted.
+func (d *decoder) counts(fields []field, q *elements.Param) []field {
 	for _, w := range q.Words {
-		fields = append(fields, field{key: w, help: q.Help, written: writing{style: aQuantity, dim: quantity.Count}, read: func(n *node, _ string) {
+		fields = append(fields, field{key: w, help: q.Help, written: inUnits(quantity.Count), read: func(n *node, _ string) {
 			if v, ok := d.fixed(n, w, quantity.Count, elements.NotNegative); ok && v.SI > 1e6 {
 				d.problem(n, w+" is more than anyone has", "")
 			} else if ok {

@@ -22,13 +22,13 @@ const (
 func (d *decoder) planFields() []field {
 	p := d.plant
 	return []field{
-		{key: "headfall", need: elements.Required, help: "version of the format: 1", written: writing{style: aWord, words: []string{version}}, read: d.version},
+		{key: "headfall", need: elements.Required, help: "version of the format: 1", written: &writing{style: aWord, words: []string{version}}, read: d.version},
 		d.freeText(&p.Title, "title", elements.Optional, "what the plan is called"),
 		d.freeText(&p.Revision, "revision", elements.Optional, "of the plan"),
-		{key: "start", help: "date and clock time of the start", written: writing{style: aDate}, read: d.start},
+		{key: "start", help: "date and clock time of the start", written: &writing{style: aDate}, read: d.start},
 		d.plainNumber(&p.RunFor, "run_for", quantity.Time, elements.Required, "time to run at most", elements.Positive),
 		d.plainNumber(&p.ReportEvery, "report_every", quantity.Time, elements.Optional, "spacing of the stored series", elements.Positive),
-		{key: "site", help: "gravity and air", written: writing{style: anObject, name: "site", fields: d.siteFields}, read: func(n *node, _ string) {
+		{key: "site", help: "gravity and air", written: &writing{style: anObject, name: "site", fields: d.siteFields}, read: func(n *node, _ string) {
 			d.mapping(n, "site", "site", d.siteFields())
 		}},
 		d.kindField(elements.Liquids, "liquid", elements.Optional, "the one liquid of the plant; default water of 15 °C", func(c chosen, _ *node) {
@@ -45,7 +45,7 @@ func (d *decoder) planFields() []field {
 		d.entriesOf("milestones", "moments to report", "milestone", func() []field { return d.milestoneFields(&network.Milestone{}, &bound{to: &network.Condition{}}) }, d.milestone),
 		d.entriesOf("limits", "what must hold", "limit", func() []field { return d.limitFields(&limit{Limit: &network.Limit{}}) }, d.limit),
 		d.casesField(),
-		{key: "handover", help: "times for which the state is printed", written: writing{style: aList, item: &writing{style: aMoment}}, read: func(n *node, _ string) {
+		{key: "handover", help: "times for which the state is printed", written: &writing{style: aList, item: &writing{style: aMoment}}, read: func(n *node, _ string) {
 			d.list(n, "handover", func(_ int, item *node) {
 				if m, ok := d.moment(item, "handover"); ok {
 					p.Handover = append(p.Handover, m)
@@ -58,20 +58,20 @@ func (d *decoder) planFields() []field {
 
 func vesselWriting(d *decoder) writing {
 	return writing{style: anObject, name: "vessel", unless: "like", fields: func() []field {
-		like := field{key: "like", help: "a vessel that this one copies; other keys here take the place of its own", written: writing{style: aTag}}
+		like := field{key: "like", help: "a vessel that this one copies; other keys here take the place of its own", written: aTagWritten}
 		return append(d.vesselFields(newVessel()), like)
 	}}
 }
 
 // section makes a field that maps tags or names to things.
 func (d *decoder) section(key, help string, item writing, read func(key, n *node)) field {
-	return field{key: key, help: help, written: writing{style: aMap, item: &item}, read: func(n *node, _ string) { d.entries(n, key, read) }}
+	return field{key: key, help: help, written: &writing{style: aMap, item: &item}, read: func(n *node, _ string) { d.entries(n, key, read) }}
 }
 
 // entriesOf makes a field that is a list of mappings.
 func (d *decoder) entriesOf(key, help, what string, fields func() []field, read func(n *node)) field {
 	item := writing{style: anObject, name: what, fields: fields}
-	return field{key: key, help: help, written: writing{style: aList, item: &item}, read: func(n *node, _ string) {
+	return field{key: key, help: help, written: &writing{style: aList, item: &item}, read: func(n *node, _ string) {
 		d.list(n, key, func(_ int, entry *node) { read(entry) })
 	}}
 }
@@ -110,7 +110,7 @@ func (d *decoder) siteFields() []field {
 
 func (d *decoder) showFields(s *network.Show) []field {
 	unit := func(p *string, key string, dim quantity.Dim) field {
-		return field{key: key, help: "unit to show", written: writing{style: aWord, words: quantity.Units(dim)}, read: func(n *node, _ string) {
+		return field{key: key, help: "unit to show", written: &writing{style: aWord, words: quantity.Units(dim)}, read: func(n *node, _ string) {
 			if !d.text(n, key) {
 				return
 			}
@@ -129,7 +129,7 @@ func (d *decoder) assumeFields(a *network.Assume) []field {
 	*a = defaultAssume()
 	return []field{
 		d.word(&a.Doubts, "doubts", elements.Optional, "default: declared doubts where the file states none; stated: only the file's own; none", "default", "stated", "none"),
-		{key: "together", help: "keys whose doubts have one common draw", written: writing{style: aList, item: &writing{style: anyText}}, read: func(n *node, _ string) {
+		{key: "together", help: "keys whose doubts have one common draw", written: &writing{style: aList, item: &writing{style: anyText}}, read: func(n *node, _ string) {
 			d.list(n, "together", func(_ int, item *node) {
 				if d.text(item, "together") {
 					a.Together = append(a.Together, item.text)

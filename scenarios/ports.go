@@ -29,7 +29,7 @@ func (d *decoder) portFields(p *network.Port) []field {
 // portField makes the field of a port; end is the key of the line's end that it belongs to.
 func (d *decoder) portField(p *network.Port, key, end string, tag *string) field {
 	object := writing{style: anObject, name: "port", fields: func() []field { return d.portFields(new(network.Port)) }}
-	return field{key: key, help: "how the line meets the vessel at its `" + end + "` end; default the bottom", written: writing{style: aWord, words: portWords[:1], or: &object},
+	return field{key: key, help: "how the line meets the vessel at its `" + end + "` end; default the bottom", written: &writing{style: aWord, words: portWords[:1], or: &object},
 		read: func(n *node, owner string) {
 			if n.form == scalar {
 				if slices.Contains(portWords[1:], n.text) {

@@ -85,7 +85,7 @@ func (d *decoder) check(n *node, key string, v quantity.Value, checks []elements
 
 // number makes a field for one number of the plant.
 func (d *decoder) number(p *float64, key string, dim quantity.Dim, need elements.Need, help string, checks ...elements.Check) field {
-	return field{key: key, need: need, help: help, written: writing{style: aQuantity, dim: dim},
+	return field{key: key, need: need, help: help, written: inUnits(dim),
 		read: func(n *node, owner string) {
 			v, ok := d.quantity(n, key, dim)
 			if ok && d.check(n, key, v, checks) {
@@ -99,7 +99,7 @@ func (d *decoder) number(p *float64, key string, dim quantity.Dim, need elements
 
 // plainNumber makes a field for a number without a doubt that is not a number of the plant by name.
 func (d *decoder) plainNumber(p *float64, key string, dim quantity.Dim, need elements.Need, help string, checks ...elements.Check) field {
-	return field{key: key, need: need, help: help, written: writing{style: aQuantity, dim: dim},
+	return field{key: key, need: need, help: help, written: inUnits(dim),
 		read: func(n *node, _ string) {
 			if v, ok := d.fixed(n, key, dim, checks...); ok {
 				*p = v.SI
@@ -109,7 +109,7 @@ func (d *decoder) plainNumber(p *float64, key string, dim quantity.Dim, need ele
 
 // freeText makes a field for words that a person reads.
 func (d *decoder) freeText(p *string, key string, need elements.Need, help string) field {
-	return field{key: key, need: need, help: help, written: writing{style: anyText}, read: func(n *node, _ string) {
+	return field{key: key, need: need, help: help, written: asText, read: func(n *node, _ string) {
 		if d.text(n, key) {
 			*p = strings.TrimSpace(n.text)
 		}
@@ -118,7 +118,7 @@ func (d *decoder) freeText(p *string, key string, need elements.Need, help strin
 
 // word makes a field for one of some words.
 func (d *decoder) word(p *string, key string, need elements.Need, help string, words ...string) field {
-	return field{key: key, need: need, help: help, written: writing{style: aWord, words: words}, read: func(n *node, _ string) {
+	return field{key: key, need: need, help: help, written: &writing{style: aWord, words: words}, read: func(n *node, _ string) {
 		if w, ok := d.oneOf(n, key, words); ok {
 			*p = w
 		}
@@ -140,7 +140,7 @@ func (d *decoder) oneOf(n *node, key string, words []string) (string, bool) {
 
 // yesNo makes a field for a switch.
 func (d *decoder) yesNo(p *bool, key string, need elements.Need, help string) field {
-	return field{key: key, need: need, help: help, written: writing{style: aYesNo}, read: func(n *node, _ string) {
+	return field{key: key, need: need, help: help, written: asYesNo, read: func(n *node, _ string) {
 		if b, ok := d.isYes(n, key); ok {
 			*p = b
 		}

@@ -43,7 +43,7 @@ func (s *schemaWriter) object(fields []field) jsonObject {
 	var required []string
 	for i := range fields {
 		f := &fields[i]
-		p := s.written(&f.written)
+		p := s.written(f.written)
 		if f.help != "" {
 			p["description"] = f.help
 		}
@@ -203,8 +203,8 @@ func (s *schemaWriter) bodies(all jsonObject, fields []field) []any {
 	ways := []any{all, jsonObject{"type": "null"}}
 	for _, as := range []form{scalar, list} {
 		for j := range fields {
-			if takes(&fields[j].written, as) {
-				ways = append(ways, s.written(&fields[j].written))
+			if takes(fields[j].written, as) {
+				ways = append(ways, s.written(fields[j].written))
 				break
 			}
 		}

@@ -40,7 +40,7 @@ func idOf(n *node) string {
 
 func (d *decoder) stepFields(s *step) []field {
 	return []field{
-		{key: "id", need: elements.Required, help: "tag of the step", written: writing{style: aTag}, read: func(n *node, _ string) {
+		{key: "id", need: elements.Required, help: "tag of the step", written: aTagWritten, read: func(n *node, _ string) {
 			if s.thing = d.declare(n, aStep); s.thing != nil {
 				s.ID, s.Place = n.text, n.at
 			}
@@ -55,7 +55,7 @@ func (d *decoder) stepFields(s *step) []field {
 		d.actionField(s, "inflow", network.SetInflow, "vessel whose inflow is set", aVessel),
 		d.actionField(s, "vent", network.SetVent, "vent of a line that is opened or shut", aDevice),
 		d.actionField(s, "cancel", network.CancelBatch, "batch that will not come", aBatch),
-		{key: "hold", help: "what is waited for", written: writing{style: anyText}, read: func(n *node, _ string) {
+		{key: "hold", help: "what is waited for", written: asText, read: func(n *node, _ string) {
 			if d.text(n, "hold") {
 				s.Action, s.Hold = network.HoldPoint, n.text
 			}
@@ -68,13 +68,13 @@ func (d *decoder) stepFields(s *step) []field {
 		d.plainNumber(&s.CheckAfter, "check_after", quantity.Time, elements.Optional, "time after which a reading is expected", elements.NotNegative),
 		d.readField(s),
 		d.conditionField(&s.StopIf, "stop_if", "when to stop and ask"),
-		{key: "free", help: "what plan may move: at and to, each from and to", written: writing{style: anObject, name: "free", fields: func() []field { return d.freeFields(&network.Free{}, network.MoveValve) }},
+		{key: "free", help: "what plan may move: at and to, each from and to", written: &writing{style: anObject, name: "free", fields: func() []field { return d.freeFields(&network.Free{}, network.MoveValve) }},
 			read: func(n *node, _ string) { s.free = n }},
 	}
 }
 
 func (d *decoder) actionField(s *step, key string, action network.ActionKind, help string, c class) field {
-	return field{key: key, help: help, written: writing{style: aTag}, read: func(n *node, _ string) {
+	return field{key: key, help: help, written: aTagWritten, read: func(n *node, _ string) {
 		s.Action = action
 		s.Target = d.refer(n, key, nil, c)
 	}}
@@ -84,7 +84,7 @@ func (d *decoder) actionField(s *step, key string, action network.ActionKind, he
 func (d *decoder) toField(s *step) field {
 	flow := writing{style: aQuantity, dim: quantity.Flow}
 	words := writing{style: aWord, words: append(append([]string{}, modes...), "open", "shut"), or: &flow}
-	return field{key: "to", help: "travel of a valve, mode of a pump, flow of an inflow, open or shut of a vent", written: writing{style: aQuantity, dim: quantity.Ratio, or: &words},
+	return field{key: "to", help: "travel of a valve, mode of a pump, flow of an inflow, open or shut of a vent", written: &writing{style: aQuantity, dim: quantity.Ratio, or: &words},
 		read: func(n *node, _ string) {
 			s.to, s.ToText = n, n.text
 		}}
@@ -92,7 +92,7 @@ func (d *decoder) toField(s *step) field {
 
 // readField reads which vessel, or which gauge, is looked at.
 func (d *decoder) readField(s *step) field {
-	return field{key: "read", help: "vessel or gauge whose reading is expected then", written: writing{style: aTag}, read: func(n *node, _ string) {
+	return field{key: "read", help: "vessel or gauge whose reading is expected then", written: aTagWritten, read: func(n *node, _ string) {
 		s.Read = d.refer(n, "read", func(t *thing) {
 			if t.vessel != nil {
 				s.Read = t.vessel.Tag

@@ -112,7 +112,7 @@ func (d *decoder) refer(n *node, key string, then func(*thing), classes ...class
 
 // tagField makes a field for the tag of another thing.
 func (d *decoder) tagField(p *string, key string, need elements.Need, help string, classes ...class) field {
-	return field{key: key, need: need, help: help, written: writing{style: aTag}, read: func(n *node, _ string) {
+	return field{key: key, need: need, help: help, written: aTagWritten, read: func(n *node, _ string) {
 		*p = d.refer(n, key, nil, classes...)
 	}}
 }

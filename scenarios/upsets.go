@@ -36,7 +36,7 @@ func (d *decoder) upset(n *node) {
 
 func (d *decoder) upsetFields(u *upset) []field {
 	value := func(key string, dim quantity.Dim, help string, check elements.Check) field {
-		return field{key: key, help: help, written: writing{style: aQuantity, dim: dim}, read: func(n *node, _ string) {
+		return field{key: key, help: help, written: inUnits(dim), read: func(n *node, _ string) {
 			if v, ok := d.fixed(n, key, dim, check); ok {
 				u.set[key] = v.SI
 			}

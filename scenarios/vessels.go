@@ -34,7 +34,7 @@ func (d *decoder) vessel(key, n *node) {
 
 // vesselFields is the table of a vessel. The gauge comes before the level, which may be in its per cent.
 func (d *decoder) vesselFields(v *network.Vessel) []field {
-	level := field{key: "level", help: "start level above base, or per cent of the gauge", written: writing{style: aQuantity, dim: quantity.Length,
+	level := field{key: "level", help: "start level above base, or per cent of the gauge", written: &writing{style: aQuantity, dim: quantity.Length,
 		or: &writing{style: aQuantity, dim: quantity.Ratio}}, instead: []string{"contents"}, read: func(n *node, owner string) { d.startLevel(n, owner, v) }}
 	contents := d.number(&v.Contents, "contents", quantity.Volume, elements.Optional, "start contents, instead of a level", elements.NotNegative)
 	contents.instead = []string{"level"}
@@ -64,8 +64,8 @@ func (d *decoder) startLevel(n *node, owner string, v *network.Vessel) {
 	if !d.text(n, "level") {
 		return
 	}
-	share, err := quantity.Parse(n.text, quantity.Ratio)
-	if err != nil || share.Unit != "%" {
+	share, inShares := asShare(n.text)
+	if !inShares {
 		if value, ok := d.quantity(n, "level", quantity.Length); ok && d.check(n, "level", value, aboveBase) {
 			v.Level = value.SI
 			d.register(n, owner, "level", value, &v.Level, aboveBase)
@@ -100,7 +100,7 @@ var aboveBase = []elements.Check{func(x float64) string {
 func (d *decoder) inflowField(v *network.Vessel) field {
 	rows := writing{style: aTable, cols: []quantity.Dim{quantity.Time, quantity.Flow}}
 	return field{key: "inflow", help: "flow that comes in from outside: one value, or rows of time and flow",
-		written: writing{style: aQuantity, dim: quantity.Flow, or: &rows}, read: func(n *node, owner string) {
+		written: &writing{style: aQuantity, dim: quantity.Flow, or: &rows}, read: func(n *node, owner string) {
 			d.course(n, owner, "inflow", quantity.Flow, (*[][]float64)(&v.Inflow), []elements.Check{elements.NotNegative})
 			v.InflowText = n.text
 		}}
