@@ -36,10 +36,15 @@ func (e *checkValve) Ready() error {
 	return nil
 }
 
-// Drop is the loss of the open valve, the same both ways, without the cracking pressure. What it lets through is the line's affair: nothing
-// up to Cracking, and in reverse the flow of a Kv that is Leak times as large.
+// Drop is the loss of the open valve, without the cracking pressure; in reverse it is that of what leaks, a Kv that is the leak's share as large. Of a
+// tight valve it is the same both ways, and nothing flows in reverse: that is the line's affair, as is the cracking pressure.
 func (e *checkValve) Drop(q float64, at *Local) (dp, slope float64) {
-	return Quadratic(e.square*at.Fluid.Density, q, at.Band)
+	c := e.square * at.Fluid.Density
+	leak := max(e.leak, at.Leak)
+	if leak <= 0 {
+		return Quadratic(c, q, at.Band)
+	}
+	return TwoWay(c, c/(leak*leak), q, at.Band)
 }
 
 func (e *checkValve) Tag() string       { return e.tag }

@@ -37,6 +37,8 @@ func TestOtherSpecimens(t *testing.T) {
 		{elements.Parts, "valve", "{tag: V-1, kv: 400, bore: 100 mm, trim: butterfly, leaks: 0.1 %}"},
 		{elements.Parts, "valve", "{tag: V-1, kv: 1, bore: 80 mm, trim: {equal_percentage: {rangeability: 30}}, closes: inherent}"},
 		{elements.Parts, "valve", "{tag: V-1, kv: 40, trim: quick_opening, fl: 0.8}"},
+		{elements.Parts, "check_valve", "{kv: 60, cracks_at: 20 mbar, leaks: 0.5 %}"},
+		{elements.Parts, "fittings", "{bore: 50 mm, strainer: 1, reducer: 2}"},
 		{elements.Parts, "resistance", "{linear: 40 s/m2}"},
 		{elements.Parts, "resistance", "{linear: 40 s/m2, quadratic: 300 s2/m5}"},
 		{elements.Parts, "resistance", "{rows: [[1 m3/h, 0.1 m], [2 m3/h, 0.5 m], [5 m3/h, 4 m]]}"},

@@ -10,10 +10,12 @@ type Part interface {
 
 // Local is all a law may read besides its own parameters.
 type Local struct {
-	Fluid   Fluid
-	Opening float64 // of this part's actuator: travel of a valve 0..1, running state of a pump 0..1
-	Gravity float64 // m/s²
-	Band    float64 // Pa: drop under which a quadratic loss is made linear through zero (see Quadratic)
+	Fluid    Fluid
+	Opening  float64 // of this part's actuator: travel of a valve 0..1, running state of a pump 0..1
+	Gravity  float64 // m/s²
+	Strength float64 // share of head or rate that a pump has left; 0 is taken as all
+	Leak     float64 // share of Kv that a check valve passes in reverse, where it does not state more itself
+	Band     float64 // Pa: drop under which a quadratic loss is made linear through zero (see Quadratic)
 }
 
 // Place is where a part stands in its line; the line tells it once, before Ready.
@@ -46,8 +48,8 @@ type (
 	Mouthed interface{ Mouth() Mouth }
 	// Shuts tells whether the part as it stands lets nothing through in either direction.
 	Shuts interface{ Shut(at *Local) bool }
-	// OneWay lets liquid through in the line's direction only, once the pressure across it passes Cracking, Pa; Leak is the drop law in
-	// reverse as a share (0: tight).
+	// OneWay lets liquid through in the line's direction only, once the pressure across it passes Cracking, Pa; Leak is the share of Kv that
+	// passes in reverse (0: tight), and is in Drop for q < 0 already, as is Local.Leak.
 	OneWay interface {
 		Cracking() float64
 		Leak() float64
@@ -126,3 +128,6 @@ type Throttles interface {
 type Reduces interface {
 	Reduces() bool
 }
+
+// Runs is a pump with an end to its curve: Runout is the largest flow, m³/s, that it is made for.
+type Runs interface{ Runout() float64 }

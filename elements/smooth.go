@@ -9,6 +9,9 @@ func Quadratic(c, q, band float64) (dp, slope float64) {
 	if x := c * a; x*a >= band {
 		return x * q, 2 * x
 	}
+	if c <= 0 {
+		return 0, 0
+	}
 	s := math.Sqrt(c * band) // c·Q_l
 	r := c / s * q           // q/Q_l
 	return s / 2 * q * (1 + r*r), s / 2 * (1 + 3*r*r)
@@ -34,22 +37,26 @@ func Within(q, edge, at, slope float64) (dp, d float64) {
 	return u * (s + b*u*u), (s + 3*b*u*u) / edge
 }
 
-// TwoWay is a quadratic loss with another coefficient each way, forward for q ≥ 0 and back for q < 0, both in Pa·s²/m⁶ and more than 0: the end losses
-// and changes of bore. Inside the band of each side it is a cubic, and both have one slope at zero. A coefficient under a fiftieth of the other is taken as
-// that, so that both sides are increasing.
+// TwoWay is a quadratic loss with another coefficient each way, forward for q ≥ 0 and back for q < 0, both in Pa·s²/m⁶: end losses, changes of bore, a
+// check valve that leaks. It is exact outside the band of either side; inside it is a cubic, and both sides have one slope at zero, that of the
+// smaller coefficient's odd cubic, so that both are increasing. A coefficient under a millionth of the other is taken as that.
 func TwoWay(forward, back, q, band float64) (dp, slope float64) {
 	big := max(forward, back)
+	least := max(min(forward, back), 1e-6*big)
 	c := forward
 	if q < 0 {
 		c = back
 	}
-	c = max(c, big/50)
+	c = max(c, least)
 	a := math.Abs(q)
 	if x := c * a; x*a >= band {
 		return x * q, 2 * x
 	}
+	if c <= 0 {
+		return 0, 0
+	}
 	edge := math.Sqrt(band / c)
-	s := math.Sqrt(big*band) / 2 * edge // the common slope, times the edge
+	s := band / 2 * math.Sqrt(least/c) // the common slope, times the edge; between 0 and band/2, where the cubic rises
 	u := a / edge
 	dp = u * (s + u*(band-2*s+u*s))
 	return math.Copysign(dp, q), (s + u*(2*(band-2*s)+3*u*s)) / edge
