@@ -87,7 +87,11 @@ func TestEventTimes(t *testing.T) {
 			t.Fatalf("%s: fired %v", m.Name(), got)
 		}
 		for i, g := range got {
-			if e := math.Abs(g.t - want[i].t); e > 2e-12*g.t {
+			within := 2e-12 // the ball's path is exact
+			if m == integrate.BDF {
+				within = 1e-4 // it is not for BDF at its start
+			}
+			if e := math.Abs(g.t - want[i].t); e > within*g.t {
 				t.Errorf("%s: event %d off by %.2g", m.Name(), i, e)
 			}
 			if len(g.fired) != len(want[i].fired) {
@@ -184,6 +188,10 @@ func TestRestartAtAnEventDoesNotFireAgain(t *testing.T) {
 			t.Fatal(err)
 		}
 		half := math.Sqrt(2 / 9.8)
+		within := 1e-10
+		if m == integrate.BDF {
+			within = 1e-5
+		}
 		bounces := 0
 		for {
 			out, err := s.Step(10, ev)
@@ -194,7 +202,7 @@ func TestRestartAtAnEventDoesNotFireAgain(t *testing.T) {
 				break
 			}
 			if out.Stop == integrate.HitEvent {
-				if want := float64(2*bounces+1) * half; math.Abs(out.T-want) > 1e-10 {
+				if want := float64(2*bounces+1) * half; math.Abs(out.T-want) > within {
 					t.Fatalf("%s: bounce %d at %v, not %v", m.Name(), bounces, out.T, want)
 				}
 				bounces++

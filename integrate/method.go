@@ -7,13 +7,13 @@ type Method interface {
 }
 
 // Methods returns the methods that there are, the default first.
-func Methods() []Method { return []Method{Rodas5P, Rodas4P, Rodas4P2} }
+func Methods() []Method { return []Method{Rodas5P, Rodas4P, Rodas4P2, BDF} }
 
 // stepper is what a method does for the Solver, which owns the state, the linearisation, the factor and the step loop.
 type stepper interface {
 	// order is the order of the error estimate at the first step after a restart.
 	order() int
-	// restart forgets all history: state or rates have changed.
+	// restart forgets all history: state or rates have changed. The slopes at the present time and the next step are known.
 	restart()
 	// attempt tries a step of h from (t, y0, z0), fills y1 and z1, and returns the norm of the error estimate, NaN if it is not finite.
 	attempt(h float64) (float64, error)

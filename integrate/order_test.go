@@ -73,7 +73,7 @@ func TestOrder(t *testing.T) {
 }
 
 func TestVanDerPol(t *testing.T) {
-	for _, m := range []integrate.Method{integrate.Rodas5P, integrate.Rodas4P, integrate.Rodas4P2} {
+	for _, m := range integrate.Methods() {
 		p := ivptest.VanDerPol()
 		s := integrate.NewSolver(p, integrate.Options{RTol: 1e-9, Method: m})
 		if err := s.Restart(p.T0, p.Y0); err != nil {
@@ -93,9 +93,45 @@ func TestVanDerPol(t *testing.T) {
 		}
 		t.Logf("%s: %v, %+v", m.Name(), s.Y(), s.Stats())
 		for i, y := range s.Y() {
-			if e := math.Abs(y/p.End[i] - 1); e > 1e-7 {
+			if e := math.Abs(y/p.End[i] - 1); e > 2e-7 {
 				t.Errorf("%s: unknown %d is %v, not %v: %.2g", m.Name(), i, y, p.End[i], e)
 			}
 		}
 	}
+}
+
+// The error follows the tolerance for every method and problem.
+func TestErrorFollowsTolerance(t *testing.T) {
+	for _, m := range integrate.Methods() {
+		for _, p := range []*ivptest.Problem{
+			ivptest.ProtheroRobinson(-1), ivptest.ProtheroRobinson(-1e6), ivptest.Oscillator(), ivptest.Swing(),
+		} {
+			for _, rtol := range []float64{1e-4, 1e-6, 1e-8} {
+				s := integrate.NewSolver(p, integrate.Options{RTol: rtol, Method: m})
+				run(t, s, p.Y0, p.T1)
+				want := make([]float64, len(p.Y0))
+				p.Exact(p.T1, want)
+				for i, y := range s.Y() {
+					if e := math.Abs(y-want[i]) / (1 + math.Abs(want[i])); e > 100*rtol {
+						t.Errorf("%s %s at %g: error %.2g", m.Name(), p.Name, rtol, e)
+					}
+				}
+			}
+		}
+	}
+}
+
+// Two families that share nothing but the linear algebra agree.
+func TestFamiliesAgree(t *testing.T) {
+	w := ivptest.Grid(9, pipe, true)
+	a := integrate.NewSolver(w, integrate.Options{RTol: 1e-8})
+	b := integrate.NewSolver(w, integrate.Options{RTol: 1e-8, Method: integrate.BDF})
+	run(t, a, w.Start(), 2000)
+	run(t, b, w.Start(), 2000)
+	for i, y := range a.Y() {
+		if e := math.Abs(y - b.Y()[i]); e > 1e-6 {
+			t.Fatalf("head %d: %v and %v, apart %.2g", i, y, b.Y()[i], e)
+		}
+	}
+	t.Logf("Rodas5P %+v\nBDF %+v", a.Stats(), b.Stats())
 }

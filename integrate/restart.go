@@ -23,7 +23,6 @@ func (s *Solver) Restart(t float64, y []float64) error {
 	s.linear = false
 	s.stats.Restarts++
 	s.watch.fresh = true
-	s.step.restart()
 	s.poly.begin(t, 0, s)
 	s.poly.end(s.y, s.z)
 	s.linearise()
@@ -37,7 +36,10 @@ func (s *Solver) Restart(t float64, y []float64) error {
 		copy(s.poly.Y0, s.y)
 		copy(s.poly.Y1, s.y)
 	}
-	return s.chooseStep()
+	s.slopes()
+	s.chooseStep()
+	s.step.restart()
+	return nil
 }
 
 // firstBad returns the first place where a or b is not finite, or −1.
@@ -85,6 +87,7 @@ func (s *Solver) resettle() error {
 	if err := s.settle(); err != nil {
 		return err
 	}
+	s.slopes()
 	s.step.restart()
 	return nil
 }
@@ -146,32 +149,33 @@ func (s *Solver) singular(h float64, err error) error {
 	return s.fail(Singular, h, unknown, err)
 }
 
+// slopes puts y' into slope, for the algebraic unknowns as well: −J_aa y'_a = J_ad y'_d + ∂f_a/∂t with the factors that settle left.
+func (s *Solver) slopes() {
+	copy(s.slope, s.f)
+	if !s.algebraic {
+		return
+	}
+	for i, differential := range s.mass {
+		if !differential {
+			s.slope[i] = s.lin.DfDt[i]
+		}
+	}
+	s.factor.Solve(s.slope)
+}
+
 // chooseStep sets the first step from the size of y' and of y” = J y' + ∂f/∂t, both in tolerances: their ratio is the time scale T of the
 // system, and a method of order q errs by about (h/T)^(q+1) of the change |y'|T. It is not below a hundredth of the last free step.
-func (s *Solver) chooseStep() error {
-	if s.opt.FirstStep > 0 && s.restarts == 0 {
-		s.restarts++
-		s.next = s.limit(s.opt.FirstStep)
-		s.free = s.next
-		return nil
+func (s *Solver) chooseStep() {
+	var h float64
+	if s.restarts == 0 && s.opt.FirstStep > 0 {
+		h = s.opt.FirstStep
+	} else {
+		first, second := norm(s.slope, s.scale), norm(s.curvature(s.slope), s.scale)
+		h = max(firstStep(first, second, s.step.order()), s.free/100)
 	}
 	s.restarts++
-	d := s.work
-	copy(d, s.f)
-	if s.algebraic { // the rates of the algebraic unknowns, from the factors that settle left
-		for i, differential := range s.mass {
-			if !differential {
-				d[i] = s.lin.DfDt[i]
-			}
-		}
-		s.factor.Solve(d)
-	}
-	first := norm(d, s.scale)
-	second := norm(s.curvature(d), s.scale)
-	h := firstStep(first, second, s.step.order())
-	s.next = s.limit(max(h, s.free/100))
+	s.next = s.limit(h)
 	s.free = s.next
-	return nil
 }
 
 // curvature returns y” of the differential unknowns for y' = d.

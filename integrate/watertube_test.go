@@ -73,7 +73,11 @@ func checkSwitches(t *testing.T, w *ivptest.WaterTube, met []ivptest.Switch, wit
 
 func TestWaterTubeOtherMethods(t *testing.T) {
 	for _, m := range integrate.Methods()[1:] {
-		w, s, met := tube(t, m, 1e-7)
+		rtol, within, apart := 1e-7, 0.1, 1e-5
+		if m == integrate.BDF { // which errs by more of its tolerance
+			rtol, apart = 1e-8, 1e-4
+		}
+		w, s, met := tube(t, m, rtol)
 		worst := 0.0
 		for name, want := range w.Reference {
 			if strings.HasPrefix(name, "phi") {
@@ -81,9 +85,9 @@ func TestWaterTubeOtherMethods(t *testing.T) {
 			}
 		}
 		t.Logf("%s: flows differ by %v; %+v", m.Name(), worst, s.Stats())
-		if worst > 1e-4 {
+		if worst > apart {
 			t.Errorf("%s: flows differ by %.2g", m.Name(), worst)
 		}
-		checkSwitches(t, w, met, 0.1)
+		checkSwitches(t, w, met, within)
 	}
 }

@@ -32,6 +32,7 @@ type Factor struct {
 	rpos   []int32
 	rhs    []float64
 	left   []float64 // residual
+	roots  []root
 	pivots *pivoting // nil until a matrix needed it
 	mode   mode
 	wild   bool // elimination met multipliers beyond tame
@@ -67,6 +68,9 @@ type cut struct {
 	p, a, b int32
 	at      int32
 }
+
+// root is the last column of a part of the matrix that nothing joins to the rest: where a singular part shows.
+type root struct{ at, entry int32 } // places of its diagonal entry in v and in the pattern
 
 // Analyse prepares the factorisation of matrices with pattern p: it chooses an order, finds the fill, and allocates. Where the unknowns are
 // numbered so that elimination as they come fills hardly more than the order found, and waits no longer, they are taken as they come,
@@ -114,6 +118,7 @@ func analyse(p *Pattern, order []int32, cols [][]int32) *Factor {
 	f.rhs = make([]float64, f.n)
 	f.left = make([]float64, f.n)
 	f.transpose()
+	f.findRoots()
 	return f
 }
 

@@ -85,3 +85,19 @@ func (f *Factor) placeEntries() {
 		}
 	}
 }
+
+// findRoots lists the last columns of the parts.
+func (f *Factor) findRoots() {
+	for s := range f.panels {
+		p := &f.panels[s]
+		if p.r > 0 {
+			continue
+		}
+		j := f.order[p.col+p.w-1]
+		for k := f.pat.Ptr[j]; k < f.pat.Ptr[j+1]; k++ {
+			if f.pat.Row[k] == j {
+				f.roots = append(f.roots, root{at: p.at + p.w*p.w - 1, entry: k})
+			}
+		}
+	}
+}

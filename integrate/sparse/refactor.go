@@ -6,6 +6,10 @@ import "math"
 // rows may be in different units: what matters is caught by the backward error of SolveChecked.
 const growth = 1e10
 
+// cancelled is the share of a root's entry to its pivot beyond which the pivot may be rounding. Pivoting then finds out whether the matrix is
+// singular.
+const cancelled = 1e13
+
 // tame is the largest multiplier that threshold partial pivoting would have allowed. While no multiplier is larger, elimination on the diagonal is
 // as stable, and SolveChecked trusts it.
 const tame = 1 / threshold
@@ -72,6 +76,11 @@ func (f *Factor) eliminate() bool {
 			}
 		}
 		if !ok {
+			return false
+		}
+	}
+	for _, r := range f.roots {
+		if !(math.Abs(f.values[r.entry]*v[r.at]) < cancelled) { // a pivot that is left over from cancellation
 			return false
 		}
 	}
