@@ -13,6 +13,7 @@ type Options struct {
 
 // RunOptions are of one run.
 type RunOptions struct {
+	Changes  Changes
 	Series   bool               // keep the series
 	Progress func(done float64) // called now and then with the share of run_for done; may be nil
 	Now      func() time.Time   // for the wall time; nil takes time.Now

@@ -40,6 +40,9 @@ type Plant struct {
 	Numbers  []*Number // every named number, in the order of the file
 	Defaults []string  // defaults used, one sentence each, in the order of the file
 	Warnings []Problem // of reading
+
+	byTag map[string]any     // vessels, tees, outside points and lines; made by Refresh
+	meets map[string][]*Line // lines that meet a vessel, tee or outside point
 }
 
 // Show is the display units; empty ones are m, m3/h, m3, mbar.

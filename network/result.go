@@ -32,6 +32,8 @@ type Result struct {
 	Work        Work                       `json:"work"`
 	Series      *Series                    `json:"series"`
 	Allowance   Allowance                  `json:"allowance"`
+
+	unreached []string // steps that are not optional and never came
 }
 
 // Verdict answers "can this sequence run as written".

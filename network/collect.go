@@ -1,0 +1,264 @@
+package network
+
+import (
+	"math"
+	"time"
+
+	"headfall/elements"
+)
+
+// Version of the program, shown in results and reports.
+const Version = "0.1.0"
+
+// result puts together what a run gives back.
+func (sim *simulation) result() *Result {
+	p := sim.plan
+	r := &Result{Schema: 1, Command: "run", Program: Program{"headfall", Version}, End: sim.t, Stopped: sim.stopped,
+		Complete: sim.stopped == "time" || sim.stopped == "at_rest", Series: sim.obs.series,
+		Bands: map[string]map[string]Band{}, Assumptions: []Assumption{}, Cautions: []string{}, Handover: []*HandoverBlock{},
+		Allowance: Allowance{Doubts: "none"}}
+	if sim.trouble != nil {
+		r.Trouble = sim.trouble.Error()
+	}
+	r.Scenario = Scenario{Title: p.Title, Revision: p.Revision, File: p.File, SHA256: p.SHA256}
+	if p.Case != "" {
+		r.Scenario.Case = &p.Case
+	}
+	r.Scenario.Start = p.clock(0)
+	sim.obs.closeRegimes()
+	sim.vesselResults(r)
+	sim.lineResults(r)
+	sim.outsideResults(r)
+	sim.pumpResults(r)
+	sim.stepResults(r)
+	sim.limitResults(r)
+	sim.alarmResults(r)
+	sim.balance(r)
+	sim.finishFlags(r)
+	r.LineUp = p.LineUp()
+	r.Cautions = cautions(p, r)
+	r.decide()
+	st := sim.solver.Stats()
+	r.Work = Work{Method: sim.method, Steps: st.Steps, Rejected: st.Rejected, Factorisations: st.Factorisations, Evaluations: st.Evaluations, Events: st.Events}
+	return r
+}
+
+// clock returns the local wall clock t seconds after the start, or nil when the file has no start.
+func (p *Plant) clock(t float64) *string {
+	if p.Start.IsZero() || math.IsNaN(t) {
+		return nil
+	}
+	s := p.Start.Add(time.Duration(math.Round(t * 1e9))).Format("2006-01-02T15:04:05")
+	return &s
+}
+
+// opt returns nil for NaN.
+func opt(v float64) *float64 {
+	if math.IsNaN(v) || math.IsInf(v, 0) {
+		return nil
+	}
+	return &v
+}
+
+func (sim *simulation) vesselResults(r *Result) {
+	r.Vessels = map[string]*VesselResult{}
+	o, s := sim.obs, sim.sys
+	for i, v := range sim.plan.Vessels {
+		st := &s.stations[i]
+		vol := sim.y[i]
+		level, _ := st.shape.Level(vol)
+		e, why := sim.plan.EmptyLevel(v)
+		x := &VesselResult{StartLevel: v.StartLevel(), EndLevel: level, StartVolume: v.StartVolume(), EndVolume: vol, Left: math.Max(0, vol), LeftWhy: why,
+			PeakLevel: o.level[i].high, PeakAt: o.level[i].highAt, LowLevel: o.level[i].low, LowAt: o.level[i].lowAt,
+			EmptyAtLevel: opt(e), Spilled: sim.led.z[len(s.lines)+i], PeakSpill: math.Max(0, o.spill[i].high)}
+		if t := o.emptied[i].first; v.StartLevel() > e {
+			x.EmptiedAt = opt(t)
+		}
+		x.HeadroomTo.Rim = opt(v.RimLevel() - x.PeakLevel)
+		if sill := sim.plan.Sill(v); !math.IsNaN(sill) {
+			x.HeadroomTo.Sill = opt(sill - x.PeakLevel)
+		}
+		if a := v.lowestAlarm(); !math.IsNaN(a) {
+			x.HeadroomTo.Alarm = opt(a - x.PeakLevel)
+		}
+		x.In, x.Out = sim.led.inflow[i], 0
+		for k, l := range s.lines {
+			in, out := 0.0, 0.0
+			if l.to.kind == toVessel && l.to.at == i {
+				in, out = sim.led.forward[k], sim.led.backward[k]
+			}
+			if l.from.kind == toVessel && l.from.at == i {
+				in, out = in+sim.led.backward[k], out+sim.led.forward[k]
+			}
+			x.In, x.Out = x.In+in, x.Out+out
+		}
+		if x.Spilled > 0 {
+			x.FirstSpill, x.SpillEnds = opt(o.rims[i].first), opt(o.spilled[i])
+		}
+		if st.closed {
+			x.Gas = sim.gasResult(i)
+		}
+		r.Vessels[v.Tag] = x
+	}
+	for i, st := range s.stations {
+		if st.spillTo >= 0 {
+			r.Vessels[sim.plan.Vessels[st.spillTo].Tag].In += sim.led.z[len(s.lines)+i]
+		}
+	}
+}
+
+// lowestAlarm returns the lowest level above which an alarm comes; NaN for none.
+func (v *Vessel) lowestAlarm() float64 {
+	low := math.NaN()
+	for _, a := range v.Alarms {
+		if a.When.Subject == Level && a.When.Above && !(a.When.Bound >= low) {
+			low = a.When.Bound
+		}
+	}
+	return low
+}
+
+// Sill returns the lowest overflow crest of a vessel, m above base; NaN for none. The overflow is a weir, or a line that leaves above the start level.
+func (p *Plant) Sill(v *Vessel) float64 {
+	low := math.NaN()
+	for _, l := range p.meets[v.Tag] {
+		if l.From != v.Tag || len(l.Parts) == 0 {
+			continue
+		}
+		if _, ok := l.Parts[0].Part.(elements.Crest); ok && !(l.Leaves.Height >= low) {
+			low = l.Leaves.Height
+		}
+	}
+	return low
+}
+
+func (sim *simulation) gasResult(i int) *GasResult {
+	o, st := sim.obs, &sim.sys.stations[i]
+	patm := sim.sys.atmosphere
+	g := &GasResult{Low: o.gas[i].low - patm, LowAt: o.gas[i].lowAt, High: o.gas[i].high - patm, HighAt: o.gas[i].highAt}
+	if sim.sys.tightNow(i) {
+		// p·Vᵞ = p₀·V₀ᵞ against p·V = p₀·V₀ with the same volumes
+		p0 := st.plan.Cover.Pressure
+		g.LowAdiabatic = opt(p0*math.Pow(o.gas[i].low/p0, airGamma) - patm)
+		g.HighAdiabatic = opt(p0*math.Pow(o.gas[i].high/p0, airGamma) - patm)
+	}
+	return g
+}
+
+// airGamma is the ratio of specific heats of air. Source: any handbook of gas dynamics.
+const airGamma = 1.4
+
+// tightNow tells that no vent of the vessel passes anything.
+func (s *system) tightNow(i int) bool {
+	for k := range s.stations[i].vents {
+		if s.stations[i].vents[k].at.Opening > 0 {
+			return false
+		}
+	}
+	return true
+}
+
+func (sim *simulation) lineResults(r *Result) {
+	r.Lines = map[string]*LineResult{}
+	o, s := sim.obs, sim.sys
+	for i, l := range sim.plan.Lines {
+		c := &s.lines[i]
+		x := &LineResult{Forward: sim.led.forward[i], Backward: sim.led.backward[i], PeakFlow: o.flow[i].high, PeakFlowAt: o.flow[i].highAt,
+			LowFlow: o.flow[i].low, LowFlowAt: o.flow[i].lowAt, RunsBackward: []Reversal{}}
+		if c.area > 0 {
+			x.PeakVelocity = math.Max(math.Abs(x.PeakFlow), math.Abs(x.LowFlow)) / c.area
+		}
+		for _, b := range sim.led.reversals[i] {
+			if b.Volume >= leastBackflow {
+				x.RunsBackward = append(x.RunsBackward, b)
+			}
+		}
+		if len(c.crowns) > 0 {
+			x.CrestLow, x.CrestLowAt = opt(o.crest[i].low), opt(o.crest[i].lowAt)
+		}
+		for _, f := range l.Parts {
+			if h, ok := f.Part.(elements.Holds); ok {
+				x.Holds += h.Holds()
+			}
+		}
+		r.Lines[l.Tag] = x
+	}
+}
+
+// leastBackflow is the volume, m³, under which a reversal is not reported: 1 L.
+const leastBackflow = 1e-3
+
+func (sim *simulation) outsideResults(r *Result) {
+	r.Outside = map[string]*OutsideResult{}
+	s := sim.sys
+	for k, b := range sim.plan.Outside {
+		x := &OutsideResult{}
+		for i := range s.lines {
+			l := &s.lines[i]
+			if l.to.outside() && l.to.at == k {
+				x.Received += sim.led.forward[i]
+				x.Supplied += sim.led.backward[i]
+			}
+			if l.from.outside() && l.from.at == k {
+				x.Received += sim.led.backward[i]
+				x.Supplied += sim.led.forward[i]
+			}
+		}
+		x.PeakFlow, x.PeakFlowAt = math.Max(0, sim.obs.inflow[k].high), sim.obs.inflow[k].highAt
+		x.OverCapacity = sim.obs.over[k]
+		r.Outside[b.Tag] = x
+	}
+	for i, v := range sim.plan.Vessels {
+		if x, ok := r.Outside[v.SpillsTo]; ok {
+			x.Received += sim.led.z[len(s.lines)+i]
+		}
+	}
+}
+
+func (sim *simulation) pumpResults(r *Result) {
+	r.Pumps = map[string]*PumpResult{}
+	for i := range sim.sys.actuators {
+		a := &sim.sys.actuators[i]
+		if a.kind != aPump {
+			continue
+		}
+		x := &PumpResult{Starts: len(a.starts), Ran: a.ran}
+		if a.to > 0 {
+			x.Ran += sim.t - a.since
+		}
+		for k, t := range a.starts {
+			n := 0
+			for j := k; j >= 0 && a.starts[j] > t-3600; j-- {
+				n++
+			}
+			x.MostInHour = max(x.MostInHour, n)
+		}
+		r.Pumps[a.tag] = x
+	}
+}
+
+// balance closes the books: what was there and came in against what went out, spilled and is left.
+func (sim *simulation) balance(r *Result) {
+	b := &r.Balance
+	for i, v := range sim.plan.Vessels {
+		b.Start += v.StartVolume()
+		b.In += sim.led.inflow[i]
+		b.Left += sim.y[i]
+		if sim.sys.stations[i].spillTo < 0 {
+			b.Spilled += sim.led.z[len(sim.sys.lines)+i]
+		}
+	}
+	for _, o := range sim.plan.Outside {
+		x := r.Outside[o.Tag]
+		b.Out += x.Received
+		b.In += x.Supplied
+	}
+	for _, v := range sim.plan.Vessels {
+		if _, ok := r.Outside[v.SpillsTo]; ok { // booked as received there and as spilled: count it once
+			b.Out -= r.Vessels[v.Tag].Spilled
+		}
+	}
+	if all := b.Start + b.In; all > 0 {
+		b.Relative = math.Abs(b.Start+b.In-b.Out-b.Spilled-b.Left) / all
+	}
+}

@@ -1,0 +1,241 @@
+package network
+
+import (
+	"math"
+	"sort"
+
+	"headfall/elements"
+)
+
+// stepState is where a step stands in a run.
+type stepState struct {
+	plan    *Step
+	armed   bool    // its `at` has come and its `after` is done
+	armedAt float64 // s
+	due     float64 // s at which it acts; +Inf while not known
+	done    float64 // s; NaN
+	movedBy float64 // s at which its move ends; NaN
+	looked  bool    // its condition was looked at when it was armed
+	seen    record
+}
+
+// control carries what people, switches and faults do: which action comes next in time, and which conditions are waited for.
+type control struct {
+	sim     *simulation
+	steps   []stepState
+	byID    map[string]int
+	order   []int // steps by due time, then by place in the file
+	timed   []timed
+	inflows map[string]override
+	gone    map[string]bool // batches cancelled
+	upsets  []*Upset
+}
+
+// override is an inflow set by a step.
+type override struct{ value, since float64 }
+
+// timed is an action at a known time that is not a step.
+type timed struct {
+	at   float64
+	do   func(t float64)
+	done bool
+}
+
+// begin puts everything at its start.
+func (c *control) begin(sim *simulation) {
+	p := sim.plan
+	*c = control{sim: sim, byID: map[string]int{}, inflows: map[string]override{}, gone: map[string]bool{}}
+	ch := &sim.changes
+	for i, st := range p.Steps {
+		c.byID[st.ID] = i
+		c.steps = append(c.steps, stepState{plan: st, due: math.Inf(1), done: math.NaN(), movedBy: math.NaN()})
+	}
+	c.upsets = append(append(c.upsets, p.Upsets...), ch.Upsets...)
+	c.startActuators(ch)
+	for _, u := range c.upsets {
+		c.startUpset(u)
+	}
+	for i := range c.steps {
+		c.arm(i, 0)
+	}
+}
+
+// startActuators sets valves, pumps and vents as at the start.
+func (c *control) startActuators(ch *Changes) {
+	s := c.sim.sys
+	for i := range s.actuators {
+		a := &s.actuators[i]
+		a.stuck, a.stops = math.NaN(), math.NaN()
+		a.failed, a.dry, a.starts, a.ran, a.toggles = false, false, a.starts[:0], 0, a.toggles[:0]
+		x := 0.0
+		switch a.kind {
+		case aValve:
+			x = a.valve.Open
+			if v, ok := ch.Open[a.tag]; ok {
+				x = v
+			}
+		case aPump:
+			a.mode = a.drive.Mode
+			a.waiting = a.mode == elements.Standby && a.drive.StandbyFor != ""
+			if a.mode == elements.On {
+				x = 1
+				a.since = 0
+			}
+		case aVent:
+			x = c.sim.ventStart(a)
+		}
+		a.from, a.to, a.t0, a.t1 = x, x, 0, 0
+	}
+}
+
+// startUpset sets one fault up.
+func (c *control) startUpset(u *Upset) {
+	s := c.sim.sys
+	k, ok := s.actuatorAt[u.Target]
+	switch u.Kind {
+	case PumpFails:
+		if ok {
+			c.schedule(u.At.S, func(t float64) { c.failPump(k, t) })
+		}
+	case ValveSticks:
+		if ok {
+			a := &s.actuators[k]
+			a.from, a.to, a.stuck = u.Value, u.Value, u.Value
+		}
+	case ValveStops:
+		if ok {
+			s.actuators[k].stops = u.Value
+		}
+	}
+}
+
+func (c *control) schedule(at float64, do func(t float64)) {
+	c.timed = append(c.timed, timed{at: at, do: do})
+}
+
+// arm works out when step i acts, as far as that is known at time t: its `at` and its `after` arm it; then its condition, if it has one; then its wait.
+func (c *control) arm(i int, t float64) {
+	st := &c.steps[i]
+	if !math.IsNaN(st.done) || c.sim.changes.Missed[st.plan.ID] {
+		return
+	}
+	at := 0.0
+	if st.plan.At.Given {
+		at = st.plan.At.S
+	}
+	if st.plan.After != "" {
+		k, ok := c.byID[st.plan.After]
+		if !ok || math.IsNaN(c.steps[k].done) {
+			return
+		}
+		at = math.Max(at, c.steps[k].done)
+	}
+	st.armed, st.armedAt = true, at
+	if st.plan.When == nil {
+		c.trigger(i, at)
+	}
+}
+
+// trigger notes that step i was triggered at time t.
+func (c *control) trigger(i int, t float64) {
+	st := &c.steps[i]
+	st.due = math.Max(0, t+st.plan.Wait+c.sim.changes.Shift[st.plan.ID])
+	if st.plan.Action == HoldPoint {
+		st.due += c.sim.changes.wait(st.plan)
+	}
+	st.due = math.Max(st.due, c.sim.t)
+}
+
+// next returns the time of the next action after t.
+func (c *control) next(t float64) float64 {
+	n := math.Inf(1)
+	for i := range c.steps {
+		st := &c.steps[i]
+		if !math.IsNaN(st.done) {
+			continue
+		}
+		if st.due > t && st.due < n {
+			n = st.due
+		}
+		if st.armed && st.plan.When != nil && math.IsInf(st.due, 1) && st.armedAt > t && st.armedAt < n {
+			n = st.armedAt
+		}
+	}
+	for i := range c.timed {
+		if a := &c.timed[i]; !a.done && a.at > t && a.at < n {
+			n = a.at
+		}
+	}
+	return n
+}
+
+// act does everything that is due at time t, in the order of the file, and says whether anything was done.
+func (c *control) act(t float64) (acted bool) {
+	for i := range c.timed {
+		if a := &c.timed[i]; !a.done && a.at <= t {
+			a.done, acted = true, true
+			a.do(t)
+		}
+	}
+	for i := range c.steps {
+		st := &c.steps[i]
+		if !math.IsNaN(st.done) || !(st.due <= t) {
+			continue
+		}
+		st.done, st.movedBy = t, t
+		c.noteStep(i, t)
+		acted = true
+		c.do(st, t)
+		for k := range c.steps {
+			if c.steps[k].plan.After == st.plan.ID {
+				c.arm(k, t)
+			}
+		}
+	}
+	return acted
+}
+
+// do carries a step's action out.
+func (c *control) do(st *stepState, t float64) {
+	s, p := c.sim.sys, st.plan
+	switch p.Action {
+	case MoveValve:
+		a := &s.actuators[s.actuatorAt[p.Target]]
+		to, over := p.To, p.Over
+		if w := c.sim.changes.partWay(p.ID); !math.IsNaN(w) {
+			from := a.at(t)
+			to = from + w*(p.To-from)
+			if !math.IsNaN(over) {
+				over *= w
+			}
+			st.movedBy = a.moveTo(t, to, over)
+			a.stuck = to
+			return
+		}
+		st.movedBy = a.moveTo(t, to, over)
+	case SetPump:
+		c.setPump(s.actuatorAt[p.Target], p.Mode, t)
+	case SetInflow:
+		c.inflows[p.Target] = override{p.To, t}
+	case SetVent:
+		if k, ok := s.actuatorAt[p.Target]; ok {
+			s.actuators[k].moveTo(t, p.To, 0)
+		} else {
+			s.setVent(p.Target, p.To)
+		}
+	case CancelBatch:
+		c.gone[p.Target] = true
+	}
+}
+
+// due lists the steps in the order in which they acted.
+func (c *control) acted() []*stepState {
+	var all []*stepState
+	for i := range c.steps {
+		if !math.IsNaN(c.steps[i].done) {
+			all = append(all, &c.steps[i])
+		}
+	}
+	sort.SliceStable(all, func(i, j int) bool { return all[i].done < all[j].done })
+	return all
+}

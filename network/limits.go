@@ -1,0 +1,176 @@
+package network
+
+import (
+	"fmt"
+	"math"
+	"time"
+
+	"headfall/elements/quantity"
+)
+
+// judged is a limit made ready: followed by a tracker where it counts at every instant, judged on a history where it is about a span of time.
+type judged struct {
+	plan     *Limit
+	implicit bool
+	subject  string
+	of       []string
+	must     Condition
+	track    *tracker
+	hist     *history
+	vessel   int // of an emptied limit
+	deadline float64
+}
+
+// pressureSlack is the pressure, Pa, within which a rating is met: rounding is not a failure.
+const pressureSlack = 1e-6
+
+// addTrackers builds the limits, milestones, alarms and empty marks.
+func (o *observer) addTrackers() error {
+	p := o.sim.plan
+	for _, l := range p.Limits {
+		if err := o.addLimit(&judged{plan: l, must: l.Must, of: l.Must.Of, subject: l.Must.Subject.String()}); err != nil {
+			return err
+		}
+	}
+	for _, v := range p.Vessels {
+		rim := Condition{Subject: Level, Of: []string{v.Tag}, Bound: v.RimLevel(), Text: quantity.Format(v.RimLevel(), quantity.Length, p.Show.Level, 4)}
+		if err := o.addLimit(implicitLimit(rim, "its rim")); err != nil {
+			return err
+		}
+		o.rims = append(o.rims, o.limits[len(o.limits)-1].track)
+		if c := v.Cover; c != nil {
+			if !math.IsNaN(c.Vacuum) {
+				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Above: true, Bound: -c.Vacuum, Gauge: true, Text: quantity.Format(-c.Vacuum, quantity.Pressure, p.Show.Pressure, 4)}
+				if err := o.addLimit(implicitLimit(m, "vacuum it withstands")); err != nil {
+					return err
+				}
+			}
+			if !math.IsNaN(c.Overpress) {
+				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Bound: c.Overpress, Gauge: true, Text: quantity.Format(c.Overpress, quantity.Pressure, p.Show.Pressure, 4)}
+				if err := o.addLimit(implicitLimit(m, "pressure it withstands")); err != nil {
+					return err
+				}
+			}
+		}
+	}
+	return o.addMoments()
+}
+
+func implicitLimit(c Condition, why string) *judged {
+	return &judged{plan: &Limit{Must: c, Why: why}, must: c, of: c.Of, subject: c.Subject.String(), implicit: true}
+}
+
+// addLimit makes a limit ready.
+func (o *observer) addLimit(j *judged) error {
+	sim, l := o.sim, j.plan
+	o.limits = append(o.limits, j)
+	p, err := sim.sys.newProbe(&j.must)
+	if err != nil {
+		return fmt.Errorf("limit %d: %w", len(o.limits), err)
+	}
+	if l.Must.Subject == Emptied {
+		j.vessel, j.deadline = p.at[0], l.Within.S
+		return nil
+	}
+	if l.AveragedOver > 0 || l.EachDay || l.EachHour || l.InAny > 0 {
+		j.hist = newHistory(sim, p)
+		if j.hist != nil {
+			o.histories = append(o.histories, j.hist)
+		}
+		return nil
+	}
+	j.track = newTracker(p, !j.must.Above) // what breaks "below" is being above
+	switch l.Must.Subject {
+	case Pressure:
+		j.track.slack = pressureSlack
+	case Flow:
+		j.track.slack = 1e-12
+	default:
+		j.track.slack = 1e-9
+	}
+	if l.Permitted {
+		p.bound = 0
+		j.track.sign = 1
+		j.track.slack = permitSlack
+		j.track.window = &window{allowed: permitted(sim.plan, l), inverse: true}
+	} else if l.Since.Given || l.Until.Given {
+		j.track.window = &window{since: l.Since, until: l.Until}
+	}
+	o.trackers = append(o.trackers, j.track)
+	return nil
+}
+
+// permitSlack is the flow, m³/s, that counts as none outside permitted hours: 0.4 L/h.
+const permitSlack = 1e-7
+
+// permitted returns the spans of the run within which flow is permitted, day by day.
+func permitted(p *Plant, l *Limit) (spans [][2]float64) {
+	a, b := l.OnlyBetween[0].S, l.OnlyBetween[1].S
+	const day = 86400
+	for b <= a {
+		b += day
+	}
+	for k := -math.Ceil(math.Abs(a)/day) - 1; a+k*day < p.RunFor; k++ {
+		spans = append(spans, [2]float64{a + k*day, b + k*day})
+	}
+	return spans
+}
+
+// moment is a time to report.
+type moment struct {
+	*tracker
+	name   string
+	vessel int
+	alarm  *Alarm
+}
+
+// addMoments follows milestones, empty marks and alarms.
+func (o *observer) addMoments() error {
+	sim := o.sim
+	add := func(c *Condition, name string) (*moment, error) {
+		p, err := sim.sys.newProbe(c)
+		if err != nil {
+			return nil, err
+		}
+		m := &moment{tracker: newTracker(p, p.above), name: name}
+		o.trackers = append(o.trackers, m.tracker)
+		return m, nil
+	}
+	for _, s := range sim.plan.Milestones {
+		m, err := add(&s.When, s.Name)
+		if err != nil {
+			return fmt.Errorf("milestone %s: %w", s.Name, err)
+		}
+		o.milestones = append(o.milestones, m)
+	}
+	for i, v := range sim.plan.Vessels {
+		m, err := add(&Condition{Subject: Emptied, Of: []string{v.Tag}}, v.Tag)
+		if err != nil {
+			return err
+		}
+		o.emptied = append(o.emptied, m)
+		for _, a := range v.Alarms {
+			m, err := add(&a.When, a.Name)
+			if err != nil {
+				return fmt.Errorf("alarm %s of %s: %w", a.Name, v.Tag, err)
+			}
+			m.vessel, m.alarm = i, a
+			o.alarms = append(o.alarms, m)
+		}
+	}
+	return nil
+}
+
+// dayStart returns the times, s from the start, at which calendar days begin within the run, the first at or before 0.
+func dayStart(p *Plant) []float64 {
+	first := 0.0
+	if !p.Start.IsZero() {
+		midnight := time.Date(p.Start.Year(), p.Start.Month(), p.Start.Day(), 0, 0, 0, 0, p.Start.Location())
+		first = -p.Start.Sub(midnight).Seconds()
+	}
+	var all []float64
+	for t := first; t < p.RunFor; t += 86400 {
+		all = append(all, t)
+	}
+	return all
+}

@@ -1,0 +1,263 @@
+package network
+
+import (
+	"math"
+
+	"headfall/elements"
+)
+
+// line is a compiled Line: its parts in series as a chain, what limits its flow, and its last result with the partial derivatives by its own
+// end conditions. evaluate fills the result; nothing here knows the numbering of the plant.
+type line struct {
+	plan     *Line
+	from, to mouth
+	chain    chain
+	table    *flowTable
+	locals   []elements.Local
+	moving   []mover // parts whose opening changes in time in this segment
+	oneWay   bool    // a check valve lets nothing back
+	crack    float64 // Pa, of the check valves
+	shut     bool    // nothing passes, as the parts stand
+	zero     float64 // Pa lost at no flow: less than 0 with a running pump
+	losses   []directed
+	floors   []floor
+	crowns   []crown
+	weir     elements.Crest
+	weirAt   *elements.Local
+	crestZ   float64 // m over datum, of the weir
+	gmin     float64 // m³/(s·Pa), see evaluate
+	inertia  float64 // ρL/A of all parts, kg/m⁴; 0 for none
+	own      float64 // the flow itself where it is an unknown of the plant
+	bore     float64 // m, the narrowest, for velocities; 0 for none
+	area     float64 // m², of it
+	row      int32   // unknown of an inertial flow; -1
+	acts     []int32 // its actuators
+	sources  bool    // it has a pump
+	long     bool    // it has a pipe
+	extraK   float64 // added by an upset, on the first bore
+	lastDp   float64 // warm start of the chain
+	lastQ    float64
+	lastS    float64
+
+	q          float64 // m³/s from `from` to `to`
+	byA, byB   float64 // ∂q/∂phi at each end, m³/(s·Pa)
+	byYa, byYb float64 // ∂q/∂depth at each end, m²/s
+	byT        float64 // ∂q/∂t at fixed end conditions, by moving parts, m³/s²
+	byQ        float64 // ∂q/∂own where the flow is an unknown
+	push       float64 // of an unknown flow: dq/dt, m³/s², and its partials
+	pushA      float64
+	pushB      float64
+	pushQ      float64
+	pushYa     float64
+	pushYb     float64
+	pushT      float64
+}
+
+// mover is a part whose opening moves at a steady rate.
+type mover struct {
+	part     int // in the chain
+	local    int // in the line
+	actuator int
+	rate     float64 // 1/s
+}
+
+// joinHead is the head over which a one-way end or a check valve takes up flow, m of liquid.
+const joinHead = 1e-4
+
+// evaluate works out the flow for ends a and b.
+func (l *line) evaluate(a, b *end, gamma float64) {
+	l.byA, l.byB, l.byYa, l.byYb, l.byT, l.byQ = 0, 0, 0, 0, 0, 0
+	switch {
+	case l.inertia > 0:
+		l.carry(a, b, gamma)
+	case l.shut:
+		l.q = 0
+	case l.weir != nil:
+		l.spill(a, b, gamma)
+	default:
+		l.pass(a, b, gamma)
+	}
+	if l.gmin > 0 {
+		l.weep(a, b)
+	}
+}
+
+// pass is the flow of a line that fills: what its parts let through at the pressure between its ends, within the limits.
+func (l *line) pass(a, b *end, gamma float64) {
+	dp := a.phi - b.phi
+	drive := dp - l.zero
+	onlyOn := l.oneWay || b.depth == never
+	onlyBack := a.depth == never
+	turn := 1.0 // slope of the one-way join
+	band := joinHead * gamma
+	switch {
+	case onlyOn && onlyBack:
+		l.q = 0
+		return
+	case onlyOn:
+		drive, turn = crackOpen(drive, l.crack, band)
+		if drive <= 0 {
+			l.q = 0
+			return
+		}
+	case onlyBack:
+		drive, turn = elements.Join(-drive, band)
+		if drive <= 0 {
+			l.q = 0
+			return
+		}
+		drive = -drive
+	}
+	q, s := l.flowAt(drive + l.zero)
+	l.byT = l.openingRate(q, s)
+	s *= turn
+	l.q, l.byA, l.byB = q, s, -s
+	l.limit(a, b, gamma)
+}
+
+// crackOpen returns the pressure that drives the flow through check valves which lift at crack: 0 up to there, the whole pressure from one band
+// beyond, C¹ between; with its slope.
+func crackOpen(drive, crack, band float64) (v, slope float64) {
+	u := (drive - crack) / band
+	switch {
+	case u <= 0:
+		return 0, 0
+	case u >= 1:
+		return drive, 1
+	}
+	top := crack + band
+	return u * u * ((3-2*u)*top + (u-1)*band), u * (6*(1-u)*top/band + 3*u - 2)
+}
+
+// flowAt is the flow that the chain lets through at dp, by table or by solving.
+func (l *line) flowAt(dp float64) (q, slope float64) {
+	if l.table != nil {
+		if q, slope, ok := l.table.at(dp); ok {
+			return q, slope
+		}
+	}
+	guess := l.lastQ + l.lastS*(dp-l.lastDp)
+	if (guess < 0) != (dp-l.zero < 0) {
+		guess = l.lastQ
+	}
+	q, slope = l.chain.solve(dp, guess)
+	l.lastDp, l.lastQ, l.lastS = dp, q, slope
+	return q, slope
+}
+
+// openingRate returns ∂q/∂t at fixed pressures from the parts that move.
+func (l *line) openingRate(q, s float64) float64 {
+	var dt float64
+	for _, m := range l.moving {
+		dt -= s * m.rate * dropByOpening(l.chain.parts[m.part], q, l.chain.locals[m.part])
+	}
+	return dt
+}
+
+// dropByOpening returns ∂Drop/∂opening, Pa, by the part itself when it knows, else by differences.
+func dropByOpening(p elements.Part, q float64, at *elements.Local) float64 {
+	if t, ok := p.(elements.Throttles); ok {
+		return t.DropByOpening(q, at)
+	}
+	x := at.Opening
+	const e = 1e-6
+	at.Opening = math.Min(1, x+e)
+	up, _ := p.Drop(q, at)
+	hi := at.Opening
+	at.Opening = math.Max(0, x-e)
+	dn, _ := p.Drop(q, at)
+	lo := at.Opening
+	at.Opening = x
+	return (up - dn) / (hi - lo)
+}
+
+// limit holds the flow within what the end it leaves admits, and within its floor pressures.
+func (l *line) limit(a, b *end, gamma float64) {
+	if l.q >= 0 {
+		l.q, l.byA, l.byYa, l.byB = l.admit(&l.from.inlet, a.depth, l.q, l.byA, l.byB)
+	} else {
+		var q float64
+		q, l.byB, l.byYb, l.byA = l.admit(&l.to.inlet, b.depth, -l.q, -l.byB, -l.byA)
+		l.q, l.byB, l.byYb, l.byA = -q, -l.byB, -l.byYb, -l.byA
+	}
+	for i := range l.floors {
+		f := &l.floors[i]
+		if f.back == (l.q < 0) && l.q != 0 {
+			f.hold(l, a, b, gamma)
+		}
+	}
+}
+
+// admit applies an inlet's limit at depth y to a flow q ≥ 0 leaving there, with ∂q/∂phi at that end and at the other.
+func (l *line) admit(in *inletLaw, y, q, near, far float64) (q1, near1, byY, far1 float64) {
+	if in.ample(y, q) || q == 0 {
+		return q, near, 0, far
+	}
+	var c, byQ, byC, slope float64
+	if in.form == fadeInlet {
+		u := y / (0.05 * in.bore)
+		if u <= 0 {
+			l.byT = 0
+			return 0, 0, 0, 0
+		}
+		if u >= 1 {
+			return q, near, 0, far
+		}
+		w, dw := u*u*(3-2*u), 6*u*(1-u)/(0.05*in.bore)
+		l.byT *= w
+		return q * w, near * w, q * dw, far * w
+	}
+	c, slope = in.limit(y)
+	q1, byQ, byC = elements.Min(q, c)
+	l.byT *= byQ
+	return q1, near * byQ, byC * slope, far * byQ
+}
+
+// weep adds a conductance so small that it counts only where a tee has no other path: 1e-15 m³/(s·Pa), booked at both ends. It fades where an
+// end is dry, so that next to nothing is drawn from there.
+func (l *line) weep(a, b *end) {
+	g := l.gmin
+	if a.depth <= 0 || b.depth <= 0 {
+		g *= 1e-5
+	}
+	l.q += g * (a.phi - b.phi)
+	l.byA += g
+	l.byB -= g
+}
+
+// spill is the flow over a weir: from the surface over its own crest, and with parts after it no more than they carry away from a free
+// surface at the crest.
+func (l *line) spill(a, b *end, gamma float64) {
+	z0 := l.crestZ
+	h := (a.phi-l.from.air)/gamma - z0
+	if a.depth == never {
+		h = never
+	}
+	if len(l.chain.parts) == 0 && l.chain.fwd == 0 {
+		hd := (b.phi-l.to.air)/gamma - z0
+		if b.depth == never || b.depth < 0 {
+			hd = never
+		}
+		if h >= hd {
+			q, byH, byHd := l.weir.Spill(h, hd, l.weirAt)
+			l.q, l.byA, l.byB = q, byH/gamma, byHd/gamma
+		} else {
+			q, byH, byHd := l.weir.Spill(hd, h, l.weirAt)
+			l.q, l.byB, l.byA = -q, -byH/gamma, -byHd/gamma
+		}
+		return
+	}
+	q, byH, _ := l.weir.Spill(h, never, l.weirAt)
+	if q <= 0 {
+		l.q = 0
+		return
+	}
+	drive, turn := elements.Join(l.from.air+gamma*z0-b.phi-l.zero, joinHead*gamma)
+	if drive <= 0 {
+		l.q = 0
+		return
+	}
+	c, s := l.flowAt(drive + l.zero)
+	v, byQ, byC := elements.Min(q, c)
+	l.q, l.byA, l.byB = v, byQ*byH/gamma, -byC*s*turn
+}

@@ -1,0 +1,230 @@
+package network
+
+import (
+	"math"
+
+	"headfall/integrate"
+)
+
+// observer sees every step: it books volumes, finds extremes between samples, watches limits and keeps the series.
+type observer struct {
+	sim    *simulation
+	prev   snapshot // start of the step
+	mid    snapshot
+	now    snapshot // end of the step
+	sample snapshot
+	y      []float64
+	f      []float64
+
+	level, gas []extreme // of the vessels
+	spill      []extreme
+	flow       []extreme // of the lines
+	crest      []extreme
+	inflow     []extreme // of the outside points
+	over       []float64 // m³ over the capacity of outside points
+	rims       []*tracker
+	sums       [3]float64
+	spilled    []float64 // s, when a vessel was last seen spilling
+	trackers   []*tracker
+	keep       bool
+	columns    []column
+	series     *Series
+	next       float64 // next sample
+	index      int
+	limits     []*judged
+	milestones []*moment
+	emptied    []*moment
+	alarms     []*moment
+	histories  []*history
+	regimes    []regime
+}
+
+// extreme is the least and the most of a number, and when.
+type extreme struct{ low, lowAt, high, highAt float64 }
+
+func (e *extreme) see(v, t float64) {
+	if v < e.low {
+		e.low, e.lowAt = v, t
+	}
+	if v > e.high {
+		e.high, e.highAt = v, t
+	}
+}
+
+func newObserver(sim *simulation) (*observer, error) {
+	s := sim.sys
+	o := &observer{sim: sim, prev: s.newSnapshot(), mid: s.newSnapshot(), now: s.newSnapshot(), sample: s.newSnapshot(),
+		y: make([]float64, s.n), f: make([]float64, s.n)}
+	o.level, o.gas, o.spill = make([]extreme, len(s.stations)), make([]extreme, len(s.stations)), make([]extreme, len(s.stations))
+	o.flow, o.crest, o.over = make([]extreme, len(s.lines)), make([]extreme, len(s.lines)), make([]float64, len(s.outside))
+	o.inflow, o.spilled = make([]extreme, len(s.outside)), make([]float64, len(s.stations))
+	o.regimes = make([]regime, len(s.lines))
+	return o, o.addTrackers()
+}
+
+func (o *observer) begin(series bool) {
+	clean := extreme{low: math.Inf(1), high: math.Inf(-1)}
+	for _, list := range [][]extreme{o.level, o.gas, o.spill, o.flow, o.crest, o.inflow} {
+		for i := range list {
+			list[i] = clean
+		}
+	}
+	clear(o.over)
+	clear(o.regimes)
+	for _, m := range o.trackers {
+		m.begin()
+	}
+	for _, h := range o.histories {
+		h.begin()
+	}
+	o.keep, o.series, o.next, o.index = series, nil, 0, 0
+	if series {
+		o.series = o.newSeries()
+	}
+}
+
+// fill evaluates the plant at (t, y) into w, integrals apart.
+func (sim *simulation) fill(w *snapshot, t float64, y, f []float64) {
+	s := sim.sys
+	w.t = t
+	s.Rates(t, y, f, w.z) // w.z holds the rates of the integrals for a moment: the flows
+	copy(w.q, w.z[:len(s.lines)])
+	for i := range s.stations {
+		st := &s.stations[i]
+		w.level[i], w.gas[i], w.spill[i] = st.level, st.gas, st.spill
+	}
+	copy(w.dv, f)
+}
+
+// start looks at the plant just after something acted.
+func (o *observer) start() {
+	sim := o.sim
+	sim.fill(&o.now, sim.t, sim.solver.Y(), o.f)
+	copy(o.now.z, sim.solver.Z())
+	copy(sim.y, sim.solver.Y())
+	o.note(&o.now, 2)
+	for _, m := range o.trackers {
+		m.resume(o)
+	}
+	if o.keep {
+		if sim.t >= o.next {
+			o.advance()
+		}
+		o.record(&o.now)
+	}
+}
+
+// step looks at the step just taken.
+func (o *observer) step(out *integrate.Outcome) {
+	sim := o.sim
+	o.prev, o.now = o.now, o.prev
+	for _, m := range o.trackers {
+		m.v[0] = m.v[2]
+	}
+	half := out.T0 + (out.T-out.T0)/2
+	o.at(&o.mid, half)
+	o.note(&o.mid, 1)
+	o.samples(out)
+	sim.fill(&o.now, out.T, sim.y, o.f)
+	copy(o.now.z, sim.solver.Z())
+	o.note(&o.now, 2)
+	o.between(&o.prev, &o.mid)
+	o.between(&o.mid, &o.now)
+	o.peaks()
+	for _, m := range o.trackers {
+		m.step(o)
+	}
+	o.knots(&o.prev)
+	sim.led.book(sim, &o.prev, &o.mid)
+	o.knots(&o.mid)
+	sim.led.book(sim, &o.mid, &o.now)
+	o.knots(&o.now)
+	o.regime()
+	o.beyond()
+	if o.keep && out.Stop != integrate.Stepped {
+		if out.T >= o.next {
+			o.advance()
+		}
+		o.record(&o.now)
+	}
+}
+
+func (o *observer) knots(w *snapshot) {
+	for _, h := range o.histories {
+		h.knot(w)
+	}
+}
+
+// at fills w at time t within the last step.
+func (o *observer) at(w *snapshot, t float64) {
+	sim := o.sim
+	sim.solver.Eval(t, o.y)
+	sim.fill(w, t, o.y, o.f)
+	sim.solver.EvalZ(t, w.z)
+}
+
+// note takes the values at a snapshot that belongs to the present state of the system; k is 1 in the middle and 2 at the end of a step.
+func (o *observer) note(w *snapshot, k int) {
+	s := o.sim.sys
+	for i := range o.level {
+		o.level[i].see(w.level[i], w.t)
+		o.spill[i].see(w.spill[i], w.t)
+		if s.stations[i].closed {
+			o.gas[i].see(w.gas[i], w.t)
+		}
+	}
+	for i := range o.flow {
+		o.flow[i].see(w.q[i], w.t)
+		if len(s.lines[i].crowns) > 0 {
+			o.crest[i].see(s.crestHead(i), w.t)
+		}
+	}
+	for _, m := range o.trackers {
+		m.v[k] = m.probe.value(o.sim, w)
+	}
+}
+
+// between finds extremes of level where a volume turns between two snapshots.
+func (o *observer) between(a, b *snapshot) {
+	s, d := o.sim.sys, o.sim.solver.Dense()
+	for i := range o.level {
+		if a.dv[i]*b.dv[i] >= 0 {
+			continue
+		}
+		t := bisect(a.t, b.t, a.dv[i] < 0, func(t float64) float64 { return d.Rate(i, t) })
+		h, _ := s.stations[i].shape.Level(d.One(i, t))
+		o.level[i].see(h, t)
+	}
+}
+
+// peaks refines extremes of flow, spill and gas pressure that lie inside the step.
+func (o *observer) peaks() {
+	sim := o.sim
+	a, m, b := &o.prev, &o.mid, &o.now
+	for i := range o.flow {
+		o.flow[i].refine(a.t, b.t, a.q[i], m.q[i], b.q[i], func(t float64) float64 { return sim.flowAt(i, t) })
+	}
+	for i := range o.gas {
+		if sim.sys.stations[i].closed {
+			o.gas[i].refine(a.t, b.t, a.gas[i], m.gas[i], b.gas[i], func(t float64) float64 { return sim.gasAt(i, t) })
+		}
+		if m.spill[i] > 0 {
+			o.spill[i].refine(a.t, b.t, a.spill[i], m.spill[i], b.spill[i], func(t float64) float64 { return sim.spillAt(i, t) })
+		}
+	}
+}
+
+// refine looks for an extreme between a, the middle and b where the middle is beyond both ends.
+func (e *extreme) refine(a, b, va, vm, vb float64, f func(float64) float64) {
+	up := vm > va && vm > vb && vm-math.Max(va, vb) > 1e-12*math.Abs(vm)
+	down := vm < va && vm < vb && math.Min(va, vb)-vm > 1e-12*math.Abs(vm)
+	if !up && !down {
+		return
+	}
+	sign := 1.0
+	if down {
+		sign = -1
+	}
+	t, v := summit(a, b, sign*va, sign*vm, sign*vb, func(t float64) float64 { return sign * f(t) })
+	e.see(sign*v, t)
+}

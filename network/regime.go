@@ -1,0 +1,171 @@
+package network
+
+import (
+	"fmt"
+	"math"
+
+	"headfall/elements"
+)
+
+// regime is the spans of time in which a line is in some state worth a flag, as seen at the ends of steps.
+type regime [regimes]span
+
+type span struct {
+	open     bool
+	seen     bool
+	from, to float64
+	size     float64
+	flags    int // flags raised so far
+}
+
+const (
+	airDrawn = iota // the inlet pulls air down
+	airEnters
+	partFull
+	choked
+	held
+	offCurve
+	regimes
+)
+
+// flowing is the flow, m³/s, under which a line is taken as still: 0.04 L/min.
+const flowing = 6e-7
+
+// most flags of one kind at one place; what comes after is left out.
+const mostFlags = 6
+
+// regime looks at every line in the present state.
+func (o *observer) regime() {
+	s, t := o.sim.sys, o.now.t
+	for i := range s.lines {
+		l := &s.lines[i]
+		if l.table != nil && o.now.q[i] == o.prev.q[i] {
+			continue
+		}
+		a, b := s.see(&l.from), s.see(&l.to)
+		moving := math.Abs(l.q) > flowing
+		in, depth := &l.from.inlet, a.depth
+		if l.q < 0 {
+			in, depth = &l.to.inlet, b.depth
+		}
+		o.mark(i, airDrawn, t, moving && drawsAir(in, depth, math.Abs(l.q), s.plan.Gravity), depth)
+		enters := l.to.kind == toAir && !l.shut && !l.oneWay && a.phi+s.gamma*1e-3 < b.phi && s.reachesLiquid(&l.from)
+		o.mark(i, airEnters, t, enters, (b.phi-a.phi)/s.gamma)
+		froude := 0.0
+		if l.bore > 0 {
+			froude = math.Abs(l.q) / l.area / math.Sqrt(s.plan.Gravity*l.bore)
+		}
+		o.mark(i, partFull, t, moving && froude < 1 && l.to.kind == toAir && l.long && s.falls(l), froude)
+		var c, h bool
+		for k := range l.floors {
+			f := &l.floors[k]
+			c = c || f.active && f.throat != nil
+			h = h || f.active && f.throat == nil && f.vapour
+		}
+		o.mark(i, choked, t, c && moving, 0)
+		o.mark(i, held, t, h && moving, 0)
+		if l.sources {
+			o.mark(i, offCurve, t, l.beyondCurve(), l.q)
+		}
+	}
+}
+
+// drawsAir tells that the depth over an inlet is under that at which gas is pulled through: h = (Q/2.53√g)^0.4 in a floor (Lubin & Springer
+// 1967), the crown of a mouth in a wall.
+func drawsAir(in *inletLaw, depth, q, g float64) bool {
+	switch in.form {
+	case floorInlet:
+		return depth < math.Pow(q/(2.53*math.Sqrt(g)), 0.4)
+	case sideInlet:
+		return depth < in.bore
+	}
+	return false
+}
+
+// reachesLiquid tells that there is something beyond a mouth that the line could empty.
+func (s *system) reachesLiquid(m *mouth) bool { return m.kind == toTee }
+
+// falls tells that a line runs downhill to its free end, so that it may run part full.
+func (s *system) falls(l *line) bool { return s.endElevation(&l.from) > l.to.centre }
+
+// beyondCurve tells that a running pump works outside its curve.
+func (l *line) beyondCurve() bool {
+	for i, f := range l.plan.Parts {
+		if p, ok := f.Part.(elements.Runs); ok && l.locals[i].Opening > 0 && l.q > 1.001*p.Runout() {
+			return true
+		}
+	}
+	return false
+}
+
+// mark opens, extends or closes a span.
+func (o *observer) mark(i, kind int, t float64, on bool, size float64) {
+	r := &o.regimes[i][kind]
+	switch {
+	case on && !r.open:
+		r.open, r.seen, r.from, r.to, r.size = true, true, math.Min(o.prev.t, t), t, size
+	case on:
+		r.to = t
+		r.size = math.Max(r.size, size)
+	case r.open:
+		r.open, r.to = false, t
+		o.raise(i, kind)
+	}
+}
+
+// closeRegimes raises the flags of the spans that are still open.
+func (o *observer) closeRegimes() {
+	for i := range o.regimes {
+		for k := range o.regimes[i] {
+			if o.regimes[i][k].open {
+				o.regimes[i][k].open = false
+				o.raise(i, k)
+			}
+		}
+	}
+}
+
+// raise makes a flag of a span.
+func (o *observer) raise(i, kind int) {
+	r := &o.regimes[i][kind]
+	if r.flags++; r.flags > mostFlags || r.to-r.from <= 0 {
+		return
+	}
+	tag := o.sim.plan.Lines[i].Tag
+	f := &Flag{Where: tag, From: r.from, To: r.to}
+	size := r.size
+	switch kind {
+	case airDrawn:
+		f.Kind, f.Says = "air_drawn_in", fmt.Sprintf("the inlet of %s is so shallow that it pulls air: flow surges and is slower than shown", tag)
+		f.Do = "expect gulping; throttle, or stop before the last of it"
+	case airEnters:
+		f.Kind, f.Says = "air_enters", fmt.Sprintf("%s would draw from its open end: air enters there and nothing flows", tag)
+		f.Do, f.Size = "shut it, or keep its end drowned", &size
+	case partFull:
+		f.Kind, f.Says = "part_full", fmt.Sprintf("%s may run part full near its open end (pipe Froude number at most %.2g): full-pipe flow is assumed", tag, r.size)
+		f.Do, f.Size = "take the flow as an upper estimate", &size
+	case choked:
+		f.Kind, f.Says = "valve_choked", fmt.Sprintf("a valve in %s chokes: opening it further does not add flow", tag)
+		f.Do = "throttle; noise and damage are likely"
+	case held:
+		f.Kind, f.Says = "held_at_vapour_pressure", fmt.Sprintf("the high point of %s is held at vapour pressure: this flow is unreliable", tag)
+		f.Do = "vent the high point, or throttle downstream of it"
+	case offCurve:
+		f.Kind, f.Says = "pump_off_curve", fmt.Sprintf("the pump in %s runs beyond the last point of its curve", tag)
+		f.Do, f.Size = "throttle its discharge", &size
+	}
+	o.sim.flags = append(o.sim.flags, f)
+}
+
+// flag notes something that happens at one time; repeated ones at one place are counted as one until mostFlags.
+func (sim *simulation) flag(kind, where string, t float64, says, do string) {
+	n := 0
+	for _, f := range sim.flags {
+		if f.Kind == kind && f.Where == where {
+			n++
+		}
+	}
+	if n < mostFlags {
+		sim.flags = append(sim.flags, &Flag{Kind: kind, Where: where, From: t, To: t, Says: says, Do: do})
+	}
+}

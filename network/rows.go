@@ -1,0 +1,53 @@
+package network
+
+import "math"
+
+// at returns the value just after time t.
+func (r Rows) at(t float64) float64 {
+	v, _ := r.piece(t)
+	return v
+}
+
+// piece returns the value just after time t and the slope of the straight piece that begins there.
+func (r Rows) piece(t float64) (value, slope float64) {
+	if len(r) == 0 {
+		return 0, 0
+	}
+	k := -1 // last row at or before t
+	for i, row := range r {
+		if row[0] <= t {
+			k = i
+		}
+	}
+	switch {
+	case k < 0:
+		return r[0][1], 0
+	case k == len(r)-1:
+		return r[k][1], 0
+	}
+	a, b := r[k], r[k+1]
+	m := (b[1] - a[1]) / (b[0] - a[0])
+	return a[1] + m*(t-a[0]), m
+}
+
+// next returns the first row time after t, or +Inf.
+func (r Rows) next(t float64) float64 {
+	for _, row := range r {
+		if row[0] > t && len(r) > 1 {
+			return row[0]
+		}
+	}
+	return math.Inf(1)
+}
+
+// integral returns ∫ r dt from a to b.
+func (r Rows) integral(a, b float64) float64 {
+	var sum float64
+	for a < b {
+		c := math.Min(b, r.next(a))
+		v, m := r.piece(a)
+		sum += (v + m*(c-a)/2) * (c - a)
+		a = c
+	}
+	return sum
+}

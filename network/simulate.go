@@ -1,0 +1,275 @@
+package network
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"math"
+	"time"
+
+	"headfall/integrate"
+)
+
+// simulation is one run of a compiled plant: the only place where time, events and steps meet. It is reused from run to run.
+type simulation struct {
+	plan    *Plant
+	method  string
+	sys     *system
+	solver  *integrate.Solver
+	control control
+	led     *ledger
+	changes Changes
+	watch   *watcher
+	obs     *observer
+
+	t       float64
+	y       []float64
+	stopped string
+	trouble error
+	flags   []*Flag
+	edges   map[*Edge]float64 // when conditional edges of windows came
+	fouling bool              // runs may foul lines that the plan does not
+	bumps   int               // restarts without progress at one time
+}
+
+// Failure tells that the calculation could not finish.
+type Failure struct {
+	T    float64 // s from the start
+	Says string
+	Err  error
+}
+
+func (f *Failure) Error() string { return f.Says }
+
+// Unwrap returns the cause.
+func (f *Failure) Unwrap() error { return f.Err }
+
+func (m *Model) simulation() (*simulation, error) {
+	if m.sim == nil {
+		method, err := methodNamed(m.opt.Method)
+		if err != nil {
+			return nil, err
+		}
+		s := m.sys
+		sim := &simulation{plan: m.plan, sys: s, led: newLedger(s), y: make([]float64, s.n)}
+		sim.method = m.opt.Method
+		if method == nil {
+			sim.method = integrate.Rodas5P.Name()
+		}
+		sim.solver = integrate.NewSolver(s, integrate.Options{RTol: m.opt.Tolerance, Method: method})
+		if sim.watch, err = newWatcher(sim); err != nil {
+			return nil, err
+		}
+		if sim.obs, err = newObserver(sim); err != nil {
+			return nil, err
+		}
+		m.sim = sim
+	}
+	return m.sim, nil
+}
+
+func methodNamed(name string) (integrate.Method, error) {
+	if name == "" {
+		return nil, nil
+	}
+	var names []string
+	for _, m := range integrate.Methods() {
+		if m.Name() == name {
+			return m, nil
+		}
+		names = append(names, m.Name())
+	}
+	return nil, fmt.Errorf("no method %q; there are %v", name, names)
+}
+
+// Run runs the plant once. The error is a *Failure when the calculation could not finish, or ctx's cause when it was interrupted; the result
+// then holds what was computed up to there.
+func (m *Model) Run(ctx context.Context, opt RunOptions) (*Result, error) {
+	now := opt.Now
+	if now == nil {
+		now = time.Now
+	}
+	began := now()
+	sim, err := m.simulation()
+	if err != nil {
+		return nil, err
+	}
+	sim.begin(&opt)
+	err = sim.run(ctx, &opt)
+	sim.obs.finish()
+	r := sim.result()
+	r.Work.Wall = now().Sub(began).Seconds()
+	return r, err
+}
+
+// begin puts the plant at its start.
+func (sim *simulation) begin(opt *RunOptions) {
+	sim.changes = opt.Changes
+	sim.t, sim.stopped, sim.trouble, sim.flags, sim.bumps = 0, "", nil, nil, 0
+	sim.edges = map[*Edge]float64{}
+	s := sim.sys
+	s.begin(&sim.changes)
+	for i := range s.stations {
+		st := &s.stations[i]
+		sim.y[i] = st.plan.StartVolume()
+		if st.massRow >= 0 {
+			sim.y[st.massRow] = st.startMass()
+		}
+	}
+	s.guessTees(sim.y)
+	for _, k := range s.inertial {
+		sim.y[s.lines[k].row] = 0
+	}
+	sim.led.reset()
+	sim.solver.Reset()
+	sim.control.begin(sim)
+	sim.watch.begin()
+	sim.obs.begin(opt.Series)
+}
+
+// run goes from segment to segment: between two of them something acted.
+func (sim *simulation) run(ctx context.Context, opt *RunOptions) error {
+	end := sim.plan.RunFor
+	for {
+		sim.settleActions()
+		stop := math.Min(end, sim.nextStop())
+		sim.sys.freeze(sim)
+		sim.project()
+		if err := sim.solver.Restart(sim.t, sim.y); err != nil {
+			return sim.fail(err)
+		}
+		sim.watch.arm()
+		sim.obs.start()
+		if sim.t >= end {
+			sim.stopped = "time"
+			return nil
+		}
+		hit, err := sim.segment(ctx, stop, opt)
+		if err != nil || sim.stopped != "" {
+			return err
+		}
+		sim.watch.fire(hit)
+	}
+}
+
+// segment steps until the segment's end or an event.
+func (sim *simulation) segment(ctx context.Context, stop float64, opt *RunOptions) (hit []int, err error) {
+	t0 := sim.t
+	for {
+		out, err := sim.solver.Step(stop, sim.watch)
+		if err != nil {
+			return nil, sim.fail(err)
+		}
+		sim.t = out.T
+		copy(sim.y, sim.solver.Y())
+		sim.obs.step(&out)
+		if opt.Progress != nil {
+			opt.Progress(sim.t / sim.plan.RunFor)
+		}
+		if out.Stop != integrate.Stepped {
+			sim.bookInflow(t0, sim.t)
+			return out.Fired, nil
+		}
+		if sim.atRest() {
+			sim.bookInflow(t0, sim.t)
+			sim.stopped = "at_rest"
+			return nil, nil
+		}
+		if ctx.Err() != nil {
+			sim.bookInflow(t0, sim.t)
+			sim.stopped = "interrupted"
+			return nil, context.Cause(ctx)
+		}
+	}
+}
+
+// fail puts an error of the solver into words: when, and which vessel or line.
+func (sim *simulation) fail(err error) error {
+	sim.stopped = "failed"
+	f := &Failure{T: sim.t, Err: err}
+	what := "the calculation did not settle"
+	var e *integrate.Error
+	if errors.As(err, &e) {
+		f.T = e.T
+		if tag := sim.sys.unknownName(e.Unknown); tag != "" {
+			what += " at " + tag
+		}
+	}
+	f.Says = fmt.Sprintf("%s, %.6g s after the start (%v); results up to there are kept. Look at the bores, lengths and openings there, or try another --method or a looser --tolerance", what, f.T, err)
+	sim.trouble = f
+	return f
+}
+
+// nextStop returns the next time at which something in the plant has a corner.
+func (sim *simulation) nextStop() float64 {
+	t, s := sim.t, sim.sys
+	n := math.Min(sim.control.next(t), sim.nextEdge(t))
+	for i := range s.actuators {
+		if e := s.actuators[i].t1; e > t {
+			n = math.Min(n, e)
+		}
+	}
+	for i := range s.outside {
+		n = math.Min(n, Rows(s.outside[i].point.Surface).next(t))
+	}
+	for _, v := range sim.plan.Vessels {
+		if _, set := sim.control.inflows[v.Tag]; !set {
+			n = math.Min(n, v.Inflow.next(t))
+		}
+		for _, b := range v.Batches {
+			if sim.control.runs(b) {
+				for _, e := range [2]float64{b.At.S, b.At.S + b.Over} {
+					if e > t {
+						n = math.Min(n, e)
+					}
+				}
+			}
+		}
+	}
+	return n
+}
+
+// runs tells whether a batch comes, or has begun before it was cancelled.
+func (c *control) runs(b *Batch) bool { return !c.gone[b.ID] }
+
+// settleActions does what is due now until nothing more follows from it.
+func (sim *simulation) settleActions() {
+	for range 100 {
+		a := sim.control.act(sim.t)
+		b := sim.watch.immediate()
+		if !a && !b {
+			return
+		}
+	}
+}
+
+// bookInflow adds what came in from t0 to t1 while the inflows ran straight.
+func (sim *simulation) bookInflow(t0, t1 float64) {
+	for i := range sim.sys.stations {
+		st := &sim.sys.stations[i]
+		d := t1 - t0
+		sim.led.inflow[i] += (st.inflow + st.inflowRate*d/2) * d
+	}
+}
+
+// atRest tells that nothing flows, nothing changes and nothing is pending.
+func (sim *simulation) atRest() bool {
+	if !math.IsInf(sim.nextStop(), 1) {
+		return false
+	}
+	w := &sim.obs.now
+	for i := range sim.sys.stations {
+		if sim.sys.stations[i].inflow != 0 || math.Abs(w.dv[i]) > restFlow {
+			return false
+		}
+	}
+	for i := range w.q {
+		if math.Abs(w.q[i]) > restFlow {
+			return false
+		}
+	}
+	return true
+}
+
+// restFlow is the flow, m³/s, under which nothing flows: a drop in a minute.
+const restFlow = 1e-9

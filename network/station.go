@@ -1,0 +1,125 @@
+package network
+
+import (
+	"math"
+
+	"headfall/elements"
+	"headfall/elements/shape"
+)
+
+// gasConstant of dry air, J/(kg·K): 8.314462618 / 0.0289652. Source: CODATA 2018; molar mass of dry air, CIPM-2007 (0.400 ‰ CO₂: 28.96546).
+const gasConstant = 287.0502
+
+// station is a vessel in the equations: where its unknowns are and what follows from them.
+type station struct {
+	plan    *Vessel
+	shape   shape.Shape
+	base    float64
+	full    float64 // m³, volume under the top of the shape
+	rim     float64 // m above base
+	rimLen  float64 // m
+	spillTo int32   // vessel; -1: the floor or an outside point
+	closed  bool    // has a cover
+	sealed  bool    // no vent: the mass of gas is a constant
+	massRow int32   // unknown of the gas mass; -1
+	mass    float64 // kg, of a sealed gas space
+	temp    float64 // K
+	vents   []ventAt
+
+	inflow, inflowRate float64 // m³/s at the segment's start and its slope, m³/s²
+
+	level   float64 // m above base
+	slope   float64 // dh/dV, 1/m²
+	surface float64 // m over datum
+	gas     float64 // Pa absolute
+	gasV    float64 // ∂gas/∂V, Pa/m³
+	gasN    float64 // ∂gas/∂m, Pa/kg
+	spill   float64 // m³/s over the rim
+	spillV  float64 // ∂spill/∂V, 1/s
+}
+
+type ventAt struct {
+	plan *VesselVent
+	vent elements.Vent
+	at   elements.Local
+}
+
+// rimCoefficient of the spill over a rim, m^½/s: a broad crest, common practice, no source.
+const rimCoefficient = 1.7
+
+func newStation(v *Vessel, p *Plant) station {
+	st := station{plan: v, shape: v.Shape, base: v.Base, rim: v.RimLevel(), rimLen: v.RimLength, spillTo: -1, massRow: -1, gas: p.Atmosphere}
+	st.full, _ = v.Shape.Volume(v.Shape.Height())
+	if math.IsNaN(st.rimLen) {
+		st.rimLen = v.Shape.Perimeter(st.rim)
+	}
+	if c := v.Cover; c != nil {
+		st.closed, st.temp = true, c.Temperature
+		st.sealed = len(c.Vents) == 0
+		for _, w := range c.Vents {
+			st.vents = append(st.vents, ventAt{w, w.Vent, elements.Local{Opening: 1 - w.Blocked, Gravity: p.Gravity, Band: 1}})
+		}
+	}
+	return st
+}
+
+// startMass returns the mass of gas, kg, at the start.
+func (st *station) startMass() float64 {
+	return st.plan.Cover.Pressure * (st.full - st.plan.StartVolume()) / (gasConstant * st.temp)
+}
+
+// gasVolume returns the space left to gas, m³, never under a millionth of the vessel.
+func (st *station) gasVolume(v float64) (vol, slope float64) {
+	least := 1e-6 * st.full
+	if g := st.full - v; g > least {
+		return g, -1
+	}
+	return least, 0
+}
+
+// look works out what follows from the volume v, m³, and the gas mass m, kg.
+func (st *station) look(v, m float64) {
+	st.level, st.slope = st.shape.Level(v)
+	st.surface = st.base + st.level
+	if st.closed {
+		g, dg := st.gasVolume(v)
+		rt := gasConstant * st.temp
+		st.gas = m * rt / g
+		st.gasV = -st.gas / g * dg
+		st.gasN = rt / g
+		if st.massRow < 0 {
+			st.gasN = 0
+		}
+	}
+	st.spill, st.spillV = 0, 0
+	if h := st.level - st.rim; h > 0 && (!st.closed || !st.sealed) {
+		r := math.Sqrt(h)
+		st.spill = rimCoefficient * st.rimLen * h * r
+		st.spillV = 1.5 * rimCoefficient * st.rimLen * r * st.slope
+	}
+}
+
+// beyond is an outside point in the equations.
+type beyond struct {
+	plan    *Outside
+	point   *elements.Outside
+	phi     float64 // Pa, total pressure, of a free fall or a pressurised connection
+	surface float64 // m over datum now
+	rate    float64 // m/s
+	start   float64 // surface at the segment's start
+	since   float64
+}
+
+func (b *beyond) init(o *Outside, s *system) {
+	b.plan, b.point = o, o.Element.Outside()
+	b.phi = s.atmosphere + s.gamma*b.point.Elevation
+	if b.point.Pressed {
+		b.phi = b.point.Pressure + s.gamma*b.point.Elevation
+		if b.point.Gauge {
+			b.phi += s.atmosphere
+		}
+	}
+	if rows := Rows(b.point.Surface); len(rows) > 0 {
+		b.start, b.surface = rows[0][1], rows[0][1]
+	}
+}

@@ -1,0 +1,192 @@
+package network
+
+import (
+	"math"
+
+	"headfall/elements"
+	"headfall/integrate"
+	"headfall/integrate/sparse"
+)
+
+// system is a compiled plant as M y' = f(t, y) with integrals z' = g(t, y).
+//
+//	unknowns:  volumes of the vessels, m³ · gas masses of vented covers, kg · total pressures of the tees, Pa · flows of inertial lines, m³/s
+//	integrals: volumes passed by the lines, m³ · volumes spilled over the rims, m³
+//
+// Volume is conserved by construction: the flow that is subtracted at one end of a line is the one that is added at the other.
+type system struct {
+	plan       *Plant
+	fluid      elements.Fluid
+	gamma      float64 // ρ·g, Pa/m
+	atmosphere float64 // Pa absolute
+	rtol       float64
+
+	n, m      int
+	teeRow    int // first unknown of the tees
+	flowRow   int // first unknown of the inertial lines
+	stations  []station
+	outside   []beyond
+	lines     []line
+	actuators []actuator
+	inertial  []int32
+
+	vesselAt, teeAt, outsideAt, lineAt, actuatorAt map[string]int
+
+	t0   float64   // start of the segment
+	y    []float64 // where Rates was called last
+	mass []bool
+	pat  sparse.Pattern
+	iPtr []int32
+	iCol []int32
+	slot []slots
+	rims []rimSlots
+	gasS []gasSlots
+	tees []teeSlots
+	diag []int32 // slot of each diagonal entry
+}
+
+var _ integrate.System = (*system)(nil)
+
+// Dim returns the numbers of unknowns and of integrals.
+func (s *system) Dim() (n, m int) { return s.n, s.m }
+
+// Mass tells which unknowns are differential.
+func (s *system) Mass() []bool { return s.mass }
+
+// Pattern returns the pattern of ∂f/∂y.
+func (s *system) Pattern() *sparse.Pattern { return &s.pat }
+
+// IntegralPattern returns the pattern of ∂g/∂y.
+func (s *system) IntegralPattern() (ptr, cols []int32) { return s.iPtr, s.iCol }
+
+// look sets everything that depends on time and state but lines: openings, outside levels, vessels.
+func (s *system) look(t float64, y []float64) {
+	s.y = y
+	for i := range s.lines {
+		l := &s.lines[i]
+		for _, m := range l.moving {
+			l.locals[m.local].Opening = s.actuators[m.actuator].at(t)
+		}
+		if l.inertia > 0 {
+			l.own = y[l.row]
+		}
+	}
+	for i := range s.outside {
+		b := &s.outside[i]
+		b.surface = b.start + b.rate*(t-s.t0)
+	}
+	for i := range s.stations {
+		st := &s.stations[i]
+		m := st.mass
+		if st.massRow >= 0 {
+			m = y[st.massRow]
+		}
+		st.look(y[i], m)
+	}
+}
+
+// Rates fills f and g.
+func (s *system) Rates(t float64, y, f, g []float64) {
+	s.look(t, y)
+	for i := range f {
+		f[i] = 0
+	}
+	for i := range s.stations {
+		s.addVessel(i, t, f, g)
+	}
+	for i := range s.lines {
+		l := &s.lines[i]
+		a, b := s.see(&l.from), s.see(&l.to)
+		l.evaluate(&a, &b, s.gamma)
+		sl := &s.slot[i]
+		if sl.from >= 0 {
+			f[sl.from] -= l.q
+		}
+		if sl.to >= 0 {
+			f[sl.to] += l.q
+		}
+		if l.row >= 0 {
+			f[l.row] = l.push
+		}
+		g[i] = l.q
+	}
+	s.balanceTees(f)
+}
+
+// addVessel adds inflow, rim spill and vents of vessel i.
+func (s *system) addVessel(i int, t float64, f, g []float64) {
+	st := &s.stations[i]
+	f[i] += st.inflow + st.inflowRate*(t-s.t0) - st.spill
+	if st.spillTo >= 0 {
+		f[st.spillTo] += st.spill
+	}
+	g[len(s.lines)+i] = st.spill
+	if st.massRow >= 0 {
+		for k := range st.vents {
+			v := &st.vents[k]
+			m, _ := v.vent.Flow(st.gas, s.atmosphere, st.temp, &v.at)
+			f[st.massRow] += m
+		}
+	}
+}
+
+// balanceTees replaces the balance of a tee whose open lines are all inertial by its derivative in time, so that its pressure is determined.
+func (s *system) balanceTees(f []float64) {
+	for i := range s.tees {
+		t := &s.tees[i]
+		if !t.slow {
+			continue
+		}
+		var sum float64
+		for _, k := range t.lines {
+			l := &s.lines[k.line]
+			if !l.shut {
+				sum += k.sign * l.push
+			}
+		}
+		f[s.teeRow+i] = sum * s.teeScale(i)
+	}
+}
+
+// teeScale brings the differentiated balance of a tee to the size of a balance of flows.
+func (s *system) teeScale(int) float64 { return 1 }
+
+// Scale fills the error allowed in each unknown: of a level l, atol + min(rtol·|l|, 2·10⁻⁵ m), as a volume over the present surface.
+func (s *system) Scale(y []float64, rtol float64, scale []float64) {
+	tol := func(l float64) float64 { return 1e-3*rtol + math.Min(rtol*l, levelCap) }
+	for i := range s.stations {
+		st := &s.stations[i]
+		h, slope := st.shape.Level(y[i])
+		scale[i] = math.Max(tol(math.Abs(h))/slope, 1e-9*st.full*math.Min(1, rtol*1e6))
+		if st.massRow >= 0 {
+			m := y[st.massRow]
+			g, _ := st.gasVolume(y[i])
+			p := m * gasConstant * st.temp / g
+			scale[st.massRow] = math.Max(1e-12, math.Abs(m)*math.Min(0.25, 0.25e6*rtol)/math.Max(p, 1))
+		}
+	}
+	for i := s.teeRow; i < s.teeRow+len(s.teeAt); i++ {
+		scale[i] = s.gamma * tol(1)
+	}
+	for _, k := range s.inertial {
+		l := &s.lines[k]
+		scale[l.row] = rtol * (math.Abs(y[l.row]) + 1e-3*math.Max(l.area, 1e-6))
+	}
+}
+
+// levelCap bounds the error allowed in a level, m: a quarter of the head under which flows are made linear, so that an equilibrium is quiet.
+const levelCap = 2e-5
+
+// Admit refuses a state with a volume well under nothing or gas that has gone.
+func (s *system) Admit(_ float64, y []float64) bool {
+	for i := range s.stations {
+		st := &s.stations[i]
+		if y[i] < -1e-7*st.full {
+			return false
+		}
+		if st.massRow >= 0 && y[st.massRow] < 0 {
+			return false
+		}
+	}
+	return true
+}

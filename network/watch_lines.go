@@ -1,0 +1,120 @@
+package network
+
+import (
+	"fmt"
+	"math"
+)
+
+// addCrowns watches the siphons: air breaks one that is under suction when the mouth that feeds it uncovers, and the flow over the crest sweeps
+// the air out again when the pipe there would run full with a Froude number of 1 or more.
+func (w *watcher) addCrowns() {
+	s := w.sim.sys
+	for i := range s.lines {
+		l := &s.lines[i]
+		for k := range l.crowns {
+			c := &l.crowns[k]
+			w.triggers = append(w.triggers,
+				trigger{
+					value:  func(*snapshot) float64 { return s.airMargin(l, c) },
+					active: func() bool { return c.primed && !s.vented(c) },
+					dir:    -1, deep: true,
+					fire: func(t float64) {
+						c.primed = false
+						w.sim.flag("siphon_broken", l.plan.Tag, t, fmt.Sprintf("air reaches the high point of %s and breaks the siphon", l.plan.Tag),
+							"what stands under the crest upstream stays where it is")
+					},
+				},
+				trigger{
+					value:  func(*snapshot) float64 { return s.sweep(l, c) },
+					active: func() bool { return !c.primed && !s.vented(c) },
+					dir:    1, deep: true,
+					fire: func(t float64) {
+						c.primed = true
+						w.sim.flag("siphon_primed", l.plan.Tag, t, fmt.Sprintf("%s runs full over its high point and draws as a siphon", l.plan.Tag),
+							"if that is not wanted, open a vent at the high point")
+					},
+				})
+		}
+	}
+}
+
+func (s *system) vented(c *crown) bool { return c.vent >= 0 && s.actuators[c.vent].to > 0 }
+
+// airMargin is how far the mouth that feeds the high point is from drawing air, m, while the crest is under suction; more than 0 otherwise.
+// Half the bore over the invert of a mouth in a wall; in a floor the onset of gas pull-through, h = (Q/2.53√g)^0.4 (Lubin & Springer 1967).
+func (s *system) airMargin(l *line, c *crown) float64 {
+	m, e := &l.from, s.see(&l.from)
+	if l.q < 0 {
+		m, e = &l.to, s.see(&l.to)
+	}
+	if math.IsInf(e.depth, 0) || s.crestHead(s.lineAt[l.plan.Tag]) >= 0 {
+		return 1
+	}
+	if m.inlet.form == sideInlet || m.inlet.form == slotInlet {
+		return e.depth - m.width/2
+	}
+	return e.depth - math.Pow(math.Abs(l.q)/(2.53*math.Sqrt(s.plan.Gravity)), 0.4)
+}
+
+// sweep is the pipe Froude number at the high point, less 1, while liquid stands over the crest upstream.
+func (s *system) sweep(l *line, c *crown) float64 {
+	a, b := s.see(&l.from), s.see(&l.to)
+	top := s.atmosphere + s.gamma*(c.plan.Elevation+c.bore)
+	if math.Max(a.phi, b.phi) < top || c.bore == 0 {
+		return -1
+	}
+	area := math.Pi / 4 * c.bore * c.bore
+	return math.Abs(l.q)/area/math.Sqrt(s.plan.Gravity*c.bore) - 1
+}
+
+// addFouling watches the volumes after which a line gets its extra loss.
+func (w *watcher) addFouling() {
+	s := w.sim.sys
+	for i := range s.lines {
+		l := &s.lines[i]
+		fired := func() *Upset {
+			for _, u := range w.sim.control.upsets {
+				if u.Kind == ExtraLoss && u.Target == l.plan.Tag {
+					return u
+				}
+			}
+			return nil
+		}
+		if !w.sim.mayFoul(l.plan.Tag) {
+			continue
+		}
+		w.triggers = append(w.triggers, trigger{
+			value: func(n *snapshot) float64 {
+				f, _ := w.sim.led.passed(i, n.z[i])
+				return f - fired().After
+			},
+			active: func() bool { return l.extraK == 0 && fired() != nil },
+			dir:    1, deep: true,
+			fire: func(float64) { s.foul(l, fired().Value) },
+		})
+	}
+}
+
+// mayFoul tells whether some upset of the plan may foul the line; runs with such upsets of their own add to the plan's.
+func (sim *simulation) mayFoul(tag string) bool {
+	for _, u := range sim.plan.Upsets {
+		if u.Kind == ExtraLoss && u.Target == tag {
+			return true
+		}
+	}
+	return sim.fouling
+}
+
+// foul adds loss coefficient k on the first bore of the line.
+func (s *system) foul(l *line, k float64) {
+	c := (k - l.extraK) * velocityHead(s.fluid.Density, l.plan.endBore(false))
+	l.extraK = k
+	l.chain.fwd += c
+	l.chain.rev += c
+	l.table = nil
+	for i := range l.floors {
+		l.floors[i].base += c
+		l.floors[i].up.fwd += c
+		l.floors[i].up.rev += c
+	}
+}
