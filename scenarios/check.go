@@ -66,11 +66,16 @@ func (d *decoder) whole(root *node) {
 
 // lineParts makes the parts of every line ready in their places, so that each one's faults are told where it stands.
 func (d *decoder) lineParts() {
-	for _, l := range d.plant.Lines {
+	for _, l := range d.lines {
 		parts := d.parts[l]
+		bored := hasBore(l)
 		for pass := range 2 { // parts without a bore take their neighbour's, which may stand behind them
 			for i, f := range l.Parts {
-				if p, placed := f.Part.(elements.Placed); placed {
+				p, placed := f.Part.(elements.Placed)
+				if placed && !bored && len(parts) < d.wrote[l] {
+					continue // the part that has the bore has a fault of its own
+				}
+				if placed {
 					p.SetPlace(d.placeOf(l, i))
 				}
 				err := f.Part.Ready()
@@ -83,6 +88,15 @@ func (d *decoder) lineParts() {
 			}
 		}
 	}
+}
+
+func hasBore(l *network.Line) bool {
+	for _, f := range l.Parts {
+		if b, ok := f.Part.(elements.Bored); ok && b.Bore() > 0 {
+			return true
+		}
+	}
+	return false
 }
 
 // placeOf tells where a part stands.

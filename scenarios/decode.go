@@ -17,11 +17,13 @@ type decoder struct {
 	warnings []network.Problem
 	advice   int // nearest spellings looked for; see hints
 
-	things map[string]*thing      // by tag
-	refs   []reference            // looked up when all tags are known
-	after  []func()               // checks that need the whole file
-	trims  map[string][][]float64 // rows by name
-	parts  map[*network.Line][]*node
+	things map[string]*thing         // by tag
+	refs   []reference               // looked up when all tags are known
+	after  []func()                  // checks that need the whole file
+	trims  map[string][][]float64    // rows by name
+	lines  []*network.Line           // also those with faults
+	parts  map[*network.Line][]*node // that were read
+	wrote  map[*network.Line]int     // parts that stand in the file
 
 	sets    map[string]*node // numbers and words given from outside, by full name
 	collect bool             // note the names that may be set
@@ -43,7 +45,7 @@ type reading struct {
 
 func newDecoder(src *source) *decoder {
 	return &decoder{src: src, plant: &network.Plant{}, things: map[string]*thing{}, trims: map[string][][]float64{},
-		parts: map[*network.Line][]*node{}, cache: map[written]reading{}}
+		parts: map[*network.Line][]*node{}, wrote: map[*network.Line]int{}, cache: map[written]reading{}}
 }
 
 // problem notes a fault of a node.

@@ -23,6 +23,7 @@ func (d *decoder) line(key, n *node) {
 	if to := n.get("to"); to != nil && l.From == l.To && l.From != "" {
 		d.problem(to, fmt.Sprintf("line %s runs from %s to itself", l.Tag, l.From), "")
 	}
+	d.lines = append(d.lines, l)
 	if len(d.probs) == before {
 		d.plant.Lines = append(d.plant.Lines, l)
 	}
@@ -62,6 +63,7 @@ func (d *decoder) fittings(l *network.Line, n *node) {
 		d.problem(n, "parts: a line has at least one part", "e.g. - pipe: {length: 12 m, bore: 82.5 mm, roughness: 0.05 mm}")
 		return
 	}
+	d.wrote[l] = len(n.items)
 	total := map[string]int{}
 	for _, item := range n.items {
 		total[kindText(item)]++
