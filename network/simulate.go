@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"math"
+	"strings"
 	"time"
 
 	"headfall/integrate"
@@ -52,9 +53,9 @@ func (m *Model) simulation() (*simulation, error) {
 		}
 		s := m.sys
 		sim := &simulation{plan: m.plan, sys: s, led: newLedger(s), y: make([]float64, s.n)}
-		sim.method = m.opt.Method
-		if method == nil {
-			sim.method = integrate.Rodas5P.Name()
+		sim.method = strings.ToLower(integrate.Rodas5P.Name())
+		if method != nil {
+			sim.method = strings.ToLower(method.Name())
 		}
 		sim.solver = integrate.NewSolver(s, integrate.Options{RTol: m.opt.Tolerance, Method: method})
 		if sim.watch, err = newWatcher(sim); err != nil {
@@ -74,12 +75,12 @@ func methodNamed(name string) (integrate.Method, error) {
 	}
 	var names []string
 	for _, m := range integrate.Methods() {
-		if m.Name() == name {
+		if strings.EqualFold(m.Name(), name) {
 			return m, nil
 		}
-		names = append(names, m.Name())
+		names = append(names, strings.ToLower(m.Name()))
 	}
-	return nil, fmt.Errorf("no method %q; there are %v", name, names)
+	return nil, fmt.Errorf("there is no method %q; there are %s", name, strings.Join(names, ", "))
 }
 
 // Run runs the plant once. The error is a *Failure when the calculation could not finish, or ctx's cause when it was interrupted; the result
