@@ -207,7 +207,8 @@ func firstStep(first, second float64, order int) float64 {
 		return math.Sqrt(share / second)
 	}
 	scale := first / second
-	return scale * min(1, math.Pow(share/(constant*first*scale), 1/float64(order+1)))
+	h := scale * min(1, math.Pow(share/(constant*first*scale), 1/float64(order+1)))
+	return max(h, math.Sqrt(share/second)) // that short, even a straight line would do
 }
 
 // limit cuts a step to the longest allowed.

@@ -52,7 +52,7 @@ func (s *Solver) Step(tEnd float64, ev Events) (Outcome, error) {
 // advance tries steps until one is good, and returns it, whether tEnd cut it short, and the norm of its error.
 func (s *Solver) advance(tEnd float64) (h float64, held bool, e float64, err error) {
 	shortest := 4e-16 * math.Abs(s.t)
-	h = s.next
+	h = max(s.next, 4*shortest)
 	for singular, k := 0, 0; k < attempts && singular < 8 && h >= shortest; k++ {
 		h, held = s.fit(h, tEnd)
 		if math.IsInf(s.free, 1) {
@@ -100,7 +100,7 @@ func (s *Solver) fit(h, tEnd float64) (step float64, held bool) {
 	switch {
 	case s.fixed > 0 && h < rest*(1-1e-9):
 		return (s.t + h) - s.t, false
-	case h >= rest*0.99:
+	case h >= rest, h >= rest*0.99 && s.limit(rest) == rest:
 		return rest, h > rest
 	case h > rest/2:
 		return (s.t + rest/2) - s.t, true

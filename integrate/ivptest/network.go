@@ -55,7 +55,7 @@ func Chain(n int, law Law) *Network {
 		w.Pipes = append(w.Pipes, Pipe{i, i + 1})
 	}
 	w.Pipes[n-1].B = -1
-	return w.prepare()
+	return w.Prepare()
 }
 
 // Grid is m×m tanks that drain through the last; every third row and column meets in a tee when tees is set.
@@ -76,10 +76,11 @@ func Grid(m int, law Law, tees bool) *Network {
 	}
 	w.Metered = []int{len(w.Pipes)}
 	w.Pipes = append(w.Pipes, Pipe{m*m - 1, -1})
-	return w.prepare()
+	return w.Prepare()
 }
 
-func (w *Network) prepare() *Network {
+// Prepare lays out the pattern of a Network put together by hand.
+func (w *Network) Prepare() *Network {
 	n := len(w.Base)
 	cols := make([][]int32, n)
 	for i := range cols {
@@ -91,8 +92,10 @@ func (w *Network) prepare() *Network {
 		}
 	}
 	w.pattern = &sparse.Pattern{N: n, Ptr: []int32{0}}
-	for _, c := range cols {
+	for j, c := range cols {
 		slices.Sort(c)
+		c = slices.Compact(c) // pipes may run side by side
+		cols[j] = c
 		w.pattern.Row = append(w.pattern.Row, c...)
 		w.pattern.Ptr = append(w.pattern.Ptr, int32(len(w.pattern.Row)))
 	}
