@@ -216,3 +216,17 @@ func TestRestartAtAnEventDoesNotFireAgain(t *testing.T) {
 		}
 	}
 }
+
+// reading names the unknown that functions look at.
+type reading struct{ *functions }
+
+func (reading) Reads() []int32 { return []int32{0} }
+
+func TestReaderFindsTheSame(t *testing.T) {
+	p := ball(1, 5)
+	ev := &functions{f: []func(float64, []float64) float64{position(2)}}
+	a, b := hits(t, p, integrate.Rodas5P, 1e-6, 3, ev), hits(t, p, integrate.Rodas5P, 1e-6, 3, reading{ev})
+	if len(a) != 2 || len(b) != 2 || math.Abs(a[0].t-b[0].t) > 1e-12 || math.Abs(a[1].t-b[1].t) > 1e-12 {
+		t.Errorf("%v and %v", a, b)
+	}
+}

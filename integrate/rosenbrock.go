@@ -154,9 +154,15 @@ func (r *rosenbrock) finish() float64 {
 }
 
 func (r *rosenbrock) polynomial(k, kz [][]float64) {
+	h := r.tab.H
+	if len(r.u) == 8 && len(h) == 3 {
+		combine3(k[0], k[1], k[2], h[0], h[1], h[2], r.u)
+		combine3(kz[0], kz[1], kz[2], h[0], h[1], h[2], r.uz)
+		return
+	}
 	for i := range k {
-		combine(k[i], r.tab.H[i], r.u)
-		combine(kz[i], r.tab.H[i], r.uz)
+		combine(k[i], h[i], r.u)
+		combine(kz[i], h[i], r.uz)
 	}
 }
 
