@@ -12,7 +12,10 @@ func (d *decoder) coverFields(c *network.Cover) []field {
 	*c = network.Cover{Pressure: d.plant.Atmosphere, Temperature: roomTemperature, Vacuum: nan, Overpress: nan}
 	return []field{
 		object(d, "gas", elements.Optional, "air under the cover at the start", "gas", func(*struct{}) []field { return d.gasFields(c) }, func(*struct{}, *node) {}),
-		{key: "vents", help: "openings to the air; none: sealed", written: &writing{style: aMap, item: &writing{style: aKind, room: elements.Vents}}, read: func(n *node, _ string) {
+		{key: "vents", help: "openings to the air; none: sealed", written: &writing{style: aMap, item: &writing{style: aKind, room: elements.Vents}, or: &writing{style: aWord, words: []string{"none"}}}, read: func(n *node, _ string) {
+			if n.form == scalar && n.text == "none" {
+				return
+			}
 			d.entries(n, "vents", func(key, value *node) { d.vent(c, key, value) })
 		}},
 		object(d, "withstands", elements.Optional, "what the vessel is built for", "withstands", func(*struct{}) []field { return d.ratingFields(c) }, func(*struct{}, *node) {}),

@@ -11,11 +11,10 @@ import (
 
 // decoder walks a tree and fills a plant. It collects problems and goes on.
 type decoder struct {
-	src      *source
-	plant    *network.Plant
-	probs    []Problem
-	warnings []network.Problem
-	advice   int // nearest spellings looked for; see hints
+	src    *source
+	plant  *network.Plant
+	probs  []Problem
+	advice int // nearest spellings looked for; see hints
 
 	things map[string]*thing         // by tag
 	refs   []reference               // looked up when all tags are known
@@ -56,10 +55,6 @@ func (d *decoder) within(n *node, offset, length int, says, hint string) {
 	column, width := n.span(offset, length)
 	d.probs = append(d.probs, Problem{File: n.src.name, At: network.Place{Line: n.at.Line, Column: column}, Says: says, Hint: hint,
 		Source: n.src.line(n.at.Line), Width: width})
-}
-
-func (d *decoder) warn(n *node, says, hint string) {
-	d.warnings = append(d.warnings, network.Problem{At: n.at, Says: says, Hint: hint})
 }
 
 const enoughAdvice = 200 // nearest spellings a file gets; looking for them among many words takes its time
@@ -165,60 +160,4 @@ func (d *decoder) unknown(k, v *node, what string, fields []field) (near string)
 	}
 	d.problem(k, fmt.Sprintf("%s has no key %s", what, quoted(k.text)), hint)
 	return near
-}
-
-// one reports whether exactly one of the keys stands in the mapping, and notes it when not.
-func (d *decoder) one(n *node, what string, keys ...string) (key string, ok bool) {
-	var found []string
-	for _, k := range keys {
-		if n.get(k) != nil {
-			found = append(found, k)
-		}
-	}
-	switch len(found) {
-	case 1:
-		return found[0], true
-	case 0:
-		d.problem(n, what+" needs "+listed(keys, "or"), "")
-	default:
-		d.problem(n, what+" has "+listed(found, "and")+": only one of them can hold", "")
-	}
-	return "", false
-}
-
-// list calls read for every entry; an empty one is a list of none.
-func (d *decoder) list(n *node, what string, read func(i int, item *node)) {
-	if n.empty {
-		return
-	}
-	if n.form != list {
-		d.problem(n, what+" is a list", "write each entry behind a dash")
-		return
-	}
-	for i, item := range n.items {
-		read(i, item)
-	}
-}
-
-// entries calls read for every key of a mapping whose keys are tags or names.
-func (d *decoder) entries(n *node, what string, read func(key, value *node)) {
-	if n.empty {
-		return
-	}
-	if n.form != mapping {
-		d.problem(n, what+" is written as names with what belongs to them", "")
-		return
-	}
-	seen := make(map[string]*node, len(n.keys))
-	for i, k := range n.keys {
-		if k.form != scalar {
-			continue
-		}
-		if old := seen[k.text]; old != nil {
-			d.problem(k, fmt.Sprintf("%s is given twice", k.text), fmt.Sprintf("it stands in line %d already", old.at.Line))
-			continue
-		}
-		seen[k.text] = k
-		read(k, n.items[i])
-	}
 }

@@ -6,8 +6,10 @@ import (
 	"headfall/network"
 )
 
+// gaugeWords are what a gauge may show.
+var gaugeWords = append([]string{"percent", "%", "length"}, quantity.Units(quantity.Length)...)
+
 func (d *decoder) gaugeFields(g *network.Gauge) []field {
-	shows := "percent"
 	g.Percent = true
 	return []field{
 		{key: "tag", help: "tag of the instrument", written: aTagWritten, read: func(n *node, _ string) {
@@ -17,10 +19,9 @@ func (d *decoder) gaugeFields(g *network.Gauge) []field {
 		}},
 		d.number(&g.Zero, "zero", quantity.Length, elements.Required, "height over base that shows as 0 %"),
 		d.number(&g.Span, "span", quantity.Length, elements.Required, "height from 0 % to 100 %", elements.Positive),
-		{key: "shows", help: "what the panel shows", written: &writing{style: aWord, words: []string{"percent", "length"}}, read: func(n *node, _ string) {
-			if w, ok := d.oneOf(n, "shows", []string{"percent", "length"}); ok {
-				shows = w
-				g.Percent = shows == "percent"
+		{key: "shows", help: "what the panel shows: percent, or a length or its unit", written: &writing{style: aWord, words: gaugeWords}, read: func(n *node, _ string) {
+			if w, ok := d.oneOf(n, "shows", gaugeWords); ok {
+				g.Percent = w == "percent" || w == "%"
 			}
 		}},
 	}

@@ -71,6 +71,9 @@ func inUnits(dim quantity.Dim) *writing { return unitWays[dim] }
 
 // settable reports whether a value from outside may be put here: whatever is one scalar.
 func (f *field) settable() bool {
+	if f.key == "tag" || f.key == "id" || f.key == "like" {
+		return false
+	}
 	for w := f.written; w != nil; w = w.or {
 		switch w.style {
 		case anyText, aQuantity, aMoment, aWord, aYesNo, aKind, aTag, aTable:

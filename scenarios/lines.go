@@ -53,7 +53,7 @@ var inletWords = []string{"limited", "full"}
 
 func (d *decoder) endField(p *string, key, help string) field {
 	return field{key: key, need: elements.Required, help: help, written: aTagWritten, read: func(n *node, _ string) {
-		*p = d.refer(n, key, func(t *thing) { t.lines++ }, meets...)
+		*p = d.refer(n, key, nil, meets...)
 	}}
 }
 
@@ -106,7 +106,7 @@ func (d *decoder) part(l *network.Line, n *node, name string) {
 	if !is {
 		return
 	}
-	d.tagPart(c, n)
+	d.tagPart(c, name)
 	if !ok {
 		return
 	}
@@ -115,7 +115,7 @@ func (d *decoder) part(l *network.Line, n *node, name string) {
 }
 
 // tagPart declares the tag of a part and looks up what it refers to.
-func (d *decoder) tagPart(c chosen, n *node) {
+func (d *decoder) tagPart(c chosen, name string) {
 	cl := aPart
 	_, isPump := c.element.(elements.Pumps)
 	_, isValve := c.element.(elements.Actuated)
@@ -130,6 +130,10 @@ func (d *decoder) tagPart(c chosen, n *node) {
 	}
 	if tag := c.body.get("tag"); tag != nil && tag.form == scalar && !tag.empty {
 		d.declare(tag, cl)
+	}
+	if v, ok := c.element.(interface{ Recovers() (float64, string) }); ok && c.body.get("fl") == nil && !d.set(name, "fl") {
+		fl, source := v.Recovers()
+		d.assumed(name, "fl", fmt.Sprintf("%g (%s)", fl, source))
 	}
 	if isPump {
 		if other := c.body.get("standby_for"); other != nil {

@@ -123,20 +123,3 @@ func (d *decoder) hours(n *node, key string, m *[2]network.Moment) bool {
 	}
 	return true
 }
-
-// defaultSpacing returns the round time nearest to a 500th of the run.
-func defaultSpacing(run float64) float64 {
-	want := run / 500
-	best := 0.0
-	for _, unit := range []float64{1e-3, 1e-2, 0.1, 1, 60, 3600, day} {
-		for _, n := range []float64{1, 2, 5, 10, 15, 20, 30} {
-			if (n > 10 || n == 10 && unit < 1) && (unit < 1 || unit == day) || unit == 3600 && n > 12 {
-				continue
-			}
-			if r := n * unit; best == 0 || math.Abs(r-want) < math.Abs(best-want) {
-				best = r
-			}
-		}
-	}
-	return best
-}

@@ -1,8 +1,6 @@
 package scenarios
 
 import (
-	"fmt"
-
 	"headfall/elements"
 	"headfall/elements/quantity"
 	"headfall/network"
@@ -18,17 +16,6 @@ func (d *decoder) tee(key, n *node) {
 	if d.mapping(n, "tee "+e.Tag, e.Tag, d.teeFields(e)) && t != nil {
 		d.plant.Tees = append(d.plant.Tees, e)
 	}
-	if t == nil {
-		return
-	}
-	d.after = append(d.after, func() {
-		switch t.lines {
-		case 0:
-			d.warn(key, fmt.Sprintf("tee %s has no line", t.tag), "")
-		case 1:
-			d.warn(key, fmt.Sprintf("tee %s has only one line: nothing can flow there", t.tag), "")
-		}
-	})
 }
 
 func (d *decoder) teeFields(e *network.Tee) []field {

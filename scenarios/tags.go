@@ -38,7 +38,6 @@ type thing struct {
 	vessel *network.Vessel // a vessel, or the one a gauge belongs to
 	line   *network.Line
 	device *elements.Device
-	lines  int // that meet at a tee
 }
 
 // reference is a tag that must be known when the file has been read.
