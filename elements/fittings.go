@@ -28,7 +28,7 @@ type fittingSet struct {
 func (e *fittingSet) Bind(p *Params) {
 	p.Length(&e.bore, "bore", Optional, "bore that the coefficients refer to; default that of the part before it, else after it", Positive).Was(&e.hasBore)
 	p.Counts(e.counts, "how many of each", friction.FittingNames()...)
-	p.Ratio(&e.k, "k", Optional, "further loss coefficient", NotNegative).Or("0")
+	p.bare(&e.k, "k", Optional, "further loss coefficient", NotNegative).Or("0")
 }
 
 func (e *fittingSet) SetPlace(at Place) { e.place = at }

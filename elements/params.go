@@ -98,6 +98,11 @@ func (p *Params) Ratio(v *float64, key string, need Need, help string, checks ..
 	return p.Number(v, key, quantity.Ratio, need, help, checks...)
 }
 
+// bare declares a number that is never written in per cent: a loss coefficient, a weir coefficient.
+func (p *Params) bare(v *float64, key string, need Need, help string, checks ...Check) *Param {
+	return p.Number(v, key, quantity.Number, need, help, checks...)
+}
+
 // YesNo declares a switch.
 func (p *Params) YesNo(v *bool, key string, need Need, help string) *Param {
 	return p.add(&Param{Key: key, Form: YesNo, Need: need, Help: help, Bool: v})

@@ -39,7 +39,7 @@ func (e *pipe) Bind(p *Params) {
 	p.Length(&e.length, "length", Required, "length along the pipe", Positive)
 	p.Length(&e.bore, "bore", Required, "inside diameter", Positive)
 	p.Length(&e.roughness, "roughness", Optional, "height of the wall's roughness, as for Colebrook; or friction", NotNegative).Was(&e.rough)
-	p.Ratio(&e.factor, "friction", Optional, "fixed Darcy friction factor instead of a roughness", Positive).Was(&e.fixed)
+	p.bare(&e.factor, "friction", Optional, "fixed Darcy friction factor instead of a roughness", Positive).Was(&e.fixed)
 	p.YesNo(&e.inertia, "inertia", Optional, "the mass of the liquid in it resists a change of flow").Or("no")
 }
 

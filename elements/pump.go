@@ -13,7 +13,7 @@ func init() {
 		Law:    "lifts ρ·g·H(Q), H in m a smooth falling curve through the rows, straight beyond its ends; by rate Q = rate·(1 − 10⁻⁵·H/m), Q in m³/s; ρ in kg/m³, g in m/s²",
 		Valid:  "water-like liquids; a curve that droops is refused",
 		Source: "the maker's curve; stiff rate and what a stopped pump lets through: common practice, no source",
-		Symbol: "M12 3A9 9 0 1 0 12 21A9 9 0 1 0 12 3M6 6L21 12L6 18",
+		Symbol: "M0 12H3M21 12H24M12 3A9 9 0 1 0 12 21A9 9 0 1 0 12 3M6 6L21 12L6 18",
 		New:    func() Element { return &pump{} },
 		Sample: "{tag: P-1, curve: [[0 m3/h, 14 m], [20 m3/h, 11 m], [32 m3/h, 6 m]], mode: on, when_stopped: shut}",
 	})

@@ -3,7 +3,7 @@ package elements
 const (
 	fromIEC     = "typical values of IEC 60534-2-1, from memory"
 	noSource    = "common practice, no source"
-	throughBody = "M2 5V19L22 5V19Z" // a trim is inside a valve
+	throughBody = "M0 12H2M22 12H24M2 5V19L22 5V19Z" // a trim is inside a valve
 	inherent    = "inherent, as made: travel x and share φ of Kv from 0 to 1"
 )
 

@@ -20,7 +20,7 @@ type equalPercentage struct {
 }
 
 func (e *equalPercentage) Bind(p *Params) {
-	p.Ratio(&e.rangeability, "rangeability", Optional, "largest over smallest Kv that the trim controls", func(v float64) string {
+	p.bare(&e.rangeability, "rangeability", Optional, "largest over smallest Kv that the trim controls", func(v float64) string {
 		if v > 1 {
 			return ""
 		}

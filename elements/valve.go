@@ -12,7 +12,7 @@ func init() {
 		Law:    "Δp = 10⁵ Pa·(ρ/1000)·(Q/(Kv·φ(x)·F_R))², Q in m³/h, Kv in m³/h, φ by trim and travel x, F_R for thick liquids; choked above F_L²·(p₁ − F_F·p_v)",
 		Valid:  "turbulent flow, or thick liquids by F_R; no fittings between valve and pipe allowed for",
 		Source: "IEC 60534-2-1; trims IEC 60534-2-4 or as the trim says",
-		Symbol: "M2 5V19L22 5V19Z",
+		Symbol: "M0 12H2M22 12H24M2 5V19L22 5V19Z",
 		New:    func() Element { return &valve{closes: "tight", trim: &curveTrim{curve: straight, fl: 0.90, fd: 0.46}} },
 		Sample: "{tag: V-1, kv: 95, trim: equal_percentage, stroke: 15 s}",
 	})
@@ -32,7 +32,7 @@ func (e *valve) Bind(p *Params) {
 	p.Name(&e.act.Tag, "tag", Required, "tag of the valve")
 	p.Number(&e.kv, "kv", quantity.Kv, Optional, "flow coefficient wide open; or cv; or k and bore", Positive).Was(&e.byKv)
 	p.Number(&e.cv, "cv", quantity.Cv, Optional, "flow coefficient in US units", Positive).Was(&e.byCv)
-	p.Ratio(&e.k, "k", Optional, "loss coefficient wide open, on its bore", Positive).Was(&e.byK)
+	p.bare(&e.k, "k", Optional, "loss coefficient wide open, on its bore", Positive).Was(&e.byK)
 	p.Length(&e.bore, "bore", Optional, "bore of the valve", Positive).Was(&e.byBore)
 	p.Nested(e.setTrim, "trim", Trims, Optional, "how Kv follows travel").Or("linear")
 	p.Ratio(&e.act.Open, "open", Optional, "travel at the start", Share).Or("0 %")
@@ -41,7 +41,7 @@ func (e *valve) Bind(p *Params) {
 	p.Ratio(&e.leaks, "leaks", Optional, "share of Kv that passes when shut", Share).Or("0 %")
 	p.Word(&e.closes, "closes", Optional, "tight: shut at 0 %; inherent: keeps what its trim leaves", "tight", "inherent").Or("tight")
 	p.Ratio(&e.fl, "fl", Optional, "liquid pressure recovery factor; default by trim", Coefficient).Was(&e.own)
-	p.Number(&e.act.Turns, "turns", quantity.Number, Optional, "turns of the handwheel for full travel", Positive)
+	p.bare(&e.act.Turns, "turns", Optional, "turns of the handwheel for full travel", Positive)
 	p.Name(&e.act.Location, "location", Optional, "where it is found")
 	p.Name(&e.act.Lock, "lock", Optional, "lock or seal on it")
 }

@@ -13,7 +13,7 @@ type broadCrest struct {
 func (e *broadCrest) bind(p *Params) {
 	p.Length(&e.width, "width", Required, "width of the crest", Positive)
 	p.Ratio(&e.cd, "cd", Optional, "discharge coefficient; default 0.864", Positive).Was(&e.byCd)
-	p.Ratio(&e.c, "c", Optional, "weir coefficient, m^½/s (about 1.5)", Positive).Was(&e.byC)
+	p.bare(&e.c, "c", Optional, "weir coefficient, m^½/s (about 1.5)", Positive).Was(&e.byC)
 }
 
 func (e *broadCrest) law(f *faults) notchLaw {

@@ -20,7 +20,7 @@ type rectangularNotch struct {
 func (e *rectangularNotch) bind(p *Params) {
 	p.Length(&e.width, "width", Required, "width of the crest", Positive)
 	p.Ratio(&e.cd, "cd", Optional, "discharge coefficient; or c; or channel_width and crest_height", Positive).Was(&e.byCd)
-	p.Ratio(&e.c, "c", Optional, "weir coefficient, m^½/s (about 1.8)", Positive).Was(&e.byC)
+	p.bare(&e.c, "c", Optional, "weir coefficient, m^½/s (about 1.8)", Positive).Was(&e.byC)
 	p.Length(&e.channel, "channel_width", Optional, "width of the channel that leads to it", Positive).Was(&e.hasChannel)
 	p.Length(&e.height, "crest_height", Optional, "height of the crest over the channel's floor", Positive).Was(&e.hasCrest)
 }
