@@ -35,7 +35,6 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 		share = f.throat.Recovery(l.chain.locals[f.part])
 		quick := up.phi - gamma*f.z - f.pressure
 		if dp := math.Abs(a.phi - b.phi - l.zero); (1+share)*dp <= share*quick {
-			f.active = false
 			return
 		}
 		n := len(f.up.weight) - 1
@@ -47,7 +46,6 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	dp := share * (up.phi - gamma*f.z - f.pressure)
 	q := math.Abs(l.q)
 	if d, _ := f.up.drop(q / 0.9); d <= dp {
-		f.active = false
 		return
 	}
 	f.active = true

@@ -182,6 +182,7 @@ func (l *line) limit(a, b *end, gamma float64) {
 	}
 	for i := range l.floors {
 		f := &l.floors[i]
+		f.active = false
 		if f.back == (l.q < 0) && l.q != 0 {
 			f.hold(l, a, b, gamma)
 		}

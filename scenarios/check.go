@@ -45,6 +45,7 @@ func (d *decoder) whole(root *node) {
 			for _, v := range d.plant.Vessels {
 				d.startOf(root.get("vessels").get(v.Tag), v, v.Shape)
 			}
+			d.plantWide()
 			return
 		}
 	}
@@ -62,6 +63,19 @@ func (d *decoder) whole(root *node) {
 	if len(d.probs) == 0 {
 		d.refreshFault(root, err)
 	}
+}
+
+// plantWide takes over what the plant itself finds wrong with the whole.
+func (d *decoder) plantWide() {
+	if len(d.probs) > 0 {
+		return
+	}
+	faults, warnings := d.plant.Validate()
+	for _, f := range faults {
+		line := d.src.line(f.At.Line)
+		d.probs = append(d.probs, Problem{File: d.src.name, At: f.At, Says: f.Says, Hint: f.Hint, Source: line, Width: wordAt(line, f.At.Column)})
+	}
+	d.plant.Warnings = append(d.plant.Warnings, warnings...)
 }
 
 // lineParts makes the parts of every line ready in their places, so that each one's faults are told where it stands.
