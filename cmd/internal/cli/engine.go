@@ -3,6 +3,7 @@ package cli
 import (
 	"context"
 	"errors"
+	"slices"
 
 	"headfall/network"
 	"headfall/scenarios"
@@ -23,6 +24,15 @@ func load(src *source, o *options) (*network.Plant, error) {
 	if err != nil {
 		return nil, &Exit{Code: ExitBad, Err: err}
 	}
+	faults, warnings := plant.Validate()
+	if len(faults) > 0 {
+		return nil, &Exit{Code: ExitBad, Err: scenarios.Locate(plant, faults)}
+	}
+	for _, w := range warnings {
+		if !slices.Contains(plant.Warnings, w) {
+			plant.Warnings = append(plant.Warnings, w)
+		}
+	}
 	return plant, nil
 }
 
@@ -31,11 +41,20 @@ func judge(ctx context.Context, load func() (*network.Plant, error), o *options,
 	if err != nil {
 		return nil, err
 	}
-	model, err := network.Compile(plant, network.Options{Method: o.method, Tolerance: o.tolerance})
+	model, err := network.Compile(plant, o.calculation())
 	if err != nil {
 		return nil, err
 	}
 	return model.Run(ctx, network.RunOptions{Series: true, Progress: progress})
+}
+
+// calculation hands the method and the accuracy on; the usual method goes unnamed.
+func (o *options) calculation() network.Options {
+	opt := network.Options{Method: o.method, Tolerance: o.tolerance}
+	if opt.Method == methods[0] {
+		opt.Method = ""
+	}
+	return opt
 }
 
 // faults tells whether an error is a list of faults of a file, each with its place.

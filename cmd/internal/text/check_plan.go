@@ -1,50 +1,21 @@
 package text
 
 import (
-	"fmt"
+	"math"
 	"strings"
 
-	"headfall/elements"
 	"headfall/network"
 )
 
 // lineUp writes how everything that can be moved stands before the first step.
 func (e *echo) lineUp() {
 	var said []string
-	for _, l := range e.plant.Lines {
-		for _, f := range l.Parts {
-			if x, ok := f.Part.(elements.Actuated); ok {
-				said = append(said, keep(x.Actuator().Tag+" "+Position(x.Actuator().Open)))
-			}
-			if x, ok := f.Part.(elements.Pumps); ok {
-				said = append(said, keep(x.Drive().Tag+" "+x.Drive().Mode.String()))
-			}
-			if x, ok := f.Part.(elements.Humps); ok && x.Crown().Vent.Tag != "" {
-				said = append(said, keep(x.Crown().Vent.Tag+" "+openOrShut(x.Crown().Vent.Open)))
-			}
-		}
+	for _, row := range e.plant.LineUp() {
+		said = append(said, keep(row.Valve+" "+row.Position))
 	}
 	if len(said) > 0 {
 		e.put("Line-up", "%s", strings.Join(said, ", "))
 	}
-}
-
-// Position writes a travel: shut, open, 35 %.
-func Position(travel float64) string {
-	switch travel {
-	case 0:
-		return "shut"
-	case 1:
-		return "open"
-	}
-	return strings.TrimSuffix(inSteps(100*travel, 0.1, Near), ".0") + " %"
-}
-
-func openOrShut(open bool) string {
-	if open {
-		return "open"
-	}
-	return "shut"
 }
 
 // steps writes what people do, in the order of the file.
@@ -64,7 +35,7 @@ func trigger(s *network.Step) string {
 		said = append(said, "at "+keep(s.At.Text))
 	}
 	if s.When != nil {
-		said = append(said, "when "+condition(*s.When))
+		said = append(said, "when "+s.When.Says())
 	}
 	if s.After != "" {
 		said = append(said, "after "+s.After)
@@ -75,20 +46,10 @@ func trigger(s *network.Step) string {
 	return join(said, " ")
 }
 
+// action writes the order, verb first, and how long a hold may last.
 func action(s *network.Step) string {
-	switch s.Action {
-	case network.HoldPoint:
-		return fmt.Sprintf("hold: %s, up to %s", s.Hold, keep(Duration(s.UpTo, Near)))
-	case network.CancelBatch:
-		return "cancel " + s.Target
-	case network.SetPump:
-		return s.Target + " " + s.Mode.String()
-	case network.SetVent:
-		return s.Target + " " + openOrShut(s.To > 0)
+	if s.Action == network.HoldPoint {
+		return s.Says(math.NaN()) + ", up to " + keep(Duration(s.UpTo, Near))
 	}
-	said := s.Target + " to " + keep(s.ToText)
-	if s.Over > 0 {
-		said += " over " + keep(Duration(s.Over, Near))
-	}
-	return said
+	return s.Says(math.NaN())
 }

@@ -41,11 +41,3 @@ func TestCheckPage(t *testing.T) {
 	golden(t, "check", b.Bytes())
 	proper(t, b.String())
 }
-
-func TestPosition(t *testing.T) {
-	for travel, want := range map[float64]string{0: "shut", 1: "open", 0.35: "35 %", 0.055: "5.5 %"} {
-		if got := text.Position(travel); got != want {
-			t.Errorf("Position(%g) = %q, want %q", travel, got, want)
-		}
-	}
-}

@@ -45,7 +45,7 @@ func (p *page) allFailures() []failure {
 		if l.AtUpTo {
 			says += ", when every hold lasts its longest"
 		}
-		if l.Why != "" {
+		if l.Why != "" && !l.Implicit {
 			says += " (" + l.Why + ")"
 		}
 		list = append(list, failure{l.FirstFail, says})

@@ -1,6 +1,12 @@
 package text
 
-import "headfall/network"
+import (
+	"strings"
+	"unicode"
+	"unicode/utf8"
+
+	"headfall/network"
+)
 
 const flagsShown = 5
 
@@ -24,6 +30,26 @@ func (p *page) flags() {
 		if i == 0 {
 			label = "Watch"
 		}
-		p.put(label, "%s%s", stamp(p.clock.Span(f.From, f.To)), join([]string{f.Says, f.Do}, " "))
+		p.put(label, "%s%s", stamp(p.clock.Span(f.From, f.To)), sentences(f.Says, f.Do))
 	}
+}
+
+// sentences puts what is and what to do about it one after the other, each a sentence.
+func sentences(list ...string) string {
+	var said []string
+	for _, s := range list {
+		s = strings.TrimSpace(s)
+		if s == "" {
+			continue
+		}
+		if !strings.HasSuffix(s, ".") {
+			s += "."
+		}
+		if len(said) > 0 {
+			first, size := utf8.DecodeRuneInString(s)
+			s = string(unicode.ToUpper(first)) + s[size:]
+		}
+		said = append(said, s)
+	}
+	return strings.Join(said, " ")
 }

@@ -9,7 +9,7 @@ func (p *page) holds() {
 		at := stamp(p.clock.At(*h.At, Near))
 		switch {
 		case h.LongestWait == nil:
-			p.put("Hold", "%s%s: no wait was found with which every limit holds", at, h.ID)
+			p.put("Hold", "%s%s: how long it may last is not known", at, h.ID)
 		case *h.LongestWait >= h.UpTo:
 			p.put("Hold", "%s%s may last its full %s", at, h.ID, keep(Duration(h.UpTo, Down)))
 		default:

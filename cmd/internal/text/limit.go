@@ -64,10 +64,30 @@ func (p *page) name(l *network.LimitResult) string {
 
 // named writes the limit in full: "SUMP level below 1.9 m".
 func (p *page) named(l *network.LimitResult) string {
-	if l.AsWritten == "" || len(l.Of) == 0 {
+	if l.AsWritten == "" || len(l.Of) == 0 || l.Bound == "only_between" {
 		return l.Says
 	}
-	return join([]string{p.name(l), l.Bound, keep(l.AsWritten)}, " ")
+	return join([]string{p.name(l), l.Bound, p.bound(l)}, " ") + over(l)
+}
+
+// bound writes the bound as in the file; what the vessel itself bears is called by its name.
+func (p *page) bound(l *network.LimitResult) string {
+	switch {
+	case l.Implicit && l.Subject == "level" && l.BoundSI != nil:
+		return "its rim, " + keep(p.units.LevelOf(*l.BoundSI, Down))
+	case l.Implicit && l.Subject == "pressure":
+		return "its rating, " + keep(l.AsWritten)
+	}
+	return keep(l.AsWritten)
+}
+
+// over writes the time over which a limit counts: ", averaged over 15 min".
+func over(l *network.LimitResult) string {
+	_, rest, found := strings.Cut(l.Says, ", ")
+	if !found {
+		return ""
+	}
+	return ", " + keep(rest)
 }
 
 // broken writes what happens when a limit fails: "SUMP level goes over 1.9 m".
@@ -79,7 +99,7 @@ func (p *page) broken(l *network.LimitResult) string {
 	case verb == "" || l.AsWritten == "" || len(l.Of) == 0:
 		return l.Says + " does not hold"
 	}
-	return join([]string{p.name(l), verb, keep(l.AsWritten)}, " ")
+	return join([]string{p.name(l), verb, p.bound(l)}, " ") + over(l)
 }
 
 // worst writes the worst value and when: ", worst 2.91 m at 06:55".

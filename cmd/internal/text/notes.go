@@ -4,17 +4,6 @@ import "strings"
 
 const assumedShown = 6
 
-// cautions writes those that apply to this run.
-func (p *page) cautions() {
-	for i, c := range p.res.Cautions {
-		label := ""
-		if i == 0 {
-			label = "Caution"
-		}
-		p.put(label, "%s", c)
-	}
-}
-
 // assumed writes what the answer rests on that the file does not say.
 func (p *page) assumed() {
 	var said []string

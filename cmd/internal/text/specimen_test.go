@@ -51,12 +51,14 @@ func good() *network.Result {
 		Alarms: []*network.AlarmResult{{Vessel: "PIT", Name: "high", At: at(4000), Have: at(1399), Need: at(131)}},
 		Flags: []*network.Flag{
 			{Kind: "ran_backwards", Where: "L-2", From: 12, To: 730, Says: "L-2 ran backwards."},
-			{Kind: "air_drawn_in", Where: "L-1", From: 8800, To: 9120, Says: "L-1 draws in air at T-1.", Do: "Expect a slower, surging flow."},
+			{Kind: "air_drawn_in", Where: "L-1", From: 8800, To: 9120, Says: "L-1 draws in air at T-1", Do: "expect a slower, surging flow"},
 		},
 		Bands:       map[string]map[string]network.Band{"emptied_at_s": {"T-1": {Low: at(8900), Mid: at(9120), High: at(9500)}}},
 		Assumptions: []network.Assumption{{What: "V-1.kv ± 15 %", Because: "no doubt stated"}, {What: "V-2.kv ± 15 %", Because: "no doubt stated"}},
 		Cautions: []string{"Planning estimate from the data in the file. Check against local rules, the site permit and a competent engineer before use. " +
-			"It does not replace isolation, gas test, or an independent level reading."},
+			"It does not replace isolation, gas test, or an independent level reading.",
+			"T-1 is emptied but still connected: it is not isolated by this plan.", "T-2 is emptied but still connected: it is not isolated by this plan.",
+			"Alarm high of PIT gives little time."},
 	}
 }
 
