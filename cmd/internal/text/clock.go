@@ -88,8 +88,8 @@ func daysBetween(a, b time.Time) int {
 
 // Duration writes "1 h 24 min", "7 min 46 s", "5.2 s".
 func Duration(s float64, dir Dir) string {
-	if math.IsNaN(s) || math.IsInf(s, 0) {
-		return "n/a"
+	if unknowable(s) {
+		return "-"
 	}
 	s = snap(s, dir)
 	sign := ""

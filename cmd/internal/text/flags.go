@@ -1,6 +1,7 @@
 package text
 
 import (
+	"fmt"
 	"strings"
 	"unicode"
 	"unicode/utf8"
@@ -13,25 +14,46 @@ const flagsShown = 5
 // elsewhere are the flags that other lines of the page tell already.
 var elsewhere = map[string]bool{"ran_backwards": true, "step_never_reached": true}
 
-// flags writes what is worth acting on, in the order of the clock.
+// flags writes what is worth acting on, in the order of the clock; what comes again and again is written once.
 func (p *page) flags() {
-	var list []*network.Flag
-	for _, f := range p.res.Flags {
-		if !elsewhere[f.Kind] && f.Says != "" {
-			list = append(list, f)
-		}
-	}
-	for i, f := range list {
+	list := p.gathered()
+	for i, g := range list {
 		if i == flagsShown {
 			p.put("", "and %s in the report", counted(len(list)-i, "more", "more"))
 			return
 		}
-		label := ""
-		if i == 0 {
-			label = "Watch"
+		when := p.clock.Span(g.first.From, g.first.To)
+		if g.again > 0 {
+			when += fmt.Sprintf(" and %s until %s", counted(g.again, "more time", "more times"), p.clock.At(g.last, Up))
 		}
-		p.put(label, "%s%s", stamp(p.clock.Span(f.From, f.To)), sentences(f.Says, f.Do))
+		p.put(first(i, "Watch"), "%s%s", stamp(when), sentences(g.first.Says, g.first.Do))
 	}
+}
+
+// gathering is one flag, how often it comes again and when it ends for good.
+type gathering struct {
+	first *network.Flag
+	again int
+	last  float64 // s
+}
+
+// gathered joins flags that say the same of the same place.
+func (p *page) gathered() []*gathering {
+	var list []*gathering
+	seen := map[[3]string]*gathering{}
+	for _, f := range p.res.Flags {
+		if elsewhere[f.Kind] || f.Says == "" {
+			continue
+		}
+		key := [3]string{f.Kind, f.Where, f.Says}
+		if g := seen[key]; g != nil {
+			g.again, g.last = g.again+1, max(g.last, f.To)
+			continue
+		}
+		seen[key] = &gathering{f, 0, f.To}
+		list = append(list, seen[key])
+	}
+	return list
 }
 
 // sentences puts what is and what to do about it one after the other, each a sentence.

@@ -39,7 +39,10 @@ func (p *page) value(l *network.LimitResult, si float64, apart bool, dir Dir) st
 		}
 		return p.clock.When(si, dir)
 	}
-	return strings.TrimSpace(figures(si, 3, 0.001, dir) + " " + l.UnitSI)
+	if l.UnitSI == "1" || l.UnitSI == "" { // a count
+		return figures(si, 3, 1, dir)
+	}
+	return figures(si, 3, 0.001, dir) + " " + l.UnitSI
 }
 
 // rateUnit is the unit the limit was written in, so that both can be compared by eye.

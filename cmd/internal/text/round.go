@@ -30,10 +30,13 @@ func round(x, step float64, dir Dir) float64 {
 	return n * step
 }
 
+// unknowable tells that a number was never worked out.
+func unknowable(x float64) bool { return math.IsNaN(x) || math.IsInf(x, 0) }
+
 // inSteps writes x as a multiple of step, which is a power of ten.
 func inSteps(x, step float64, dir Dir) string {
-	if math.IsNaN(x) || math.IsInf(x, 0) {
-		return "n/a"
+	if unknowable(x) {
+		return "-"
 	}
 	decimals := max(0, -int(math.Floor(math.Log10(step)+hair)))
 	s := strconv.FormatFloat(round(x, step, dir), 'f', decimals, 64)
@@ -45,7 +48,7 @@ func inSteps(x, step float64, dir Dir) string {
 
 // figures writes x with so many significant digits, never finer than least.
 func figures(x float64, digits int, least float64, dir Dir) string {
-	if x == 0 || math.IsNaN(x) || math.IsInf(x, 0) {
+	if x == 0 || unknowable(x) {
 		return inSteps(x, 1, dir)
 	}
 	order := math.Floor(math.Log10(math.Abs(x)) + hair)

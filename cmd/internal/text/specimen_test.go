@@ -52,6 +52,7 @@ func good() *network.Result {
 		Flags: []*network.Flag{
 			{Kind: "ran_backwards", Where: "L-2", From: 12, To: 730, Says: "L-2 ran backwards."},
 			{Kind: "air_drawn_in", Where: "L-1", From: 8800, To: 9120, Says: "L-1 draws in air at T-1", Do: "expect a slower, surging flow"},
+			{Kind: "air_drawn_in", Where: "L-1", From: 9200, To: 9300, Says: "L-1 draws in air at T-1", Do: "expect a slower, surging flow"},
 		},
 		Bands:       map[string]map[string]network.Band{"emptied_at_s": {"T-1": {Low: at(8900), Mid: at(9120), High: at(9500)}}},
 		Assumptions: []network.Assumption{{What: "V-1.kv ± 15 %", Because: "no doubt stated"}, {What: "V-2.kv ± 15 %", Because: "no doubt stated"}},

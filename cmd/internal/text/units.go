@@ -25,7 +25,12 @@ func UnitsOf(s network.Show) Units {
 const reading = 0.010 // m: a level is not read finer than this
 
 // LevelOf writes a level or a height to what can be read off a gauge.
-func (u Units) LevelOf(m float64, dir Dir) string { return u.number(m, dir) + " " + u.Level }
+func (u Units) LevelOf(m float64, dir Dir) string {
+	if unknowable(m) {
+		return "-"
+	}
+	return u.number(m, dir) + " " + u.Level
+}
 
 func (u Units) number(m float64, dir Dir) string {
 	one, err := quantity.Convert(1, quantity.Length, u.Level)
@@ -55,6 +60,9 @@ func (u Units) PressureBy(pa float64, dir Dir) string {
 
 // inUnit writes three figures, not finer than a thousandth of the unit.
 func inUnit(si float64, dim quantity.Dim, unit string, dir Dir) string {
+	if unknowable(si) {
+		return "-"
+	}
 	x, err := quantity.Convert(si, dim, unit)
 	if err != nil {
 		x, unit = si, quantity.SIUnit(dim)
