@@ -43,14 +43,14 @@ func (d *decoder) whole(root *node) {
 	if len(d.probs) == 0 {
 		if err = d.plant.Refresh(); err == nil {
 			for _, v := range d.plant.Vessels {
-				d.startOf(root.get("vessels").get(v.Tag), v, v.Shape)
+				d.startOf(d.things[v.Tag].body, v, v.Shape)
 			}
 			d.plantWide()
 			return
 		}
 	}
 	for _, v := range d.plant.Vessels { // one by one, so that each one's faults are told
-		n := root.get("vessels").get(v.Tag)
+		n := d.things[v.Tag].body
 		s, fault := v.Element.Shape(0)
 		if fault != nil {
 			for _, one := range split(fault) {

@@ -15,7 +15,12 @@ func (d *decoder) copies(root *node) *node {
 	if !any {
 		return root
 	}
-	c := &copier{d: d, vessels: vessels, done: map[string]*node{}, open: map[string]bool{}}
+	c := &copier{d: d, vessels: vessels, byTag: make(map[string]*node, len(vessels.keys)), done: map[string]*node{}, open: map[string]bool{}}
+	for i, k := range vessels.keys {
+		if c.byTag[k.text] == nil {
+			c.byTag[k.text] = vessels.items[i]
+		}
+	}
 	whole := *vessels
 	whole.items = make([]*node, len(vessels.items))
 	for i, k := range vessels.keys {
@@ -28,6 +33,7 @@ func (d *decoder) copies(root *node) *node {
 type copier struct {
 	d       *decoder
 	vessels *node
+	byTag   map[string]*node
 	done    map[string]*node
 	open    map[string]bool
 }
@@ -46,7 +52,7 @@ func (c *copier) written(key, n *node) *node {
 	if !c.d.text(like, "like") {
 		return own
 	}
-	model := c.vessels.get(like.text)
+	model := c.byTag[like.text]
 	switch {
 	case model == nil:
 		c.d.problem(like, fmt.Sprintf("like: there is no vessel %s", quoted(like.text)), c.d.hint(like.text, c.tags()))

@@ -35,6 +35,7 @@ type thing struct {
 	class  class
 	tag    string
 	at     *node
+	body   *node           // what belongs to a vessel
 	vessel *network.Vessel // a vessel, or the one a gauge belongs to
 	line   *network.Line
 	device *elements.Device

@@ -20,14 +20,14 @@ func (d *decoder) vessel(key, n *node) {
 	v := newVessel()
 	v.Tag, v.Place = key.text, key.at
 	if t != nil {
-		t.vessel = v
+		t.vessel, t.body = v, n
 	}
 	before := len(d.probs)
 	d.mapping(n, "vessel "+v.Tag, v.Tag, d.vesselFields(v))
 	if n.form == mapping && d.sets[v.Tag+".level"] == nil && d.sets[v.Tag+".contents"] == nil {
 		d.one(n, "vessel "+v.Tag, "level", "contents")
 	}
-	if len(d.probs) == before && v.Element != nil {
+	if t != nil && len(d.probs) == before && v.Element != nil {
 		d.plant.Vessels = append(d.plant.Vessels, v)
 	}
 }
