@@ -25,7 +25,7 @@ var octaves, cells = layout([...]int{
 
 type octave struct{ bits, start int }
 
-func layout(bits [30 - firstOctave]int) (all [30 - firstOctave]octave, n int) {
+func layout(bits [30 - firstOctave]int) (all [32]octave, n int) {
 	for i, b := range bits {
 		all[i] = octave{b, n}
 		n += 1 << b
@@ -36,7 +36,7 @@ func layout(bits [30 - firstOctave]int) (all [30 - firstOctave]octave, n int) {
 // nodes are the points where cells meet, the same for every table.
 var nodes = sync.OnceValue(func() []point {
 	all := []point{pointAt(1 << firstOctave)}
-	for i, o := range octaves {
+	for i, o := range octaves[:30-firstOctave] {
 		low := math.Ldexp(1, firstOctave+i)
 		w := math.Ldexp(low, -o.bits)
 		for k := range 1 << o.bits {
@@ -71,12 +71,13 @@ func (t *Table) FRe(re float64) (fre, slope float64) {
 		return t.last + (re-endOfTable)*t.rise, t.rise
 	}
 	b := math.Float64bits(re)
-	e := int(b>>52) - 1023
-	o := octaves[e-firstOctave]
+	e := uint(b >> 52)
+	o := &octaves[(e-1023-firstOctave)&31] // within range already; the mask spares a check
 	m := b & (1<<52 - 1)
-	c := &t.cell[o.start+int(m>>(52-o.bits))]
-	u := math.Float64frombits(0x3ff<<52|m<<o.bits&(1<<52-1)) - 1
-	perWidth := math.Float64frombits(uint64(1023+o.bits-e) << 52)
+	k := uint(o.bits) & 63
+	c := &t.cell[o.start+int(m>>((52-k)&63))]
+	u := math.Float64frombits(0x3ff<<52|m<<k&(1<<52-1)) - 1
+	perWidth := math.Float64frombits(uint64(2046+k-e) << 52)
 	return c[0] + u*(c[1]+u*(c[2]+u*c[3])), (c[1] + u*(2*c[2]+u*3*c[3])) * perWidth
 }
 
