@@ -18,6 +18,11 @@ const (
 // follow it with the same Jacobian (Deuflhard, Newton Methods for Nonlinear Problems, Springer 2004, algorithm NLEQ-ERR).
 func (s *Solver) settle() error {
 	d, trial := s.err, s.y1
+	if s.settler != nil {
+		s.settler.Settle(s.t, s.y)
+		s.linear = false
+		s.linearise()
+	}
 	before := math.Inf(1)
 	for range iterations {
 		if err := s.factoriseAlgebraic(); err != nil {

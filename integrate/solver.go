@@ -16,15 +16,16 @@ type Options struct {
 // Solver carries the state of a System through time. All its memory is allocated by NewSolver; it can be used for any number of runs, one
 // after the other, and the same calls give the same bits.
 type Solver struct {
-	sys   System
-	guard Guard // nil if the System is none
-	opt   Options
-	n, m  int
-	mass  []bool
-	pat   *sparse.Pattern
-	diag  []int32 // places of the differential unknowns' diagonal entries in the pattern
-	iptr  []int32 // pattern of the integrals' partial derivatives
-	icol  []int32
+	sys     System
+	guard   Guard // nil if the System is none
+	settler Settler
+	opt     Options
+	n, m    int
+	mass    []bool
+	pat     *sparse.Pattern
+	diag    []int32 // places of the differential unknowns' diagonal entries in the pattern
+	iptr    []int32 // pattern of the integrals' partial derivatives
+	icol    []int32
 
 	algebraic bool // there are algebraic unknowns
 	step      stepper
@@ -60,6 +61,7 @@ func NewSolver(sys System, opt Options) *Solver {
 	n, m := sys.Dim()
 	s := &Solver{sys: sys, opt: opt, n: n, m: m, mass: sys.Mass(), pat: sys.Pattern()}
 	s.guard, _ = sys.(Guard)
+	s.settler, _ = sys.(Settler)
 	if opt.Method == nil {
 		s.opt.Method = Rodas5P
 	}

@@ -42,6 +42,12 @@ type Guard interface {
 	Admit(t float64, y []float64) bool
 }
 
+// Settler is a System that knows how to bring its algebraic unknowns near to consistency better than Newton's method from where they are: Settle
+// changes those of y in place, for the present differential ones. The solver then finishes by itself.
+type Settler interface {
+	Settle(t float64, y []float64)
+}
+
 // Events is a set of functions of time and state whose sign changes matter. The solver asks for all of them at once.
 type Events interface {
 	// Len returns the number of functions.

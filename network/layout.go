@@ -63,6 +63,7 @@ func (s *system) layout() {
 	s.pat.N, s.pat.Ptr, s.pat.Row = s.n, nil, nil
 	s.pat.Ptr, s.pat.Row = b.columns()
 	s.resolve()
+	s.settler = newSettler(s)
 }
 
 // place notes the rows and columns of line i.
@@ -96,17 +97,7 @@ func (s *system) place(i int, b *patternBuilder) {
 
 // resolve finds the slot of every contribution in the finished pattern.
 func (s *system) resolve() {
-	find := func(row, col int32) int32 {
-		if row < 0 || col < 0 {
-			return -1
-		}
-		a, b := s.pat.Ptr[col], s.pat.Ptr[col+1]
-		k := sort.Search(int(b-a), func(i int) bool { return s.pat.Row[int(a)+i] >= row })
-		if k == int(b-a) || s.pat.Row[int(a)+k] != row {
-			return -1
-		}
-		return a + int32(k)
-	}
+	find := s.pat.Find
 	s.iPtr = append(s.iPtr[:0], 0)
 	s.iCol = s.iCol[:0]
 	for i := range s.lines {

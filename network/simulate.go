@@ -28,9 +28,9 @@ type simulation struct {
 	stopped string
 	trouble error
 	flags   []*Flag
-	edges   map[*Edge]float64 // when conditional edges of windows came
-	fouling bool              // runs may foul lines that the plan does not
-	bumps   int               // restarts without progress at one time
+	edges   map[*Edge]float64  // when conditional edges of windows came
+	answers map[*Alarm]*answer // of the alarms that were answered
+	bumps   int                // restarts without progress at one time
 }
 
 // Failure tells that the calculation could not finish.
@@ -95,7 +95,9 @@ func (m *Model) Run(ctx context.Context, opt RunOptions) (*Result, error) {
 	if err != nil {
 		return nil, err
 	}
-	sim.begin(&opt)
+	if err := sim.begin(&opt); err != nil {
+		return nil, err
+	}
 	err = sim.run(ctx, &opt)
 	sim.obs.finish()
 	r := sim.result()
@@ -104,7 +106,7 @@ func (m *Model) Run(ctx context.Context, opt RunOptions) (*Result, error) {
 }
 
 // begin puts the plant at its start.
-func (sim *simulation) begin(opt *RunOptions) {
+func (sim *simulation) begin(opt *RunOptions) error {
 	sim.changes = opt.Changes
 	sim.t, sim.stopped, sim.trouble, sim.flags, sim.bumps = 0, "", nil, nil, 0
 	sim.edges = map[*Edge]float64{}
@@ -124,8 +126,8 @@ func (sim *simulation) begin(opt *RunOptions) {
 	sim.led.reset()
 	sim.solver.Reset()
 	sim.control.begin(sim)
-	sim.watch.begin()
 	sim.obs.begin(opt.Series)
+	return sim.watch.begin()
 }
 
 // run goes from segment to segment: between two of them something acted.

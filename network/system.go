@@ -32,20 +32,23 @@ type system struct {
 
 	vesselAt, teeAt, outsideAt, lineAt, actuatorAt map[string]int
 
-	t0   float64   // start of the segment
-	y    []float64 // where Rates was called last
-	mass []bool
-	pat  sparse.Pattern
-	iPtr []int32
-	iCol []int32
-	slot []slots
-	rims []rimSlots
-	gasS []gasSlots
-	tees []teeSlots
-	diag []int32 // slot of each diagonal entry
+	t0      float64   // start of the segment
+	y       []float64 // where Rates was called last
+	mass    []bool
+	pat     sparse.Pattern
+	iPtr    []int32
+	iCol    []int32
+	slot    []slots
+	rims    []rimSlots
+	gasS    []gasSlots
+	tees    []teeSlots
+	settler *settler
 }
 
-var _ integrate.System = (*system)(nil)
+var (
+	_ integrate.System  = (*system)(nil)
+	_ integrate.Settler = (*system)(nil)
+)
 
 // Dim returns the numbers of unknowns and of integrals.
 func (s *system) Dim() (n, m int) { return s.n, s.m }

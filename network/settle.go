@@ -1,0 +1,183 @@
+package network
+
+import (
+	"math"
+
+	"headfall/integrate/sparse"
+)
+
+// settler finds the pressures of the tees that balance their flows before a restart. What flows into the tees is the downhill gradient of a convex
+// function of their pressures, so Newton's direction with an exact search along it gets there from anywhere; shut valves, dry ends and check
+// valves make the balances so uneven that Newton's method with the integrator's damping does not.
+type settler struct {
+	pat    sparse.Pattern
+	factor *sparse.Factor
+	values []float64
+	lines  []int32    // that touch a tee
+	slots  [][4]int32 // of each: (from,from), (from,to), (to,from), (to,to); -1 where an end is no tee
+	ends   [][2]int32 // tees at the ends; -1
+	diag   []int32
+	f, d   []float64
+	x      []float64
+}
+
+// newSettler fixes the pattern of the balances of the tees.
+func newSettler(s *system) *settler {
+	n := len(s.tees)
+	if n == 0 {
+		return nil
+	}
+	r := &settler{f: make([]float64, n), d: make([]float64, n), x: make([]float64, n), diag: make([]int32, n)}
+	b := &patternBuilder{n: n}
+	for i := range n {
+		b.add(int32(i), int32(i))
+	}
+	tee := func(m *mouth) int32 {
+		if m.kind == toTee {
+			return int32(m.at)
+		}
+		return -1
+	}
+	for i := range s.lines {
+		a, z := tee(&s.lines[i].from), tee(&s.lines[i].to)
+		if a < 0 && z < 0 {
+			continue
+		}
+		r.lines, r.ends = append(r.lines, int32(i)), append(r.ends, [2]int32{a, z})
+		b.add(a, z)
+		b.add(z, a)
+	}
+	r.pat.N = n
+	r.pat.Ptr, r.pat.Row = b.columns()
+	for _, e := range r.ends {
+		r.slots = append(r.slots, [4]int32{r.pat.Find(e[0], e[0]), r.pat.Find(e[0], e[1]), r.pat.Find(e[1], e[0]), r.pat.Find(e[1], e[1])})
+	}
+	for i := range n {
+		r.diag[i] = r.pat.Find(int32(i), int32(i))
+	}
+	r.factor = sparse.Analyse(&r.pat)
+	r.values = make([]float64, len(r.pat.Row))
+	return r
+}
+
+// balances fills f with what flows into each tee, m³/s, and the matrix with minus its slopes.
+func (r *settler) balances(s *system, matrix bool) {
+	clear(r.f)
+	if matrix {
+		clear(r.values)
+	}
+	for k, i := range r.lines {
+		l := &s.lines[i]
+		a, b := s.see(&l.from), s.see(&l.to)
+		l.evaluate(&a, &b, s.gamma)
+		e, sl := r.ends[k], &r.slots[k]
+		if e[0] >= 0 {
+			r.f[e[0]] -= l.q
+		}
+		if e[1] >= 0 {
+			r.f[e[1]] += l.q
+		}
+		if !matrix {
+			continue
+		}
+		for j, v := range [4]float64{l.byA, l.byB, -l.byA, -l.byB} {
+			if sl[j] >= 0 {
+				r.values[sl[j]] += v
+			}
+		}
+	}
+	for i := range s.tees {
+		if s.tees[i].slow { // its pressure follows from inertia, not from a balance of flows
+			r.f[i] = 0
+			if matrix {
+				r.hold(i)
+			}
+		}
+	}
+}
+
+// hold keeps a tee where it is.
+func (r *settler) hold(i int) {
+	for j := range r.pat.N {
+		for k := r.pat.Ptr[j]; k < r.pat.Ptr[j+1]; k++ {
+			if int(r.pat.Row[k]) == i || j == i {
+				r.values[k] = 0
+			}
+		}
+	}
+	r.values[r.diag[i]] = 1
+}
+
+// along returns f·d at x + part·d.
+func (r *settler) along(s *system, part float64) (sum float64) {
+	for i, d := range r.d {
+		s.y[s.teeRow+i] = r.x[i] + part*d
+	}
+	r.balances(s, false)
+	for i, d := range r.d {
+		sum += r.f[i] * d
+	}
+	return sum
+}
+
+// Settle balances the tees at (t, y), changing y in place.
+func (s *system) Settle(t float64, y []float64) {
+	r := s.settler
+	if r == nil {
+		return
+	}
+	s.look(t, y)
+	tol := 1e-7 * s.gamma * levelCap
+	for range 200 {
+		r.balances(s, true)
+		copy(r.d, r.f)
+		copy(r.x, s.y[s.teeRow:s.teeRow+len(r.x)])
+		if r.factor.Refactor(r.values) != nil {
+			return
+		}
+		r.factor.Solve(r.d)
+		most := 0.0
+		for _, d := range r.d {
+			most = math.Max(most, math.Abs(d))
+		}
+		if most <= tol || math.IsNaN(most) {
+			return
+		}
+		r.search(s, most)
+	}
+}
+
+// search goes along d until f·d has fallen to a hundredth of what it was.
+func (r *settler) search(s *system, most float64) {
+	start := 0.0
+	for i, d := range r.d {
+		start += r.f[i] * d
+	}
+	lo, hi, part := 0.0, math.Inf(1), 1.0
+	flo, fhi := start, 0.0
+	for n := range 100 {
+		g := r.along(s, part)
+		if math.Abs(g) <= 0.01*start {
+			return
+		}
+		if g > 0 {
+			lo, flo = part, g
+		} else {
+			hi, fhi = part, g
+		}
+		switch {
+		case math.IsInf(hi, 1):
+			part *= 2
+		case n%3 == 2 || fhi == flo:
+			part = lo + (hi-lo)/2
+		default: // secant between the two sides
+			part = lo + (hi-lo)*flo/(flo-fhi)
+			if !(part > lo && part < hi) {
+				part = lo + (hi-lo)/2
+			}
+		}
+		if (hi-lo)*most <= 1e-12*s.gamma || part*most > 1e12 {
+			return
+		}
+	}
+}
