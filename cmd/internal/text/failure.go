@@ -38,8 +38,8 @@ func (p *page) failures() {
 func (p *page) allFailures() []failure {
 	var list []failure
 	for _, l := range p.res.Limits {
-		if l.Verdict != network.Fails {
-			continue
+		if l.Verdict != network.Fails || !p.res.Complete && l.FirstFail != nil && *l.FirstFail > p.res.End {
+			continue // it holds, or nobody knows yet
 		}
 		says := join([]string{p.broken(l), p.worst(l)}, "; ")
 		if l.AtUpTo {

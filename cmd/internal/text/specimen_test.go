@@ -92,6 +92,7 @@ func interrupted() *network.Result {
 	for _, l := range r.Limits {
 		l.Verdict = network.NotJudged
 	}
+	r.Limits[1].Verdict, r.Limits[1].FirstFail = network.Fails, at(14400) // after what was computed
 	r.Holds, r.Steps[1].Done = nil, nil
 	r.Vessels["T-1"].EmptiedAt = nil
 	return r
