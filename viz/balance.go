@@ -1,6 +1,7 @@
 package viz
 
 import (
+	"sort"
 	"strconv"
 
 	"headfall/network"
@@ -69,7 +70,9 @@ type flagRow struct {
 
 func flags(r *network.Result, c clock) []flagRow {
 	var out []flagRow
-	for _, f := range r.Flags {
+	all := append([]*network.Flag(nil), r.Flags...)
+	sort.SliceStable(all, func(a, b int) bool { return all[a].From < all[b].From })
+	for _, f := range all {
 		out = append(out, flagRow{round10(f.From), c.At(f.From, earlier), c.At(f.To, later), f.Where, plainKind(f.Kind), f.Says, f.Do})
 	}
 	return out

@@ -110,7 +110,7 @@ func (h *charter) bounds(subject, tag string) []mark {
 	var out []mark
 	for _, l := range h.r.Limits {
 		if l.Subject == subject && len(l.Of) == 1 && l.Of[0] == tag && l.BoundSI != nil && finite(*l.BoundSI) && (l.Bound == "above" || l.Bound == "below") {
-			out = append(out, mark{Kind: "limit", Words: "limit " + l.Bound, At: *l.BoundSI, Above: l.Bound == "below", From: l.Window[0], To: l.Window[1]})
+			out = append(out, mark{Kind: "limit", Words: "limit", At: *l.BoundSI, Above: l.Bound == "below", From: l.Window[0], To: l.Window[1]})
 		}
 	}
 	return out

@@ -80,18 +80,20 @@ func (h *charter) build(id, unitKey, title string, u unit, curves []curve) chart
 	}
 	from, to := h.span()
 	axis := u.Name
+	low, high := h.reach(unitKey, u, curves)
+	spreadLabels(curves, (high-low)/u.K)
 	line.SetGlobalOptions(
 		charts.WithAnimation(false),
 		charts.WithGridOpts(opts.Grid{Left: "76", Right: "104", Top: "46", Bottom: "34"}),
 		charts.WithLegendOpts(opts.Legend{Show: opts.Bool(true), Type: "plain", Left: "76", Top: "2", ItemWidth: 26, ItemHeight: 10, Data: names(curves)}),
 		charts.WithTooltipOpts(opts.Tooltip{Show: opts.Bool(true), Trigger: "axis", AxisPointer: &opts.AxisPointer{Type: "line", Snap: opts.Bool(false)}}),
 		charts.WithXAxisOpts(opts.XAxis{Type: kind, Min: from, Max: to, AxisLabel: &opts.AxisLabel{HideOverlap: opts.Bool(true)}}),
-		charts.WithYAxisOpts(opts.YAxis{Type: "value", Name: axis, Scale: opts.Bool(unitKey == "gas" || unitKey == "crest"), SplitNumber: 4}),
+		charts.WithYAxisOpts(opts.YAxis{Type: "value", Name: axis, Min: low, Max: high, SplitNumber: 5}),
 		charts.WithDataZoomOpts(opts.DataZoom{Type: "inside", XAxisIndex: []int{0}, FilterMode: "none"}),
 		charts.WithAriaOpts(&opts.Aria{Enabled: opts.Bool(true), Label: &opts.AriaLabel{Description: h.describe(title, u, curves)}}),
 	)
 	for _, c := range curves {
-		h.addCurve(line, c, u)
+		h.addCurve(line, c, u, low, high)
 	}
 	h.addSteps(line)
 	line.Validate()
@@ -123,7 +125,7 @@ func (h *charter) describe(title string, u unit, curves []curve) string {
 }
 
 // addCurve adds a series with its marks. The data comes by its id.
-func (h *charter) addCurve(line *charts.Line, c curve, u unit) {
+func (h *charter) addCurve(line *charts.Line, c curve, u unit, low, high float64) {
 	options := []charts.SeriesOpts{
 		charts.WithSeriesId(clean(c.key)),
 		charts.WithLineChartOpts(opts.LineChart{ShowSymbol: opts.Bool(false)}),
@@ -134,13 +136,17 @@ func (h *charter) addCurve(line *charts.Line, c curve, u unit) {
 	}
 	for _, m := range c.marks {
 		if m.Kind == "limit" {
-			options = append(options, charts.WithMarkAreaNameCoordItemOpts(h.forbidden(m, u)))
+			options = append(options, charts.WithMarkAreaNameCoordItemOpts(h.forbidden(m, u, low, high)))
 		}
 	}
-	if c.peak && finite(c.peakV) && finite(c.peakT) {
+	if c.peak && finite(c.peakV) && finite(c.peakT) && c.peakV != 0 {
+		place := "top"
+		if c.peakT < 0.04*h.r.End {
+			place = "right"
+		}
 		options = append(options, charts.WithMarkPointNameCoordItemOpts(opts.MarkPointNameCoordItem{
 			Name: "peak", Coordinate: []any{h.x(c.peakT), round6(c.peakV * u.K)}, Value: u.Text(c.peakV), Symbol: "triangle", SymbolSize: 9,
-			Label: &opts.Label{Show: opts.Bool(true), Position: "top", Formatter: "{c}", FontSize: 11},
+			Label: &opts.Label{Show: opts.Bool(true), Position: place, Formatter: "{c}", FontSize: 11},
 		}))
 	}
 	line.AddSeries(clean(c.name), []opts.LineData{}, options...)
@@ -178,9 +184,13 @@ func (h *charter) markLines(c curve, u unit) *opts.MarkLines {
 		from, to := h.window(k)
 		look := looks[k.Kind]
 		y := round6(k.At * u.K)
+		place := k.place
+		if place == "" {
+			place = "insideStartTop"
+		}
 		m.Data = append(m.Data, []end{
 			{Name: short(clean(c.name), 14) + " " + short(clean(k.Words), 22), Coord: []any{from, y}, LineStyle: &look,
-				Label: &opts.Label{Show: opts.Bool(true), Position: "insideStartTop", Formatter: "{b}", FontSize: 10}},
+				Label: &opts.Label{Show: opts.Bool(true), Position: place, Formatter: "{b}", FontSize: 10}},
 			{Coord: []any{to, y}},
 		})
 	}
@@ -199,16 +209,18 @@ func (h *charter) window(m mark) (from, to float64) {
 	return from, to
 }
 
-// forbidden is the side of a limit on which the curve must not be.
-func (h *charter) forbidden(m mark, u unit) opts.MarkAreaNameCoordItem {
+// forbidden is a band on the side of a limit on which the curve must not be.
+func (h *charter) forbidden(m mark, u unit, low, high float64) opts.MarkAreaNameCoordItem {
 	from, to := h.window(m)
-	edge := any("min")
+	band := 0.07 * (high - low)
+	edge := math.Max(m.At*u.K-band, low)
 	if m.Above {
-		edge = "max"
+		edge = math.Min(m.At*u.K+band, high)
 	}
+	edge = round6(edge)
 	return opts.MarkAreaNameCoordItem{
 		Coordinate0: []any{from, round6(m.At * u.K)}, Coordinate1: []any{to, edge},
-		ItemStyle: &opts.ItemStyle{Opacity: opts.Float(0.10)},
+		ItemStyle: &opts.ItemStyle{Opacity: opts.Float(0.16)},
 	}
 }
 
@@ -217,7 +229,11 @@ func (h *charter) addSteps(line *charts.Line) {
 	items := []opts.MarkLineNameXAxisItem{}
 	for _, s := range h.steps {
 		if s.at != nil && finite(*s.at) {
-			items = append(items, opts.MarkLineNameXAxisItem{Name: s.N, XAxis: h.x(*s.at)})
+			n := s.N
+			if s.Hold {
+				n = "H"
+			}
+			items = append(items, opts.MarkLineNameXAxisItem{Name: n, XAxis: h.x(*s.at)})
 		}
 	}
 	line.AddSeries("steps", []opts.LineData{}, charts.WithSeriesId("steps"),

@@ -10,7 +10,7 @@ import (
 
 // The plant in elevation: one vertical scale and datum for everything; across, things stand in columns in the order that the liquid takes.
 const (
-	headroomPx = 40.0 // over the highest thing
+	headroomPx = 30.0 // over the highest thing
 	footPx     = 46.0 // under the lowest
 	labelPx    = 34.0 // over a vessel, for its tag and its level
 	railPx     = 58.0 // on the left, for the elevations

@@ -38,7 +38,7 @@ func (k *canvas) drawLine(d *drawing, n int, rt *route, l *live) {
 	}
 	live := liveLine{ID: id, Tag: line.Tag, Key: "flow/" + line.Tag, Peak: peak}
 	items := k.items(rt.line)
-	slots := k.slots(rt, 27)
+	slots := k.slots(rt)
 	items, slots = fit(items, slots)
 	for i, it := range items {
 		k.drawItem(d, id, it, slots[i], l, &live)
@@ -47,12 +47,15 @@ func (k *canvas) drawLine(d *drawing, n int, rt *route, l *live) {
 	d.end("g")
 }
 
+// plainPipe is the symbol of a part that looks like the line itself.
+const plainPipe = "M0 12H24"
+
 // items lists what a line carries, in its order.
 func (k *canvas) items(line int) []item {
 	l := k.plant.Lines[line]
 	all := []item{{kind: "tag", rank: 6, tag: l.Tag}}
 	for i, f := range l.Parts {
-		if f.Kind == nil || f.Kind.Symbol == "" {
+		if f.Kind == nil || f.Kind.Symbol == "" || f.Kind.Symbol == plainPipe {
 			continue
 		}
 		it := item{kind: "part", rank: 2, part: i, sym: f.Kind.Symbol}
@@ -71,17 +74,9 @@ func (k *canvas) items(line int) []item {
 	return append(all, item{kind: "arrow", rank: 7})
 }
 
-// fit leaves out what has no room and shares the places out evenly; places where other lines pass are taken last.
-func fit(items []item, slots []slot) ([]item, []slot) {
-	var free []slot
-	for _, s := range slots {
-		if !s.busy {
-			free = append(free, s)
-		}
-	}
-	if len(free) >= len(items) {
-		slots = free
-	}
+// fit leaves out what has no room and shares the places out; places where other lines pass are taken last.
+func fit(items []item, all []slot) ([]item, []slot) {
+	slots := apart(all, len(items))
 	for len(items) > len(slots) {
 		least := 0
 		for i, it := range items {
@@ -96,6 +91,34 @@ func fit(items []item, slots []slot) ([]item, []slot) {
 		out[i] = slots[(2*i+1)*len(slots)/(2*len(items))]
 	}
 	return items, out
+}
+
+// apart picks places that do not touch: all that are free, and as many of the busy ones as are needed, in the order of the line.
+func apart(all []slot, want int) []slot {
+	taken := make([]bool, len(all))
+	n := 0
+	for _, busy := range []bool{false, true} {
+		for i, s := range all {
+			if s.busy != busy || busy && n >= want {
+				continue
+			}
+			ok := true
+			for j, o := range all {
+				ok = ok && !(taken[j] && o.leg == s.leg && math.Hypot(o.x-s.x, o.y-s.y) < slotPitch-0.01)
+			}
+			if ok {
+				taken[i] = true
+				n++
+			}
+		}
+	}
+	var out []slot
+	for i, s := range all {
+		if taken[i] {
+			out = append(out, s)
+		}
+	}
+	return out
 }
 
 func (k *canvas) drawItem(d *drawing, id string, it item, at slot, l *live, line *liveLine) {

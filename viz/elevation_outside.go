@@ -14,7 +14,7 @@ func (k *canvas) drawTee(d *drawing, s *spot) {
 		words += ", at " + digits(s.low, 5) + " m"
 	}
 	d.title(words)
-	d.el("rect", "x", s.x-s.w/2, "y", y-2.5, "width", s.w, "height", 5, "rx", 2.5, "class", "bar")
+	d.el("rect", "x", s.x-s.w/2, "y", y-2.5, "width", s.w, "height", 5, "rx", 2.5, "class", "teebar")
 	d.text(s.x+s.w/2+6, y+4, "linetag strong", short(s.tag, 12))
 	d.end("g")
 }

@@ -107,7 +107,7 @@ func spread(next []*spot, placed map[*spot]bool, c, at int) float64 {
 	return sum
 }
 
-// improve swaps neighbouring columns as long as lines get shorter.
+// improve moves columns to other places as long as lines get shorter.
 func (k *canvas) improve(cols [][]*spot, next map[*spot][]*spot) {
 	total := func() float64 {
 		sum := 0.0
@@ -118,25 +118,32 @@ func (k *canvas) improve(cols [][]*spot, next map[*spot][]*spot) {
 		}
 		return sum
 	}
-	number := func(c int) {
-		for _, s := range cols[c] {
-			s.col = c
+	move := func(from, to int) {
+		c := cols[from]
+		copy(cols[from:], cols[from+1:])
+		copy(cols[to+1:], cols[to:len(cols)-1])
+		cols[to] = c
+		for i, col := range cols {
+			for _, s := range col {
+				s.col = i
+			}
 		}
 	}
 	best := total()
 	for range 6 {
 		better := false
-		for c := 0; c+1 < len(cols); c++ {
-			cols[c], cols[c+1] = cols[c+1], cols[c]
-			number(c)
-			number(c + 1)
-			if t := total(); t < best-1e-9 {
-				best, better = t, true
-				continue
+		for from := range cols {
+			for to := range cols {
+				if from == to {
+					continue
+				}
+				move(from, to)
+				if t := total(); t < best-1e-9 {
+					best, better = t, true
+				} else {
+					move(to, from)
+				}
 			}
-			cols[c], cols[c+1] = cols[c+1], cols[c]
-			number(c)
-			number(c + 1)
 		}
 		if !better {
 			return

@@ -35,6 +35,11 @@ func (k *canvas) connect() {
 			}
 		}
 	}
+	for _, s := range k.spots {
+		if s.tee != nil { // thin things need a track of their own to stand in the way
+			wantY = append(wantY, k.y(s.low))
+		}
+	}
 	pitch := 9.0
 	if area := k.width * k.height; area > 1.6e6 {
 		pitch *= math.Sqrt(area / 1.6e6)
@@ -131,28 +136,32 @@ func straighten(ps [][2]float64) [][2]float64 {
 	return out
 }
 
+// slotPitch is the room that a symbol takes along its line, px.
+const slotPitch = 27.0
+
 // slot is a place on a route where a symbol fits.
 type slot struct {
 	x, y float64
 	dir  float64 // degrees of the line there
-	busy bool    // another line passes close by
+	leg  int     // straight piece of the route
+	busy bool    // something else passes close by
 }
 
-// slots returns places for symbols along the route, in its order.
-func (k *canvas) slots(rt *route, pitch float64) []slot {
+// slots returns places for symbols along the route, in its order, closer together than symbols may stand.
+func (k *canvas) slots(rt *route) []slot {
 	var all []slot
 	for n := 1; n < len(rt.points); n++ {
 		a, b := rt.points[n-1], rt.points[n]
 		length := math.Hypot(b[0]-a[0], b[1]-a[1])
-		const clearance = 11.0
+		const clearance, step = 11.0, 9.0
 		if length < 2*clearance {
 			continue
 		}
-		m := int((length-2*clearance)/pitch) + 1
-		first := (length - pitch*float64(m-1)) / 2
+		m := int((length-2*clearance)/step) + 1
+		first := (length - step*float64(m-1)) / 2
 		for i := range m {
-			f := (first + pitch*float64(i)) / length
-			s := slot{x: a[0] + (b[0]-a[0])*f, y: a[1] + (b[1]-a[1])*f, dir: math.Atan2(b[1]-a[1], b[0]-a[0]) * 180 / math.Pi}
+			f := (first + step*float64(i)) / length
+			s := slot{x: a[0] + (b[0]-a[0])*f, y: a[1] + (b[1]-a[1])*f, dir: math.Atan2(b[1]-a[1], b[0]-a[0]) * 180 / math.Pi, leg: n}
 			s.busy = k.crowded(rt, s)
 			all = append(all, s)
 		}
@@ -160,11 +169,21 @@ func (k *canvas) slots(rt *route, pitch float64) []slot {
 	return all
 }
 
+// crowded reports whether a thing or another line comes close to a place, where the words beside a symbol stand included.
 func (k *canvas) crowded(rt *route, s slot) bool {
+	for _, o := range k.spots {
+		if s.x > o.box[0]-4 && s.x < o.box[2]+4 && s.y > o.box[1] && s.y < o.box[3]+6 {
+			return true
+		}
+	}
+	x0, x1, y0, y1 := s.x-18, s.x+18, s.y-17, s.y+15
+	if math.Abs(math.Mod(s.dir+360, 180)-90) < 45 {
+		x1, y0, y1 = s.x+34, s.y-9, s.y+9
+	}
 	for _, o := range k.routes {
 		for n := 1; n < len(o.points) && o != rt; n++ {
 			a, b := o.points[n-1], o.points[n]
-			if s.x > math.Min(a[0], b[0])-9 && s.x < math.Max(a[0], b[0])+9 && s.y > math.Min(a[1], b[1])-9 && s.y < math.Max(a[1], b[1])+9 {
+			if x1 > math.Min(a[0], b[0]) && x0 < math.Max(a[0], b[0]) && y1 > math.Min(a[1], b[1]) && y0 < math.Max(a[1], b[1]) {
 				return true
 			}
 		}

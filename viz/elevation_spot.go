@@ -121,13 +121,13 @@ func (k *canvas) measure() {
 				k.squeezed = true
 			}
 			s.w = 2 * half * s.across
-			s.y0, s.y1 = k.y(s.high)-labelPx-4, k.y(s.low)+18
-			s.box = [4]float64{-s.w/2 - 5, k.y(s.high) - labelPx, s.w/2 + 5, k.y(s.low) + 5}
+			s.y0, s.y1 = k.y(s.high)-labelPx-17, k.y(s.low)+18
+			s.box = [4]float64{-s.w/2 - 5, k.y(s.high) - labelPx - 13, s.w/2 + 5, k.y(s.low) + 5}
 		case s.tee != nil:
 			s.w = math.Max(float64(lines[s.tag])*11, 22)
 			y := k.y(s.low)
 			s.y0, s.y1 = y-26, y+30
-			s.box = [4]float64{-s.w/2 - 3, y - 3, s.w/2 + 3, y + 3}
+			s.box = [4]float64{-s.w/2 - 3, y - 4, s.w/2 + 12 + 6.5*float64(len([]rune(short(s.tag, 12)))), y + 4}
 		default:
 			s.w = math.Max(float64(lines[s.tag])*11+12, 46)
 			s.y0, s.y1 = k.y(s.high)-24, k.y(s.low)+40

@@ -55,6 +55,8 @@ func margins(r *network.Result, u units, c clock) (rows []marginRow, reach strin
 		m.Verdict, m.Class = limitWords(l)
 		if l.Verdict == network.Fails && l.FirstFail != nil {
 			m.When, m.T = "fails "+c.At(*l.FirstFail, earlier), l.FirstFail
+		} else if l.WorstAt != nil && l.Subject == "emptied" {
+			m.When = c.At(*l.WorstAt, later)
 		} else if l.WorstAt != nil {
 			m.When = c.At(*l.WorstAt, earlier)
 		}
@@ -70,9 +72,17 @@ func margins(r *network.Result, u units, c clock) (rows []marginRow, reach strin
 		}
 		rows = append(rows, m)
 	}
-	sort.SliceStable(rows, func(a, b int) bool { return key(rows[a].share) < key(rows[b].share) })
+	sort.SliceStable(rows, func(a, b int) bool {
+		if ra, rb := gravity[rows[a].Class], gravity[rows[b].Class]; ra != rb {
+			return ra < rb
+		}
+		return key(rows[a].share) < key(rows[b].share)
+	})
 	return rows, digits(full*100, 2) + "\u00a0%"
 }
+
+// gravity orders verdicts, the gravest first.
+var gravity = map[string]int{"fail": 0, "close": 1, "hold": 2, "open": 3}
 
 func key(s float64) float64 {
 	if !finite(s) {

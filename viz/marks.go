@@ -12,6 +12,7 @@ type mark struct {
 	Above bool    // a limit: what lies over it is forbidden
 	From  *float64
 	To    *float64
+	place string // of its label on a chart
 }
 
 // vesselLines returns the heights that matter in a vessel: rim, overflow sills, alarms, and the limits on its level.
@@ -37,7 +38,7 @@ func vesselLines(plant *network.Plant, r *network.Result, tag string) []mark {
 	}
 	for _, l := range r.Limits {
 		if l.Subject == "level" && !l.Implicit && len(l.Of) == 1 && l.Of[0] == tag && l.BoundSI != nil && finite(*l.BoundSI) {
-			all = append(all, mark{Kind: "limit", Words: "limit " + l.Bound, At: *l.BoundSI, Above: l.Bound == "below", From: l.Window[0], To: l.Window[1]})
+			all = append(all, mark{Kind: "limit", Words: "limit", At: *l.BoundSI, Above: l.Bound == "below", From: l.Window[0], To: l.Window[1]})
 		}
 	}
 	return all

@@ -1,11 +1,11 @@
 package viz
 
 import (
-	"bufio"
 	"bytes"
 	"errors"
 	"html/template"
 	"io"
+	"strings"
 
 	"headfall/network"
 	"headfall/viz/export"
@@ -67,11 +67,7 @@ func Write(w io.Writer, p Page) error {
 	v.CSS = template.CSS(asset("report.css") + asset("sheet.css"))
 	v.CSP = "default-src 'none'; script-src " + cspHash(lib) + " " + cspHash(script) +
 		"; style-src 'unsafe-inline'; img-src data:; base-uri 'none'; form-action 'none'"
-	out := bufio.NewWriterSize(w, 1<<16)
-	if err := templates.ExecuteTemplate(out, "report.html.tmpl", v); err != nil {
-		return err
-	}
-	return out.Flush()
+	return execute(w, "report.html.tmpl", v)
 }
 
 // WriteSheet writes the sequence sheet alone, as HTML for print.
@@ -83,12 +79,21 @@ func WriteSheet(w io.Writer, p Page) error {
 	v := view{Title: title(p.Plant), Sheet: sheetPages(p, sheetRows(p, u, c), c, handovers(p, u, c))}
 	v.CSS = template.CSS(asset("sheet.css"))
 	v.CSP = "default-src 'none'; style-src 'unsafe-inline'; base-uri 'none'; form-action 'none'"
-	out := bufio.NewWriter(w)
-	if err := templates.ExecuteTemplate(out, "sheetonly", v); err != nil {
+	return execute(w, "sheetonly", v)
+}
+
+// execute prints a template, without the characters that turn the direction of text: what stands on a sheet must read as it was written.
+func execute(w io.Writer, name string, v any) error {
+	var b bytes.Buffer
+	if err := templates.ExecuteTemplate(&b, name, v); err != nil {
 		return err
 	}
-	return out.Flush()
+	_, err := turning.WriteString(w, b.String())
+	return err
 }
+
+var turning = strings.NewReplacer("\u202a", "", "\u202b", "", "\u202c", "", "\u202d", "", "\u202e", "", "\u2066", "", "\u2067", "", "\u2068", "",
+	"\u2069", "", "\u200e", "", "\u200f", "")
 
 var errNothing = errors.New("report: no plant or no result to show")
 

@@ -102,7 +102,7 @@ func cascade(t testing.TB) Page {
 		{Tag: "SIP", From: "SUMP", To: "RIVER", Leaves: network.Port{Form: network.Dip, Height: 0.2}, Parts: []*network.Fitted{pipe(t, 12, 0.05)}},
 	}
 	p := &network.Plant{Title: "Rinse-water cascade, autumn shutdown", Revision: "B", File: "cascade.yaml", SHA256: strings.Repeat("7c1e", 16),
-		Text: "headfall: 1\ntitle: Rinse-water cascade, autumn shutdown\n", Start: time.Date(2027, 10, 9, 6, 0, 0, 0, time.UTC), RunFor: 21600, ReportEvery: 10,
+		Text: "headfall: 1\ntitle: Rinse-water cascade, autumn shutdown\n", Start: time.Date(2027, 10, 9, 6, 0, 0, 0, time.UTC), RunFor: 21600, ReportEvery: 20,
 		Gravity: 9.80665, Atmosphere: 101325, Vessels: []*network.Vessel{t1, t2, sump}, Tees: []*network.Tee{{Tag: "HDR", Elevation: 6.2}},
 		Outside: []*network.Outside{outside(t, "AIR", "free_fall", m{"elevation": 5.1}), outside(t, "GY-1", "gully", m{"elevation": 5.0, "capacity": 0.006}),
 			outside(t, "RIVER", "water", m{"surface": [][]float64{{0, 2.4}, {21600, 3.9}}})},

@@ -70,7 +70,7 @@ func laneBars(t, v []float64, end float64) template.HTML {
 	}
 	if n := len(shape); n > 0 {
 		shape = append(shape, [2]float64{shape[n-1][0], laneHigh})
-		d.el("polygon", "points", dots(shape), "class", "bar")
+		d.el("polygon", "points", dots(shape), "class", "open")
 		d.el("polyline", "points", dots(shape[1:n]), "class", "edge")
 	}
 	d.el("line", "x1", 0, "x2", laneWide, "y1", laneHigh-0.5, "y2", laneHigh-0.5, "class", "base")

@@ -130,7 +130,7 @@
   }
   function play(on) {
     playing = on ? 1 : 0;
-    $("play").textContent = on ? "⏸" : "▶";
+    $("play").classList.toggle("on", !!on);
     $("play").setAttribute("aria-pressed", on ? "true" : "false"); $("play").setAttribute("aria-label", on ? "Pause" : "Play");
     if (on) { if (now >= D.end) go(0); last = 0; requestAnimationFrame(frame); }
   }
@@ -150,7 +150,7 @@
     a = Math.min(Math.max(a, 0), 1 - w);
     zoom = [a, a + w]; busy = true;
     charts.forEach(function (c) { c.dispatchAction({ type: "dataZoom", start: 100 * a, end: 100 * (a + w) }); });
-    busy = false; strip(); cursors();
+    busy = false; strip(); cursors(); charts.forEach(ends);
   }
   function scaleBy(f) { var c = END > 0 ? now / END : 0.5, w = (zoom[1] - zoom[0]) * f; zoomTo(c - w / 2, c + w / 2); }
   function strip() {
@@ -178,7 +178,8 @@
   var LIGHT = ["#0b5f8a", "#b4490a", "#00714f", "#93366f", "#7a5c00", "#3d4f9f"], DARK = ["#7cc4ee", "#f2a065", "#63d0a5", "#e79ac6", "#e3c75a", "#a9b8f5"];
   function dark() { return !printing && matchMedia("(prefers-color-scheme: dark)").matches; }
   var printing = false;
-  function ink(name) { return getComputedStyle(root).getPropertyValue(name).trim(); }
+  var PAPER = { "--ink": "#000", "--soft": "#333", "--hair": "#bbb", "--paper": "#fff", "--sheet": "#fff" };
+  function ink(name) { return printing && PAPER[name] || getComputedStyle(root).getPropertyValue(name).trim(); }
   function label(v) {
     if (SHORT) return digits(v, 3);
     var t = back(v);
@@ -201,16 +202,17 @@
     };
   }
   function finish(o, el) {
-    var u = D.units[el.dataset.unit], colors = dark() ? DARK : LIGHT, order = {}, n = 0, narrow = el.clientWidth < 560;
+    var u = D.units[el.dataset.unit], colors = dark() ? DARK : LIGHT, order = {}, n = 0, narrow = narrowed(el);
     var INK = ink("--ink"), SOFT = ink("--soft"), HAIR = ink("--hair"), font = ink("--sans");
     o.useUTC = true; o.color = colors; o.backgroundColor = "transparent"; o.textStyle = { fontFamily: font, color: INK, fontSize: 12 };
     o.title = { show: false }; o.toolbox = { show: false }; o.animation = false;
-    var wide = 0, rows = 1, room = el.clientWidth - (narrow ? 60 : 180);
+    var wide = 0, rows = 1, room = (printing ? 690 : el.clientWidth) - (narrow ? 60 : 180);
     o.legend.data.forEach(function (name) { var w = 46 + Math.min(name.length, 28) * 7; if (wide + w > room) { rows++; wide = 0; } wide += w; });
     o.legend.left = narrow ? 44 : 76; o.legend.textStyle = { color: INK, width: 200, overflow: "truncate" }; o.legend.inactiveColor = SOFT; o.legend.padding = 0; o.legend.lineStyle = { inactiveColor: SOFT };
     var grid = o.grid[0] || o.grid;
     grid.left = narrow ? 44 : 76; grid.right = narrow ? 12 : 104; grid.top = 24 + 20 * rows; grid.bottom = 30;
     o.grid = grid;
+    el.names = [];
     el.gridBox = [grid.left, grid.right, grid.top, grid.bottom];
     o.xAxis.forEach(function (a) {
       a.axisLabel = { formatter: label, color: SOFT, hideOverlap: true, showMinLabel: null, showMaxLabel: null }; a.splitLine = { show: false }; a.axisLine = { lineStyle: { color: SOFT }, onZero: false }; a.axisPointer = { label: { show: false }, lineStyle: { color: SOFT } };
@@ -230,10 +232,10 @@
       if (d) {
         s.data = d.t.map(function (t, i) { return [x(t), d.v[i] === null ? null : +(d.v[i] * u.k).toPrecision(9)]; });
         s.lineStyle.type = DASH[k % DASH.length]; s.triggerLineEvent = false;
-        if (!narrow) { s.endLabel = { show: true, formatter: "{a}", color: color, fontWeight: 700, width: 92, overflow: "truncate", distance: 6 }; s.labelLayout = { moveOverlap: "shiftY" }; }
+        s.symbol = "none"; el.names.push({ id: s.id, name: s.name, color: color, k: u.k });
       } else { s.silent = true; s.z = 4; }
       if (s.markLine) { s.markLine.silent = true; s.markLine.animation = false; s.markLine.data.forEach(function (m) { (m.length ? m : [m]).forEach(function (e) { if (e.lineStyle) e.lineStyle.color = color; if (e.label) { e.label.color = INK; e.label.textBorderColor = ink("--paper"); e.label.textBorderWidth = 3; } }); }); }
-      if (s.markArea) { s.markArea.silent = true; s.markArea.data.forEach(function (m) { m[0].itemStyle = { color: color, opacity: 0.1 }; }); }
+      if (s.markArea) { s.markArea.silent = true; s.markArea.data.forEach(function (m) { m[0].itemStyle = { color: color, opacity: 0.16 }; }); }
       if (s.markPoint) { s.markPoint.silent = true; s.markPoint.animation = false; delete s.markPoint.symbol; s.markPoint.data.forEach(function (m) { m.itemStyle = { color: color }; if (m.label) { m.label.color = INK; m.label.textBorderColor = ink("--paper"); m.label.textBorderWidth = 3; m.label.distance = 2; } }); }
     });
     return o;
@@ -244,16 +246,30 @@
     el.replaceChildren();
     var box = doc.createElement("div"), c;
     box.style.cssText = "position:absolute;inset:0"; el.appendChild(box);
-    c = echarts.init(box, null, { renderer: "svg" });
-    c.group = "run"; c.setOption(o); c.gridBox = el.gridBox;
+    c = echarts.init(box, null, printing ? { renderer: "svg", width: 690, height: 220 } : { renderer: "svg" });
+    c.group = "run"; c.setOption(o); c.gridBox = el.gridBox; c.names = narrowed(el) ? [] : el.names.map(function (n) { var d = doc.createElement("div"); d.className = "endname"; d.textContent = n.name; d.style.color = n.color; el.appendChild(d); n.el = d; return n; });
     c.cursorEl = doc.createElement("div"); c.cursorEl.className = "cursor"; el.appendChild(c.cursorEl);
     c.getZr().on("click", function (e) { if (c.containPixel("grid", [e.offsetX, e.offsetY])) go(back(c.convertFromPixel({ xAxisIndex: 0 }, e.offsetX)), true); });
+    c.on("legendselectchanged", function () { ends(c); });
     c.on("datazoom", function () {
       if (busy) return;
       var z = c.getOption().dataZoom[0];
-      zoom = [z.start / 100, z.end / 100]; strip(); cursors();
+      zoom = [z.start / 100, z.end / 100]; strip(); cursors(); charts.forEach(ends);
     });
-    el.chart = c; charts.push(c); cursors();
+    el.chart = c; charts.push(c); cursors(); ends(c);
+  }
+  // names at the right end of the curves, pushed apart where they meet
+  function narrowed(el) { return !printing && el.clientWidth < 560; }
+  function ends(c) {
+    var off = (c.getOption().legend[0].selected) || {}, t = zoom[1] * D.end, from = c.gridBox[2] - 7, to = c.getHeight() - c.gridBox[3] - 7;
+    var on = c.names.filter(function (n) {
+      var v = value(n.id, t), y = c.convertToPixel({ yAxisIndex: 0 }, (isFinite(v) ? v : 0) * n.k);
+      n.y = Math.min(Math.max(y - 7, from), to); n.el.hidden = off[n.name] === false;
+      return !n.el.hidden;
+    }).sort(function (a, b) { return a.y - b.y; });
+    for (var i = 1; i < on.length; i++) on[i].y = Math.max(on[i].y, on[i - 1].y + 14);
+    for (i = on.length - 1; i >= 0; i--) on[i].y = Math.min(on[i].y, (i + 1 < on.length ? on[i + 1].y - 14 : to));
+    on.forEach(function (n) { n.el.style.top = n.y + "px"; });
   }
   function redraw() {
     all(".plot").forEach(function (el) { if (el.chart) { charts.splice(charts.indexOf(el.chart), 1); el.chart.dispose(); el.chart = null; chart(el); } });
@@ -269,9 +285,8 @@
   function before() {
     if (printing) return;
     printing = true; play(false); zoomTo(0, 1); plots.forEach(chart); redraw();
-    charts.forEach(function (c) { c.dispatchAction({ type: "hideTip" }); c.resize({ width: 690, height: 220 }); });
   }
-  function after() { printing = false; redraw(); charts.forEach(function (c) { c.resize({ width: "auto", height: "auto" }); }); cursors(); }
+  function after() { printing = false; redraw(); cursors(); }
   addEventListener("beforeprint", before); addEventListener("afterprint", after);
   matchMedia("(prefers-color-scheme: dark)").addEventListener("change", redraw);
   var late = 0, width = innerWidth;
