@@ -175,9 +175,8 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 		}
 		c.chain.parts = append(c.chain.parts, f.Part)
 		c.chain.locals = append(c.chain.locals, &c.locals[i])
-		if one, ok := f.Part.(elements.OneWay); ok && one.Leak() == 0 && s.plan.Assume.CheckLeak == 0 {
-			c.oneWay = true
-			c.crack += one.Cracking()
+		if _, ok := f.Part.(elements.OneWay); ok {
+			c.checks = true
 		}
 		if in, ok := f.Part.(elements.Inertial); ok {
 			c.inertia += in.Inertance(&s.fluid)
@@ -190,9 +189,10 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 		}
 		s.addActuators(c, f, i, k)
 	}
+	c.setLeak(s.plan.Assume.CheckLeak)
 	s.endLosses(c)
 	if c.from.kind == toTee || c.to.kind == toTee {
-		c.gmin = 1e-15
+		c.gmin = weepage
 	}
 	s.addFloors(c)
 	return nil
@@ -233,7 +233,7 @@ func (s *system) shareTables() {
 	alike := map[string][]int{}
 	for i := range s.lines {
 		l := &s.lines[i]
-		if len(l.acts) > 0 || l.weir != nil || l.inertia > 0 || l.crack > 0 || len(l.chain.parts) == 0 {
+		if len(l.acts) > 0 || l.weir != nil || l.inertia > 0 || l.checks || len(l.chain.parts) == 0 {
 			continue
 		}
 		key := fmt.Sprint(l.chain.fwd, l.chain.rev)

@@ -24,18 +24,19 @@ type line struct {
 	crowns   []crown
 	weir     elements.Crest
 	weirAt   *elements.Local
-	crestZ   float64 // m over datum, of the weir
-	gmin     float64 // m³/(s·Pa), see evaluate
-	inertia  float64 // ρL/A of all parts, kg/m⁴; 0 for none
-	own      float64 // the flow itself where it is an unknown of the plant
-	bore     float64 // m, the narrowest, for velocities; 0 for none
-	area     float64 // m², of it
-	row      int32   // unknown of an inertial flow; -1
-	acts     []int32 // its actuators
-	sources  bool    // it has a pump
-	long     bool    // it has a pipe
-	extraK   float64 // added by an upset, on the first bore
-	lastDp   float64 // warm start of the chain
+	crestZ   float64   // m over datum, of the weir
+	gmin     float64   // m³/(s·Pa), the weepage at a tee; else 0
+	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
+	own      float64   // the flow itself where it is an unknown of the plant
+	bore     float64   // m, the narrowest, for velocities; 0 for none
+	area     float64   // m², of it
+	row      int32     // unknown of an inertial flow; -1
+	acts     []int32   // its actuators
+	sources  bool      // it has a pump
+	long     bool      // it has a pipe
+	clean    *unfouled // what it was before an upset fouled it; nil while it is clean
+	checks   bool      // it has a check valve
+	lastDp   float64   // warm start of the chain
 	lastQ    float64
 	lastS    float64
 
@@ -214,12 +215,18 @@ func (l *line) admit(in *inletLaw, y, q, near, far float64) (q1, near1, byY, far
 	return q1, near * byQ, byC * slope, far * byQ
 }
 
-// weep adds a conductance so small that it counts only where a tee has no other path: 1e-15 m³/(s·Pa), booked at both ends. It fades where an
-// end is dry, so that next to nothing is drawn from there.
+// weepage is the conductance that every line at a tee has besides its own, m³/(s·Pa), so small that it counts only where a tee has no other path,
+// and booked at both ends; dryWeepage is the share of it left where an end is dry, so that next to nothing is drawn from there.
+const (
+	weepage    = 1e-22
+	dryWeepage = 1e-3
+)
+
+// weep adds the weepage, so that the pressure of a tee is determined when every path is shut.
 func (l *line) weep(a, b *end) {
 	g := l.gmin
 	if a.depth <= 0 || b.depth <= 0 {
-		g *= 1e-5
+		g *= dryWeepage
 	}
 	l.q += g * (a.phi - b.phi)
 	l.byA += g

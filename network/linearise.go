@@ -100,12 +100,17 @@ func (s *system) lineariseOwn(i int, a, b *end, f []float64, lin *integrate.Line
 	}
 }
 
+// teeStiffness is added to the slope of a tee's balance, m³/(s·Pa): nothing against any open path, but where one-way ends just take up flow, or all
+// is shut, it keeps a pressure that means nothing from being thrown about.
+const teeStiffness = 1e-12
+
 // lineariseTees replaces the rows of tees whose balance is differentiated.
 func (s *system) lineariseTees(f []float64, lin *integrate.Linear) {
 	s.balanceTees(f)
 	for i := range s.tees {
 		t := &s.tees[i]
 		if !t.slow {
+			lin.DfDy[s.settler.own[i]] -= teeStiffness
 			continue
 		}
 		for _, k := range t.lines {

@@ -17,6 +17,7 @@ type settler struct {
 	slots  [][4]int32 // of each: (from,from), (from,to), (to,from), (to,to); -1 where an end is no tee
 	ends   [][2]int32 // tees at the ends; -1
 	diag   []int32
+	own    []int32 // diagonal entries of the tees in the whole matrix
 	f, d   []float64
 	x      []float64
 }
@@ -54,6 +55,7 @@ func newSettler(s *system) *settler {
 	}
 	for i := range n {
 		r.diag[i] = r.pat.Find(int32(i), int32(i))
+		r.own = append(r.own, s.pat.Find(int32(s.teeRow+i), int32(s.teeRow+i)))
 	}
 	r.factor = sparse.Analyse(&r.pat)
 	r.values = make([]float64, len(r.pat.Row))
@@ -153,7 +155,7 @@ func (r *settler) search(s *system, most float64) {
 	for i, d := range r.d {
 		start += r.f[i] * d
 	}
-	lo, hi, part := 0.0, math.Inf(1), 1.0
+	lo, hi, part := 0.0, math.Inf(1), math.Min(1, 10*s.gamma/most) // 10 m at first: where nothing is open, Newton's step is out of all bounds
 	flo, fhi := start, 0.0
 	for n := range 100 {
 		g := r.along(s, part)
@@ -167,7 +169,7 @@ func (r *settler) search(s *system, most float64) {
 		}
 		switch {
 		case math.IsInf(hi, 1):
-			part *= 2
+			part *= 8
 		case n%3 == 2 || fhi == flo:
 			part = lo + (hi-lo)/2
 		default: // secant between the two sides
@@ -176,7 +178,7 @@ func (r *settler) search(s *system, most float64) {
 				part = lo + (hi-lo)/2
 			}
 		}
-		if (hi-lo)*most <= 1e-12*s.gamma || part*most > 1e12 {
+		if (hi-lo)*most <= 1e-12*s.gamma || lo >= 1 && part > 8 {
 			return
 		}
 	}
