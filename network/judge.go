@@ -48,8 +48,11 @@ func (j *judged) judgeSpan(o *observer) judgement {
 		sign = -1
 	}
 	from, to := 0.0, o.sim.t
-	if t := o.sim.edgeAt(&l.Since); l.Since.Given && !math.IsNaN(t) {
-		from = t
+	if l.Since.Given {
+		from = o.sim.edgeAt(&l.Since)
+	}
+	if math.IsNaN(from) { // its window never opened
+		return judgement{worst: math.NaN(), at: math.NaN(), first: math.NaN(), margin: math.NaN(), judged: true}
 	}
 	if t := o.sim.edgeAt(&l.Until); l.Until.Given && !math.IsNaN(t) {
 		to = math.Min(to, t)

@@ -94,7 +94,7 @@ func (o *observer) addLimit(j *judged) error {
 		j.track.slack = permitSlack
 		j.track.window = &window{allowed: permitted(sim.plan, l), inverse: true}
 	} else if l.Since.Given || l.Until.Given {
-		j.track.window = &window{since: l.Since, until: l.Until}
+		j.track.window = &window{since: &l.Since, until: &l.Until}
 	}
 	o.trackers = append(o.trackers, j.track)
 	return nil

@@ -106,7 +106,7 @@ func (m *tracker) valueAt(o *observer, t float64) float64 {
 
 // window is the part of a run in which a limit counts.
 type window struct {
-	since, until Edge
+	since, until *Edge        // of the limit itself: conditional edges are known by their place; nil with inverse
 	allowed      [][2]float64 // of only_between: spans in which flow is permitted, s
 	inverse      bool         // counts outside the allowed spans
 }
@@ -121,10 +121,10 @@ func (w *window) holds(sim *simulation) bool {
 		}
 		return true
 	}
-	if w.since.Given && !(sim.edgeAt(&w.since) <= sim.t) {
+	if w.since.Given && !(sim.edgeAt(w.since) <= sim.t) {
 		return false
 	}
-	return !w.until.Given || !(sim.edgeAt(&w.until) <= sim.t)
+	return !w.until.Given || !(sim.edgeAt(w.until) <= sim.t)
 }
 
 // edgeAt returns when an edge of a window came; NaN while it has not.
@@ -185,8 +185,8 @@ func (sim *simulation) nextEdge(t float64) float64 {
 				}
 			}
 		}
-		for _, e := range []*Edge{&m.window.since, &m.window.until} {
-			if e.At.Given && e.At.S > t {
+		for _, e := range []*Edge{m.window.since, m.window.until} {
+			if e != nil && e.At.Given && e.At.S > t {
 				n = math.Min(n, e.At.S)
 			}
 		}
