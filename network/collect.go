@@ -33,6 +33,7 @@ func (sim *simulation) result() *Result {
 	sim.stepResults(r)
 	sim.limitResults(r)
 	sim.alarmResults(r)
+	sim.handoverResults(r)
 	sim.balance(r)
 	sim.finishFlags(r)
 	r.LineUp = p.LineUp()

@@ -176,7 +176,9 @@ func (sim *simulation) alarmResults(r *Result) {
 		x := &AlarmResult{Vessel: v.Tag, Name: m.name, At: opt(m.first)}
 		if a := m.alarm.Response; a != nil {
 			need := a.Detect + a.Walk
-			if k, ok := sim.sys.actuatorAt[a.Valve]; ok {
+			if done := sim.answers[m.alarm]; done != nil {
+				need += done.stem
+			} else if k, ok := sim.sys.actuatorAt[a.Valve]; ok {
 				need += math.Abs(sim.sys.actuators[k].at(sim.t)-a.To) * sim.sys.actuators[k].valve.Stroke
 			}
 			x.Need = opt(need)

@@ -15,7 +15,6 @@ type stepState struct {
 	due     float64 // s at which it acts; +Inf while not known
 	done    float64 // s; NaN
 	movedBy float64 // s at which its move ends; NaN
-	looked  bool    // its condition was looked at when it was armed
 	seen    record
 }
 
@@ -29,6 +28,8 @@ type control struct {
 	inflows map[string]override
 	gone    map[string]bool // batches cancelled
 	upsets  []*Upset
+
+	handover []*HandoverBlock
 }
 
 // override is an inflow set by a step.
@@ -55,6 +56,7 @@ func (c *control) begin(sim *simulation) {
 	for _, u := range c.upsets {
 		c.startUpset(u)
 	}
+	c.addHandovers()
 	for i := range c.steps {
 		c.arm(i, 0)
 	}
@@ -106,6 +108,8 @@ func (c *control) startUpset(u *Upset) {
 		if ok {
 			s.actuators[k].stops = u.Value
 		}
+	case VentBlocked:
+		s.blockVent(u.Target, u.Value)
 	}
 }
 

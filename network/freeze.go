@@ -24,7 +24,8 @@ func (s *system) begin(ch *Changes) {
 	for i := range s.lines {
 		l := &s.lines[i]
 		l.lastDp, l.lastQ, l.lastS = 0, 0, 0
-		l.extraK = 0
+		s.unfoul(l)
+		l.setLeak(math.Max(s.plan.Assume.CheckLeak, ch.CheckLeak))
 		for k := range l.locals {
 			l.locals[k].Strength = 1
 		}

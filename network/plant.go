@@ -43,6 +43,8 @@ type Plant struct {
 
 	byTag map[string]any     // vessels, tees, outside points and lines; made by Refresh
 	meets map[string][]*Line // lines that meet a vessel, tee or outside point
+
+	owners map[string]any // what owns numbers, by the beginning of their names; made by Refresh, for Touch
 }
 
 // Show is the display units; empty ones are m, m3/h, m3, mbar.

@@ -32,6 +32,7 @@ func (p *Plant) Refresh() error {
 			return fmt.Errorf("%s: %w", v.Tag, err)
 		}
 	}
+	p.listOwners()
 	return nil
 }
 

@@ -17,7 +17,7 @@ func (w *watcher) addCrowns() {
 				trigger{
 					value:  func(*snapshot) float64 { return s.airMargin(l, c) },
 					active: func() bool { return c.primed && !s.vented(c) },
-					dir:    -1, deep: true,
+					dir:    -1, deep: true, jumps: true,
 					fire: func(t float64) {
 						c.primed = false
 						w.sim.flag("siphon_broken", l.plan.Tag, t, fmt.Sprintf("air reaches the high point of %s and breaks the siphon", l.plan.Tag),
@@ -27,7 +27,7 @@ func (w *watcher) addCrowns() {
 				trigger{
 					value:  func(*snapshot) float64 { return s.sweep(l, c) },
 					active: func() bool { return !c.primed && !s.vented(c) },
-					dir:    1, deep: true,
+					dir:    1, deep: true, jumps: true,
 					fire: func(t float64) {
 						c.primed = true
 						w.sim.flag("siphon_primed", l.plan.Tag, t, fmt.Sprintf("%s runs full over its high point and draws as a siphon", l.plan.Tag),
@@ -65,56 +65,4 @@ func (s *system) sweep(l *line, c *crown) float64 {
 	}
 	area := math.Pi / 4 * c.bore * c.bore
 	return math.Abs(l.q)/area/math.Sqrt(s.plan.Gravity*c.bore) - 1
-}
-
-// addFouling watches the volumes after which a line gets its extra loss.
-func (w *watcher) addFouling() {
-	s := w.sim.sys
-	for i := range s.lines {
-		l := &s.lines[i]
-		fired := func() *Upset {
-			for _, u := range w.sim.control.upsets {
-				if u.Kind == ExtraLoss && u.Target == l.plan.Tag {
-					return u
-				}
-			}
-			return nil
-		}
-		if !w.sim.mayFoul(l.plan.Tag) {
-			continue
-		}
-		w.triggers = append(w.triggers, trigger{
-			value: func(n *snapshot) float64 {
-				f, _ := w.sim.led.passed(i, n.z[i])
-				return f - fired().After
-			},
-			active: func() bool { return l.extraK == 0 && fired() != nil },
-			dir:    1, deep: true,
-			fire: func(float64) { s.foul(l, fired().Value) },
-		})
-	}
-}
-
-// mayFoul tells whether some upset of the plan may foul the line; runs with such upsets of their own add to the plan's.
-func (sim *simulation) mayFoul(tag string) bool {
-	for _, u := range sim.plan.Upsets {
-		if u.Kind == ExtraLoss && u.Target == tag {
-			return true
-		}
-	}
-	return sim.fouling
-}
-
-// foul adds loss coefficient k on the first bore of the line.
-func (s *system) foul(l *line, k float64) {
-	c := (k - l.extraK) * velocityHead(s.fluid.Density, l.plan.endBore(false))
-	l.extraK = k
-	l.chain.fwd += c
-	l.chain.rev += c
-	l.table = nil
-	for i := range l.floors {
-		l.floors[i].base += c
-		l.floors[i].up.fwd += c
-		l.floors[i].up.rev += c
-	}
 }

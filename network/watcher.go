@@ -11,7 +11,9 @@ import (
 type watcher struct {
 	sim      *simulation
 	triggers []trigger
-	deep     bool // some active trigger needs more than levels
+	begun    []func() // what forgets the last run
+	fixed    int      // triggers of the plan; those of one run come after
+	deep     bool     // some active trigger needs more than levels
 	look     snapshot
 	f        []float64
 }
@@ -23,6 +25,7 @@ type trigger struct {
 	fire   func(t float64)
 	dir    int  // +1 rising, -1 falling, 0 both
 	deep   bool // needs more than levels
+	jumps  bool // may be true at once, without crossing: looked at whenever something acted
 	on     bool // active in this segment
 }
 
@@ -36,12 +39,33 @@ func newWatcher(sim *simulation) (*watcher, error) {
 	w.addPumps()
 	w.addCorners()
 	w.addCrowns()
-	w.addFouling()
-	return w, w.addEdges()
+	w.addFouling(sim.plan.Upsets)
+	err := w.addEdges()
+	w.fixed = len(w.triggers)
+	return w, err
 }
 
-// begin forgets what the last run added.
-func (w *watcher) begin() {}
+// begin forgets what the last run added, and adds what this one watches besides the plan.
+func (w *watcher) begin() error {
+	n := len(w.begun)
+	for _, forget := range w.begun {
+		forget()
+	}
+	w.triggers = w.triggers[:w.fixed]
+	w.addFouling(w.sim.changes.Upsets)
+	w.begun = w.begun[:n]
+	w.foulNow()
+	return w.addResponses()
+}
+
+// foulNow gives lines the extra loss that they have from the start.
+func (w *watcher) foulNow() {
+	for _, u := range w.sim.control.upsets {
+		if i, ok := w.sim.sys.lineAt[u.Target]; ok && u.Kind == ExtraLoss && u.After <= 0 {
+			w.sim.sys.foul(&w.sim.sys.lines[i], u.Value)
+		}
+	}
+}
 
 // addSteps watches the conditions of steps.
 func (w *watcher) addSteps() error {
@@ -62,7 +86,7 @@ func (w *watcher) addSteps() error {
 			value:  func(s *snapshot) float64 { return p.value(w.sim, s) },
 			active: func() bool { return c.waits(i) },
 			fire:   func(t float64) { c.trigger(i, t) },
-			dir:    dir, deep: !p.cheap(),
+			dir:    dir, deep: !p.cheap(), jumps: true,
 		})
 	}
 	return nil
@@ -139,38 +163,30 @@ func (w *watcher) fire(hit []int) {
 	}
 }
 
-// immediate looks at what is true already when it is armed, and acts at once; it says whether anything did.
-func (w *watcher) immediate() (acted bool) {
-	sim := w.sim
-	c := &sim.control
-	seen := false
-	n := 0
-	for i, st := range sim.plan.Steps {
-		if st.When == nil {
+// settled looks at the plant just after something acted and fires what is true without having crossed anything: a condition that was true when it
+// was armed, or that came true at once with what acted. It says whether anything fired.
+func (w *watcher) settled() (fired bool) {
+	w.deep = false
+	any := false
+	for i := range w.triggers {
+		t := &w.triggers[i]
+		t.on = t.jumps && t.active()
+		any = any || t.on
+		w.deep = w.deep || t.on && t.deep
+	}
+	if !any {
+		return false
+	}
+	w.see(w.sim.t, w.sim.solver.Y())
+	for i := range w.triggers {
+		t := &w.triggers[i]
+		if !t.on {
 			continue
 		}
-		tr := &w.triggers[n]
-		n++
-		if !c.waits(i) || c.steps[i].looked {
-			continue
-		}
-		c.steps[i].looked = true
-		if !seen {
-			seen = true
-			w.deep = true
-			sim.sys.freeze(sim)
-			w.seeNow()
-		}
-		if v := tr.value(&w.look); v == 0 || (v > 0) == (tr.dir > 0) {
-			c.trigger(i, sim.t)
-			acted = true
+		if v := t.value(&w.look); v == 0 && !t.deep || v > 0 && t.dir > 0 || v < 0 && t.dir < 0 {
+			t.fire(w.sim.t)
+			fired = true
 		}
 	}
-	return w.switchPumps() || acted
-}
-
-// seeNow fills the snapshot at the present state.
-func (w *watcher) seeNow() {
-	w.sim.fill(&w.look, w.sim.t, w.sim.y, w.f)
-	copy(w.look.z, w.sim.solver.Z())
+	return fired
 }

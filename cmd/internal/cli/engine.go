@@ -6,6 +6,7 @@ import (
 	"slices"
 
 	"headfall/network"
+	"headfall/network/study"
 	"headfall/scenarios"
 )
 
@@ -37,15 +38,8 @@ func load(src *source, o *options) (*network.Plant, error) {
 }
 
 func judge(ctx context.Context, load func() (*network.Plant, error), o *options, progress func(float64)) (*network.Result, error) {
-	plant, err := load()
-	if err != nil {
-		return nil, err
-	}
-	model, err := network.Compile(plant, o.calculation())
-	if err != nil {
-		return nil, err
-	}
-	return model.Run(ctx, network.RunOptions{Series: true, Progress: progress})
+	c := o.calculation()
+	return study.Judge(ctx, load, study.Options{Workers: o.workers, Method: c.Method, Tolerance: c.Tolerance, Progress: progress})
 }
 
 // calculation hands the method and the accuracy on; the usual method goes unnamed.

@@ -1,0 +1,73 @@
+package study
+
+import (
+	"fmt"
+	"math"
+
+	"headfall/elements/quantity"
+	"headfall/network"
+)
+
+// answers runs the plan once more with every alarm answered, where one comes that has a response, and says whether that is in time.
+func (j *judgement) answers() error {
+	asked := false
+	for _, a := range j.res.Alarms {
+		asked = asked || a.At != nil && a.Need != nil
+	}
+	if !asked {
+		return nil
+	}
+	other, err := j.single(network.Changes{Respond: true})
+	if err != nil {
+		return err
+	}
+	for i, a := range j.res.Alarms {
+		if a.At == nil || a.Need == nil {
+			continue
+		}
+		a.Need = other.Alarms[i].Need
+		a.Says = saysAnswer(a, other)
+	}
+	return nil
+}
+
+// saysAnswer says what time there is and what is needed, and what the calculation with the answer gives.
+func saysAnswer(a *network.AlarmResult, answered *network.Result) string {
+	need := "need " + watch(math.Ceil(*a.Need))
+	if a.Have == nil {
+		return "comes; no limit of it fails; " + need
+	}
+	says := "have " + watch(math.Floor(*a.Have)) + ", " + need
+	if *a.Have < *a.Need {
+		says += ": SHORT"
+	}
+	if l := firstFailure(answered, a.Vessel); l != nil {
+		return says + "; answered, " + l.Says + " still fails"
+	}
+	if l := firstFailure(answered, ""); l != nil {
+		return says + "; answered, it holds, but " + l.Says + " fails"
+	}
+	return says + "; answered, every limit holds"
+}
+
+// firstFailure returns the limit about a vessel, or about anything, that fails first; nil when all hold.
+func firstFailure(r *network.Result, vessel string) *network.LimitResult {
+	var first *network.LimitResult
+	for _, l := range r.Limits {
+		if l.FirstFail == nil || vessel != "" && l.Of[0] != vessel {
+			continue
+		}
+		if first == nil || *l.FirstFail < *first.FirstFail {
+			first = l
+		}
+	}
+	return first
+}
+
+// watch writes a time as a stop watch shows it: 3:17, and hours in words.
+func watch(s float64) string {
+	if s >= 3600 || s < 0 {
+		return quantity.FormatDuration(s)
+	}
+	return fmt.Sprintf("%d:%02d", int(s)/60, int(s)%60)
+}

@@ -1,0 +1,141 @@
+package study
+
+import (
+	"context"
+	"fmt"
+	"strings"
+
+	"headfall/elements/quantity"
+	"headfall/network"
+)
+
+// doubts samples what is doubtful and lays the bands over the result: a limit that holds in the middle but fails too often is too close to call.
+func (j *judgement) doubts() error {
+	j.res.Assumptions = assumptions(j.plant)
+	j.res.Allowance = network.Allowance{Doubts: "none"}
+	draws := NewDraws(j.plant, j.opt.Samples, j.opt.Seed)
+	if j.opt.Samples < 0 || len(draws.Numbers) == 0 {
+		return nil
+	}
+	j.run.Progress = j.part(0.2, 1)
+	samples, done, err := Each(j.ctx, j.run, j.opt.Samples, func(ctx context.Context, b *Bench, i int) (sample, error) {
+		return takeSample(ctx, b, draws, i, j.holds)
+	})
+	j.run.Progress = nil
+	kept := calculated(samples, done)
+	j.res.Allowance = network.Allowance{Doubts: j.plant.Assume.Doubts, Samples: len(kept), Seed: j.opt.Seed}
+	if len(kept) > 0 {
+		j.lay(kept)
+	}
+	if n := len(samples) - len(kept); n > 0 && err == nil {
+		j.res.Cautions = append(j.res.Cautions, fmt.Sprintf("%d of %d samples of the doubts could not be calculated and are left out.", n, len(samples)))
+		if float64(n) > FailsAllowed*float64(len(samples)) {
+			return fmt.Errorf("%d of %d samples of the doubts could not be calculated: %s", n, len(samples), whyNot(samples))
+		}
+	}
+	j.res.Decide()
+	return err
+}
+
+// calculated returns the samples that were carried out and came to an end.
+func calculated(samples []sample, done []bool) (kept []sample) {
+	for i, s := range samples {
+		if done[i] && s.failed == "" {
+			kept = append(kept, s)
+		}
+	}
+	return kept
+}
+
+func whyNot(samples []sample) string {
+	for _, s := range samples {
+		if s.failed != "" {
+			return s.failed
+		}
+	}
+	return ""
+}
+
+// lay puts the bands of the samples over the result.
+func (j *judgement) lay(samples []sample) {
+	r := j.res
+	r.Bands = vesselBands(j.plant, samples)
+	for i, s := range r.Steps {
+		if s.Expect == nil {
+			continue
+		}
+		b := bandOf(present(pluck(samples, func(s *sample) float64 { return s.expect[i] })))
+		if b.Low != nil && b.High != nil {
+			s.Expect.Low, s.Expect.High = min(*b.Low, s.Expect.Mid), max(*b.High, s.Expect.Mid)
+		}
+	}
+	for i, l := range r.Limits {
+		b := bandOf(present(pluck(samples, func(s *sample) float64 { return s.margin[i] })))
+		l.MarginLow, l.MarginHigh = b.Low, b.High
+		l.FailsShare = shareOf(samples, func(s *sample) bool { return s.fails[i] })
+		if l.Verdict == network.Holds && l.FailsShare > FailsAllowed {
+			l.Verdict = network.TooClose
+		}
+	}
+}
+
+// vesselBands are the bands of empty times and peak levels, by vessel; a vessel that is never empty in any sample has none.
+func vesselBands(p *network.Plant, samples []sample) map[string]map[string]network.Band {
+	bands := map[string]map[string]network.Band{"emptied_at_s": {}, "peak_level_m": {}}
+	for i, v := range p.Vessels {
+		if c := pluck(samples, func(s *sample) float64 { return s.emptied[i] }); !never(c) {
+			bands["emptied_at_s"][v.Tag] = bandOf(c)
+		}
+		bands["peak_level_m"][v.Tag] = bandOf(pluck(samples, func(s *sample) float64 { return s.peak[i] }))
+	}
+	return bands
+}
+
+func shareOf(samples []sample, is func(*sample) bool) float64 {
+	n := 0
+	for i := range samples {
+		if is(&samples[i]) {
+			n++
+		}
+	}
+	return float64(n) / float64(len(samples))
+}
+
+// assumptions lists the doubts allowed for: those that the file leaves unstated first.
+func assumptions(p *network.Plant) []network.Assumption {
+	list := []network.Assumption{}
+	for _, assumed := range []bool{true, false} {
+		for _, n := range p.Numbers {
+			if n.Value.Doubt.Stated() && n.Assumed == assumed {
+				because := "as stated"
+				if assumed {
+					because = "no doubt stated"
+				}
+				list = append(list, network.Assumption{What: n.Name + " " + SaysDoubt(n), Because: because})
+			}
+		}
+	}
+	if len(p.Assume.Together) > 0 {
+		list = append(list, network.Assumption{What: strings.Join(p.Assume.Together, ", ") + " drawn together", Because: "as stated"})
+	}
+	return list
+}
+
+// SaysDoubt writes the doubt of a number: "± 15 %", "± 20 mm", "× or ÷ 2", "0.58 to 0.66".
+func SaysDoubt(n *network.Number) string {
+	d, v := n.Value.Doubt, n.Value.SI
+	switch d.Kind {
+	case quantity.Factor:
+		return fmt.Sprintf("× or ÷ %.4g", d.Factor)
+	case quantity.Uniform:
+		return quantity.Format(d.Low, n.Dim, n.Value.Unit, 4) + " to " + quantity.Format(d.High, n.Dim, n.Value.Unit, 4)
+	}
+	if n.Key == "level" || v == 0 || n.Dim == quantity.Ratio && n.Value.Unit == "%" {
+		unit := n.Value.Unit
+		if n.Dim == quantity.Length {
+			unit = "mm"
+		}
+		return "± " + quantity.Format(d.Half, n.Dim, unit, 4)
+	}
+	return fmt.Sprintf("± %.3g %%", 100*d.Half/v)
+}
