@@ -65,8 +65,10 @@ func (sim *simulation) stepResults(r *Result) {
 		p := st.plan
 		if p.Action == HoldPoint {
 			h := &HoldResult{ID: p.ID, Says: p.Says(0), Who: p.Who, UpTo: p.UpTo}
-			if !math.IsNaN(st.done) {
-				h.At = opt(st.done - sim.changes.wait(p))
+			if at := st.due - sim.changes.wait(p); at <= sim.t { // people wait at it, be it signed within the run or not
+				h.At = opt(at)
+			} else {
+				sim.unreached(r, p, h.Says)
 			}
 			r.Holds = append(r.Holds, h)
 			continue
@@ -97,12 +99,20 @@ func (sim *simulation) stepResults(r *Result) {
 				x.Turns = opt(p.To * v.Turns)
 			}
 		}
-		if x.Done == nil && !p.Optional && !sim.changes.Missed[p.ID] && r.Complete {
-			sim.flag("step_never_reached", p.ID, sim.t, fmt.Sprintf("step %s (%s) was never reached: %s", p.ID, x.Says, p.waitsFor()), "give it a time, or mark it optional")
-			r.unreached = append(r.unreached, p.ID)
+		if x.Done == nil {
+			sim.unreached(r, p, x.Says)
 		}
 		r.Steps = append(r.Steps, x)
 	}
+}
+
+// unreached notes that a step or hold did not come, where that is a failure.
+func (sim *simulation) unreached(r *Result, p *Step, says string) {
+	if p.Optional || sim.changes.Missed[p.ID] || !r.Complete {
+		return
+	}
+	sim.flag("step_never_reached", p.ID, sim.t, fmt.Sprintf("step %s (%s) was never reached: %s", p.ID, says, p.waitsFor()), "give it a time, or mark it optional")
+	r.unreached = append(r.unreached, p.ID)
 }
 
 // waitsFor says what a step waits for.

@@ -132,7 +132,7 @@ func (j *judged) starts(o *observer, bound float64) (top, at, first float64) {
 		if n > top {
 			top, at = n, t
 		}
-		if n > bound && math.IsNaN(first) {
+		if n >= bound && math.IsNaN(first) { // a count of so many is not below so many
 			first = t
 		}
 	}

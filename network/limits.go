@@ -85,6 +85,8 @@ func (o *observer) addLimit(j *judged) error {
 		j.track.slack = pressureSlack
 	case Flow:
 		j.track.slack = 1e-12
+	case Starts:
+		j.track.slack = -0.5 // a count of so many is not below so many
 	default:
 		j.track.slack = 1e-9
 	}

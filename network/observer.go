@@ -70,6 +70,9 @@ func (o *observer) begin(series bool) {
 		}
 	}
 	clear(o.over)
+	clear(o.spilled)
+	clear(o.now.q)
+	clear(o.now.dv)
 	clear(o.regimes)
 	for _, m := range o.trackers {
 		m.begin()

@@ -141,6 +141,9 @@ func (sim *simulation) run(ctx context.Context, opt *RunOptions) error {
 		if err := sim.solver.Restart(sim.t, sim.y); err != nil {
 			return sim.fail(err)
 		}
+		if sim.watch.settled() {
+			continue
+		}
 		sim.watch.arm()
 		sim.obs.start()
 		if sim.t >= end {
@@ -239,7 +242,7 @@ func (c *control) runs(b *Batch) bool { return !c.gone[b.ID] }
 func (sim *simulation) settleActions() {
 	for range 100 {
 		a := sim.control.act(sim.t)
-		b := sim.watch.immediate()
+		b := sim.watch.switchPumps()
 		if !a && !b {
 			return
 		}

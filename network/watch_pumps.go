@@ -70,7 +70,7 @@ func (w *watcher) addSuction(a *actuator) {
 		trigger{
 			value:  func(s *snapshot) float64 { return s.level[v] - low },
 			active: func() bool { return a.to > 0 },
-			dir:    -1,
+			dir:    -1, jumps: true,
 			fire: func(t float64) {
 				c.run(a, false, t)
 				a.dry = true

@@ -178,6 +178,7 @@ func (w *watcher) settled() (fired bool) {
 		return false
 	}
 	w.see(w.sim.t, w.sim.solver.Y())
+	copy(w.look.z, w.sim.solver.Z())
 	for i := range w.triggers {
 		t := &w.triggers[i]
 		if !t.on {
