@@ -72,7 +72,7 @@ func (j *judgement) lay(samples []sample) {
 	for i, l := range r.Limits {
 		b := bandOf(present(pluck(samples, func(s *sample) float64 { return s.margin[i] })))
 		l.MarginLow, l.MarginHigh = b.Low, b.High
-		l.FailsShare = shareOf(samples, func(s *sample) bool { return s.fails[i] })
+		l.FailsShare = portion(samples, func(s *sample) bool { return s.fails[i] })
 		if l.Verdict == network.Holds && l.FailsShare > FailsAllowed {
 			l.Verdict = network.TooClose
 		}
@@ -91,7 +91,7 @@ func vesselBands(p *network.Plant, samples []sample) map[string]map[string]netwo
 	return bands
 }
 
-func shareOf(samples []sample, is func(*sample) bool) float64 {
+func portion(samples []sample, is func(*sample) bool) float64 {
 	n := 0
 	for i := range samples {
 		if is(&samples[i]) {
