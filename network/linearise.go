@@ -2,6 +2,10 @@ package network
 
 import "headfall/integrate"
 
+// teeStiffness is added to the slopes of every line at a tee, m³/(s·Pa), alike in all rows so that the balance stays exact: nothing against any
+// open path, but where one-way ends just take up flow, or all is shut, it keeps a pressure that means nothing from being thrown about.
+const teeStiffness = 1e-12
+
 // Linearise fills f and g with all their partial derivatives: each line's block by its own end conditions, chained to the unknowns and
 // scattered into the slots.
 func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) {
@@ -20,6 +24,9 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 		a, b := s.see(&l.from), s.see(&l.to)
 		l.evaluate(&a, &b, s.gamma)
 		g[i] = l.q
+		if l.gmin > 0 {
+			l.byA, l.byB = l.byA+teeStiffness, l.byB-teeStiffness
+		}
 		d := [5]float64{l.byA*a.phiV + l.byYa*a.depV, l.byA * a.phiN, l.byB*b.phiV + l.byYb*b.depV, l.byB * b.phiN, l.byQ}
 		if l.from.kind == toTee {
 			d[0] = l.byA
@@ -100,17 +107,12 @@ func (s *system) lineariseOwn(i int, a, b *end, f []float64, lin *integrate.Line
 	}
 }
 
-// teeStiffness is added to the slope of a tee's balance, m³/(s·Pa): nothing against any open path, but where one-way ends just take up flow, or all
-// is shut, it keeps a pressure that means nothing from being thrown about.
-const teeStiffness = 1e-12
-
 // lineariseTees replaces the rows of tees whose balance is differentiated.
 func (s *system) lineariseTees(f []float64, lin *integrate.Linear) {
 	s.balanceTees(f)
 	for i := range s.tees {
 		t := &s.tees[i]
 		if !t.slow {
-			lin.DfDy[s.settler.own[i]] -= teeStiffness
 			continue
 		}
 		for _, k := range t.lines {

@@ -17,7 +17,6 @@ type settler struct {
 	slots  [][4]int32 // of each: (from,from), (from,to), (to,from), (to,to); -1 where an end is no tee
 	ends   [][2]int32 // tees at the ends; -1
 	diag   []int32
-	own    []int32 // diagonal entries of the tees in the whole matrix
 	f, d   []float64
 	x      []float64
 }
@@ -55,7 +54,6 @@ func newSettler(s *system) *settler {
 	}
 	for i := range n {
 		r.diag[i] = r.pat.Find(int32(i), int32(i))
-		r.own = append(r.own, s.pat.Find(int32(s.teeRow+i), int32(s.teeRow+i)))
 	}
 	r.factor = sparse.Analyse(&r.pat)
 	r.values = make([]float64, len(r.pat.Row))
