@@ -36,6 +36,7 @@ type line struct {
 	long     bool      // it has a pipe
 	clean    *unfouled // what it was before an upset fouled it; nil while it is clean
 	checks   bool      // it has a check valve
+	reach    float64   // pressure that drives the flow, in bands
 	lastDp   float64   // warm start of the chain
 	lastQ    float64
 	lastS    float64
@@ -96,15 +97,19 @@ func (l *line) pass(a, b *end, gamma float64) {
 		l.q = 0
 		return
 	case onlyOn:
+		u := (drive - l.crack) / band
 		drive, turn = crackOpen(drive, l.crack, band)
+		turn = l.roundCorner(turn, u)
 		if drive <= 0 {
-			l.q = 0
+			l.stand(turn)
 			return
 		}
 	case onlyBack:
+		u := -drive / band
 		drive, turn = elements.Join(-drive, band)
+		turn = l.roundCorner(turn, u)
 		if drive <= 0 {
-			l.q = 0
+			l.stand(turn)
 			return
 		}
 		drive = -drive
@@ -112,8 +117,31 @@ func (l *line) pass(a, b *end, gamma float64) {
 	q, s := l.flowAt(drive + l.zero)
 	l.byT = l.openingRate(q, s)
 	s *= turn
+	l.reach = math.Abs(drive) / band
 	l.q, l.byA, l.byB = q, s, -s
 	l.limit(a, b, gamma)
+}
+
+// corner is the share of the join's band within which a one-way line at a tee is given the slope that it has at the far side of it.
+const corner = 0.05
+
+// roundCorner returns the slope to use for a one-way line at a tee, u bands beyond the point where it takes up flow. Near that point the join is so
+// flat that a pressure off by less than its tolerance would find no slope at all to bring it back; a steeper slope there only slows the approach.
+// Flows are not touched.
+func (l *line) roundCorner(turn, u float64) float64 {
+	if l.gmin == 0 || u >= corner || u <= -10*corner {
+		return turn
+	}
+	return math.Max(turn, corner*(4-3*corner)*math.Min(1, 1+u/(10*corner)))
+}
+
+// stand is a one-way line without flow, with share of the slope that it will have.
+func (l *line) stand(share float64) {
+	l.q = 0
+	if share > 0 {
+		_, d := l.chain.drop(0)
+		l.byA, l.byB = share/d, -share/d
+	}
 }
 
 // crackOpen returns the pressure that drives the flow through check valves which lift at crack: 0 up to there, the whole pressure from one band
@@ -211,6 +239,9 @@ func (l *line) admit(in *inletLaw, y, q, near, far float64) (q1, near1, byY, far
 	}
 	c, slope = in.limit(y)
 	q1, byQ, byC = elements.Min(q, c)
+	if y <= 0 && l.gmin > 0 { // as in roundCorner
+		byQ = math.Max(byQ, 1-l.reach/(10*corner))
+	}
 	l.byT *= byQ
 	return q1, near * byQ, byC * slope, far * byQ
 }
