@@ -35,7 +35,7 @@ func balance(plant *network.Plant, r *network.Result, u units, c clock) balanceV
 	}
 	for _, x := range plant.Outside {
 		if q := r.Outside[x.Tag]; q != nil {
-			out.Outside = append(out.Outside, []string{x.Tag, v.With(q.Received), v.With(q.Supplied), u.Flow.With(q.PeakFlow), c.At(q.PeakFlowAt, earlier),
+			out.Outside = append(out.Outside, []string{x.Tag, v.With(q.Received), v.With(q.Supplied), u.Flow.With(q.PeakFlow), c.At(q.PeakFlowAt, near),
 				v.With(q.OverCapacity)})
 		}
 	}
@@ -54,7 +54,7 @@ func balance(plant *network.Plant, r *network.Result, u units, c clock) balanceV
 			if q.CrestLow != nil {
 				crest = u.Level.With(*q.CrestLow) + " at " + c.Opt(q.CrestLowAt, earlier)
 			}
-			out.Lines = append(out.Lines, []string{x.Tag, x.From + " → " + x.To, v.With(q.Forward), back, u.Flow.With(q.PeakFlow) + " at " + c.At(q.PeakFlowAt, earlier),
+			out.Lines = append(out.Lines, []string{x.Tag, x.From + " → " + x.To, v.With(q.Forward), back, u.Flow.With(q.PeakFlow) + " at " + c.At(q.PeakFlowAt, near),
 				u.Speed.With(q.PeakVelocity), crest})
 		}
 	}

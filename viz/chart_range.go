@@ -42,7 +42,7 @@ func (h *charter) reach(unitKey string, u unit, curves []curve) (low, high float
 	}
 	step := niceStep((high - low) / 6)
 	snap := func(x float64) float64 { return round6(x * step) }
-	a, b := math.Floor(low/step+1e-6), math.Ceil(high/step-1e-6)
+	a, b := math.Floor(low/step+0.02), math.Ceil(high/step-0.02)
 	if high > step*(b-0.1) && unitKey != "opening" {
 		b++ // room for the label of a peak
 	}

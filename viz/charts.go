@@ -118,7 +118,7 @@ func (h *charter) describe(title string, u unit, curves []curve) string {
 	words := clean(title) + " over time, in " + u.Name + "."
 	for _, c := range curves {
 		if c.peak {
-			words += fmt.Sprintf(" %s: peak %s at %s.", clean(c.name), u.With(c.peakV), h.c.At(c.peakT, earlier))
+			words += fmt.Sprintf(" %s: peak %s at %s.", clean(c.name), u.Toward(c.peakV, near), h.c.At(c.peakT, near))
 		}
 	}
 	return words
@@ -140,13 +140,10 @@ func (h *charter) addCurve(line *charts.Line, c curve, u unit, low, high float64
 		}
 	}
 	if c.peak && finite(c.peakV) && finite(c.peakT) && c.peakV != 0 {
-		place := "top"
-		if c.peakT < 0.04*h.r.End {
-			place = "right"
-		}
+		tell := c.peakT > 0.04*h.r.End // one at the start is in the table, and its label would stand on the axis
 		options = append(options, charts.WithMarkPointNameCoordItemOpts(opts.MarkPointNameCoordItem{
 			Name: "peak", Coordinate: []any{h.x(c.peakT), round6(c.peakV * u.K)}, Value: u.Text(c.peakV), Symbol: "triangle", SymbolSize: 9,
-			Label: &opts.Label{Show: opts.Bool(true), Position: place, Formatter: "{c}", FontSize: 11},
+			Label: &opts.Label{Show: opts.Bool(tell), Position: "top", Formatter: "{c}", FontSize: 11},
 		}))
 	}
 	line.AddSeries(clean(c.name), []opts.LineData{}, options...)
@@ -227,14 +224,24 @@ func (h *charter) forbidden(m mark, u unit, low, high float64) opts.MarkAreaName
 // addSteps marks the steps, numbered as on the sheet.
 func (h *charter) addSteps(line *charts.Line) {
 	items := []opts.MarkLineNameXAxisItem{}
+	before := math.Inf(-1)
 	for _, s := range h.steps {
-		if s.at != nil && finite(*s.at) {
-			n := s.N
-			if s.Hold {
-				n = "H"
-			}
-			items = append(items, opts.MarkLineNameXAxisItem{Name: n, XAxis: h.x(*s.at)})
+		if s.at == nil || !finite(*s.at) {
+			continue
 		}
+		n := s.N
+		if s.Hold {
+			n = "H"
+		}
+		if k := len(items); k > 0 && *s.at-before < 0.012*h.r.End { // their labels would cover one another
+			items[k-1].Name += "," + n
+			if *s.at == before {
+				continue
+			}
+			n = ""
+		}
+		items = append(items, opts.MarkLineNameXAxisItem{Name: n, XAxis: h.x(*s.at)})
+		before = *s.at
 	}
 	line.AddSeries("steps", []opts.LineData{}, charts.WithSeriesId("steps"),
 		charts.WithMarkLineNameXAxisItemOpts(items...),

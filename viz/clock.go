@@ -19,6 +19,7 @@ type side int
 const (
 	earlier side = iota // "not later than": down
 	later               // "not before", durations: up
+	near                // moments of peaks
 )
 
 // grain is the resolution, s: whole minutes, seconds when the whole answer is under 10 minutes, finer under 10 s.
@@ -38,14 +39,19 @@ func (c clock) round(s float64, to side) float64 {
 		return s
 	}
 	const hair = 1e-6 // a moment computed a hair past the minute is on the minute
-	if to == later {
+	switch to {
+	case later:
 		return g * math.Ceil(s/g-hair)
+	case near:
+		return g * math.Round(s/g)
 	}
 	return g * math.Floor(s/g+hair)
 }
 
-// Known reports whether there is a wall clock.
-func (c clock) Known() bool { return !c.start.IsZero() && c.span < 3e9 }
+// Known reports whether moments are told by the wall clock: there is a start, and the run is neither too short nor too long for it.
+func (c clock) Known() bool {
+	return !c.start.IsZero() && c.span < 3e9 && (c.span >= 10 || c.span == 0)
+}
 
 // At writes the moment s after the start, rounded to a side.
 func (c clock) At(s float64, to side) string {
@@ -122,8 +128,11 @@ func (c clock) Span(s float64, to side) string {
 }
 
 func roundTo(s, g float64, to side) float64 {
-	if to == later {
+	switch to {
+	case later:
 		return g * math.Ceil(s/g-1e-6)
+	case near:
+		return g * math.Round(s/g)
 	}
 	return g * math.Floor(s/g+1e-6)
 }

@@ -58,7 +58,7 @@ func (k *canvas) items(line int) []item {
 		if f.Kind == nil || f.Kind.Symbol == "" || f.Kind.Symbol == plainPipe {
 			continue
 		}
-		it := item{kind: "part", rank: 2, part: i, sym: f.Kind.Symbol}
+		it := item{kind: "part", rank: fittingRank(f.Part), part: i, sym: f.Kind.Symbol}
 		if a, ok := f.Part.(elements.Actuated); ok && a.Actuator() != nil {
 			it.rank, it.tag = 8, a.Actuator().Tag
 		} else if p, ok := f.Part.(elements.Pumps); ok && p.Drive() != nil {
@@ -74,9 +74,26 @@ func (k *canvas) items(line int) []item {
 	return append(all, item{kind: "arrow", rank: 7})
 }
 
+// fittingRank is 1 for a loss that has neither a bore of its own nor anything to be moved.
+func fittingRank(p elements.Part) int {
+	if _, ok := p.(elements.OwnEnd); ok {
+		return 3
+	}
+	return 1
+}
+
 // fit leaves out what has no room and shares the places out; places where other lines pass are taken last.
 func fit(items []item, all []slot) ([]item, []slot) {
 	slots := apart(all, len(items))
+	if len(slots) < len(items)+4 { // what is only a fitting is drawn where there is room to spare
+		kept := items[:0:0]
+		for _, it := range items {
+			if it.rank > 1 {
+				kept = append(kept, it)
+			}
+		}
+		items = kept
+	}
 	for len(items) > len(slots) {
 		least := 0
 		for i, it := range items {
@@ -182,7 +199,7 @@ func (k *canvas) lineWords(line int) string {
 	l := k.plant.Lines[line]
 	words := l.Tag + ": from " + l.From + " to " + l.To
 	if q := k.result.Lines[l.Tag]; q != nil {
-		words += "; peak " + k.u.Flow.With(q.PeakFlow) + " at " + k.c.At(q.PeakFlowAt, earlier) + ", passed " + k.u.Volume.With(q.Forward)
+		words += "; peak " + k.u.Flow.With(q.PeakFlow) + " at " + k.c.At(q.PeakFlowAt, near) + ", passed " + k.u.Volume.With(q.Forward)
 		if q.Backward > 0 {
 			words += ", ran back " + k.u.Volume.With(q.Backward)
 		}

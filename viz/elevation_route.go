@@ -181,7 +181,10 @@ func (k *canvas) crowded(rt *route, s slot) bool {
 		x1, y0, y1 = s.x+34, s.y-9, s.y+9
 	}
 	for _, o := range k.routes {
-		for n := 1; n < len(o.points) && o != rt; n++ {
+		for n := 1; n < len(o.points); n++ {
+			if o == rt && n == s.leg {
+				continue
+			}
 			a, b := o.points[n-1], o.points[n]
 			if x1 > math.Min(a[0], b[0]) && x0 < math.Max(a[0], b[0]) && y1 > math.Min(a[1], b[1]) && y0 < math.Max(a[1], b[1]) {
 				return true

@@ -81,7 +81,7 @@ func (k *canvas) vesselWords(s *spot) string {
 	words := s.tag + ": " + plainKind(s.vessel.Kind) + ", base at " + digits(s.low, 5) + " m"
 	if q := k.result.Vessels[s.tag]; q != nil {
 		words += fmt.Sprintf("; start %s, peak %s at %s, end %s", k.u.Level.With(q.StartLevel), k.u.Level.With(q.PeakLevel),
-			k.c.At(q.PeakAt, earlier), k.u.Level.With(q.EndLevel))
+			k.c.At(q.PeakAt, near), k.u.Level.With(q.EndLevel))
 	}
 	return words
 }

@@ -24,12 +24,12 @@ func headroom(plant *network.Plant, r *network.Result, u units, c clock) []headr
 		if q == nil {
 			continue
 		}
-		row := headroomRow{Tag: v.Tag, Start: u.Level.With(q.StartLevel), Peak: u.Level.With(q.PeakLevel), When: c.At(q.PeakAt, earlier), T: q.PeakAt,
+		row := headroomRow{Tag: v.Tag, Start: u.Level.With(q.StartLevel), Peak: u.Level.Toward(q.PeakLevel, later), When: c.At(q.PeakAt, near), T: q.PeakAt,
 			Alarm: u.Level.Opt(q.HeadroomTo.Alarm), Sill: u.Level.Opt(q.HeadroomTo.Sill), Rim: u.Level.Opt(q.HeadroomTo.Rim),
 			Empty: c.Opt(q.EmptiedAt, later), least: math.Inf(1)}
 		row.AlarmBad, row.SillBad, row.RimBad = passed(q.HeadroomTo.Alarm), passed(q.HeadroomTo.Sill), passed(q.HeadroomTo.Rim)
 		if b, ok := r.Bands["peak_level_m"][v.Tag]; ok && wide(b) {
-			row.Band = u.Level.Text(*b.Low) + " to " + u.Level.Text(*b.High)
+			row.Band = u.Level.Text(*b.Low) + " to " + u.Level.Toward(*b.High, later)
 		}
 		for _, h := range []*float64{q.HeadroomTo.Alarm, q.HeadroomTo.Sill, q.HeadroomTo.Rim} {
 			if h != nil && finite(*h) {

@@ -4,17 +4,19 @@ import (
 	"html/template"
 	"math"
 	"sort"
+	"strings"
 
 	"headfall/network"
 )
 
 // marginRow is one limit with its bar: places along the bar are in per cent from its left end, nought in the middle.
 type marginRow struct {
-	Says, Worst, Margin, Band, When, Verdict, Class, Why string
-	Implicit, UpTo, Bar, Whisker, Cut                    bool
-	Left, Width, Low, Span                               string
-	T                                                    *float64
-	share                                                float64
+	Says, Worst, Margin, Band, When, Verdict, Class string
+	Notes                                           string // why, and what kind of limit it is
+	Bar, Whisker, Cut                               bool
+	Left, Width, Low, Span                          string
+	T                                               *float64
+	share                                           float64
 }
 
 // css writes a place along a bar for a style attribute.
@@ -47,18 +49,27 @@ func margins(r *network.Result, u units, c clock) (rows []marginRow, reach strin
 	}
 	at := func(s float64) float64 { return 50 + 50*math.Min(math.Max(s/full, -1), 1) }
 	for _, l := range r.Limits {
-		m := marginRow{Says: l.Says, Worst: amount(l.Worst, l, u, c), Margin: marginText(l, u, c), Band: marginBand(l, u, c), Why: l.Why,
-			Implicit: l.Implicit, UpTo: l.AtUpTo, T: l.WorstAt, share: share(l)}
+		m := marginRow{Says: l.Says, Worst: worstText(l, u, c), Margin: marginText(l, u, c), Band: marginBand(l, u, c), T: l.WorstAt, share: share(l)}
 		if m.Says == "" {
 			m.Says = l.Subject + " " + l.Bound + " " + l.AsWritten
 		}
 		m.Verdict, m.Class = limitWords(l)
+		notes := []string{}
+		for _, n := range []struct {
+			is   bool
+			word string
+		}{{l.Why != "", l.Why}, {l.Implicit, "always watched"}, {l.AtUpTo, "with holds at their longest"}} {
+			if n.is {
+				notes = append(notes, n.word)
+			}
+		}
+		m.Notes = strings.Join(notes, "; ")
 		if l.Verdict == network.Fails && l.FirstFail != nil {
 			m.When, m.T = "fails "+c.At(*l.FirstFail, earlier), l.FirstFail
 		} else if l.WorstAt != nil && l.Subject == "emptied" {
 			m.When = c.At(*l.WorstAt, later)
 		} else if l.WorstAt != nil {
-			m.When = c.At(*l.WorstAt, earlier)
+			m.When = c.At(*l.WorstAt, near)
 		}
 		if s := m.share; finite(s) {
 			m.Bar, m.Cut = true, math.Abs(s) > full

@@ -9,7 +9,7 @@ import (
 // none stands where there is no number.
 const none = "–"
 
-// places writes x with dec decimals. What that would round to nothing keeps two significant digits, so that no fail is rounded away.
+// places writes x with dec decimals.
 func places(x float64, dec int) string {
 	switch {
 	case !finite(x):
@@ -17,7 +17,7 @@ func places(x float64, dec int) string {
 	case x == 0:
 		return "0"
 	case math.Abs(x) < 0.5*math.Pow10(-dec):
-		return digits(x, 2)
+		x = 0 // without a sign
 	case math.Abs(x) >= 1e7:
 		return digits(x, 6)
 	}

@@ -37,6 +37,7 @@ type view struct {
 	Lanes              []lane
 	Ticks              []tick
 	Axis               []axisLabel
+	TickRows           int // px over the first row of steps
 	Groups             []group
 	Sheet              []*sheetPage
 	Balance            balanceView
@@ -115,7 +116,7 @@ func newView(p Page) (*view, error) {
 	plant, r := p.Plant, p.Result
 	u, c := newUnits(plant.Show), newClock(p)
 	rows := sheetRows(p, u, c)
-	v := &view{Title: title(plant), V: newVerdict(plant, r, u, c), Cautions: append([]string{standing}, r.Cautions...)}
+	v := &view{Title: title(plant), V: newVerdict(plant, r, u, c), Cautions: cautions(r)}
 	v.Cells = cells4(plant, r, c)
 	v.Headroom = headroom(plant, r, u, c)
 	for _, h := range v.Headroom {
@@ -129,6 +130,9 @@ func newView(p Page) (*view, error) {
 	v.Picture = elevation(plant, r, u, c)
 	v.Readings = newReadings(plant, r, u)
 	v.Lanes, v.Ticks, v.Axis = strip(plant, r), ticks(rows, r.End), axisLabels(r, c)
+	for _, k := range v.Ticks {
+		v.TickRows = max(v.TickRows, 23*k.Row)
+	}
 	v.Data = newDataset(plant, r, u, c, events(plant, r, rows))
 	h := &charter{plant: plant, r: r, u: u, c: c, steps: rows, set: v.Data}
 	v.Groups = h.groups()

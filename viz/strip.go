@@ -19,10 +19,13 @@ type tick struct {
 	N, Title string
 	Share    float64
 	T        float64
+	Row      int // stacked where steps come close together
 }
 
 // Left is the tick's place over the strip.
-func (t tick) Left() template.CSS { return template.CSS("left:" + css(100*t.Share)) }
+func (t tick) Left() template.CSS {
+	return template.CSS("left:" + css(100*t.Share) + ";bottom:" + px(float64(23*t.Row)) + "px")
+}
 
 const (
 	laneWide = 1000.0
@@ -81,6 +84,7 @@ func laneBars(t, v []float64, end float64) template.HTML {
 // ticks numbers the steps along the time axis.
 func ticks(rows []sheetRow, end float64) []tick {
 	var out []tick
+	last := [3]float64{-1, -1, -1}
 	for _, s := range rows {
 		if s.at == nil || !finite(*s.at) {
 			continue
@@ -93,7 +97,12 @@ func ticks(rows []sheetRow, end float64) []tick {
 		if s.Hold {
 			n = "H"
 		}
-		out = append(out, tick{n, s.Clock + " " + s.Action, f, *s.at})
+		row := 0
+		for row < 2 && last[row] > f-0.035 {
+			row++
+		}
+		last[row] = f
+		out = append(out, tick{n, s.Clock + " " + s.Action, f, *s.at, row})
 	}
 	return out
 }

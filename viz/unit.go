@@ -35,6 +35,9 @@ func newUnits(s network.Show) units {
 // decimals is to how many places a level is read in a unit: about 10 mm in metres, 1 mm in millimetres.
 var decimals = map[string]int{"m": 2, "mm": 0, "cm": 1, "ft": 2, "in": 1, "km": 5}
 
+// dust is what rounding leaves of nothing, in any unit that a plant is shown in.
+const dust = 1e-9
+
 func pick(dim quantity.Dim, name, fallback string) unit {
 	if name == "" {
 		name = fallback
@@ -60,6 +63,9 @@ func pretty(name string) string { return raised.Replace(name) }
 // Text writes an SI number in the unit, without its name.
 func (u unit) Text(si float64) string {
 	if u.Dec < 0 {
+		if math.Abs(si*u.K) < dust {
+			return "0"
+		}
 		return digits(si*u.K, 3)
 	}
 	return places(si*u.K, u.Dec)
@@ -74,15 +80,37 @@ func (u unit) With(si float64) string {
 	return t + "\u00a0" + u.Name
 }
 
-// Signed writes a margin or a headroom: never rounded to nothing, with a true minus.
-func (u unit) Signed(si float64) string { return u.With(si) }
+// Toward writes a number rounded to one side: peaks up, headroom and margins down, so that no fail is rounded into a pass.
+func (u unit) Toward(si float64, to side) string {
+	x := si * u.K
+	if !finite(x) {
+		return none
+	}
+	if x == 0 || u.Dec < 0 && math.Abs(x) < dust {
+		return "0\u00a0" + u.Name
+	}
+	dec := u.Dec
+	if dec < 0 {
+		dec = 2 - int(math.Floor(math.Log10(math.Abs(x))+1e-9))
+	}
+	step, n := math.Pow10(-dec), 0.0
+	switch to {
+	case earlier:
+		n = math.Floor(x/step + 1e-9)
+	case later:
+		n = math.Ceil(x/step - 1e-9)
+	default:
+		n = math.Round(x / step)
+	}
+	return strings.TrimRight(places(n*step, max(dec, 0))+"\u00a0"+u.Name, "\u00a0")
+}
 
-// Opt writes a number that may be missing.
+// Opt writes a headroom that may be missing, rounded down.
 func (u unit) Opt(si *float64) string {
 	if si == nil {
 		return none
 	}
-	return u.With(*si)
+	return u.Toward(*si, earlier)
 }
 
 // bySI finds the display unit of a number by its SI unit and what it measures.
@@ -105,7 +133,7 @@ func (u units) bySI(si, subject string) (unit, bool) {
 		if subject == "opening" {
 			return u.Share, true
 		}
-		return unit{"", 1, -1}, true
+		return unit{"", 1, 0}, true
 	}
 	return unit{si, 1, -1}, false
 }

@@ -3,6 +3,7 @@ package viz
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"headfall/network"
 )
@@ -38,12 +39,12 @@ func newVerdict(plant *network.Plant, r *network.Result, u units, c clock) verdi
 	}
 	if l := firstFail(r); l != nil {
 		t := *l.FirstFail
-		v.Facts = append(v.Facts, fact{"First fail", c.At(t, earlier) + "  " + l.Says + worst(l, u, c), true, &t})
+		v.Facts = append(v.Facts, fact{"First fail", c.At(t, earlier) + "  " + broken(l) + worst(l, u, c), true, &t})
 	} else {
 		v.Facts = append(v.Facts, fact{Label: "First fail", Value: "none"})
 	}
 	if l := smallest(r); l != nil {
-		text := l.Says + ": " + marginText(l, u, c)
+		text := l.Says + ": " + inHand(l, u, c)
 		if b := marginBand(l, u, c); b != "" {
 			text += ", band " + b
 		}
@@ -144,24 +145,46 @@ func smallest(r *network.Result) *network.LimitResult {
 	return least
 }
 
+// broken writes how a limit fails: "level of PIT-4 goes over 2.4 m".
+func broken(l *network.LimitResult) string {
+	if l.Subject == "emptied" {
+		return strings.Replace(l.Says, " emptied ", " is not empty ", 1)
+	}
+	for _, w := range [][2]string{{" below ", " goes over "}, {" above ", " goes under "}} {
+		if s := strings.Replace(l.Says, w[0], w[1], 1); s != l.Says {
+			return s
+		}
+	}
+	return l.Says + " does not hold"
+}
+
+// inHand writes a margin in words.
+func inHand(l *network.LimitResult, u units, c clock) string {
+	if *l.Margin < 0 {
+		short := -*l.Margin
+		return strings.TrimPrefix(amount(&short, l, u, c, later), "+") + " short"
+	}
+	return amount(l.Margin, l, u, c, earlier) + " in hand"
+}
+
 // amount writes a number of a limit, in display units; seconds as a duration.
-func amount(si *float64, l *network.LimitResult, u units, c clock) string {
+func amount(si *float64, l *network.LimitResult, u units, c clock, to side) string {
 	if si == nil || !finite(*si) {
 		return none
 	}
 	if l.UnitSI == "s" {
-		to := later
-		if l.Subject == "emptied" && si == l.Margin {
-			to = earlier
-		}
 		return c.Span(*si, to)
 	}
+	x := *si
+	if l.BoundSI != nil && math.Abs(x) < 1e-9*math.Abs(*l.BoundSI) {
+		x = 0 // what rounding left of nothing
+	}
 	k, _ := u.bySI(l.UnitSI, l.Subject)
-	return k.With(*si)
+	return k.Toward(x, to)
 }
 
 func marginText(l *network.LimitResult, u units, c clock) string {
-	t := amount(l.Margin, l, u, c)
+	t := amount(l.Margin, l, u, c, earlier)
 	if l.Margin != nil && *l.Margin >= 0 && t != none {
 		t = "+" + t
 	}
@@ -172,14 +195,26 @@ func marginBand(l *network.LimitResult, u units, c clock) string {
 	if l.MarginLow == nil || l.MarginHigh == nil {
 		return ""
 	}
-	return amount(l.MarginLow, l, u, c) + " to " + amount(l.MarginHigh, l, u, c)
+	low, high := amount(l.MarginLow, l, u, c, earlier), amount(l.MarginHigh, l, u, c, earlier)
+	if low == high {
+		return ""
+	}
+	return low + " to " + high
+}
+
+// worstText writes the worst reading, rounded to the side of the limit.
+func worstText(l *network.LimitResult, u units, c clock) string {
+	if l.Bound == "above" {
+		return amount(l.Worst, l, u, c, earlier)
+	}
+	return amount(l.Worst, l, u, c, later)
 }
 
 func worst(l *network.LimitResult, u units, c clock) string {
-	if l.Worst == nil || l.WorstAt == nil || !finite(*l.Worst) {
+	if l.Subject == "emptied" || l.Worst == nil || l.WorstAt == nil || !finite(*l.Worst) {
 		return ""
 	}
-	return "; worst " + amount(l.Worst, l, u, c) + " at " + c.At(*l.WorstAt, earlier)
+	return "; comes to " + worstText(l, u, c) + " at " + c.At(*l.WorstAt, near)
 }
 
 func lastEmpty(plant *network.Plant, r *network.Result, c clock) fact {

@@ -37,9 +37,9 @@
   function text(si, u) {
     var x = si * u.k;
     if (!isFinite(x)) return NONE;
-    if (u.dec < 0) return digits(x, 3);
+    if (u.dec < 0) return Math.abs(x) < 1e-9 ? "0" : digits(x, 3);
     if (x === 0) return "0";
-    if (Math.abs(x) < 0.5 * Math.pow(10, -u.dec)) return digits(x, 2);
+    if (Math.abs(x) < 0.5 * Math.pow(10, -u.dec)) x = 0;
     return Math.abs(x) >= 1e7 ? digits(x, 6) : x.toFixed(u.dec).replace("-", "−");
   }
   function withUnit(si, u) { var s = text(si, u); return s === NONE ? s : s + "\u00a0" + u.name; }
