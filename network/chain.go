@@ -65,6 +65,9 @@ func (c *chain) solve(dp, q float64) (flow, slope float64) {
 		if math.Abs(step) <= 2*ulp*math.Abs(next) {
 			return next, 1 / s
 		}
+		if math.Abs(step) < 1e-9*math.Abs(next) && math.Abs(step) >= last {
+			return next, 1 / s // rounding noise in the losses themselves; before the bracket, which would take it for no progress
+		}
 		// Newton on a function with |q|^p, p ≤ 2, halves its step at the very least; else the bracket is halved.
 		if !(next > lo && next < hi) || math.Abs(step) > last {
 			switch {
@@ -78,9 +81,6 @@ func (c *chain) solve(dp, q float64) (flow, slope float64) {
 			case i > 8:
 				next = hi - math.Max(math.Abs(hi), 1e-9)
 			}
-		}
-		if math.Abs(step) < 1e-9*math.Abs(next) && math.Abs(step) >= last {
-			return next, 1 / s // rounding noise in the losses themselves
 		}
 		last = math.Abs(next - q)
 		q = next
