@@ -32,16 +32,12 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	}
 	share := 1.0
 	if f.throat != nil {
-		share = f.throat.Recovery(l.chain.locals[f.part])
+		share = f.throat.Recovery(&l.locals[f.part])
 		quick := up.phi - gamma*f.z - f.pressure
 		if dp := math.Abs(a.phi - b.phi - l.zero); (1+share)*dp <= share*quick {
 			return
 		}
-		n := len(f.up.weight) - 1
-		for i := range f.up.weight[:n] {
-			f.up.weight[i] = share
-		}
-		f.up.fwd = share * f.base
+		f.share(l)
 	}
 	dp := share * (up.phi - gamma*f.z - f.pressure)
 	q := math.Abs(l.q)
@@ -61,11 +57,66 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	v, byQ, byC := elements.Min(q, c)
 	near, far, byY = near*byQ+byC*slope, far*byQ, byY*byQ
 	l.byT *= byQ
+	if c > 0 && len(l.moving) > 0 {
+		if t := byC * f.openingRate(l, up, c, gamma); f.back {
+			l.byT -= t
+		} else {
+			l.byT += t
+		}
+	}
 	if f.back {
 		l.q, l.byB, l.byA, l.byYb = -v, -near, -far, -byY
 	} else {
 		l.q, l.byA, l.byB, l.byYa = v, near, far, byY
 	}
+}
+
+// openingRate returns ∂c/∂t, m³/s², of the flow c that the floor admits, by the parts that move upstream of it and its throat: by differences, since
+// the share moves with them.
+func (f *floor) openingRate(l *line, up *end, c, gamma float64) (rate float64) {
+	for _, m := range l.moving {
+		at := &l.locals[m.local]
+		for _, u := range f.up.locals {
+			if u != at {
+				continue
+			}
+			const e = 1e-5
+			x := at.Opening
+			hi, lo := math.Min(1, x+e), math.Max(0, x-e)
+			at.Opening = hi
+			more := f.admits(l, up, c, gamma)
+			at.Opening = lo
+			less := f.admits(l, up, c, gamma)
+			at.Opening = x
+			f.share(l)
+			rate += m.rate * (more - less) / (hi - lo)
+		}
+	}
+	return rate
+}
+
+// share brings the weights of a throat's floor to its present opening and returns F_L², or 1 for a crest.
+func (f *floor) share(l *line) float64 {
+	if f.throat == nil {
+		return 1
+	}
+	share := f.throat.Recovery(&l.locals[f.part])
+	n := len(f.up.weight) - 1
+	for i := range f.up.weight[:n] {
+		f.up.weight[i] = share
+	}
+	f.up.fwd = share * f.base
+	return share
+}
+
+// admits returns the flow, m³/s, that the floor admits as its parts stand, near to c.
+func (f *floor) admits(l *line, up *end, c, gamma float64) float64 {
+	dp, _ := elements.Join(f.share(l)*(up.phi-gamma*f.z-f.pressure), joinHead*gamma)
+	if dp <= 0 {
+		return 0
+	}
+	q, _ := f.up.solve(dp, c)
+	return q
 }
 
 // pressureAt returns the static pressure, Pa absolute, at the floor's point while the line carries q from its `up` side at phi.

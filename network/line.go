@@ -299,4 +299,5 @@ func (l *line) spill(a, b *end, gamma float64) {
 	c, s := l.flowAt(drive + l.zero)
 	v, byQ, byC := elements.Min(q, c)
 	l.q, l.byA, l.byB = v, byQ*byH/gamma, -byC*s*turn
+	l.byT = byC * l.openingRate(c, s)
 }
