@@ -11,6 +11,9 @@ func cautions(p *Plant, r *Result) []string {
 		if v.Cover != nil {
 			add("%s is covered: prove its vent open by sight before its drain is opened. Vacuum damage takes seconds. Steam, hot rinse, gas absorption and weather cooling are not in this run.", v.Tag)
 		}
+		if x.Gas != nil && x.Gas.LowAdiabatic != nil && x.Gas.Low < -stoppedVacuum {
+			add("%s is tight and its drain works against a vacuum: where the flow slows or stops is not to be relied on. The vessel collapses, or gulps air, first.", v.Tag)
+		}
 		if x.EmptiedAt != nil && len(p.meets[v.Tag]) > 0 {
 			add("%s is emptied but still connected: it is not isolated by this plan. Entry needs positive isolation.", v.Tag)
 		}
@@ -34,3 +37,6 @@ func cautions(p *Plant, r *Result) []string {
 	}
 	return all
 }
+
+// stoppedVacuum is the vacuum, Pa, from which a tight vessel's flow is said to be unreliable: the low-pressure tank standards start near there.
+const stoppedVacuum = 500

@@ -134,29 +134,14 @@ func (p *Plant) Sill(v *Vessel) float64 {
 }
 
 func (sim *simulation) gasResult(i int) *GasResult {
-	o, st := sim.obs, &sim.sys.stations[i]
+	o := sim.obs
 	patm := sim.sys.atmosphere
 	g := &GasResult{Low: o.gas[i].low - patm, LowAt: o.gas[i].lowAt, High: o.gas[i].high - patm, HighAt: o.gas[i].highAt}
 	if sim.sys.tightNow(i) {
-		// p·Vᵞ = p₀·V₀ᵞ against p·V = p₀·V₀ with the same volumes
-		p0 := st.plan.Cover.Pressure
-		g.LowAdiabatic = opt(p0*math.Pow(o.gas[i].low/p0, airGamma) - patm)
-		g.HighAdiabatic = opt(p0*math.Pow(o.gas[i].high/p0, airGamma) - patm)
+		g.LowAdiabatic = opt(sim.sys.ratedPressure(i, o.gas[i].low) - patm)
+		g.HighAdiabatic = opt(sim.sys.ratedPressure(i, o.gas[i].high) - patm)
 	}
 	return g
-}
-
-// airGamma is the ratio of specific heats of air. Source: any handbook of gas dynamics.
-const airGamma = 1.4
-
-// tightNow tells that no vent of the vessel passes anything.
-func (s *system) tightNow(i int) bool {
-	for k := range s.stations[i].vents {
-		if s.stations[i].vents[k].at.Opening > 0 {
-			return false
-		}
-	}
-	return true
 }
 
 func (sim *simulation) lineResults(r *Result) {

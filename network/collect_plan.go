@@ -198,6 +198,9 @@ func (sim *simulation) alarmResults(r *Result) {
 			if j.plan.Must.Subject != Level || j.must.Above == m.alarm.When.Above || j.of[0] != v.Tag || l.FirstFail == nil {
 				continue
 			}
+			if beyond := j.must.Bound - m.alarm.When.Bound; m.alarm.When.Above && beyond < alarmGap || !m.alarm.When.Above && beyond > -alarmGap {
+				continue // the alarm itself written as a limit: what it protects lies beyond
+			}
 			if x.LimitAt == nil || *l.FirstFail < *x.LimitAt {
 				x.LimitAt = l.FirstFail
 			}
@@ -209,6 +212,9 @@ func (sim *simulation) alarmResults(r *Result) {
 		r.Alarms = append(r.Alarms, x)
 	}
 }
+
+// alarmGap is the least distance, m, between an alarm and a limit that it protects.
+const alarmGap = 1e-3
 
 func saysAlarm(x *AlarmResult) string {
 	switch {

@@ -217,6 +217,7 @@ func (c *control) do(st *stepState, t float64) {
 			return
 		}
 		st.movedBy = a.moveTo(t, to, over)
+		c.sim.screenClosure(s.actuatorAt[p.Target], t)
 	case SetPump:
 		c.setPump(s.actuatorAt[p.Target], p.Mode, t)
 	case SetInflow:

@@ -83,6 +83,7 @@ func (o *observer) addLimit(j *judged) error {
 	switch l.Must.Subject {
 	case Pressure:
 		j.track.slack = pressureSlack
+		p.rating = j.implicit
 	case Flow:
 		j.track.slack = 1e-12
 	case Starts:

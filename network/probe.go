@@ -14,6 +14,7 @@ type probe struct {
 	sign    []float64
 	bound   float64
 	above   bool
+	rating  bool // a pressure that a cover withstands: judged on the adiabatic where the gas space is tight
 }
 
 // newProbe resolves the tags of a condition.
@@ -106,6 +107,9 @@ func (p *probe) raw(sim *simulation, w *snapshot) float64 {
 		a, b := p.at[0], p.at[1]
 		return math.Abs(s.stations[a].base + w.level[a] - s.stations[b].base - w.level[b])
 	case Pressure:
+		if p.rating {
+			return s.ratedPressure(p.at[0], w.gas[p.at[0]])
+		}
 		return w.gas[p.at[0]]
 	case Rising, Falling:
 		i := p.at[0]

@@ -8,6 +8,7 @@ import (
 	"strings"
 	"time"
 
+	"headfall/elements/quantity"
 	"headfall/integrate"
 )
 
@@ -201,7 +202,7 @@ func (sim *simulation) fail(err error) error {
 			what += " at " + tag
 		}
 	}
-	f.Says = fmt.Sprintf("%s, %.6g s after the start (%v); results up to there are kept. Look at the bores, lengths and openings there, or try another --method or a looser --tolerance", what, f.T, err)
+	f.Says = fmt.Sprintf("%s, %s after the start; results up to there are kept. Look at the bores, lengths and openings there, or try another --method or a looser --tolerance", what, quantity.FormatDuration(math.Floor(f.T)))
 	sim.trouble = f
 	return f
 }

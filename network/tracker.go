@@ -89,7 +89,7 @@ func (m *tracker) valueAt(o *observer, t float64) float64 {
 	switch {
 	case p.subject == Level || p.subject == Emptied:
 		return sim.lookAt(p.at[0], t).level - p.bound
-	case p.subject == Pressure:
+	case p.subject == Pressure && !p.rating:
 		return sim.gasAt(p.at[0], t) - p.bound
 	case p.subject == Flow && p.outside == nil:
 		return sim.flowAt(p.at[0], t) - p.bound
