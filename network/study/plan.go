@@ -1,0 +1,227 @@
+package study
+
+import (
+	"context"
+	"errors"
+	"fmt"
+
+	"headfall/network"
+)
+
+// FoundPlan is what plan gives back: SI units, unit in the key.
+type FoundPlan struct {
+	Schema   int              `json:"schema"`
+	Command  string           `json:"command"`
+	Scenario network.Scenario `json:"scenario"`
+	ExitCode int              `json:"exit_code"`
+	Complete bool             `json:"complete"`
+	Found    bool             `json:"found"`
+	Verdict  network.Verdict  `json:"verdict"` // of the plan found, judged with the doubts
+	Finish   *float64         `json:"finish_s"`
+	Low      *float64         `json:"finish_low_s"` // band, 5 and 95 %
+	High     *float64         `json:"finish_high_s"`
+	Empties  []string         `json:"empties"` // vessels whose emptying is the finish
+	Steps    []PlannedStep    `json:"steps"`
+	Binds    []Bind           `json:"binds"`
+	Tightest *Margin          `json:"smallest_margin"`
+	Written  Written          `json:"as_written"`
+	Fails    []string         `json:"fails"` // where nothing was found: what could not be met
+	Set      []string         `json:"set"`   // as --set of run would have it
+	Searched int              `json:"plans_tried"`
+	Judged   int              `json:"plans_judged"`
+
+	Result *network.Result `json:"-"`
+}
+
+// PlannedStep is one free step as the plan has it.
+type PlannedStep struct {
+	ID     string   `json:"id"`
+	Says   string   `json:"says"`
+	At     *float64 `json:"at_s"`
+	Clock  *string  `json:"clock"`
+	To     *float64 `json:"to"`
+	WasAt  *float64 `json:"was_at_s"`
+	WasTo  *float64 `json:"was_to"`
+	Target string   `json:"target"`
+}
+
+// Bind is a move that would end sooner, and what forbids it.
+type Bind struct {
+	Move   string   `json:"move"`
+	Limit  string   `json:"limit"`
+	Finish *float64 `json:"finish_s"`
+}
+
+// Written is the plan as it stands in the file.
+type Written struct {
+	Verdict network.Verdict `json:"verdict"`
+	Why     string          `json:"why"`
+	Finish  *float64        `json:"finish_s"`
+}
+
+const (
+	planRounds = 8    // of searching and judging
+	overshoot  = 1.05 // back-off over the spread that was measured, where a plan was too close
+)
+
+// Plan searches the times and openings that are marked free for the plan that ends first with every limit holding, doubts allowed for. Openings
+// are searched in steps of 5 %, times in whole minutes. Searching is done on runs without doubts, each limit being asked to hold with a margin:
+// its back-off, which is what the doubts take from it (the middle less the 5 % point) at the plan judged last. The best plan is judged with all
+// doubts, back-offs are measured again, and so on until the plan found stays the same.
+//
+// Source: back-off in place of chance constraints, as in E. Bradford et al., Computers & Chemical Engineering 139 (2020), 106844, and earlier
+// work cited there; the search itself is described at search.
+func Plan(ctx context.Context, load Load, opt Options) (*FoundPlan, error) {
+	p, err := newPlanning(load, opt)
+	if err != nil {
+		return nil, err
+	}
+	if err := p.written(ctx); err != nil {
+		return p.res, err
+	}
+	err = p.rounds(ctx)
+	if p.best != nil {
+		p.report()
+	}
+	if err != nil {
+		return p.res, err
+	}
+	p.res.Complete, p.res.ExitCode = true, 0
+	if p.best == nil {
+		p.res.ExitCode = 1
+		p.giveUp()
+		return p.res, nil
+	}
+	return p.res, p.binds(ctx)
+}
+
+// planning is one search under way.
+type planning struct {
+	opt     Options
+	load    Load
+	runner  *Runner
+	plant   *network.Plant
+	vars    []freedom
+	must    []string // vessels to be emptied
+	backoff []float64
+	seen    map[string]*trial
+	res     *FoundPlan
+	last    *trial          // judged last
+	best    *trial          // the best that runs
+	judged  *network.Result // its judgement
+}
+
+func newPlanning(load Load, opt Options) (*planning, error) {
+	opt.defaults()
+	if opt.Progress == nil {
+		opt.Progress = func(float64) {}
+	}
+	p := &planning{opt: opt, load: load, seen: map[string]*trial{}, runner: &Runner{Load: load, Model: opt.model(), Workers: opt.Workers}}
+	var err error
+	if p.plant, err = load(); err != nil {
+		return nil, err
+	}
+	if p.vars, err = freedoms(p.plant); err != nil {
+		return nil, Misuse{err}
+	}
+	if len(p.vars) == 0 {
+		return nil, Misuse{errors.New(`nothing is free: mark a step with free: {at: ["07:00", "09:00"], to: [10 %, 100 %]}`)}
+	}
+	if p.must = mustEmpty(p.plant); len(p.must) == 0 {
+		return nil, Misuse{errors.New("it is not known what the plan is to empty: state a limit, as {emptied: T-1, within: 4 h}")}
+	}
+	p.res = &FoundPlan{Schema: 1, Command: "plan", Scenario: scenarioOf(p.plant), ExitCode: 3, Verdict: network.NotJudged, Empties: p.must,
+		Steps: []PlannedStep{}, Binds: []Bind{}, Fails: []string{}, Set: []string{}}
+	return p, nil
+}
+
+// mustEmpty returns the vessels that the plan must empty: those that a limit names, or else those that the free valves drain.
+func mustEmpty(p *network.Plant) []string {
+	var tags []string
+	add := func(tag string) {
+		for _, v := range p.Vessels {
+			if e, _ := p.EmptyLevel(v); v.Tag == tag && v.StartLevel() > e {
+				for _, t := range tags {
+					if t == tag {
+						return
+					}
+				}
+				tags = append(tags, tag)
+			}
+		}
+	}
+	for _, l := range p.Limits {
+		if l.Must.Subject == network.Emptied {
+			add(l.Must.Of[0])
+		}
+	}
+	if len(tags) > 0 {
+		return tags
+	}
+	for _, s := range p.Steps {
+		if s.Free == nil || s.Action != network.MoveValve {
+			continue
+		}
+		if l, _ := valveLine(p, s.Target); l != nil {
+			for _, v := range feeding(p, l) {
+				add(v.Tag)
+			}
+		}
+	}
+	return tags
+}
+
+// written judges the plan as it stands in the file, which also measures the first back-offs.
+func (p *planning) written(ctx context.Context) error {
+	opt := p.opt
+	opt.Progress = func(share float64) { p.opt.Progress(0.05 * share) }
+	res, err := Judge(ctx, p.load, opt)
+	if err != nil {
+		return err
+	}
+	p.res.Judged++
+	p.res.Written = Written{Verdict: res.Verdict, Why: whyNotRun(res)}
+	if f, ok := finishOf(res, p.must); ok {
+		p.res.Written.Finish = &f
+	}
+	p.backoff = make([]float64, len(res.Limits))
+	p.measure(res, 1)
+	return nil
+}
+
+// measure takes the back-offs from a judgement.
+func (p *planning) measure(res *network.Result, times float64) {
+	for i, l := range res.Limits {
+		if l.Margin == nil || l.MarginLow == nil {
+			continue
+		}
+		if d := *l.Margin - *l.MarginLow; d >= 0 {
+			p.backoff[i] = d * times
+		}
+	}
+}
+
+// finishOf returns when the last of the vessels is empty; ok is false when one is not.
+func finishOf(res *network.Result, must []string) (at float64, ok bool) {
+	for _, tag := range must {
+		v := res.Vessels[tag]
+		if v == nil || v.EmptiedAt == nil {
+			return 0, false
+		}
+		at = max(at, *v.EmptiedAt)
+	}
+	return at, true
+}
+
+// giveUp says what could not be met.
+func (p *planning) giveUp() {
+	if p.last == nil {
+		return
+	}
+	for _, f := range p.last.fails {
+		p.res.Fails = append(p.res.Fails, f.says)
+	}
+	if len(p.res.Fails) == 0 && p.judged != nil {
+		p.res.Fails = append(p.res.Fails, fmt.Sprintf("%s (too close to call)", whyNotRun(p.judged)))
+	}
+}

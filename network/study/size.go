@@ -1,0 +1,196 @@
+package study
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"math"
+
+	"headfall/network"
+)
+
+// SizeOptions say what is looked for.
+type SizeOptions struct {
+	Options
+	Vary     string
+	From, To float64 // SI
+	Smallest bool
+	Needs    []Need
+}
+
+// SizeResult is what size gives back: SI units, unit in the key.
+type SizeResult struct {
+	Schema   int              `json:"schema"`
+	Command  string           `json:"command"`
+	Scenario network.Scenario `json:"scenario"`
+	ExitCode int              `json:"exit_code"`
+	Complete bool             `json:"complete"`
+	Found    bool             `json:"found"`
+	Name     string           `json:"name"`
+	Unit     string           `json:"unit_si"`
+	Looking  string           `json:"looking_for"` // largest | smallest
+	Value    *float64         `json:"value_si"`    // rounded to the safe side, and run again with the doubts
+	As       string           `json:"as_written"`
+	Edge     *float64         `json:"edge_si"` // where the plain run, without doubts, ceases to hold
+	EdgeAs   string           `json:"edge_as_written"`
+	Beyond   string           `json:"beyond"` // what does not hold past the edge
+	Holds    [][2]float64     `json:"holds_si"`
+	HoldsAs  []string         `json:"holds_as_written"`
+	Next     string           `json:"next_step_fails"` // why the next step is not taken
+	NextAs   string           `json:"next_step"`
+	Verdict  network.Verdict  `json:"verdict"` // of the plan at the value
+	Tightest *Margin          `json:"smallest_margin"`
+	Scan     []Tried          `json:"scan"`
+	Work     struct {
+		Runs   int `json:"runs"`
+		Judged int `json:"judged"`
+	} `json:"work"`
+
+	Result *network.Result `json:"-"` // of the judgement at the value
+	step   float64
+}
+
+// Margin is what a limit has in hand.
+type Margin struct {
+	Limit string   `json:"limit"`
+	SI    *float64 `json:"margin_si"`
+	Low   *float64 `json:"margin_low_si"`
+	Unit  string   `json:"unit_si"`
+
+	Of *network.LimitResult `json:"-"`
+}
+
+// Tried is one value that was tried without doubts.
+type Tried struct {
+	Value float64 `json:"value_si"`
+	Holds bool    `json:"holds"`
+	Why   string  `json:"why_not"`
+	Share float64 `json:"margin_share"` // the smallest margin as a share of its bound
+}
+
+const sizeScan = 41 // values that are tried first: holding need not be monotone
+
+// Size finds the largest or smallest value of a number between two ends with which every limit holds. It tries values all along first, since
+// holding may come and go, refines the ends of each stretch that holds, rounds to a step that people set, on the side that holds, and judges the
+// rounded value with the doubts; where that is too close to call it goes on step by step into the stretch.
+func Size(ctx context.Context, load Load, opt SizeOptions) (*SizeResult, error) {
+	s, err := newSizing(load, opt)
+	if err != nil {
+		return nil, err
+	}
+	for _, part := range []func(context.Context) error{s.scan, s.refine, s.settle} {
+		if err := part(ctx); err != nil {
+			return s.res, err
+		}
+	}
+	s.res.Complete = true
+	if !s.res.Found {
+		s.res.ExitCode = 1
+	}
+	return s.res, nil
+}
+
+// sizing is one search under way.
+type sizing struct {
+	opt    SizeOptions
+	load   Load
+	runner *Runner
+	plant  *network.Plant
+	number *network.Number
+	at     int
+	res    *SizeResult
+	edges  []stretch
+}
+
+// stretch is a range of values that hold, with the reason why the next one outside does not, "" at the ends of the search.
+type stretch struct {
+	low, high         float64
+	lowWhy, highWhy   string
+	lowOpen, highOpen float64 // the nearest value outside that was tried; NaN at the ends
+}
+
+func newSizing(load Load, opt SizeOptions) (*sizing, error) {
+	opt.defaults()
+	if opt.Progress == nil {
+		opt.Progress = func(float64) {}
+	}
+	s := &sizing{opt: opt, load: load, runner: &Runner{Load: load, Model: opt.model(), Workers: opt.Workers}}
+	var err error
+	if s.plant, err = load(); err != nil {
+		return nil, err
+	}
+	if s.number, err = numberNamed(s.plant, opt.Vary); err != nil {
+		return nil, Misuse{err}
+	}
+	s.at = newScaled(s.plant, s.number).at
+	if !(opt.From < opt.To) {
+		return nil, Misuse{errors.New("--from must be less than --to")}
+	}
+	for _, end := range []float64{opt.From, opt.To} {
+		if says := allowed(s.number, end); says != "" {
+			return nil, Misuse{fmt.Errorf("%s cannot be %s: it must be %s", s.number.Name, shown(s.plant, s.number, end), says)}
+		}
+	}
+	s.res = &SizeResult{Schema: 1, Command: "size", Scenario: scenarioOf(s.plant), ExitCode: 3, Name: s.number.Name, Unit: unitSI(s.number),
+		Looking: "largest", Holds: [][2]float64{}, HoldsAs: []string{}, Scan: []Tried{}, Verdict: network.NotJudged}
+	if opt.Smallest {
+		s.res.Looking = "smallest"
+	}
+	return s, nil
+}
+
+// values are those tried first: even steps, or even ratios where the ends are far apart.
+func (s *sizing) values() []float64 {
+	a, b := s.opt.From, s.opt.To
+	out := make([]float64, sizeScan)
+	for i := range out {
+		x := float64(i) / (sizeScan - 1)
+		if a > 0 && b > 20*a && !opens(s.number) {
+			out[i] = a * math.Pow(b/a, x)
+		} else {
+			out[i] = a + (b-a)*x
+		}
+	}
+	out[0], out[sizeScan-1] = a, b
+	return out
+}
+
+// scan tries values all along.
+func (s *sizing) scan(ctx context.Context) error {
+	values := s.values()
+	s.runner.Progress = func(share float64) { s.opt.Progress(0.3 * share) }
+	tried, done, err := s.try(ctx, values)
+	for i, d := range done {
+		if d {
+			s.res.Scan = append(s.res.Scan, tried[i])
+		}
+	}
+	return err
+}
+
+// try runs the plan at values, without doubts.
+func (s *sizing) try(ctx context.Context, values []float64) ([]Tried, []bool, error) {
+	s.res.Work.Runs += len(values)
+	return Each(ctx, s.runner, len(values), func(ctx context.Context, b *Bench, i int) (Tried, error) {
+		t := Tried{Value: values[i]}
+		if allowed(s.number, values[i]) != "" {
+			t.Why = "it may not have that value"
+			return t, nil
+		}
+		b.Put([]int{s.at}, []float64{values[i]})
+		res, err := plainRun(ctx, b)
+		if err != nil || res == nil {
+			t.Why = "it cannot be calculated"
+			return t, err
+		}
+		t.Why = whyNotRun(res)
+		if l := tightest(res.Limits); l != nil {
+			t.Share = marginShare(l)
+		}
+		if l := unmet(s.opt.Needs, res.Limits); l != nil && t.Why == "" {
+			t.Why = l.Says + " holds with less than the margin wanted"
+		}
+		t.Holds = t.Why == ""
+		return t, nil
+	})
+}
