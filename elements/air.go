@@ -38,6 +38,9 @@ func airIn(p, p0, T float64) (g, byP float64) {
 	return math.Copysign(u*(s+u*(a+u*b)), d), -(s + u*(2*a+u*3*b)) / airBand
 }
 
+// AirIn returns the mass flow of air into a vessel per effective area Cd·A, kg/(s·m²), and its derivative by the inside pressure: see airIn.
+func AirIn(p, p0, T float64) (g, byP float64) { return airIn(p, p0, T) }
+
 // airBeyond is airIn at a difference d = p0 − p, Pa, outside the band.
 func airBeyond(d, p0, T float64) (g, byP float64) {
 	perRoot := 1 / math.Sqrt(AirConstant*T)

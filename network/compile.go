@@ -94,6 +94,7 @@ func (s *system) connect() error {
 			s.stations[i].spillTo = int32(k)
 		}
 	}
+	s.addAirways()
 	s.shareTables()
 	return nil
 }

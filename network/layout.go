@@ -59,10 +59,16 @@ func (s *system) layout() {
 		st := &s.stations[i]
 		b.add(st.spillTo, int32(i))
 		b.add(st.massRow, int32(i))
+		for k := range st.airways {
+			if far := st.airways[k].far; far.kind == toVessel {
+				b.add(st.massRow, int32(far.at))
+			}
+		}
 	}
 	s.pat.N, s.pat.Ptr, s.pat.Row = s.n, nil, nil
 	s.pat.Ptr, s.pat.Row = b.columns()
 	s.resolve()
+	s.linkAirways()
 	s.settler = newSettler(s)
 }
 

@@ -16,7 +16,7 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 	s.look(t, y)
 	clear(f)
 	for i := range s.stations {
-		s.addVessel(i, t, f, g)
+		s.addVessel(i, t, f, g, lin)
 		s.lineariseVessel(i, lin)
 	}
 	for i := range s.lines {

@@ -28,6 +28,8 @@ func (m *Model) Reload() error {
 			return m.anew()
 		}
 	}
+	s.addAirways()
+	s.linkAirways()
 	s.shareTables()
 	return m.lookAnew()
 }

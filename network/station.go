@@ -7,8 +7,7 @@ import (
 	"headfall/elements/shape"
 )
 
-// gasConstant of dry air, J/(kg·K): 8.314462618 / 0.0289652. Source: CODATA 2018; molar mass of dry air, CIPM-2007 (0.400 ‰ CO₂: 28.96546).
-const gasConstant = 287.0502
+const gasConstant = elements.AirConstant
 
 // station is a vessel in the equations: where its unknowns are and what follows from them.
 type station struct {
@@ -25,6 +24,7 @@ type station struct {
 	mass    float64 // kg, of a sealed gas space
 	temp    float64 // K
 	vents   []ventAt
+	airways []airway
 
 	inflow, inflowRate float64 // m³/s at the segment's start and its slope, m³/s²
 
@@ -55,7 +55,7 @@ func newStation(v *Vessel, p *Plant) station {
 	}
 	if c := v.Cover; c != nil {
 		st.closed, st.temp = true, c.Temperature
-		st.sealed = len(c.Vents) == 0
+		st.sealed = len(c.Vents) == 0 && !p.mayBreathe(v)
 		for _, w := range c.Vents {
 			st.vents = append(st.vents, ventAt{w, w.Vent, elements.Local{Opening: 1 - w.Blocked, Gravity: p.Gravity, Band: 1}})
 		}
@@ -92,7 +92,7 @@ func (st *station) look(v, m float64) {
 		}
 	}
 	st.spill, st.spillV = 0, 0
-	if h := st.level - st.rim; h > 0 && (!st.closed || !st.sealed) {
+	if h := st.level - st.rim; h > 0 && (!st.closed || len(st.vents) > 0) {
 		r := math.Sqrt(h)
 		st.spill = rimCoefficient * st.rimLen * h * r
 		st.spillV = 1.5 * rimCoefficient * st.rimLen * r * st.slope

@@ -95,7 +95,7 @@ func (s *system) Rates(t float64, y, f, g []float64) {
 		f[i] = 0
 	}
 	for i := range s.stations {
-		s.addVessel(i, t, f, g)
+		s.addVessel(i, t, f, g, nil)
 	}
 	for i := range s.lines {
 		l := &s.lines[i]
@@ -116,8 +116,8 @@ func (s *system) Rates(t float64, y, f, g []float64) {
 	s.balanceTees(f)
 }
 
-// addVessel adds inflow, rim spill and vents of vessel i.
-func (s *system) addVessel(i int, t float64, f, g []float64) {
+// addVessel adds inflow, rim spill, vents and air paths of vessel i; the partials of the latter go into lin where it is given.
+func (s *system) addVessel(i int, t float64, f, g []float64, lin *integrate.Linear) {
 	st := &s.stations[i]
 	f[i] += st.inflow + st.inflowRate*(t-s.t0) - st.spill
 	if st.spillTo >= 0 {
@@ -130,6 +130,7 @@ func (s *system) addVessel(i int, t float64, f, g []float64) {
 			m, _ := v.vent.Flow(st.gas, s.atmosphere, st.temp, &v.at)
 			f[st.massRow] += m
 		}
+		s.addAir(i, f, lin)
 	}
 }
 

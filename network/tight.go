@@ -12,7 +12,7 @@ const nearlyTight = 0.005
 // tightNow tells that the vents of a vessel pass nothing, or next to nothing.
 func (s *system) tightNow(i int) bool {
 	for k := range s.stations[i].vents {
-		if s.stations[i].vents[k].at.Opening > nearlyTight {
+		if s.stations[i].vents[k].open() > nearlyTight {
 			return false
 		}
 	}

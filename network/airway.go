@@ -1,0 +1,147 @@
+package network
+
+import (
+	"math"
+
+	"headfall/elements"
+	"headfall/integrate"
+)
+
+// airway is a line of a covered vessel as a path for air: once its mouth in the vessel and its other end are clear of liquid, air passes it as
+// through an orifice of its narrowest bore.
+type airway struct {
+	line  int
+	area  float64 // m², with the discharge coefficient
+	own   *mouth  // in the covered vessel
+	far   *mouth
+	inlet bool  // air comes in in the line's direction
+	byFar int32 // slot of the far vessel's volume in the row of the gas mass; -1
+}
+
+// airwayCd is the discharge coefficient of an air path through a line; common practice, no source.
+const airwayCd = 0.6
+
+// airwayShare is the share of the bore over the invert of a mouth in a floor within which air begins to pass it; of one in a wall it is all of it.
+const airwayShare = 0.25
+
+// mayBreathe tells whether a line of the covered vessel could let air in: its other end is a free fall or an open vessel.
+func (p *Plant) mayBreathe(v *Vessel) bool {
+	for _, l := range p.meets[v.Tag] {
+		if p.breathes(l, v.Tag) {
+			return true
+		}
+	}
+	return false
+}
+
+func (p *Plant) breathes(l *Line, tag string) bool {
+	other := l.To
+	if l.To == tag {
+		other = l.From
+	}
+	if l.endBore(false) == 0 {
+		return false
+	}
+	if o := p.beyond(other); o != nil {
+		return o.Element.Outside().FreeFall
+	}
+	w := p.vessel(other)
+	return w != nil && w.Cover == nil
+}
+
+// addAirways finds the air paths of the covered vessels.
+func (s *system) addAirways() {
+	for i := range s.stations {
+		st := &s.stations[i]
+		st.airways = st.airways[:0]
+		if st.massRow < 0 {
+			continue
+		}
+		for _, plan := range s.plan.meets[st.plan.Tag] {
+			if !s.plan.breathes(plan, st.plan.Tag) {
+				continue
+			}
+			k := s.lineAt[plan.Tag]
+			l := &s.lines[k]
+			a := airway{line: k, area: airwayCd * l.area, own: &l.from, far: &l.to, byFar: -1}
+			if plan.To == st.plan.Tag {
+				a.own, a.far, a.inlet = &l.to, &l.from, true
+			}
+			st.airways = append(st.airways, a)
+		}
+	}
+}
+
+// linkAirways finds the slots of the far ends.
+func (s *system) linkAirways() {
+	for i := range s.stations {
+		for k := range s.stations[i].airways {
+			if a := &s.stations[i].airways[k]; a.far.kind == toVessel {
+				a.byFar = s.pat.Find(s.stations[i].massRow, int32(a.far.at))
+			}
+		}
+	}
+}
+
+// clear returns the share of a mouth that is clear of liquid, and its slope by the volume of its vessel.
+func (s *system) clear(m *mouth) (share, byV float64) {
+	if m.kind == toAir {
+		return 1, 0
+	}
+	st := &s.stations[m.at]
+	w := m.width
+	if w == 0 {
+		w = airwayShare * m.inlet.bore
+	}
+	if w == 0 {
+		return 0, 0
+	}
+	u := 1 - (st.surface-m.invert)/w
+	v, d := elements.Step(u)
+	return v, -d / w * st.slope
+}
+
+// breathe returns the mass flow of air into vessel st through one of its lines, kg/s, and its partials by the inside pressure and by the volumes of
+// the vessel and of the one at the far end.
+func (s *system) breathe(st *station, a *airway) (m, byP, byOwn, byFar float64) {
+	l := &s.lines[a.line]
+	if l.shut || l.area == 0 {
+		return 0, 0, 0, 0
+	}
+	own, dOwn := s.clear(a.own)
+	far, dFar := s.clear(a.far)
+	if own == 0 || far == 0 {
+		return 0, 0, 0, 0
+	}
+	g, byG := elements.AirIn(st.gas, s.atmosphere, st.temp)
+	if l.oneWay && (g > 0) != a.inlet {
+		return 0, 0, 0, 0
+	}
+	return a.area * own * far * g, a.area * own * far * byG, a.area * dOwn * far * g, a.area * own * dFar * g
+}
+
+// addAir adds what passes the air paths of vessel i.
+func (s *system) addAir(i int, f []float64, lin *integrate.Linear) {
+	st := &s.stations[i]
+	for k := range st.airways {
+		a := &st.airways[k]
+		m, byP, byOwn, byFar := s.breathe(st, a)
+		f[st.massRow] += m
+		if lin == nil || m == 0 {
+			continue
+		}
+		lin.DfDy[s.gasS[i].byV] += byP*st.gasV + byOwn
+		lin.DfDy[s.gasS[i].byM] += byP * st.gasN
+		if a.byFar >= 0 {
+			lin.DfDy[a.byFar] += byFar
+		}
+	}
+}
+
+// open returns the share of a vent's opening that air can pass.
+func (v *ventAt) open() float64 {
+	if b, ok := v.vent.(interface{ Blocked() float64 }); ok {
+		return v.at.Opening * math.Max(0, 1-b.Blocked())
+	}
+	return v.at.Opening
+}
