@@ -131,6 +131,7 @@ func (o *observer) step(out *integrate.Outcome) {
 	sim.fill(&o.now, out.T, sim.y, o.f)
 	copy(o.now.z, sim.solver.Z())
 	o.note(&o.now, 2)
+	o.regime() // while the system stands at the end of the step: what follows looks about within it
 	o.between(&o.prev, &o.mid)
 	o.between(&o.mid, &o.now)
 	o.peaks()
@@ -142,14 +143,21 @@ func (o *observer) step(out *integrate.Outcome) {
 	o.knots(&o.mid)
 	sim.led.book(sim, &o.mid, &o.now)
 	o.knots(&o.now)
-	o.regime()
 	o.beyond()
 	if o.keep && out.Stop != integrate.Stepped {
+		o.again()
 		if out.T >= o.next {
 			o.advance()
 		}
 		o.record(&o.now)
 	}
+}
+
+// again puts the system back to the present state, from which looks within the last step have moved it.
+func (o *observer) again() {
+	z := o.sim.solver.Z()
+	o.sim.fill(&o.now, o.now.t, o.sim.y, o.f)
+	copy(o.now.z, z)
 }
 
 func (o *observer) knots(w *snapshot) {

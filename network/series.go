@@ -113,6 +113,7 @@ func (o *observer) finish() {
 	if !o.keep {
 		return
 	}
+	o.again()
 	if n := len(o.series.Time); n > 0 && o.series.Time[n-1] < o.sim.t {
 		o.record(&o.now)
 	}
