@@ -15,7 +15,7 @@ func (p *planning) report() {
 	finish := t.finish
 	r.Finish = &finish
 	r.Tightest = marginOf(tightest(p.judged.Limits))
-	r.Low, r.High = p.band()
+	r.Low, r.High = finishBand(p.judged, p.must)
 	r.Steps, r.Set = []PlannedStep{}, []string{}
 	for i := range p.vars {
 		f := &p.vars[i]
@@ -54,26 +54,6 @@ func (p *planning) step(st *network.Step) *PlannedStep {
 	}
 	p.res.Steps = append(p.res.Steps, row)
 	return &p.res.Steps[len(p.res.Steps)-1]
-}
-
-// band is the band of the finish: the latest ends of the vessels' bands.
-func (p *planning) band() (low, high *float64) {
-	for _, tag := range p.must {
-		b, ok := p.judged.Bands["emptied_at_s"][tag]
-		if !ok {
-			return nil, nil
-		}
-		if b.High == nil || b.Low == nil {
-			return low, nil
-		}
-		if low == nil || *b.Low > *low {
-			low = b.Low
-		}
-		if high == nil || *b.High > *high {
-			high = b.High
-		}
-	}
-	return low, high
 }
 
 // binds finds what forbids an earlier end: each free number alone is moved by one step either way; moves that would end sooner are named with
