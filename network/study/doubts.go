@@ -124,18 +124,26 @@ func assumptions(p *network.Plant) []network.Assumption {
 // SaysDoubt writes the doubt of a number: "± 15 %", "± 20 mm", "× or ÷ 2", "0.58 to 0.66".
 func SaysDoubt(n *network.Number) string {
 	d, v := n.Value.Doubt, n.Value.SI
-	switch d.Kind {
-	case quantity.Factor:
-		return fmt.Sprintf("× or ÷ %.4g", d.Factor)
-	case quantity.Uniform:
-		return quantity.Format(d.Low, n.Dim, n.Value.Unit, 4) + " to " + quantity.Format(d.High, n.Dim, n.Value.Unit, 4)
+	unit := n.Value.Unit
+	if n.Key == "level" && n.Assumed {
+		unit = "mm"
 	}
-	if n.Key == "level" || v == 0 || n.Dim == quantity.Ratio && n.Value.Unit == "%" {
-		unit := n.Value.Unit
-		if n.Dim == quantity.Length {
-			unit = "mm"
-		}
-		return "± " + quantity.Format(d.Half, n.Dim, unit, 4)
+	switch {
+	case d.Kind == quantity.Factor:
+		return fmt.Sprintf("× or ÷ %.4g", d.Factor)
+	case d.Kind == quantity.Uniform:
+		return brief(d.Low, n.Dim, unit) + " to " + brief(d.High, n.Dim, unit)
+	case v == 0 || n.Dim == quantity.Length && !n.Assumed || n.Key == "level" || unit == "%":
+		return "± " + brief(d.Half, n.Dim, unit)
 	}
 	return fmt.Sprintf("± %.3g %%", 100*d.Half/v)
+}
+
+// brief writes a quantity without trailing zeros.
+func brief(si float64, dim quantity.Dim, unit string) string {
+	x, err := quantity.Convert(si, dim, unit)
+	if err != nil {
+		x, unit = si, quantity.SIUnit(dim)
+	}
+	return strings.TrimSpace(fmt.Sprintf("%.4g %s", x, unit))
 }

@@ -26,7 +26,7 @@ type Runner struct {
 // Each carries out cases 0 to n-1. The case finds its bench with the plant's own numbers and puts what differs; its answer depends on the number of the
 // case alone. done tells which cases were carried out: all of them, unless ctx ended (err is then its cause) or a case returned an error (err is
 // that of the lowest case; those under way are finished first).
-func Each[T any](ctx context.Context, r *Runner, n int, carry func(ctx context.Context, b *Bench, i int) (T, error)) (out []T, done []bool, err error) {
+func Each[T any](ctx context.Context, r *Runner, n int, do func(ctx context.Context, b *Bench, i int) (T, error)) (out []T, done []bool, err error) {
 	out, done = make([]T, n), make([]bool, n)
 	workers := min(r.workers(), n)
 	if err := r.prepare(ctx, workers); err != nil {
@@ -44,7 +44,7 @@ func Each[T any](ctx context.Context, r *Runner, n int, carry func(ctx context.C
 					return
 				}
 				b.Put(nil, nil)
-				v, err := carry(ctx, b, i)
+				v, err := do(ctx, b, i)
 				if err != nil {
 					if ctx.Err() == nil {
 						failed.note(i, err)

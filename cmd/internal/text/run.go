@@ -11,6 +11,7 @@ type Options struct {
 	Width  int  // columns of the terminal; 0 when there is none
 	Colour bool // paint the verdict
 	Quiet  bool // the first line only
+	All    bool // every rehearsal of a drill
 	Report string
 	Saved  []string // other files written
 }

@@ -1,0 +1,105 @@
+package cli
+
+import (
+	"context"
+	"errors"
+	"io"
+
+	"github.com/spf13/cobra"
+
+	"headfall/cmd/internal/text"
+	"headfall/network/study"
+	"headfall/viz/export"
+)
+
+func init() { register(groupWhat, newSpread) }
+
+type spreadOptions struct {
+	many
+	samples int
+	seed    int64
+}
+
+func newSpread(a *app) *cobra.Command {
+	var o spreadOptions
+	c := &cobra.Command{
+		Use:   "spread FILE",
+		Short: "How much the doubts in the numbers matter, and which to measure first",
+		Long: `Spread runs the plan many times with every doubtful number drawn anew (a Latin hypercube with a fixed seed), holds at
+zero wait and at their longest. It gives the bands of empty times, peak levels and margins (5, 50 and 95 %
+points), the chance of each limit failing with its interval (Wilson, 95 %), and what each doubt does to it:
+Spearman's rank correlation, and the share of the variance that goes back to it. What does most to the limit in
+most danger is worth measuring first.
+
+JSON: one object; each of its limits is as
+  {"id": 1, "says": "level of SUMP below 1.9 m", "subject": "level", "unit_si": "m", "implicit": false,
+   "verdict": "too_close", "margin_si": 0.12, "margin_band_si": {"low": -0.03, "mid": 0.11, "high": 0.24},
+   "fails": {"share": 0.081, "low": 0.066, "high": 0.1},
+   "influences": [{"what": "V-1.kv", "doubt": "± 15 %", "rank_correlation": -0.93, "share_of_variance": 0.86}]}
+and "measure_first" as
+  {"what": "V-1.kv", "doubt": "± 15 %", "for": "level of SUMP below 1.9 m", "share_of_variance": 0.86}
+
+Exit code 0: every limit holds, and in at least 95 % of the samples. 1: not so. 2: bad usage, a bad file, or
+nothing in it carries a doubt. 3: the calculation could not finish. 130: interrupted; what was done is kept and
+marked.`,
+		Example: `  headfall spread plant.yaml
+  headfall spread plant.yaml --samples 10000 --seed 7 --json spread.json
+  headfall spread plant.yaml --samples 100000 --shard auto/32 --json part.jsonl`,
+		Args: oneFile,
+		RunE: func(c *cobra.Command, args []string) error { return a.spread(c.Context(), args[0], o) },
+	}
+	f := c.Flags()
+	f.SortFlags = false
+	f.IntVar(&o.samples, "samples", study.SpreadSamples, "how many samples")
+	f.Int64Var(&o.seed, "seed", study.DefaultSeed, "where the draws begin; the same seed gives the same samples")
+	o.many.bind(f)
+	return c
+}
+
+// mostSamples are held in memory at once.
+const mostSamples = 10_000_000
+
+func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
+	if o.samples < 1 || o.samples > mostSamples {
+		return bad("as --samples 1000", "--samples must lie between 1 and %d", mostSamples)
+	}
+	src, load, err := a.open(ctx, path)
+	if err != nil {
+		return err
+	}
+	bar := a.progress("sampling")
+	opt := study.SpreadOptions{Samples: o.samples, Seed: o.seed}
+	if opt.Common, err = a.common(o.many, bar); err != nil {
+		return err
+	}
+	var res *study.SpreadResult
+	files := outputs{}
+	if opt.Shard.Of == 0 {
+		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
+	}
+	if err := files.check(src); err != nil {
+		return err
+	}
+	ctx, cancel := a.within(ctx)
+	defer cancel()
+	part, err := study.Spread(ctx, load, opt)
+	bar.end()
+	switch {
+	case errors.Is(err, study.ErrNoDoubts):
+		return bad("write ± behind a number, or assume: {doubts: default}", "%s: %w", src.name, err)
+	case part == nil:
+		return a.unfinished(ctx, err)
+	case opt.Shard.Of > 0:
+		return a.savePart(ctx, src, err, func(w io.Writer) error { return study.WritePart(w, "spread", part) })
+	}
+	res = study.SpreadOf(part)
+	if err != nil {
+		res.Complete = false
+		res.Stopped, res.Trouble, res.ExitCode = halted(ctx, err)
+	}
+	return a.tellSpread(files, res)
+}
+
+func (a *app) tellSpread(files outputs, res *study.SpreadResult) error {
+	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Spread(w, res, opt) })
+}
