@@ -224,7 +224,7 @@ func (h *charter) forbidden(m mark, u unit, low, high float64) opts.MarkAreaName
 // addSteps marks the steps, numbered as on the sheet.
 func (h *charter) addSteps(line *charts.Line) {
 	items := []opts.MarkLineNameXAxisItem{}
-	before := math.Inf(-1)
+	before, named := math.Inf(-1), 0
 	for _, s := range h.steps {
 		if s.at == nil || !finite(*s.at) {
 			continue
@@ -233,12 +233,14 @@ func (h *charter) addSteps(line *charts.Line) {
 		if s.Hold {
 			n = "H"
 		}
-		if k := len(items); k > 0 && *s.at-before < 0.012*h.r.End { // their labels would cover one another
-			items[k-1].Name += "," + n
+		if len(items) > 0 && *s.at-before < 0.012*h.r.End { // their labels would cover one another
+			items[named].Name += "," + n
 			if *s.at == before {
 				continue
 			}
 			n = ""
+		} else {
+			named = len(items)
 		}
 		items = append(items, opts.MarkLineNameXAxisItem{Name: n, XAxis: h.x(*s.at)})
 		before = *s.at

@@ -218,18 +218,6 @@ var outsideModel = []string{
 	"electrical and confined-space matters",
 }
 
-// standing is the caution on every report.
-const standing = "Planning estimate from the data in the file. Check against local rules, the site permit and a competent engineer before use. " +
-	"It does not replace isolation, gas test, or an independent level reading."
-
-// cautions are those of the run, the standing one first and once.
-func cautions(r *network.Result) []string {
-	if len(r.Cautions) > 0 && strings.HasPrefix(r.Cautions[0], standing[:28]) {
-		return r.Cautions
-	}
-	return append([]string{standing}, r.Cautions...)
-}
-
 // work lists method and counters; never the wall time, so that the same input gives the same page.
 func work(r *network.Result) [][2]string {
 	w := r.Work

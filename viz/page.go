@@ -8,6 +8,7 @@ import (
 	"strings"
 
 	"headfall/network"
+	"headfall/network/study"
 	"headfall/viz/export"
 )
 
@@ -15,8 +16,8 @@ import (
 type Page struct {
 	Plant  *network.Plant
 	Result *network.Result
-	Drill  any // of study drill; nil when none was made
-	Spread any // of study spread
+	Drill  *study.DrillResult  // nil when none was made
+	Spread *study.SpreadResult // nil when none was made
 }
 
 // view is everything that the templates print.
@@ -41,6 +42,8 @@ type view struct {
 	Groups             []group
 	Sheet              []*sheetPage
 	Balance            balanceView
+	Drill              *drillView
+	Spread             *spreadView
 	Alarms, Milestones [][]string
 	Flags              []flagRow
 	Inputs             inputsView
@@ -116,7 +119,7 @@ func newView(p Page) (*view, error) {
 	plant, r := p.Plant, p.Result
 	u, c := newUnits(plant.Show), newClock(p)
 	rows := sheetRows(p, u, c)
-	v := &view{Title: title(plant), V: newVerdict(plant, r, u, c), Cautions: cautions(r)}
+	v := &view{Title: title(plant), V: newVerdict(plant, r, u, c), Cautions: cautions(plant, r)}
 	v.Cells = cells4(plant, r, c)
 	v.Headroom = headroom(plant, r, u, c)
 	for _, h := range v.Headroom {
@@ -137,6 +140,7 @@ func newView(p Page) (*view, error) {
 	h := &charter{plant: plant, r: r, u: u, c: c, steps: rows, set: v.Data}
 	v.Groups = h.groups()
 	v.Sheet = sheetPages(p, rows, c, handovers(p, u, c))
+	v.Drill, v.Spread = newDrill(p.Drill, u, c), newSpread(p.Spread, plant, u, c)
 	v.Balance = balance(plant, r, u, c)
 	v.Alarms, v.Milestones = alarms(r, c), milestones(r, c)
 	v.Flags = flags(r, c)
@@ -176,6 +180,8 @@ func (v *view) contents() {
 		add(g.ID, g.Title, true)
 	}
 	add("sheet", "Sequence sheet", true)
+	add("drill", "Late, missed, stuck", v.Drill != nil)
+	add("spread", "Doubts", v.Spread != nil)
 	add("balance", "Balance", true)
 	add("flags", "What happens", true)
 	add("inputs", "Inputs", true)

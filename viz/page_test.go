@@ -203,7 +203,7 @@ var dataIslands = regexp.MustCompile(`(?s)<script type="application/json"[^>]*>(
 // TestPages holds for every page, however odd: its data parse, nothing is fetched, no name became markup, one h1, and a word is never printed.
 func TestPages(t *testing.T) {
 	pages := odd(t)
-	pages["cascade"], pages["large"] = cascade(t), large(t, 120)
+	pages["cascade"], pages["large"], pages["studied"] = cascade(t), large(t, 120), studied(t)
 	lib, _ := echarts()
 	for name, p := range pages {
 		t.Run(name, func(t *testing.T) {
@@ -270,7 +270,7 @@ func TestNumbersEqualJSON(t *testing.T) {
 	}
 	for _, x := range []string{"SUMP", "T-1"} {
 		v := p.Result.Vessels[x]
-		if !strings.Contains(html, "<td class=\"n\">"+places(v.PeakLevel, 2)+"\u00a0m</td>") {
+		if !strings.Contains(html, "<td class=\"n\">"+newUnits(p.Plant.Show).Level.Toward(v.PeakLevel, later)+"</td>") {
 			t.Errorf("the headroom table lacks the peak of %s, %g m", x, v.PeakLevel)
 		}
 	}

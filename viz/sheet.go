@@ -21,7 +21,7 @@ type sheetRow struct {
 	Where, Note, Longest, Pending string
 	Together                      bool // at the same moment as the row before
 	at                            *float64
-	lines                         int // about how many lines of print it takes
+	height                        float64 // mm on paper, about
 }
 
 // sheetPage is one A4 page.
@@ -81,7 +81,7 @@ func sheetRows(p Page, u units, c clock) []sheetRow {
 			row.N = strconv.Itoa(n)
 		}
 		row.Together = i > 0 && row.at != nil && rows[i-1].at != nil && *row.at == *rows[i-1].at
-		row.lines = rowLines(*row)
+		row.height = rowHeight(*row)
 	}
 	return rows
 }
@@ -131,15 +131,23 @@ func reading(plant *network.Plant, e *network.Expect, u units) (mid, low, high s
 	return u.Level.With(e.Mid), u.Level.With(e.Low), u.Level.With(e.High)
 }
 
-// rowLines estimates how many lines of print a row takes, by the widths of its columns in characters.
-func rowLines(r sheetRow) int {
-	lines := func(s string, width int) int { return (len([]rune(s)) + width - 1) / width }
-	n := lines(r.Action, 26) + lines(r.Where, 30) + lines(r.Note, 30) + lines(r.Pending, 30)
-	n = max(n, lines(r.Expect, 19)+lines(r.Range, 19), lines(r.StopIf, 17), lines(r.Who, 11))
-	return max(n, 2)
+// rowHeight estimates what a row takes on paper, mm, from the widths of its columns in characters; rather too much than too little.
+func rowHeight(r sheetRow) float64 {
+	lines := func(s string, width int) float64 { return float64(len(wrap(s, width))) }
+	const large, little = 4.2, 4.0
+	h := lines(r.Action, 25)*large + (lines(r.Where, 30)+lines(r.Note, 30)+lines(r.Pending, 30)+lines(togetherWords(r.Together), 30))*little
+	h = math.Max(h, lines(r.Expect, 14)*large+lines(r.Range, 15)*little)
+	h = math.Max(h, math.Max(lines(r.StopIf, 12), lines(r.Who, 8))*large)
+	if r.Hold {
+		h = lines(r.Rest, 55)*large + lines(r.Longest, 60)*little
+	}
+	return math.Max(h+3.4, 11.4)
 }
 
-const pageLines = 50 // of print on a page, heading and foot taken off
+const (
+	pageHigh = 268.0 // mm of an A4 page that may be filled
+	headHigh = 34.0  // mm of the heading, and of the head of the table
+)
 
 // sheetPages lays the sheet out on A4 pages.
 func sheetPages(p Page, rows []sheetRow, c clock, handovers []handoverView) []*sheetPage {
@@ -151,31 +159,36 @@ func sheetPages(p Page, rows []sheetRow, c clock, handovers []handoverView) []*s
 	first := base
 	first.LineUp = p.Result.LineUp
 	pages := []*sheetPage{&first}
-	used := 4 + 2*((len(first.LineUp)+1)/2)
-	for _, h := range first.LineUp {
-		if h.Opens != "" {
-			used++
+	used := headHigh
+	for i := 0; i < len(first.LineUp); i += 3 {
+		most := 1
+		for _, l := range first.LineUp[i:min(i+3, len(first.LineUp))] {
+			most = max(most, len(wrap(l.Valve+" "+l.Position+" "+l.Where+" "+opensWords(l.Opens), 27)))
 		}
+		used += 4.4*float64(most) + 1.2
 	}
-	turn := func(need int) {
-		if used+need > pageLines && used > 6 {
+	if len(first.LineUp) > 0 {
+		used += 16
+	}
+	turn := func(need float64) {
+		if used+need > pageHigh && used > headHigh {
 			next := base
 			pages = append(pages, &next)
-			used = 4
+			used = headHigh
 		}
 		used += need
 	}
 	for _, row := range rows {
-		turn(row.lines + 1)
+		turn(row.height)
 		last := pages[len(pages)-1]
 		last.Rows = append(last.Rows, row)
 	}
 	for _, h := range handovers {
-		turn(8 + (len(h.Levels)+2)/3 + (len(h.Valves)+4)/5)
+		turn(40 + 4.2*float64(len(wrap(strings.Join(h.Levels, "; "), 80))+len(wrap(strings.Join(h.Valves, "; "), 80))))
 		last := pages[len(pages)-1]
 		last.Handover = append(last.Handover, h)
 	}
-	turn(6)
+	turn(22)
 	for i, s := range pages {
 		s.N, s.Of, s.First, s.Last = i+1, len(pages), i == 0, i == len(pages)-1
 	}

@@ -86,7 +86,7 @@ func SheetText(w io.Writer, p Page) error {
 		say("  next step  %s", orNone(h.NextStep))
 		say("  next limit %s", orNone(h.NextLimit))
 	}
-	for _, s := range p.Result.Cautions {
+	for _, s := range cautions(p.Plant, p.Result) {
 		for i, line := range wrap(oneLine(s), textWidth-4) {
 			lead := "!   "
 			if i > 0 {

@@ -145,6 +145,9 @@ func sameNumbers(t *testing.T, got, want string) {
 // TestOddPages opens every odd page with its script: quiet, and nothing of the hostile one runs.
 func TestOddPages(t *testing.T) {
 	for name, p := range odd(t) {
+		if name == "1e9" {
+			continue // drawn as any other; TestPages has it
+		}
 		t.Run(name, func(t *testing.T) {
 			b := openTab(t, render(t, p), 900, 800)
 			get[bool](b, "headfall.all(), headfall.go(1e300), headfall.go(0), true")
