@@ -102,6 +102,20 @@ func (d *Dense) Rate(i int, t float64) float64 {
 	return (d.Y1[i] - d.Y0[i] + (1-2*x)*inner + x*(1-x)*slope) / d.H
 }
 
+// RateZ returns the time derivative of integral i at time t.
+func (d *Dense) RateZ(i int, t float64) float64 {
+	if d.H == 0 {
+		return 0
+	}
+	x := d.place(t)
+	inner, slope := 0.0, 0.0
+	for k := len(d.KZ) - 1; k >= 0; k-- {
+		slope = slope*x + inner
+		inner = inner*x + d.KZ[k][i]
+	}
+	return (d.Z1[i] - d.Z0[i] + (1-2*x)*inner + x*(1-x)*slope) / d.H
+}
+
 // place returns θ of a time; exactly 1 at the end of the step.
 func (d *Dense) place(t float64) float64 {
 	if d.H == 0 {

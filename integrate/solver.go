@@ -121,6 +121,13 @@ func (s *Solver) Y() []float64 { return s.y }
 // Z returns the integrals at T, counted from the last Reset, on the terms of Y.
 func (s *Solver) Z() []float64 { return s.z }
 
+// Rates returns f and g at T. They are those that the next step starts from, so that asking for them costs nothing, and the System has been
+// evaluated there last unless something else was asked of it since. The slices belong to the Solver.
+func (s *Solver) Rates() (f, g []float64) {
+	s.linearise()
+	return s.f, s.g
+}
+
 // Stats returns what was done since Reset.
 func (s *Solver) Stats() Stats {
 	st, c := s.stats, s.factor.Counts()

@@ -40,8 +40,8 @@ func (c *chain) drop(q float64) (dp, slope float64) {
 }
 
 const (
-	ulp       = 0x1p-52
-	maxSolves = 200
+	nearEnough = 1e-8 // share of the flow: Newton's next step would be of the order of its square, that is of rounding
+	maxSolves  = 200
 )
 
 // solve returns the flow that loses dp and ∂q/∂dp, starting from guess q. The loss is increasing, so that the root is unique: Newton's method,
@@ -62,11 +62,8 @@ func (c *chain) solve(dp, q float64) (flow, slope float64) {
 		}
 		step := r / s
 		next := q + step
-		if math.Abs(step) <= 2*ulp*math.Abs(next) {
+		if math.Abs(step) <= nearEnough*math.Abs(next) {
 			return next, 1 / s
-		}
-		if math.Abs(step) < 1e-9*math.Abs(next) && math.Abs(step) >= last {
-			return next, 1 / s // rounding noise in the losses themselves; before the bracket, which would take it for no progress
 		}
 		// Newton on a function with |q|^p, p ≤ 2, halves its step at the very least; else the bracket is halved.
 		if !(next > lo && next < hi) || math.Abs(step) > last {

@@ -82,7 +82,7 @@ func (sim *simulation) vesselResults(r *Result) {
 		if a := v.lowestAlarm(); !math.IsNaN(a) {
 			x.HeadroomTo.Alarm = opt(a - x.PeakLevel)
 		}
-		x.In, x.Out = sim.led.inflow[i], 0
+		x.In, x.Out = sim.inflow(i), 0
 		for k, l := range s.lines {
 			in, out := 0.0, 0.0
 			if l.to.kind == toVessel && l.to.at == i {
@@ -106,6 +106,14 @@ func (sim *simulation) vesselResults(r *Result) {
 			r.Vessels[sim.plan.Vessels[st.spillTo].Tag].In += sim.led.z[len(s.lines)+i]
 		}
 	}
+}
+
+// inflow returns what came into vessel i from outside the plant so far, other than by lines, m³.
+func (sim *simulation) inflow(i int) float64 {
+	if k := sim.sys.stations[i].inflowZ; k >= 0 {
+		return sim.led.z[k]
+	}
+	return 0
 }
 
 // lowestAlarm returns the lowest level above which an alarm comes; NaN for none.
@@ -228,7 +236,7 @@ func (sim *simulation) balance(r *Result) {
 	b := &r.Balance
 	for i, v := range sim.plan.Vessels {
 		b.Start += v.StartVolume()
-		b.In += sim.led.inflow[i]
+		b.In += sim.inflow(i)
 		b.Left += sim.y[i]
 		if sim.sys.stations[i].spillTo < 0 {
 			b.Spilled += sim.led.z[len(sim.sys.lines)+i]

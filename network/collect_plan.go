@@ -195,7 +195,7 @@ func (sim *simulation) alarmResults(r *Result) {
 		}
 		for i, j := range sim.obs.limits {
 			l := r.Limits[i]
-			if j.plan.Must.Subject != Level || j.must.Above == m.alarm.When.Above || j.of[0] != v.Tag || l.FirstFail == nil || !j.beyond(m.alarm.When.Bound) {
+			if j.plan.Must.Subject != Level || j.must.Above == m.alarm.When.Above || j.of[0] != v.Tag || l.FirstFail == nil {
 				continue
 			}
 			if beyond := j.must.Bound - m.alarm.When.Bound; m.alarm.When.Above && beyond < alarmGap || !m.alarm.When.Above && beyond > -alarmGap {
@@ -215,15 +215,6 @@ func (sim *simulation) alarmResults(r *Result) {
 
 // alarmGap is the least distance, m, between an alarm and a limit that it protects.
 const alarmGap = 1e-3
-
-// beyond tells that the limit is one that a level passes after it has passed an alarm at h.
-func (j *judged) beyond(h float64) bool {
-	const apart = 1e-6 // m
-	if j.must.Above {
-		return j.must.Bound < h-apart
-	}
-	return j.must.Bound > h+apart
-}
 
 func saysAlarm(x *AlarmResult) string {
 	switch {

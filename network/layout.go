@@ -2,6 +2,16 @@ package network
 
 import "sort"
 
+// fills tells whether anything may come into the vessel from outside the plant other than by lines.
+func (p *Plant) fills(v *Vessel) bool {
+	for _, st := range p.Steps {
+		if st.Action == SetInflow && st.Target == v.Tag {
+			return true
+		}
+	}
+	return len(v.Inflow) > 0 || len(v.Batches) > 0
+}
+
 // slots are the places of one line in the equations: the rows that its flow goes into, the columns of what moves it, and for each pair the
 // place of their value in the matrix.
 type slots struct {
@@ -33,6 +43,12 @@ type teeLine struct {
 // layout fixes the pattern of the equations and resolves every slot once.
 func (s *system) layout() {
 	s.m = len(s.lines) + len(s.stations)
+	for i := range s.stations {
+		if s.plan.fills(s.stations[i].plan) {
+			s.stations[i].inflowZ = s.m
+			s.m++
+		}
+	}
 	s.mass = make([]bool, s.n)
 	for i := range s.mass {
 		s.mass[i] = i < s.teeRow || i >= s.flowRow
@@ -124,6 +140,9 @@ func (s *system) resolve() {
 		s.iCol = append(s.iCol, int32(i))
 		s.iPtr = append(s.iPtr, int32(len(s.iCol)))
 		s.gasS[i] = gasSlots{find(st.massRow, int32(i)), find(st.massRow, st.massRow)}
+	}
+	for len(s.iPtr) <= s.m { // inflows depend on time alone
+		s.iPtr = append(s.iPtr, int32(len(s.iCol)))
 	}
 	for i := range s.tees {
 		for k := range s.tees[i].lines {

@@ -6,14 +6,13 @@ import "math"
 type ledger struct {
 	forward, backward []float64 // m³ up to the last booked time
 	z                 []float64 // integrals there
-	inflow            []float64 // m³, of each vessel from outside the plant
 	reversals         [][]Reversal
 	open              []bool // the last reversal of the line still runs
 }
 
 func newLedger(s *system) *ledger {
 	nl := len(s.lines)
-	return &ledger{forward: make([]float64, nl), backward: make([]float64, nl), z: make([]float64, s.m), inflow: make([]float64, len(s.stations)),
+	return &ledger{forward: make([]float64, nl), backward: make([]float64, nl), z: make([]float64, s.m),
 		reversals: make([][]Reversal, nl), open: make([]bool, nl)}
 }
 
@@ -21,7 +20,6 @@ func (b *ledger) reset() {
 	clear(b.forward)
 	clear(b.backward)
 	clear(b.z)
-	clear(b.inflow)
 	clear(b.open)
 	for i := range b.reversals {
 		b.reversals[i] = nil

@@ -67,6 +67,9 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 func (s *system) lineariseVessel(i int, lin *integrate.Linear) {
 	st, r := &s.stations[i], &s.rims[i]
 	lin.DfDt[i] += st.inflowRate
+	if st.inflowZ >= 0 {
+		lin.DgDt[st.inflowZ] = st.inflowRate
+	}
 	if st.spillV != 0 {
 		lin.DfDy[r.own] -= st.spillV
 		if r.other >= 0 {

@@ -105,7 +105,8 @@ func (o *observer) start() {
 	sim.fill(&o.now, sim.t, sim.solver.Y(), o.f)
 	copy(o.now.z, sim.solver.Z())
 	copy(sim.y, sim.solver.Y())
-	o.note(&o.now, 2)
+	o.note(&o.now)
+	o.look(&o.now, 2)
 	for _, m := range o.trackers {
 		m.resume(o)
 	}
@@ -124,14 +125,12 @@ func (o *observer) step(out *integrate.Outcome) {
 	for _, m := range o.trackers {
 		m.v[0] = m.v[2]
 	}
-	half := out.T0 + (out.T-out.T0)/2
-	o.at(&o.mid, half)
-	o.note(&o.mid, 1)
-	o.samples(out)
-	sim.fill(&o.now, out.T, sim.y, o.f)
-	copy(o.now.z, sim.solver.Z())
-	o.note(&o.now, 2)
+	o.here(out.T)
+	o.note(&o.now)
+	o.look(&o.now, 2)
 	o.regime() // while the system stands at the end of the step: what follows looks about within it
+	o.middle(out.T0 + (out.T-out.T0)/2)
+	o.samples(out)
 	o.between(&o.prev, &o.mid)
 	o.between(&o.mid, &o.now)
 	o.peaks()
@@ -174,8 +173,48 @@ func (o *observer) at(w *snapshot, t float64) {
 	sim.solver.EvalZ(t, w.z)
 }
 
-// note takes the values at a snapshot that belongs to the present state of the system; k is 1 in the middle and 2 at the end of a step.
-func (o *observer) note(w *snapshot, k int) {
+// here fills o.now with the end of the step. The solver's own rates there serve: its next step begins with them.
+func (o *observer) here(t float64) {
+	sim, s := o.sim, o.sim.sys
+	w := &o.now
+	f, g := sim.solver.Rates()
+	w.t = t
+	copy(w.q, g[:len(s.lines)])
+	copy(w.dv, f)
+	copy(w.z, sim.solver.Z())
+	for i := range s.stations {
+		st := &s.stations[i]
+		w.level[i], w.gas[i], w.spill[i] = st.level, st.gas, st.spill
+	}
+}
+
+// middle fills o.mid from the polynomials of the step: near enough to tell where an extreme lies, which is then looked for with the laws themselves.
+func (o *observer) middle(t float64) {
+	sim, s, d, w := o.sim, o.sim.sys, o.sim.solver.Dense(), &o.mid
+	w.t = t
+	for i := range w.z {
+		w.z[i] = d.OneZ(i, t)
+	}
+	for i := range w.q {
+		w.q[i] = d.RateZ(i, t)
+		a, b := o.prev.q[i], o.now.q[i]
+		if crest := len(s.lines[i].crowns) > 0; crest || w.q[i] < 0 && a >= 0 && b >= 0 || w.q[i] > 0 && a <= 0 && b <= 0 {
+			w.q[i] = sim.flowAt(i, t) // a turn and back within the step, if it is no rounding of the polynomial
+			if crest {
+				o.crest[i].see(s.crestHead(i), t)
+			}
+		}
+	}
+	for i := range s.stations {
+		w.dv[i] = d.Rate(i, t)
+		st := sim.lookAt(i, t)
+		w.level[i], w.gas[i], w.spill[i] = st.level, st.gas, st.spill
+	}
+	o.look(w, 1)
+}
+
+// note takes the values at a snapshot that belongs to the present state of the system.
+func (o *observer) note(w *snapshot) {
 	s := o.sim.sys
 	for i := range o.level {
 		o.level[i].see(w.level[i], w.t)
@@ -190,6 +229,10 @@ func (o *observer) note(w *snapshot, k int) {
 			o.crest[i].see(s.crestHead(i), w.t)
 		}
 	}
+}
+
+// look evaluates what is followed; k is 1 in the middle and 2 at the end of a step.
+func (o *observer) look(w *snapshot, k int) {
 	for _, m := range o.trackers {
 		m.v[k] = m.probe.value(o.sim, w)
 	}
@@ -227,11 +270,12 @@ func (o *observer) peaks() {
 
 // refine looks for an extreme between a, the middle and b where the middle is beyond both ends.
 func (e *extreme) refine(a, b, va, vm, vb float64, f func(float64) float64) {
-	up := vm > va && vm > vb && vm-math.Max(va, vb) > 1e-12*math.Abs(vm)
-	down := vm < va && vm < vb && math.Min(va, vb)-vm > 1e-12*math.Abs(vm)
+	up := vm > va && vm > vb && vm-math.Max(va, vb) > 1e-9*math.Abs(vm)
+	down := vm < va && vm < vb && math.Min(va, vb)-vm > 1e-9*math.Abs(vm)
 	if !up && !down {
 		return
 	}
+	vm = f(a + (b-a)/2)
 	sign := 1.0
 	if down {
 		sign = -1

@@ -11,7 +11,7 @@ func (m *Model) Reload() error {
 	for i := range s.stations {
 		old := &s.stations[i]
 		st := newStation(old.plan, m.plan)
-		st.spillTo, st.massRow = old.spillTo, old.massRow
+		st.spillTo, st.massRow, st.inflowZ = old.spillTo, old.massRow, old.inflowZ
 		s.stations[i] = st
 	}
 	for i := range s.outside {

@@ -96,15 +96,23 @@ func (o *observer) samples(out *integrate.Outcome) {
 	if !o.keep {
 		return
 	}
-	for o.next < out.T {
+	for o.next < out.T || o.next == out.T && out.Stop == integrate.Stepped {
 		o.at(&o.sample, o.next)
+		o.smooth(&o.sample)
 		o.record(&o.sample)
 		o.advance()
 	}
-	if o.next == out.T && out.Stop == integrate.Stepped {
-		o.at(&o.sample, o.next)
-		o.record(&o.sample)
-		o.advance()
+}
+
+// smooth takes the flows of lines at tees from the polynomials of their volumes: within a step the pressure of a tee is good to its tolerance only,
+// which may be much against a small flow.
+func (o *observer) smooth(w *snapshot) {
+	s, d := o.sim.sys, o.sim.solver.Dense()
+	for i := range s.lines {
+		if s.lines[i].gmin > 0 {
+			w.q[i] = d.RateZ(i, w.t)
+			o.flow[i].see(w.q[i], w.t)
+		}
 	}
 }
 

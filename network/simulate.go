@@ -161,7 +161,6 @@ func (sim *simulation) run(ctx context.Context, opt *RunOptions) error {
 
 // segment steps until the segment's end or an event.
 func (sim *simulation) segment(ctx context.Context, stop float64, opt *RunOptions) (hit []int, err error) {
-	t0 := sim.t
 	for {
 		out, err := sim.solver.Step(stop, sim.watch)
 		if err != nil {
@@ -174,16 +173,13 @@ func (sim *simulation) segment(ctx context.Context, stop float64, opt *RunOption
 			opt.Progress(sim.t / sim.plan.RunFor)
 		}
 		if out.Stop != integrate.Stepped {
-			sim.bookInflow(t0, sim.t)
 			return out.Fired, nil
 		}
 		if sim.atRest() {
-			sim.bookInflow(t0, sim.t)
 			sim.stopped = "at_rest"
 			return nil, nil
 		}
 		if ctx.Err() != nil {
-			sim.bookInflow(t0, sim.t)
 			sim.stopped = "interrupted"
 			return nil, context.Cause(ctx)
 		}
@@ -247,15 +243,6 @@ func (sim *simulation) settleActions() {
 		if !a && !b {
 			return
 		}
-	}
-}
-
-// bookInflow adds what came in from t0 to t1 while the inflows ran straight.
-func (sim *simulation) bookInflow(t0, t1 float64) {
-	for i := range sim.sys.stations {
-		st := &sim.sys.stations[i]
-		d := t1 - t0
-		sim.led.inflow[i] += (st.inflow + st.inflowRate*d/2) * d
 	}
 }
 

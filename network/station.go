@@ -27,6 +27,7 @@ type station struct {
 	airways []airway
 
 	inflow, inflowRate float64 // m³/s at the segment's start and its slope, m³/s²
+	inflowZ            int     // its integral; -1 where nothing ever comes in
 
 	level   float64 // m above base
 	slope   float64 // dh/dV, 1/m²
@@ -48,7 +49,7 @@ type ventAt struct {
 const rimCoefficient = 1.7
 
 func newStation(v *Vessel, p *Plant) station {
-	st := station{plan: v, shape: v.Shape, base: v.Base, rim: v.RimLevel(), rimLen: v.RimLength, spillTo: -1, massRow: -1, gas: p.Atmosphere}
+	st := station{plan: v, shape: v.Shape, base: v.Base, rim: v.RimLevel(), rimLen: v.RimLength, spillTo: -1, inflowZ: -1, massRow: -1, gas: p.Atmosphere}
 	st.full, _ = v.Shape.Volume(v.Shape.Height())
 	if math.IsNaN(st.rimLen) {
 		st.rimLen = v.Shape.Perimeter(st.rim)

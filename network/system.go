@@ -11,7 +11,7 @@ import (
 // system is a compiled plant as M y' = f(t, y) with integrals z' = g(t, y).
 //
 //	unknowns:  volumes of the vessels, m³ · gas masses of vented covers, kg · total pressures of the tees, Pa · flows of inertial lines, m³/s
-//	integrals: volumes passed by the lines, m³ · volumes spilled over the rims, m³
+//	integrals: volumes passed by the lines, m³ · volumes spilled over the rims, m³ · volumes that came in from outside, m³
 //
 // Volume is conserved by construction: the flow that is subtracted at one end of a line is the one that is added at the other.
 type system struct {
@@ -124,6 +124,9 @@ func (s *system) addVessel(i int, t float64, f, g []float64, lin *integrate.Line
 		f[st.spillTo] += st.spill
 	}
 	g[len(s.lines)+i] = st.spill
+	if st.inflowZ >= 0 {
+		g[st.inflowZ] = st.inflow + st.inflowRate*(t-s.t0)
+	}
 	if st.massRow >= 0 {
 		for k := range st.vents {
 			v := &st.vents[k]

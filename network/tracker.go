@@ -53,14 +53,16 @@ func (m *tracker) step(o *observer) {
 	a, b := &o.prev, &o.now
 	g := func(t float64) float64 { return m.sign * m.valueAt(o, t) }
 	g0, g1, g2 := m.sign*m.v[0], m.sign*m.v[1], m.sign*m.v[2]
-	top, topAt := g1, o.mid.t
+	top, topAt := math.Inf(-1), o.mid.t
 	switch i := m.level(); {
 	case i >= 0 && a.dv[i]*b.dv[i] < 0:
 		d := o.sim.solver.Dense()
 		topAt = bisect(a.t, b.t, a.dv[i] < 0, func(t float64) float64 { return d.Rate(i, t) })
 		top = g(topAt)
 	case g1 > g0 && g1 > g2:
-		topAt, top = summit(a.t, b.t, g0, g1, g2, g)
+		topAt, top = summit(a.t, b.t, g0, g(o.mid.t), g2, g)
+	default:
+		topAt = a.t
 	}
 	if math.IsNaN(m.first) && math.Max(top, g2) > m.slack {
 		lo, hi := a.t, b.t
