@@ -16,6 +16,14 @@ type Local struct {
 	Strength float64 // share of head or rate that a pump has left; 0 is taken as all
 	Leak     float64 // share of Kv that a check valve passes in reverse, where it does not state more itself
 	Band     float64 // Pa: drop under which a quadratic loss is made linear through zero (see Quadratic)
+
+	opened memo // of a valve's opening: what its trim makes of it
+}
+
+// memo keeps the last value of a function of the opening, which stands still most of the time.
+type memo struct {
+	known          bool
+	at, phi, slope float64
 }
 
 // Place is where a part stands in its line; the line tells it once, before Ready.

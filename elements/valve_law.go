@@ -22,18 +22,27 @@ func (e *valve) Opens(x float64) (phi, slope float64) {
 	return e.law.least + (1-e.law.least)*phi, (1 - e.law.least) * slope
 }
 
+// opened is Opens at the present travel, worked out once for each.
+func (e *valve) opened(at *Local) (phi, slope float64) {
+	if m := &at.opened; !m.known || m.at != at.Opening {
+		m.phi, m.slope = e.Opens(at.Opening)
+		m.known, m.at = true, at.Opening
+	}
+	return at.opened.phi, at.opened.slope
+}
+
 // leastShare is the share of Kv below which a valve counts as shut.
 const leastShare = 1e-7
 
 func (e *valve) Drop(q float64, at *Local) (dp, slope float64) {
-	phi, _ := e.Opens(at.Opening)
+	phi, _ := e.opened(at)
 	dp, slope, _ = e.drop(q, max(phi, leastShare), at)
 	return dp, slope
 }
 
 // DropByOpening returns ∂Δp/∂x, Pa, at flow q. Δp depends on q/φ, and through F_R on Re_v ∝ q/√φ, which gives it from the slope by q.
 func (e *valve) DropByOpening(q float64, at *Local) float64 {
-	phi, byX := e.Opens(at.Opening)
+	phi, byX := e.opened(at)
 	phi = max(phi, leastShare)
 	dp, slope, bend := e.drop(q, phi, at)
 	return (e.bends(q, phi, at) - q*slope - bend*dp) / phi * byX

@@ -59,7 +59,7 @@ func (m *tracker) step(o *observer) {
 		d := o.sim.solver.Dense()
 		topAt = bisect(a.t, b.t, a.dv[i] < 0, func(t float64) float64 { return d.Rate(i, t) })
 		top = g(topAt)
-	case g1 > g0 && g1 > g2:
+	case g1 > g0 && g1 > g2 && m.matters(g0, g1, g2):
 		topAt, top = summit(a.t, b.t, g0, g(o.mid.t), g2, g)
 	default:
 		topAt = a.t
@@ -75,6 +75,13 @@ func (m *tracker) step(o *observer) {
 	}
 	m.see(top, topAt)
 	m.see(g2, b.t)
+}
+
+// matters tells that a summit near the middle value g1 may be a new greatest value, or bring the condition about: a parabola through the three rises
+// over its middle by an eighth of what that is over the lower end, at most; twice that is allowed.
+func (m *tracker) matters(g0, g1, g2 float64) bool {
+	top := g1 + (g1-math.Min(g0, g2))/4
+	return top > m.most || top > m.slack && math.IsNaN(m.first)
 }
 
 // level returns the vessel whose level the tracker follows, or -1.
