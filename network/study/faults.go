@@ -3,6 +3,7 @@ package study
 import (
 	"fmt"
 	"maps"
+	"strings"
 
 	"headfall/network"
 )
@@ -14,6 +15,11 @@ type fault struct {
 	says   string
 	at     float64 // s from which the plant is not as planned
 	ch     network.Changes
+}
+
+// latent tells that a fault stands from the start without being seen.
+func (f *fault) latent() bool {
+	return f.at == 0 && !strings.HasPrefix(f.kind, "step_") && !strings.HasPrefix(f.kind, "hold_")
 }
 
 // faultsOf lists what can go wrong with a plan, given how it runs: steps, valves, pumps, vents, check valves, strainers.

@@ -93,11 +93,14 @@ func (row *DrillRow) tell(r, plan *network.Result, f *fault) {
 	row.act(r, plan, f, l)
 }
 
-// act works out how long there is to act, from the first alarm that comes before some limit fails, else from the fault. An alarm at the very level of a
-// limit warns of what fails next.
+// act works out how long there is to act, from the first alarm that comes before some limit fails, else from the fault; one that stands unseen from the
+// start counts from the last step before the failure. An alarm at the very level of a limit warns of what fails next.
 func (row *DrillRow) act(r, plan *network.Result, f *fault, first *network.LimitResult) {
 	since, until := f.at, first
 	row.Since = "the fault"
+	if f.latent() {
+		since, row.Since = shows(r, since, *first.FirstFail, row.Since)
+	}
 	if a := warned(r, f.at, *first.FirstFail); a != nil {
 		if next := firstAfter(r, plan, *a.At+finest); next != nil {
 			since, until = *a.At, next
@@ -109,6 +112,17 @@ func (row *DrillRow) act(r, plan *network.Result, f *fault, first *network.Limit
 	} else {
 		row.Since = ""
 	}
+}
+
+// shows returns the last step done before a time: what stood unseen until then shows when something is moved.
+func shows(r *network.Result, from, before float64, fault string) (since float64, what string) {
+	since, what = from, fault
+	for _, s := range r.Steps {
+		if s.Done != nil && *s.Done > since && *s.Done < before {
+			since, what = *s.Done, "step "+s.ID
+		}
+	}
+	return since, what
 }
 
 // headroom finds the vessel with the least room to its rim.

@@ -136,7 +136,7 @@ func (s *studied) rehearsal(r *study.DrillRow) {
 	} else if r.Headroom != nil && *r.Headroom >= 0 {
 		said = append(said, "least headroom "+keep(s.units.LevelOf(*r.Headroom, Down))+" in "+r.WorstVessel)
 	}
-	if r.TimeToAct != nil && r.Since != "the fault" {
+	if r.TimeToAct != nil && strings.HasPrefix(r.Since, "alarm") {
 		said = append(said, s.answered(r))
 	}
 	s.put(label, "%s%s", when, join(said, "; "))
