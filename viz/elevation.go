@@ -37,9 +37,8 @@ func (k *canvas) y(z float64) float64 { return headroomPx + labelPx + (k.top-z)*
 // picture is the drawing with what playback needs to move it.
 type picture struct {
 	SVG      template.HTML
-	Width    string
-	Height   string
 	Squeezed bool
+	Broad    bool // too wide to be read on upright paper
 	Live     live
 }
 
@@ -79,7 +78,7 @@ func elevation(plant *network.Plant, r *network.Result, u units, c clock) pictur
 		}
 	}
 	d.end("svg")
-	return picture{d.done(), px(k.width), px(k.height), k.squeezed, l}
+	return picture{SVG: d.done(), Squeezed: k.squeezed, Broad: k.width > 1100, Live: l}
 }
 
 // choose finds the extent in height and the scale: the smallest vessel must stay readable and the sheet of a handy size.

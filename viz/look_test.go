@@ -52,6 +52,19 @@ func TestQuiet(t *testing.T) {
 	}
 }
 
+// TestPrintLarge prints forty vessels: the drawing takes a page of its own across.
+func TestPrintLarge(t *testing.T) {
+	b := openTab(t, render(t, large(t, 600)), 1200, 900)
+	pdf, err := chromedp.Run(b.ctx, chromedp.PrintToPDF(chromedp.PDFPreferCSSPageSize()))
+	if err != nil {
+		t.Fatal(err)
+	}
+	if dir := os.Getenv("VIZ_OUT"); dir != "" {
+		os.WriteFile(filepath.Join(dir, "large.pdf"), pdf, 0o644)
+	}
+	b.clean()
+}
+
 func TestPrint(t *testing.T) {
 	b := openTab(t, render(t, cascade(t)), 1200, 900, media("prefers-color-scheme", "dark"))
 	pdf, err := chromedp.Run(b.ctx, chromedp.PrintToPDF(chromedp.PDFPreferCSSPageSize()))

@@ -8,7 +8,7 @@
   var D = read("data"), L = read("live"), NONE = "–";
 
   // ---- series: places in the list of moments as differences, values in SI
-  var S = {};
+  var S = Object.create(null);
   Object.keys(D.series).forEach(function (key) {
     var s = D.series[key], at = 0;
     S[key] = { t: s.i.map(function (d) { at += d; return D.t[at]; }), v: s.v, c: s.c };
@@ -190,7 +190,7 @@
   }
   function tip(u) {
     return function (ps) {
-      var box = doc.createElement("div"), head = doc.createElement("p"), table = doc.createElement("table"), t = back(ps[0].axisValue), seen = {};
+      var box = doc.createElement("div"), head = doc.createElement("p"), table = doc.createElement("table"), t = back(ps[0].axisValue), seen = Object.create(null);
       box.className = "tip"; head.textContent = clock(Math.min(Math.max(t, 0), D.end)); box.appendChild(head); box.appendChild(table);
       ps.forEach(function (p) {
         if (!S[p.seriesId] || seen[p.seriesId]) return;
@@ -202,7 +202,7 @@
     };
   }
   function finish(o, el) {
-    var u = D.units[el.dataset.unit], colors = dark() ? DARK : LIGHT, order = {}, n = 0, narrow = narrowed(el);
+    var u = D.units[el.dataset.unit], colors = dark() ? DARK : LIGHT, order = Object.create(null), n = 0, narrow = narrowed(el);
     var INK = ink("--ink"), SOFT = ink("--soft"), HAIR = ink("--hair"), font = ink("--sans");
     o.useUTC = true; o.color = colors; o.backgroundColor = "transparent"; o.textStyle = { fontFamily: font, color: INK, fontSize: 12 };
     o.title = { show: false }; o.toolbox = { show: false }; o.animation = false;
