@@ -8,6 +8,13 @@ import (
 
 // begin puts what a run may have changed in the system back to the plan.
 func (s *system) begin(ch *Changes) {
+	for i := range s.outside {
+		b := &s.outside[i]
+		if rows := Rows(b.point.Surface); len(rows) > 0 {
+			b.start, b.rate = rows.piece(0)
+			b.surface = b.start
+		}
+	}
 	for i := range s.stations {
 		st := &s.stations[i]
 		for k := range st.vents {
