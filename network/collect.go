@@ -83,16 +83,6 @@ func (sim *simulation) vesselResults(r *Result) {
 			x.HeadroomTo.Alarm = opt(a - x.PeakLevel)
 		}
 		x.In, x.Out = sim.inflow(i), 0
-		for k, l := range s.lines {
-			in, out := 0.0, 0.0
-			if l.to.kind == toVessel && l.to.at == i {
-				in, out = sim.led.forward[k], sim.led.backward[k]
-			}
-			if l.from.kind == toVessel && l.from.at == i {
-				in, out = in+sim.led.backward[k], out+sim.led.forward[k]
-			}
-			x.In, x.Out = x.In+in, x.Out+out
-		}
 		if x.Spilled > 0 {
 			x.FirstSpill, x.SpillEnds = opt(o.rims[i].first), opt(o.spilled[i])
 		}
@@ -101,7 +91,19 @@ func (sim *simulation) vesselResults(r *Result) {
 		}
 		r.Vessels[v.Tag] = x
 	}
-	for i, st := range s.stations {
+	for k := range s.lines {
+		l := &s.lines[k]
+		if l.to.kind == toVessel {
+			x := r.Vessels[sim.plan.Vessels[l.to.at].Tag]
+			x.In, x.Out = x.In+sim.led.forward[k], x.Out+sim.led.backward[k]
+		}
+		if l.from.kind == toVessel {
+			x := r.Vessels[sim.plan.Vessels[l.from.at].Tag]
+			x.In, x.Out = x.In+sim.led.backward[k], x.Out+sim.led.forward[k]
+		}
+	}
+	for i := range s.stations {
+		st := &s.stations[i]
 		if st.spillTo >= 0 {
 			r.Vessels[sim.plan.Vessels[st.spillTo].Tag].In += sim.led.z[len(s.lines)+i]
 		}
@@ -231,6 +233,9 @@ func (sim *simulation) pumpResults(r *Result) {
 	}
 }
 
+// leastBalance is the volume, m³, that the balance is measured against where a plant holds less: a millilitre.
+const leastBalance = 1e-6
+
 // balance closes the books: what was there and came in against what went out, spilled and is left.
 func (sim *simulation) balance(r *Result) {
 	b := &r.Balance
@@ -252,7 +257,5 @@ func (sim *simulation) balance(r *Result) {
 			b.Out -= r.Vessels[v.Tag].Spilled
 		}
 	}
-	if all := b.Start + b.In; all > 0 {
-		b.Relative = math.Abs(b.Start+b.In-b.Out-b.Spilled-b.Left) / all
-	}
+	b.Relative = math.Abs(b.Start+b.In-b.Out-b.Spilled-b.Left) / math.Max(b.Start+b.In, leastBalance)
 }
