@@ -26,15 +26,11 @@ func (o *observer) beyond() {
 
 // enters returns what enters outside point k at a snapshot, m³/s.
 func (o *observer) enters(k int, w *snapshot) (sum float64) {
-	s := o.sim.sys
-	for i := range s.lines {
-		l := &s.lines[i]
-		if l.to.outside() && l.to.at == k {
-			sum += w.q[i]
-		}
-		if l.from.outside() && l.from.at == k {
-			sum -= w.q[i]
-		}
+	for _, i := range o.sim.sys.outside[k].fed {
+		sum += w.q[i]
+	}
+	for _, i := range o.sim.sys.outside[k].drawn {
+		sum -= w.q[i]
 	}
 	return sum
 }

@@ -94,6 +94,7 @@ func (s *system) connect() error {
 			s.stations[i].spillTo = int32(k)
 		}
 	}
+	s.meetOutside()
 	s.addAirways()
 	s.shareTables()
 	return nil
@@ -163,9 +164,8 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 	c.row = -1
 	c.from, c.to = s.mouthOf(l, false), s.mouthOf(l, true)
 	c.locals = make([]elements.Local, len(l.Parts))
-	c.chain.band = s.gamma * joinHead
 	for i, f := range l.Parts {
-		c.locals[i] = elements.Local{Fluid: s.fluid, Gravity: s.plan.Gravity, Band: c.chain.band, Opening: 1, Strength: 1}
+		c.locals[i] = elements.Local{Fluid: s.fluid, Gravity: s.plan.Gravity, Opening: 1, Strength: 1}
 		if w, ok := f.Part.(elements.Crest); ok {
 			if i > 0 {
 				return fmt.Errorf("a weir must be the first part of its line")
@@ -191,10 +191,11 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 		s.addActuators(c, f, i, k)
 	}
 	c.setLeak(s.plan.Assume.CheckLeak)
-	s.endLosses(c)
 	if c.from.kind == toTee || c.to.kind == toTee {
 		c.gmin = weepage
 	}
+	s.setBand(c)
+	s.endLosses(c)
 	s.addFloors(c)
 	return nil
 }
@@ -251,6 +252,22 @@ func (s *system) shareTables() {
 		t := newFlowTable(&s.lines[group[0]].chain, tol)
 		for _, i := range group {
 			s.lines[i].table = t
+		}
+	}
+}
+
+// meetOutside notes which lines meet each outside point.
+func (s *system) meetOutside() {
+	for k := range s.outside {
+		s.outside[k].fed, s.outside[k].drawn = nil, nil
+	}
+	for i := range s.lines {
+		l := &s.lines[i]
+		if l.to.outside() {
+			s.outside[l.to.at].fed = append(s.outside[l.to.at].fed, int32(i))
+		}
+		if l.from.outside() {
+			s.outside[l.from.at].drawn = append(s.outside[l.from.at].drawn, int32(i))
 		}
 	}
 }

@@ -36,6 +36,7 @@ type line struct {
 	long     bool      // it has a pipe
 	clean    *unfouled // what it was before an upset fouled it; nil while it is clean
 	checks   bool      // it has a check valve
+	join     float64   // Pa over which a one-way end takes up flow
 	reach    float64   // pressure that drives the flow, in bands
 	lastDp   float64   // warm start of the chain
 	lastQ    float64
@@ -91,7 +92,7 @@ func (l *line) pass(a, b *end, gamma float64) {
 	onlyOn := l.oneWay || b.depth == never
 	onlyBack := a.depth == never
 	turn := 1.0 // slope of the one-way join
-	band := joinHead * gamma
+	band := l.join
 	switch {
 	case onlyOn && onlyBack:
 		l.q = 0
@@ -268,21 +269,28 @@ func (l *line) weep(a, b *end) {
 // surface at the crest.
 func (l *line) spill(a, b *end, gamma float64) {
 	z0 := l.crestZ
-	h := (a.phi-l.from.air)/gamma - z0
-	if a.depth == never {
-		h = never
-	}
+	h := a.depth // over the crest: the mouth's invert; gas over the liquid adds nothing to it
 	if len(l.chain.parts) == 0 && l.chain.fwd == 0 {
 		hd := (b.phi-l.to.air)/gamma - z0
+		vessel := l.to.kind == toVessel
+		if vessel {
+			hd = b.depth + l.to.invert - z0
+		}
 		if b.depth == never || b.depth < 0 {
 			hd = never
 		}
+		var byH, byHd float64
 		if h >= hd {
-			q, byH, byHd := l.weir.Spill(h, hd, l.weirAt)
-			l.q, l.byA, l.byB = q, byH/gamma, byHd/gamma
+			l.q, byH, byHd = l.weir.Spill(h, hd, l.weirAt)
 		} else {
-			q, byH, byHd := l.weir.Spill(hd, h, l.weirAt)
-			l.q, l.byB, l.byA = -q, -byH/gamma, -byHd/gamma
+			l.q, byHd, byH = l.weir.Spill(hd, h, l.weirAt)
+			l.q, byH, byHd = -l.q, -byH, -byHd
+		}
+		l.byYa = byH
+		if vessel {
+			l.byYb = byHd
+		} else {
+			l.byB = byHd / gamma
 		}
 		return
 	}
@@ -298,6 +306,6 @@ func (l *line) spill(a, b *end, gamma float64) {
 	}
 	c, s := l.flowAt(drive + l.zero)
 	v, byQ, byC := elements.Min(q, c)
-	l.q, l.byA, l.byB = v, byQ*byH/gamma, -byC*s*turn
+	l.q, l.byYa, l.byB = v, byQ*byH, -byC*s*turn
 	l.byT = byC * l.openingRate(c, s)
 }

@@ -242,13 +242,21 @@ func (o *observer) look(w *snapshot, k int) {
 func (o *observer) between(a, b *snapshot) {
 	s, d := o.sim.sys, o.sim.solver.Dense()
 	for i := range o.level {
-		if a.dv[i]*b.dv[i] >= 0 {
+		if a.dv[i]*b.dv[i] >= 0 || !o.level[i].beyond(a.level[i], b.level[i], math.Max(math.Abs(a.dv[i]), math.Abs(b.dv[i]))*(b.t-a.t)*s.stations[i].slope, a.dv[i] > 0) {
 			continue
 		}
-		t := bisect(a.t, b.t, a.dv[i] < 0, func(t float64) float64 { return d.Rate(i, t) })
+		t := turning(a.t, b.t, d.Rate(i, a.t), d.Rate(i, b.t), func(t float64) float64 { return d.Rate(i, t) })
 		h, _ := s.stations[i].shape.Level(d.One(i, t))
 		o.level[i].see(h, t)
 	}
+}
+
+// beyond tells that a turn between levels a and b, no further from them than reach, may be a new extreme: the highest or the lowest.
+func (e *extreme) beyond(a, b, reach float64, high bool) bool {
+	if high {
+		return math.Max(a, b)+reach > e.high
+	}
+	return math.Min(a, b)-reach < e.low
 }
 
 // peaks refines extremes of flow, spill and gas pressure that lie inside the step.

@@ -28,6 +28,7 @@ func (m *Model) Reload() error {
 			return m.anew()
 		}
 	}
+	s.meetOutside()
 	s.addAirways()
 	s.linkAirways()
 	s.shareTables()

@@ -18,6 +18,32 @@ func bisect(a, b float64, rising bool, f func(float64) float64) float64 {
 	return b
 }
 
+// turning returns where a smooth f, of values fa and fb of opposite signs at a and b, crosses zero between them: the rule of false position with
+// the Illinois halving (Dowell and Jarratt, BIT 11, 1971).
+func turning(a, b, fa, fb float64, f func(float64) float64) float64 {
+	for range 40 {
+		x := b - fb*(b-a)/(fb-fa)
+		if !(x > a && x < b) {
+			break
+		}
+		v := f(x)
+		if v == 0 || b-a < 1e-12*math.Abs(b) {
+			return x
+		}
+		if (v > 0) == (fb > 0) {
+			b, fb = x, v
+			fa /= 2
+		} else {
+			a, fa = x, v
+			fb /= 2
+		}
+		if math.Abs(v) < 1e-12*math.Max(math.Abs(fa), math.Abs(fb)) {
+			return x
+		}
+	}
+	return b
+}
+
 // summit returns the highest point of f between a and b, whose middle value vm is above va and vb: successive parabolas, each through the
 // highest point seen and its neighbours.
 func summit(a, b, va, vm, vb float64, f func(float64) float64) (t, v float64) {

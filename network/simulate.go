@@ -248,9 +248,6 @@ func (sim *simulation) settleActions() {
 
 // atRest tells that nothing flows, nothing changes and nothing is pending.
 func (sim *simulation) atRest() bool {
-	if !math.IsInf(sim.nextStop(), 1) {
-		return false
-	}
 	w := &sim.obs.now
 	for i := range sim.sys.stations {
 		if sim.sys.stations[i].inflow != 0 || math.Abs(w.dv[i]) > restFlow {
@@ -262,7 +259,7 @@ func (sim *simulation) atRest() bool {
 			return false
 		}
 	}
-	return true
+	return math.IsInf(sim.nextStop(), 1)
 }
 
 // restFlow is the flow, m³/s, under which nothing flows: a drop in a minute.

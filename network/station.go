@@ -108,7 +108,8 @@ type beyond struct {
 	surface float64 // m over datum now
 	rate    float64 // m/s
 	start   float64 // surface at the segment's start
-	since   float64
+	fed     []int32 // lines that end there
+	drawn   []int32 // lines that begin there
 }
 
 func (b *beyond) init(o *Outside, s *system) {
