@@ -17,15 +17,14 @@ type Contender struct {
 
 // CompareResult is what compare gives back: SI units, unit in the key.
 type CompareResult struct {
-	Schema   int             `json:"schema"`
-	Command  string          `json:"command"`
-	ExitCode int             `json:"exit_code"`
-	Complete bool            `json:"complete"`
-	Limits   []string        `json:"limits"`  // under which all are judged
-	Outside  []string        `json:"outside"` // points of the columns
-	Rows     []*ComparedPlan `json:"rows"`
-	Best     string          `json:"best"` // of those that run the one that ends first; "" for none
-	Notes    []string        `json:"notes"`
+	Schema  int    `json:"schema"`
+	Command string `json:"command"`
+	Ending
+	Limits  []string        `json:"limits"`  // under which all are judged
+	Outside []string        `json:"outside"` // points of the columns
+	Rows    []*ComparedPlan `json:"rows"`
+	Best    string          `json:"best"` // of those that run the one that ends first; "" for none
+	Notes   []string        `json:"notes"`
 }
 
 // ComparedPlan is one row.
@@ -52,7 +51,7 @@ type ComparedPlan struct {
 // Compare judges several plans under the same limits: those of the first, where the plans are of different files. A plan whose calculation cannot
 // finish is a row that is not judged. With an error that is ctx's cause the rows so far are kept.
 func Compare(ctx context.Context, plans []Contender, opt Options) (*CompareResult, error) {
-	res := &CompareResult{Schema: 1, Command: "compare", ExitCode: 1, Rows: []*ComparedPlan{}, Limits: []string{}, Outside: []string{}, Notes: []string{}}
+	res := &CompareResult{Schema: 1, Command: "compare", Ending: Ending{ExitCode: 1}, Rows: []*ComparedPlan{}, Limits: []string{}, Outside: []string{}, Notes: []string{}}
 	first, err := plans[0].Load()
 	if err != nil {
 		return nil, err

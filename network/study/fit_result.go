@@ -16,12 +16,11 @@ const (
 
 // FitResult is what a fit gives back: SI units, unit in the key.
 type FitResult struct {
-	Schema    int                `json:"schema"`
-	Command   string             `json:"command"`
-	Scenario  network.Scenario   `json:"scenario"`
-	Verdict   string             `json:"verdict"`
-	ExitCode  int                `json:"exit_code"`
-	Complete  bool               `json:"complete"`
+	Schema   int              `json:"schema"`
+	Command  string           `json:"command"`
+	Scenario network.Scenario `json:"scenario"`
+	Verdict  string           `json:"verdict"`
+	Ending
 	Values    []*FittedValue     `json:"values"`
 	Used      int                `json:"readings_used"`
 	Of        int                `json:"readings"`
@@ -95,7 +94,7 @@ const (
 
 // result puts together what least squares found.
 func (f *fitter) result(s *solved) *FitResult {
-	res := &FitResult{Schema: 1, Command: "fit", Complete: true, Scenario: scenarioOf(f.plant), Of: len(s.r), Scatter: rms(s.r, s.w, len(s.x)),
+	res := &FitResult{Schema: 1, Command: "fit", Ending: Ending{Complete: true}, Scenario: scenarioOf(f.plant), Of: len(s.r), Scatter: rms(s.r, s.w, len(s.x)),
 		Pairs: []Pair{}, Warnings: []string{}, Range: map[string]*Tested{}, Verdict: Fitted}
 	b := certaintyOf(s)
 	res.Together = b.persistence
@@ -180,3 +179,6 @@ func scenarioOf(p *network.Plant) network.Scenario {
 	}
 	return s
 }
+
+// Tags lists the vessels that were read, in the order of their tags.
+func (r *FitResult) Tags() []string { return sortedKeys(r.Range) }

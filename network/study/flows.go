@@ -14,15 +14,15 @@ type FlowsResult struct {
 	Schema   int              `json:"schema"`
 	Command  string           `json:"command"`
 	Scenario network.Scenario `json:"scenario"`
-	ExitCode int              `json:"exit_code"`
-	Valve    string           `json:"valve"`
-	Line     string           `json:"line"`
-	At       float64          `json:"at_s"` // moment of the plan whose line-up is taken: the valve's first move
-	Heads    []LevelSet       `json:"heads"`
-	Rows     []InstalledFlow  `json:"rows"`
-	Turns    *float64         `json:"turns"` // of full travel
-	HalfAt   *float64         `json:"half_flow_at"`
-	Notes    []string         `json:"notes"`
+	Ending
+	Valve  string          `json:"valve"`
+	Line   string          `json:"line"`
+	At     float64         `json:"at_s"` // moment of the plan whose line-up is taken: the valve's first move
+	Heads  []LevelSet      `json:"heads"`
+	Rows   []InstalledFlow `json:"rows"`
+	Turns  *float64        `json:"turns"` // of full travel
+	HalfAt *float64        `json:"half_flow_at"`
+	Notes  []string        `json:"notes"`
 }
 
 // LevelSet is the levels of one column.
@@ -57,7 +57,7 @@ func Flows(ctx context.Context, load Load, opt Options, valve string) (*FlowsRes
 	if line == nil {
 		return nil, Misuse{fmt.Errorf("there is no valve %q; there are %s", valve, valvesOf(plant))}
 	}
-	res := &FlowsResult{Schema: 1, Command: "flows", ExitCode: 3, Scenario: scenarioOf(plant), Valve: valve, Line: line.Tag, Notes: []string{}}
+	res := &FlowsResult{Schema: 1, Command: "flows", Ending: Ending{ExitCode: 3}, Scenario: scenarioOf(plant), Valve: valve, Line: line.Tag, Notes: []string{}}
 	runner := &Runner{Load: load, Model: opt.model(), Workers: opt.Workers}
 	bench, err := runner.Bench(ctx)
 	if err != nil {
@@ -89,7 +89,7 @@ func Flows(ctx context.Context, load Load, opt Options, valve string) (*FlowsRes
 		}
 	}
 	res.look()
-	res.ExitCode = 0
+	res.ExitCode, res.Complete = 0, true
 	return res, nil
 }
 

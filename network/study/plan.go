@@ -13,22 +13,21 @@ type FoundPlan struct {
 	Schema   int              `json:"schema"`
 	Command  string           `json:"command"`
 	Scenario network.Scenario `json:"scenario"`
-	ExitCode int              `json:"exit_code"`
-	Complete bool             `json:"complete"`
-	Found    bool             `json:"found"`
-	Verdict  network.Verdict  `json:"verdict"` // of the plan found, judged with the doubts
-	Finish   *float64         `json:"finish_s"`
-	Low      *float64         `json:"finish_low_s"` // band, 5 and 95 %
-	High     *float64         `json:"finish_high_s"`
-	Empties  []string         `json:"empties"` // vessels whose emptying is the finish
-	Steps    []PlannedStep    `json:"steps"`
-	Binds    []Bind           `json:"binds"`
-	Tightest *Margin          `json:"smallest_margin"`
-	Written  Written          `json:"as_written"`
-	Fails    []string         `json:"fails"` // where nothing was found: what could not be met
-	Set      []string         `json:"set"`   // as --set of run would have it
-	Searched int              `json:"plans_tried"`
-	Judged   int              `json:"plans_judged"`
+	Ending
+	Found    bool            `json:"found"`
+	Verdict  network.Verdict `json:"verdict"` // of the plan found, judged with the doubts
+	Finish   *float64        `json:"finish_s"`
+	Low      *float64        `json:"finish_low_s"` // band, 5 and 95 %
+	High     *float64        `json:"finish_high_s"`
+	Empties  []string        `json:"empties"` // vessels whose emptying is the finish
+	Steps    []PlannedStep   `json:"steps"`
+	Binds    []Bind          `json:"binds"`
+	Tightest *Margin         `json:"smallest_margin"`
+	Written  Written         `json:"as_written"`
+	Fails    []string        `json:"fails"` // where nothing was found: what could not be met
+	Set      []string        `json:"set"`   // as --set of run would have it
+	Searched int             `json:"plans_tried"`
+	Judged   int             `json:"plans_judged"`
 
 	Result *network.Result `json:"-"`
 }
@@ -130,7 +129,7 @@ func newPlanning(load Load, opt Options) (*planning, error) {
 	if p.must = mustEmpty(p.plant); len(p.must) == 0 {
 		return nil, Misuse{errors.New("it is not known what the plan is to empty: state a limit, as {emptied: T-1, within: 4 h}")}
 	}
-	p.res = &FoundPlan{Schema: 1, Command: "plan", Scenario: scenarioOf(p.plant), ExitCode: 3, Verdict: network.NotJudged, Empties: p.must,
+	p.res = &FoundPlan{Schema: 1, Command: "plan", Scenario: scenarioOf(p.plant), Ending: Ending{ExitCode: 3}, Verdict: network.NotJudged, Empties: p.must,
 		Steps: []PlannedStep{}, Binds: []Bind{}, Fails: []string{}, Set: []string{}}
 	return p, nil
 }

@@ -29,7 +29,7 @@ func marginShare(l *network.LimitResult) float64 {
 func tightest(limits []*network.LimitResult) *network.LimitResult {
 	var least *network.LimitResult
 	for _, l := range limits {
-		if l.Margin == nil {
+		if l.Margin == nil || l.BoundSI == nil && l.Verdict != network.Fails { // hours of flow hold or do not: there is nothing between
 			continue
 		}
 		if least == nil || gravity(l) < gravity(least) || gravity(l) == gravity(least) && marginShare(l) < marginShare(least) {

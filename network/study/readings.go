@@ -146,29 +146,33 @@ func (in *readingsReader) row(record []string, row int) {
 	}
 }
 
-// time reads a moment, s from the start.
+// time reads a moment, s from the start; bare numbers are in the unit of the header.
 func (in *readingsReader) time(cell string) (float64, error) {
 	cell = strings.TrimSpace(cell)
-	start := in.plant.Start
-	if quantity.LooksLikeClock(cell) {
-		c, err := quantity.ParseClock(cell)
-		if err != nil {
-			return 0, err
-		}
-		if start.IsZero() {
-			return 0, fmt.Errorf("%q is a clock time, and the plan has no start; write how long after it", cell)
-		}
-		return c.Elapsed(start), nil
-	}
-	if at, err := quantity.ParseDateTime(cell); err == nil {
-		if start.IsZero() {
-			return 0, fmt.Errorf("%q is a date, and the plan has no start; write how long after it", cell)
-		}
-		return at.Sub(start).Seconds(), nil
-	}
 	if in.unit != "" && strings.Trim(cell, "0123456789.+-eE") == "" {
 		cell += " " + in.unit
 	}
-	v, err := quantity.ParseTime(cell)
+	return MomentOf(in.plant, cell)
+}
+
+// MomentOf reads a moment of a plan, s from its start: a clock, a date with a clock, or how long after the start.
+func MomentOf(p *network.Plant, text string) (float64, error) {
+	if quantity.LooksLikeClock(text) {
+		c, err := quantity.ParseClock(text)
+		if err != nil {
+			return 0, err
+		}
+		if p.Start.IsZero() {
+			return 0, fmt.Errorf("%q is a clock time, and the plan has no start; write how long after it", text)
+		}
+		return c.Elapsed(p.Start), nil
+	}
+	if at, err := quantity.ParseDateTime(text); err == nil {
+		if p.Start.IsZero() {
+			return 0, fmt.Errorf("%q is a date, and the plan has no start; write how long after it", text)
+		}
+		return at.Sub(p.Start).Seconds(), nil
+	}
+	v, err := quantity.ParseTime(text)
 	return v.SI, err
 }

@@ -23,24 +23,23 @@ type SizeResult struct {
 	Schema   int              `json:"schema"`
 	Command  string           `json:"command"`
 	Scenario network.Scenario `json:"scenario"`
-	ExitCode int              `json:"exit_code"`
-	Complete bool             `json:"complete"`
-	Found    bool             `json:"found"`
-	Name     string           `json:"name"`
-	Unit     string           `json:"unit_si"`
-	Looking  string           `json:"looking_for"` // largest | smallest
-	Value    *float64         `json:"value_si"`    // rounded to the safe side, and run again with the doubts
-	As       string           `json:"as_written"`
-	Edge     *float64         `json:"edge_si"` // where the plain run, without doubts, ceases to hold
-	EdgeAs   string           `json:"edge_as_written"`
-	Beyond   string           `json:"beyond"` // what does not hold past the edge
-	Holds    [][2]float64     `json:"holds_si"`
-	HoldsAs  []string         `json:"holds_as_written"`
-	Next     string           `json:"next_step_fails"` // why the next step is not taken
-	NextAs   string           `json:"next_step"`
-	Verdict  network.Verdict  `json:"verdict"` // of the plan at the value
-	Tightest *Margin          `json:"smallest_margin"`
-	Scan     []Tried          `json:"scan"`
+	Ending
+	Found    bool            `json:"found"`
+	Name     string          `json:"name"`
+	Unit     string          `json:"unit_si"`
+	Looking  string          `json:"looking_for"` // largest | smallest
+	Value    *float64        `json:"value_si"`    // rounded to the safe side, and run again with the doubts
+	As       string          `json:"as_written"`
+	Edge     *float64        `json:"edge_si"` // where the plain run, without doubts, ceases to hold
+	EdgeAs   string          `json:"edge_as_written"`
+	Beyond   string          `json:"beyond"` // what does not hold past the edge
+	Holds    [][2]float64    `json:"holds_si"`
+	HoldsAs  []string        `json:"holds_as_written"`
+	Next     string          `json:"next_step_fails"` // why the next step is not taken
+	NextAs   string          `json:"next_step"`
+	Verdict  network.Verdict `json:"verdict"` // of the plan at the value
+	Tightest *Margin         `json:"smallest_margin"`
+	Scan     []Tried         `json:"scan"`
 	Work     struct {
 		Runs   int `json:"runs"`
 		Judged int `json:"judged"`
@@ -131,7 +130,7 @@ func newSizing(load Load, opt SizeOptions) (*sizing, error) {
 			return nil, Misuse{fmt.Errorf("%s cannot be %s: it must be %s", s.number.Name, shown(s.plant, s.number, end), says)}
 		}
 	}
-	s.res = &SizeResult{Schema: 1, Command: "size", Scenario: scenarioOf(s.plant), ExitCode: 3, Name: s.number.Name, Unit: unitSI(s.number),
+	s.res = &SizeResult{Schema: 1, Command: "size", Scenario: scenarioOf(s.plant), Ending: Ending{ExitCode: 3}, Name: s.number.Name, Unit: unitSI(s.number),
 		Looking: "largest", Holds: [][2]float64{}, HoldsAs: []string{}, Scan: []Tried{}, Verdict: network.NotJudged}
 	if opt.Smallest {
 		s.res.Looking = "smallest"

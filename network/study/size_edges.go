@@ -22,7 +22,7 @@ func (s *sizing) refine(ctx context.Context) error {
 			}
 		}
 		s.res.Holds = append(s.res.Holds, [2]float64{e.low, e.high})
-		s.res.HoldsAs = append(s.res.HoldsAs, shown(s.plant, s.number, e.low)+" to "+shown(s.plant, s.number, e.high))
+		s.res.HoldsAs = append(s.res.HoldsAs, shownTo(s.plant, s.number, e.low, true)+" to "+shownTo(s.plant, s.number, e.high, false))
 		s.opt.Progress(0.3 + 0.2*float64(i+1)/float64(len(s.edges)))
 	}
 	return nil

@@ -40,7 +40,7 @@ func (s *sizing) note(e stretch) {
 	if s.opt.Smallest {
 		edge, why = e.low, e.lowWhy
 	}
-	s.res.Edge, s.res.EdgeAs, s.res.Beyond = &edge, shown(s.plant, s.number, edge), why
+	s.res.Edge, s.res.EdgeAs, s.res.Beyond = &edge, shownTo(s.plant, s.number, edge, s.opt.Smallest), why
 }
 
 // leastBad says why the best of the values that were tried does not hold.

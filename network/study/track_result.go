@@ -6,11 +6,10 @@ import (
 
 // TrackResult is what track gives back: SI units, unit in the key.
 type TrackResult struct {
-	Schema   int                       `json:"schema"`
-	Command  string                    `json:"command"`
-	Scenario network.Scenario          `json:"scenario"`
-	ExitCode int                       `json:"exit_code"`
-	Complete bool                      `json:"complete"`
+	Schema   int              `json:"schema"`
+	Command  string           `json:"command"`
+	Scenario network.Scenario `json:"scenario"`
+	Ending
 	Pace     string                    `json:"pace"` // on_plan | slow | fast | not_moving | not_known
 	Ratio    *float64                  `json:"rate_ratio"`
 	By       string                    `json:"rate_of"` // vessel that the pace is taken from
@@ -78,7 +77,7 @@ type TrackedReading struct {
 }
 
 func newTrackResult(t *tracking) *TrackResult {
-	return &TrackResult{Schema: 1, Command: "track", ExitCode: 3, Scenario: scenarioOf(t.plant), Now: t.now, Clock: clockOf(t.plant, t.now), Pace: "not_known",
+	return &TrackResult{Schema: 1, Command: "track", Ending: Ending{ExitCode: 3}, Scenario: scenarioOf(t.plant), Now: t.now, Clock: clockOf(t.plant, t.now), Pace: "not_known",
 		Vessels: map[string]*TrackedVessel{}, Fitted: []FittedOutlet{}, Suspects: []string{}, Done: []string{}, Rows: []TrackedReading{}, Plant: t.plant,
 		Forecast: Forecast{Verdict: network.NotJudged, Emptied: map[string]*float64{}, Limits: []network.LimitResult{}}}
 }

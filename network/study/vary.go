@@ -113,6 +113,24 @@ func shown(p *network.Plant, n *network.Number, v float64) string {
 	return trimmed(quantity.Format(v, n.Dim, unitOf(n), 5))
 }
 
+// shownTo is shown with three figures, rounded up or down.
+func shownTo(p *network.Plant, n *network.Number, v float64, up bool) string {
+	round := math.Floor
+	if up {
+		round = math.Ceil
+	}
+	if n.Dim == quantity.Time {
+		return shown(p, n, 60*round(v/60))
+	}
+	unit := unitOf(n)
+	one, err := quantity.Convert(1, n.Dim, unit)
+	if err != nil || v == 0 || n.Dim == quantity.Temperature {
+		return shown(p, n, v)
+	}
+	step := math.Pow(10, math.Floor(math.Log10(math.Abs(v*one)))-2) / one
+	return shown(p, n, round(v/step)*step)
+}
+
 // trimmed takes noughts behind the point away: "50.000 %" is "50 %".
 func trimmed(s string) string {
 	num, unit, found := strings.Cut(s, " ")
@@ -123,4 +141,25 @@ func trimmed(s string) string {
 		return num + " " + unit
 	}
 	return num
+}
+
+// ValueOf reads a value for a number of a plant, SI: in the number's own dimension, a moment for a time.
+func ValueOf(p *network.Plant, name, text string) (float64, error) {
+	n, err := numberNamed(p, name)
+	if err != nil {
+		return 0, Misuse{err}
+	}
+	if n.Dim == quantity.Time {
+		v, err := MomentOf(p, text)
+		return v, misuse(err)
+	}
+	v, err := quantity.Parse(text, n.Dim)
+	return v.SI, misuse(err)
+}
+
+func misuse(err error) error {
+	if err == nil {
+		return nil
+	}
+	return Misuse{err}
 }

@@ -1,0 +1,66 @@
+package cli
+
+import (
+	"context"
+	"io"
+
+	"github.com/spf13/cobra"
+
+	"headfall/cmd/internal/text"
+	"headfall/network/study"
+	"headfall/viz/export"
+)
+
+func init() { register(groupWhat, newFlows) }
+
+func newFlows(a *app) *cobra.Command {
+	valve := ""
+	c := &cobra.Command{
+		Use:   "flows FILE --valve TAG",
+		Short: "Flow through a valve as installed, against its opening",
+		Long: `Flows gives the flow through a valve in its line at every tenth of its travel: with the vessels that it drains as
+full as the plan has them when the valve is first moved, half of the way down to the outlet, and nine tenths of
+it. All else stands as the plan has it at that moment.
+
+JSON: {"schema": 1, "command": "flows", "exit_code": 0, "complete": true, "valve": "V-1", "line": "L-1", "at_s": 0,
+ "heads": [{"name": "full", "levels_m": {"T-1": 2.5}}, {"name": "half", …}, {"name": "low", …}],
+ "rows": [{"opening": 0.5, "flows_m3_s": [0.0044, 0.0037, 0.0030], "turns": 6}],
+ "turns": 12, "half_flow_at": 0.4, "notes": []}
+
+Exit code 0: done. 2: bad usage or a bad file. 3: the calculation could not finish. 130: interrupted.`,
+		Example: `  headfall flows plant.yaml --valve V-1
+  headfall flows plant.yaml --valve V-1 --json flows.json`,
+		Args: oneFile,
+		RunE: func(c *cobra.Command, args []string) error { return a.flows(c.Context(), args[0], valve) },
+	}
+	c.Flags().StringVar(&valve, "valve", "", "`TAG` of the valve")
+	return c
+}
+
+func (a *app) flows(ctx context.Context, path, valve string) error {
+	if valve == "" {
+		return bad("as --valve V-1", "flows needs --valve TAG")
+	}
+	src, load, err := a.open(ctx, path)
+	if err != nil {
+		return err
+	}
+	plant, err := load()
+	if err != nil {
+		return err
+	}
+	var res *study.FlowsResult
+	files := outputs{}
+	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
+	if err := files.check(src); err != nil {
+		return err
+	}
+	ctx, cancel := a.within(ctx)
+	defer cancel()
+	c := a.opt.calculation()
+	res, err = study.Flows(ctx, load, study.Options{Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance}, valve)
+	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
+		return err
+	}
+	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Flows(w, plant, res, opt) })
+}
