@@ -99,6 +99,7 @@ func (o *observer) samples(out *integrate.Outcome) {
 	for o.next < out.T || o.next == out.T && out.Stop == integrate.Stepped {
 		o.at(&o.sample, o.next)
 		o.smooth(&o.sample)
+		o.note(&o.sample) // what is shown is never outside the extremes that are told
 		o.record(&o.sample)
 		o.advance()
 	}
@@ -111,7 +112,6 @@ func (o *observer) smooth(w *snapshot) {
 	for i := range s.lines {
 		if s.lines[i].gmin > 0 {
 			w.q[i] = d.RateZ(i, w.t)
-			o.flow[i].see(w.q[i], w.t)
 		}
 	}
 }
