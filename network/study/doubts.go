@@ -17,11 +17,10 @@ func (j *judgement) doubts() error {
 	if j.opt.Samples < 0 || len(draws.Numbers) == 0 {
 		return nil
 	}
-	j.run.Progress = j.part(0.2, 1)
-	samples, done, err := Each(j.ctx, j.run, j.opt.Samples, func(ctx context.Context, b *Bench, i int) (sample, error) {
+	many := &Runner{Load: j.run.Load, Model: sampled(j.run.Model), Workers: j.run.Workers, Progress: j.part(0.2, 1)}
+	samples, done, err := Each(j.ctx, many, j.opt.Samples, func(ctx context.Context, b *Bench, i int) (sample, error) {
 		return takeSample(ctx, b, draws, i, j.holds)
 	})
-	j.run.Progress = nil
 	kept := calculated(samples, done)
 	j.res.Allowance = network.Allowance{Doubts: j.plant.Assume.Doubts, Samples: len(kept), Seed: j.opt.Seed}
 	if len(kept) > 0 {
@@ -34,7 +33,18 @@ func (j *judgement) doubts() error {
 		}
 	}
 	j.res.Decide()
+	j.stalls(kept)
 	return err
+}
+
+// stalls makes a plan too close to call whose steps are all reached in the middle, but not in enough of the samples.
+func (j *judgement) stalls(samples []sample) {
+	share := portion(samples, func(s *sample) bool { return s.stalls })
+	if len(samples) == 0 || share <= FailsAllowed || j.res.Verdict != network.Run {
+		return
+	}
+	j.res.Verdict, j.res.ExitCode = network.TooClose, 1
+	j.res.Cautions = append(j.res.Cautions, fmt.Sprintf("In %.2g %% of the samples some step is never reached.", 100*share))
 }
 
 // calculated returns the samples that were carried out and came to an end.

@@ -64,9 +64,9 @@ func Spread(ctx context.Context, load Load, opt SpreadOptions) (*SpreadPart, err
 	asked.Samples, asked.Seed = opt.Samples, opt.Seed
 	part := &SpreadPart{Shard: opt.Shard, Count: opt.Samples}
 	part.Head = spreadHead(b.Plant, plan, draws, headOf("spread", b.Plant, plan, asked))
-	r.Progress = opt.Progress
 	holds := lasts(b.Plant)
-	return part, carry(ctx, r, part, func(ctx context.Context, b *Bench, i int) (SpreadUnit, error) {
+	many := &Runner{Load: load, Model: sampled(r.Model), Workers: r.Workers, Progress: opt.Progress}
+	return part, carry(ctx, many, part, func(ctx context.Context, b *Bench, i int) (SpreadUnit, error) {
 		s, err := takeSample(ctx, b, draws, i, holds)
 		return spreadUnit(s, draws, i), err
 	})
@@ -103,10 +103,11 @@ type SpreadUnit struct {
 	Margin     gaps   `json:"margin_si,omitempty"`
 	Fails      []bool `json:"fails,omitempty"`
 	Whole      bool   `json:"every_limit_holds"`
+	Stalls     bool   `json:"some_step_never_reached"`
 }
 
 func spreadUnit(s sample, d *Draws, i int) SpreadUnit {
-	u := SpreadUnit{Failed: s.failed, Emptied: s.emptied, Peak: s.peak, Milestones: s.reported, Margin: s.margin, Fails: s.fails, Whole: s.whole}
+	u := SpreadUnit{Failed: s.failed, Emptied: s.emptied, Peak: s.peak, Milestones: s.reported, Margin: s.margin, Fails: s.fails, Whole: s.whole, Stalls: s.stalls}
 	for k := range d.Names {
 		u.Drawn = append(u.Drawn, d.Unit(i, k))
 	}

@@ -12,9 +12,10 @@ type SpreadResult struct {
 	Complete   bool                               `json:"complete"`
 	Stopped    string                             `json:"stopped_because"` // done | interrupted | failed
 	Trouble    string                             `json:"trouble,omitempty"`
-	Samples    int                                `json:"samples"`        // calculated
-	NotDone    int                                `json:"not_calculated"` // tried, but the calculation could not finish
-	AnyFails   Chance                             `json:"any_limit_fails"`
+	Samples    int                                `json:"samples"`         // calculated
+	NotDone    int                                `json:"not_calculated"`  // tried, but the calculation could not finish
+	AnyFails   Chance                             `json:"any_limit_fails"` // or some step is never reached
+	Stalls     Chance                             `json:"some_step_never_reached"`
 	Bands      map[string]map[string]network.Band `json:"bands"`
 	Limits     []*SpreadLimit                     `json:"limits"`
 	Influences map[string][]Influence             `json:"influences"` // on empty times and peaks: "emptied_at_s T-1"
@@ -81,6 +82,7 @@ func SpreadOf(p *SpreadPart) *SpreadResult {
 	s.Samples = len(c.units)
 	c.rankDraws()
 	s.AnyFails = chance(c.count(func(u *SpreadUnit) bool { return !u.Whole }), s.Samples)
+	s.Stalls = chance(c.count(func(u *SpreadUnit) bool { return u.Stalls }), s.Samples)
 	s.moments(c, "emptied_at_s", h.Vessels, func(u *SpreadUnit) gaps { return u.Emptied })
 	s.moments(c, "peak_level_m", h.Vessels, func(u *SpreadUnit) gaps { return u.Peak })
 	s.moments(c, "milestone_at_s", h.Milestones, func(u *SpreadUnit) gaps { return u.Milestones })
@@ -109,6 +111,9 @@ func (s *SpreadResult) moments(c *columns, name string, tags []string, pick func
 
 // decide gives the verdict as run does.
 func (s *SpreadResult) decide() {
+	if s.Verdict == network.Run && s.Stalls.Share > FailsAllowed {
+		s.Verdict = network.TooClose
+	}
 	if s.Verdict == network.Run {
 		for _, l := range s.Limits {
 			if l.Verdict == network.TooClose {

@@ -1,5 +1,7 @@
 package text
 
+import "strings"
+
 // holds writes how long each hold may last before a limit goes.
 func (p *page) holds() {
 	for _, h := range p.res.Holds {
@@ -34,6 +36,9 @@ func (p *page) alarms() {
 					said += ": TOO SHORT"
 				}
 			}
+		}
+		if _, tail, answered := strings.Cut(a.Says, "; answered, "); answered {
+			said += "; answered, " + tail
 		}
 		p.put("Alarm", "%s%s %s: %s", stamp(p.clock.When(*a.At, Down)), a.Vessel, a.Name, said)
 	}

@@ -31,6 +31,9 @@ func Spread(w io.Writer, r *study.SpreadResult, opt Options) error {
 	if m := r.Measure; m != nil {
 		s.put("Measure first", "%s (%s): it makes %s of what is uncertain about %s", m.What, keep(m.Doubt), percent(m.Share, Near), m.For)
 	}
+	if r.Stalls.Share > 0 {
+		s.put("Not reached", "some step never comes in %s (%s)", percent(r.Stalls.Share, Up), between(r.Stalls))
+	}
 	s.spreadLimits(r)
 	s.spreadTimes(r, "Empty by", "emptied_at_s")
 	s.spreadTimes(r, "Moments", "milestone_at_s")
