@@ -137,6 +137,7 @@ func newFittedValue(s *scaled, x, half float64) *FittedValue {
 	if !math.IsInf(half, 0) {
 		v.Low, v.High = v.band(half)
 	}
+	v.Says = v.written()
 	return v
 }
 

@@ -64,6 +64,9 @@ func ReadReadings(r io.Reader, plant *network.Plant) (*Readings, error) {
 		} else {
 			in.row(record, row)
 		}
+		if row > mostReadings {
+			in.fault(row, "there are more rows than %d; thin the log out", mostReadings)
+		}
 		if len(in.faults) >= 20 || row > mostReadings || in.columns == nil {
 			break
 		}

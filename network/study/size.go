@@ -28,7 +28,7 @@ type SizeResult struct {
 	Name     string          `json:"name"`
 	Unit     string          `json:"unit_si"`
 	Looking  string          `json:"looking_for"` // largest | smallest
-	Value    *float64        `json:"value_si"`    // rounded to the safe side, and run again with the doubts
+	Value    *float64        `json:"value_si"`    // rounded to the side that holds, and run again with the doubts
 	As       string          `json:"as_written"`
 	Edge     *float64        `json:"edge_si"` // where the plain run, without doubts, ceases to hold
 	EdgeAs   string          `json:"edge_as_written"`
@@ -167,6 +167,17 @@ func (s *sizing) scan(ctx context.Context) error {
 	return err
 }
 
+// refused says what makes a plant with the numbers put impossible, as a start level above the rim; "" when nothing does.
+func refused(b *Bench) string {
+	if err := b.Settle(); err != nil {
+		return err.Error()
+	}
+	if faults, _ := b.Plant.Validate(); len(faults) > 0 {
+		return faults[0].Says
+	}
+	return ""
+}
+
 // try runs the plan at values, without doubts.
 func (s *sizing) try(ctx context.Context, values []float64) ([]Tried, []bool, error) {
 	s.res.Work.Runs += len(values)
@@ -177,6 +188,9 @@ func (s *sizing) try(ctx context.Context, values []float64) ([]Tried, []bool, er
 			return t, nil
 		}
 		b.Put([]int{s.at}, []float64{values[i]})
+		if t.Why = refused(b); t.Why != "" {
+			return t, nil
+		}
 		res, err := plainRun(ctx, b)
 		if err != nil || res == nil {
 			t.Why = "it cannot be calculated"

@@ -150,7 +150,9 @@ func (t *tracking) run(ctx context.Context, load Load, until float64) (*network.
 		return nil, err
 	}
 	p.RunFor = until
-	p.ReportEvery = math.Min(p.ReportEvery, t.now/200)
+	if t.now > 0 {
+		p.ReportEvery = math.Min(p.ReportEvery, math.Max(t.now/200, until/20000))
+	}
 	model, err := network.Compile(p, t.opt.model())
 	if err != nil {
 		return nil, err

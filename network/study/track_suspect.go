@@ -37,6 +37,7 @@ func (t *tracking) suspect() {
 			t.say("%s drains ever slower (%s of the rate expected at first, %s now): its outlet is plugging; expect it to get worse", tag, percent(*x.early), percent(*x.late))
 		case down != "" && math.Abs(downRatio-r) > disagree:
 			t.say("%s and %s do not agree (%s and %s of what is expected): one gauge is wrong, or liquid goes elsewhere; walk the line", tag, down, percent(r), percent(downRatio))
+		case math.Abs(1-r) < x.blur():
 		case r < 1-onPlan:
 			t.say("%s drains steadily at %s of the rate expected: a valve not as far open as ordered, a part plugged from the start, or a coefficient that was too high; look at the valve first", tag, percent(r))
 		case r > 1+onPlan:
@@ -84,6 +85,11 @@ func (t *tracking) strays(tag string) {
 	}
 }
 
+// blur is how far a rate ratio may be off because levels are read to a gauge's own fineness.
+func (x *TrackedVessel) blur() float64 {
+	return math.Sqrt2 * gaugeFit / math.Abs(x.First-x.Expected)
+}
+
 func percent(share float64) string { return fmt.Sprintf("%.0f %%", 100*share) }
 
 // headline takes the pace from the vessel that should have lost most.
@@ -105,6 +111,8 @@ func (t *tracking) headline() {
 		switch r := *x.RateRatio; {
 		case r < stopped:
 			t.res.Pace = "not_moving"
+		case math.Abs(1-r) < x.blur():
+			t.res.Pace = "on_plan"
 		case r < 1-onPlan/2:
 			t.res.Pace = "slow"
 		case r > 1+onPlan/2:

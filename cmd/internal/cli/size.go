@@ -27,7 +27,7 @@ func newSize(a *app) *cobra.Command {
 		Use:   "size FILE --vary TAG.x --from A --to B",
 		Short: "The largest or smallest value with which every limit holds",
 		Long: `Size finds how far a number may go with every limit holding: an opening, a bore, a start level, a time.
-Values all along are tried first, since holding may come and go; then the edge is closed in on, the value is
+Values all along are tried first, since holding may come and go; then the turning point is closed in on, the value is
 rounded to what people set (openings and shares of travel to 5 %, times to minutes, else steps of 1, 2 or 5) on
 the side that holds, and the rounded value is judged as run judges, doubts allowed for. Where that is too close
 to call it goes a step further in.

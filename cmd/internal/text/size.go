@@ -40,7 +40,7 @@ func Size(w io.Writer, plant *network.Plant, r *study.SizeResult, opt Options) e
 		} else {
 			said += "; beyond: " + r.Beyond
 		}
-		p.put("Edge", "%s", said)
+		p.put("Plain run", "%s", said)
 	}
 	for i, h := range r.HoldsAs {
 		label := "Holds"
