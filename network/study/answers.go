@@ -41,20 +41,29 @@ func saysAnswer(a *network.AlarmResult, answered *network.Result) string {
 	if *a.Have < *a.Need {
 		says += ": SHORT"
 	}
-	if l := firstFailure(answered, a.Vessel); l != nil {
+	after := *a.At + finest // what fails with the alarm itself cannot be helped
+	if l := failsAfter(answered, a.Vessel, after); l != nil {
 		return says + "; answered, " + l.Says + " still fails"
 	}
-	if l := firstFailure(answered, ""); l != nil {
-		return says + "; answered, it holds, but " + l.Says + " fails"
+	if l := failsAfter(answered, "", after); l != nil {
+		return says + "; answered, " + a.Vessel + " is held, but " + l.Says + " fails"
+	}
+	if firstFailure(answered, "") != nil {
+		return says + "; answered, nothing further fails"
 	}
 	return says + "; answered, every limit holds"
 }
 
 // firstFailure returns the limit about a vessel, or about anything, that fails first; nil when all hold.
 func firstFailure(r *network.Result, vessel string) *network.LimitResult {
+	return failsAfter(r, vessel, math.Inf(-1))
+}
+
+// failsAfter is firstFailure among the limits that fail after a time.
+func failsAfter(r *network.Result, vessel string, after float64) *network.LimitResult {
 	var first *network.LimitResult
 	for _, l := range r.Limits {
-		if l.FirstFail == nil || vessel != "" && l.Of[0] != vessel {
+		if l.FirstFail == nil || *l.FirstFail <= after || vessel != "" && l.Of[0] != vessel {
 			continue
 		}
 		if first == nil || *l.FirstFail < *first.FirstFail {
