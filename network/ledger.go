@@ -44,12 +44,20 @@ func (b *ledger) line(sim *simulation, i int, from, to *snapshot) {
 	qa, qb := from.q[i], to.q[i]
 	switch {
 	case qa >= 0 && qb >= 0:
-		b.forward[i] += to.z[i] - from.z[i]
 		if b.open[i] {
 			b.close(i, from.t)
 		}
+		if dz := to.z[i] - from.z[i]; dz >= 0 {
+			b.forward[i] += dz
+		} else { // it ran back for a moment between
+			b.back(i, from.t, to.t, dz, 0)
+		}
 	case qa <= 0 && qb <= 0:
-		b.back(i, from.t, to.t, to.z[i]-from.z[i], math.Min(qa, qb))
+		if dz := to.z[i] - from.z[i]; dz <= 0 {
+			b.back(i, from.t, to.t, dz, math.Min(qa, qb))
+		} else {
+			b.forward[i] += dz
+		}
 	default:
 		t := sim.turn(i, from.t, to.t, qa < 0)
 		z := sim.solver.Dense().OneZ(i, t)
