@@ -14,20 +14,21 @@ type FoundPlan struct {
 	Command  string           `json:"command"`
 	Scenario network.Scenario `json:"scenario"`
 	Ending
-	Found    bool            `json:"found"`
-	Verdict  network.Verdict `json:"verdict"` // of the plan found, judged with the doubts
-	Finish   *float64        `json:"finish_s"`
-	Low      *float64        `json:"finish_low_s"` // band, 5 and 95 %
-	High     *float64        `json:"finish_high_s"`
-	Empties  []string        `json:"empties"` // vessels whose emptying is the finish
-	Steps    []PlannedStep   `json:"steps"`
-	Binds    []Bind          `json:"binds"`
-	Tightest *Margin         `json:"smallest_margin"`
-	Written  Written         `json:"as_written"`
-	Fails    []string        `json:"fails"` // where nothing was found: what could not be met
-	Set      []string        `json:"set"`   // as --set of run would have it
-	Searched int             `json:"plans_tried"`
-	Judged   int             `json:"plans_judged"`
+	Found     bool            `json:"found"`
+	Verdict   network.Verdict `json:"verdict"` // of the plan found, judged with the doubts
+	Finish    *float64        `json:"finish_s"`
+	Low       *float64        `json:"finish_low_s"` // band, 5 and 95 %
+	High      *float64        `json:"finish_high_s"`
+	Empties   []string        `json:"empties"` // vessels whose emptying is the finish
+	Steps     []PlannedStep   `json:"steps"`
+	Binds     []Bind          `json:"binds"`
+	Tightest  *Margin         `json:"smallest_margin"`
+	Written   Written         `json:"as_written"`
+	Fails     []string        `json:"fails"`     // where nothing was found: what could not be met
+	Set       []string        `json:"set"`       // as --set of run would have it
+	Promising []string        `json:"promising"` // where the search was cut short: the best by then, not judged with the doubts
+	Searched  int             `json:"plans_tried"`
+	Judged    int             `json:"plans_judged"`
 
 	Result *network.Result `json:"-"`
 }
@@ -81,6 +82,8 @@ func Plan(ctx context.Context, load Load, opt Options) (*FoundPlan, error) {
 	err = p.rounds(ctx)
 	if p.best != nil {
 		p.report()
+	} else if err != nil {
+		p.promising()
 	}
 	if err != nil {
 		return p.res, err
@@ -130,7 +133,7 @@ func newPlanning(load Load, opt Options) (*planning, error) {
 		return nil, Misuse{errors.New("it is not known what the plan is to empty: state a limit, as {emptied: T-1, within: 4 h}")}
 	}
 	p.res = &FoundPlan{Schema: 1, Command: "plan", Scenario: scenarioOf(p.plant), Ending: Ending{ExitCode: 3}, Verdict: network.NotJudged, Empties: p.must,
-		Steps: []PlannedStep{}, Binds: []Bind{}, Fails: []string{}, Set: []string{}}
+		Steps: []PlannedStep{}, Binds: []Bind{}, Fails: []string{}, Set: []string{}, Promising: []string{}}
 	return p, nil
 }
 

@@ -35,6 +35,22 @@ func (p *planning) report() {
 	}
 }
 
+// promising keeps the best plan that was tried, where none was judged yet.
+func (p *planning) promising() {
+	var best *trial
+	for _, key := range sortedKeys(p.seen) {
+		if t := p.seen[key]; t.bad == 0 && better(t, best) {
+			best = t
+		}
+	}
+	if best == nil {
+		return
+	}
+	for i := range p.vars {
+		p.res.Promising = append(p.res.Promising, p.vars[i].says(p.plant, best.k[i]))
+	}
+}
+
 // step finds or makes the row of a step.
 func (p *planning) step(st *network.Step) *PlannedStep {
 	for i := range p.res.Steps {

@@ -27,6 +27,9 @@ func Plan(w io.Writer, plant *network.Plant, r *study.FoundPlan, opt Options) er
 	for _, f := range r.Fails {
 		p.put("Cannot keep", "%s", f)
 	}
+	if len(r.Promising) > 0 {
+		p.put("Best so far", "%s; not judged with the doubts", strings.Join(r.Promising, ", "))
+	}
 	if r.Found {
 		p.plannedSteps(r)
 		p.hand("Least margin", r.Tightest)
