@@ -44,36 +44,41 @@ func (b *ledger) line(sim *simulation, i int, from, to *snapshot) {
 	qa, qb := from.q[i], to.q[i]
 	switch {
 	case qa >= 0 && qb >= 0:
+		b.ahead(i, to.z[i]-from.z[i])
 		if b.open[i] {
 			b.close(i, from.t)
 		}
-		if dz := to.z[i] - from.z[i]; dz >= 0 {
-			b.forward[i] += dz
-		} else { // it ran back for a moment between
-			b.back(i, from.t, to.t, dz, 0)
-		}
 	case qa <= 0 && qb <= 0:
-		if dz := to.z[i] - from.z[i]; dz <= 0 {
-			b.back(i, from.t, to.t, dz, math.Min(qa, qb))
-		} else {
-			b.forward[i] += dz
-		}
+		b.back(i, from.t, to.t, to.z[i]-from.z[i], math.Min(qa, qb))
 	default:
 		t := sim.turn(i, from.t, to.t, qa < 0)
 		z := sim.solver.Dense().OneZ(i, t)
 		if qa < 0 {
 			b.back(i, from.t, t, z-from.z[i], qa)
 			b.close(i, t)
-			b.forward[i] += to.z[i] - z
+			b.ahead(i, to.z[i]-z)
 		} else {
-			b.forward[i] += z - from.z[i]
+			b.ahead(i, z-from.z[i])
 			b.back(i, t, to.t, to.z[i]-z, qb)
 		}
 	}
 }
 
+// ahead books dz of forward flow; what is less than nothing ran back for a moment between the ends.
+func (b *ledger) ahead(i int, dz float64) {
+	if dz < 0 {
+		b.backward[i] -= dz
+		return
+	}
+	b.forward[i] += dz
+}
+
 // back books dz ≤ 0 of backward flow from t0 to t1.
 func (b *ledger) back(i int, t0, t1, dz, peak float64) {
+	if dz > 0 { // it ran forward for a moment between
+		b.forward[i] += dz
+		dz = 0
+	}
 	b.backward[i] -= dz
 	if peak == 0 {
 		return
