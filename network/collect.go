@@ -233,8 +233,8 @@ func (sim *simulation) pumpResults(r *Result) {
 	}
 }
 
-// leastBalance is the volume, m³, that the balance is measured against where a plant holds less: a millilitre.
-const leastBalance = 1e-6
+// leastBalance is the volume, m³, that the balance is measured against where a plant holds less: a litre.
+const leastBalance = 1e-3
 
 // balance closes the books: what was there and came in against what went out, spilled and is left.
 func (sim *simulation) balance(r *Result) {
