@@ -13,7 +13,6 @@ import (
 // band, and the fit follows the readings along its slopes. A level read 20 mm too high or a bore given wrong hides in a coefficient; the
 // scatter of the readings does not show it.
 func (f *fitter) others(ctx context.Context, s *solved, res *FitResult) error {
-	b := certaintyOf(s)
 	var doubtful []scaled
 	for i, n := range f.plant.Numbers {
 		if n.Value.Doubt.Stated() && !f.varied(i) {
@@ -37,6 +36,13 @@ func (f *fitter) others(ctx context.Context, s *solved, res *FitResult) error {
 		return err
 	}
 	res.Work.Runs += len(doubtful)
+	f.pull(s, res, doubtful, rows)
+	return nil
+}
+
+// pull works out from the residuals with each doubtful number at its upper end how far that moves the fitted ones, and widens the bands by it.
+func (f *fitter) pull(s *solved, res *FitResult, doubtful []scaled, rows [][]float64) {
+	b := certaintyOf(s)
 	sums := make([]float64, len(res.Values))
 	for i, row := range rows {
 		if row == nil {
@@ -60,7 +66,6 @@ func (f *fitter) others(ctx context.Context, s *solved, res *FitResult) error {
 		}
 		v.Says = v.written()
 	}
-	return nil
 }
 
 func (f *fitter) varied(place int) bool {

@@ -51,3 +51,22 @@ func TestCompare(t *testing.T) {
 		t.Errorf("best %q, exit %d, %d rows", res.Best, res.ExitCode, len(res.Rows))
 	}
 }
+
+// TestCompareFiles: several files are judged by the limits of the first.
+func TestCompareFiles(t *testing.T) {
+	all := []study.Contender{
+		{Name: "a", File: "cellar.yaml", Load: demo(t, "cellar", "G")},
+		{Name: "b", File: "cellar_free.yaml", Load: demo(t, "cellar_free", "")},
+	}
+	res, err := study.Compare(context.Background(), all, study.Options{Samples: -1})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if res.Best != "a" || res.Rows[1].Verdict != "do_not_run" || len(res.Limits) != 5 {
+		t.Errorf("best %q, %s, %d limits", res.Best, res.Rows[1].Verdict, len(res.Limits))
+	}
+	all[1] = study.Contender{Name: "c", File: "equalisation.yaml", Load: demo(t, "equalisation", "")}
+	if _, err := study.Compare(context.Background(), all, study.Options{Samples: -1}); err == nil {
+		t.Error("a plant without those tags was compared")
+	}
+}

@@ -8,57 +8,6 @@ import (
 	"headfall/network"
 )
 
-// FoundPlan is what plan gives back: SI units, unit in the key.
-type FoundPlan struct {
-	Schema   int              `json:"schema"`
-	Command  string           `json:"command"`
-	Scenario network.Scenario `json:"scenario"`
-	Ending
-	Found     bool            `json:"found"`
-	Verdict   network.Verdict `json:"verdict"` // of the plan found, judged with the doubts
-	Finish    *float64        `json:"finish_s"`
-	Low       *float64        `json:"finish_low_s"` // band, 5 and 95 %
-	High      *float64        `json:"finish_high_s"`
-	Empties   []string        `json:"empties"` // vessels whose emptying is the finish
-	Steps     []PlannedStep   `json:"steps"`
-	Binds     []Bind          `json:"binds"`
-	Tightest  *Margin         `json:"smallest_margin"`
-	Written   Written         `json:"as_written"`
-	Fails     []string        `json:"fails"`     // where nothing was found: what could not be met
-	Set       []string        `json:"set"`       // as --set of run would have it
-	Promising []string        `json:"promising"` // where the search was cut short: the best by then, not judged with the doubts
-	Searched  int             `json:"plans_tried"`
-	Judged    int             `json:"plans_judged"`
-
-	Result *network.Result `json:"-"`
-}
-
-// PlannedStep is one free step as the plan has it.
-type PlannedStep struct {
-	ID     string   `json:"id"`
-	Says   string   `json:"says"`
-	At     *float64 `json:"at_s"`
-	Clock  *string  `json:"clock"`
-	To     *float64 `json:"to"`
-	WasAt  *float64 `json:"was_at_s"`
-	WasTo  *float64 `json:"was_to"`
-	Target string   `json:"target"`
-}
-
-// Bind is a move that would end sooner, and what forbids it.
-type Bind struct {
-	Move   string   `json:"move"`
-	Limit  string   `json:"limit"`
-	Finish *float64 `json:"finish_s"`
-}
-
-// Written is the plan as it stands in the file.
-type Written struct {
-	Verdict network.Verdict `json:"verdict"`
-	Why     string          `json:"why"`
-	Finish  *float64        `json:"finish_s"`
-}
-
 const (
 	planRounds = 8    // of searching and judging
 	overshoot  = 1.05 // back-off over the spread that was measured, where a plan was too close
@@ -137,42 +86,6 @@ func newPlanning(load Load, opt Options) (*planning, error) {
 	return p, nil
 }
 
-// mustEmpty returns the vessels that the plan must empty: those that a limit names, or else those that the free valves drain.
-func mustEmpty(p *network.Plant) []string {
-	var tags []string
-	add := func(tag string) {
-		for _, v := range p.Vessels {
-			if e, _ := p.EmptyLevel(v); v.Tag == tag && v.StartLevel() > e {
-				for _, t := range tags {
-					if t == tag {
-						return
-					}
-				}
-				tags = append(tags, tag)
-			}
-		}
-	}
-	for _, l := range p.Limits {
-		if l.Must.Subject == network.Emptied {
-			add(l.Must.Of[0])
-		}
-	}
-	if len(tags) > 0 {
-		return tags
-	}
-	for _, s := range p.Steps {
-		if s.Free == nil || s.Action != network.MoveValve {
-			continue
-		}
-		if l, _ := valveLine(p, s.Target); l != nil {
-			for _, v := range feeding(p, l) {
-				add(v.Tag)
-			}
-		}
-	}
-	return tags
-}
-
 // written judges the plan as it stands in the file, which also measures the first back-offs.
 func (p *planning) written(ctx context.Context) error {
 	opt := p.opt
@@ -201,18 +114,6 @@ func (p *planning) measure(res *network.Result, times float64) {
 			p.backoff[i] = d * times
 		}
 	}
-}
-
-// finishOf returns when the last of the vessels is empty; ok is false when one is not.
-func finishOf(res *network.Result, must []string) (at float64, ok bool) {
-	for _, tag := range must {
-		v := res.Vessels[tag]
-		if v == nil || v.EmptiedAt == nil {
-			return 0, false
-		}
-		at = max(at, *v.EmptiedAt)
-	}
-	return at, true
 }
 
 // giveUp says what could not be met.

@@ -39,3 +39,14 @@ func TestPlan(t *testing.T) {
 		t.Errorf("the plan as --set would have it: %s, %v", again.Verdict, err)
 	}
 }
+
+// TestNoPlan: where nothing that is free will do, that is said, with what cannot be kept.
+func TestNoPlan(t *testing.T) {
+	res, err := study.Plan(context.Background(), demo(t, "cellar_free", "", "PIT-4.level=2.5 m"), study.Options{Samples: -1})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if res.Found || res.ExitCode != 1 || len(res.Fails) == 0 || res.Fails[0] != "level of PIT-4 below 2.40 m" {
+		t.Errorf("found %v, exit %d, %v", res.Found, res.ExitCode, res.Fails)
+	}
+}

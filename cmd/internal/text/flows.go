@@ -34,6 +34,16 @@ func Flows(w io.Writer, plant *network.Plant, r *study.FlowsResult, opt Options)
 		}
 		p.put(strings.ToUpper(h.Name[:1])+h.Name[1:]+" head", "%s", strings.Join(levels, ", "))
 	}
+	p.installed(r)
+	for _, n := range r.Notes {
+		p.put("Mind", "%s", n)
+	}
+	return p.close(r.ExitCode)
+}
+
+// installed writes the table.
+func (p *page) installed(r *study.FlowsResult) {
+	last := r.Rows[len(r.Rows)-1]
 	head := []string{"Open"}
 	if r.Turns != nil {
 		head = append(head, "turns")
@@ -57,10 +67,6 @@ func Flows(w io.Writer, plant *network.Plant, r *study.FlowsResult, opt Options)
 		rows = append(rows, append(row, share))
 	}
 	p.raw("\n" + table(rows) + "\n")
-	for _, n := range r.Notes {
-		p.put("Mind", "%s", n)
-	}
-	return p.close(r.ExitCode)
 }
 
 // feeds lists the vessels whose level differs between the heads.

@@ -30,18 +30,7 @@ func Size(w io.Writer, plant *network.Plant, r *study.SizeResult, opt Options) e
 	case !r.Found && r.Next != "":
 		p.put("Nearest to it", "%s does not hold", r.Next)
 	}
-	if r.Edge != nil {
-		said := "without allowance for doubts it holds up to " + keep(r.EdgeAs)
-		if r.Looking == "smallest" {
-			said = "without allowance for doubts it holds from " + keep(r.EdgeAs) + " on"
-		}
-		if r.Beyond == "" {
-			said += ", the end of what was looked at"
-		} else {
-			said += "; beyond: " + r.Beyond
-		}
-		p.put("Plain run", "%s", said)
-	}
+	p.turning(r)
 	for i, h := range r.HoldsAs {
 		label := "Holds"
 		if i > 0 {
@@ -56,6 +45,22 @@ func Size(w io.Writer, plant *network.Plant, r *study.SizeResult, opt Options) e
 		p.tryIt(r.Scenario.File, []string{r.Name + "=" + r.As})
 	}
 	return p.close(r.ExitCode)
+}
+
+// turning writes where a plain run ceases to hold.
+func (p *page) turning(r *study.SizeResult) {
+	if r.Edge != nil {
+		said := "without allowance for doubts it holds up to " + keep(r.EdgeAs)
+		if r.Looking == "smallest" {
+			said = "without allowance for doubts it holds from " + keep(r.EdgeAs) + " on"
+		}
+		if r.Beyond == "" {
+			said += ", the end of what was looked at"
+		} else {
+			said += "; beyond: " + r.Beyond
+		}
+		p.put("Plain run", "%s", said)
+	}
 }
 
 // allowance says what the verdict allows for.

@@ -31,15 +31,7 @@ func Track(w io.Writer, r *study.TrackResult, opt Options) error {
 	if f.FailsAt != nil {
 		p.put("Fails first", "%s%s", stamp(p.clock.When(*f.FailsAt, Down)), f.Why)
 	}
-	if f.Finish != nil {
-		said := p.clock.When(*f.Finish, Up) + p.band(f.Low, f.High)
-		if f.Planned != nil {
-			said += "; planned " + keep(p.clock.At(*f.Planned, Up)) + p.shift(*f.Finish-*f.Planned)
-		}
-		p.put("Empty now by", "%s", said)
-	} else if f.Planned != nil && r.Complete {
-		p.put("Empty now by", "not within the plan's time; planned %s", keep(p.clock.At(*f.Planned, Up)))
-	}
+	p.emptyNow(r)
 	p.hand("Least margin", f.Tightest)
 	for i, s := range r.Suspects {
 		label := "Looks like"
@@ -59,6 +51,20 @@ func Track(w io.Writer, r *study.TrackResult, opt Options) error {
 		p.put("Taken as done", "%s; --done ID=TIME and --not-done ID say otherwise", strings.Join(r.Done, ", "))
 	}
 	return p.close(r.ExitCode)
+}
+
+// emptyNow writes when the last vessel is empty by the forecast.
+func (p *page) emptyNow(r *study.TrackResult) {
+	f := &r.Forecast
+	if f.Finish != nil {
+		said := p.clock.When(*f.Finish, Up) + p.band(f.Low, f.High)
+		if f.Planned != nil {
+			said += "; planned " + keep(p.clock.At(*f.Planned, Up)) + p.shift(*f.Finish-*f.Planned)
+		}
+		p.put("Empty now by", "%s", said)
+	} else if f.Planned != nil && r.Complete {
+		p.put("Empty now by", "not within the plan's time; planned %s", keep(p.clock.At(*f.Planned, Up)))
+	}
 }
 
 // pace puts the rate ratio into words: "RUNNING 18 % SLOW".
