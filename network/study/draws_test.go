@@ -66,3 +66,27 @@ func TestParseShard(t *testing.T) {
 		}
 	}
 }
+
+// The shards of a study have every case once, and know how many they have.
+func TestShardsCover(t *testing.T) {
+	for of := 1; of < 9; of++ {
+		for n := range 30 {
+			seen := make([]int, n)
+			for i := 1; i <= of; i++ {
+				s := Shard{i, of}
+				list := s.cases(n)
+				if len(list) != s.size(n) {
+					t.Fatalf("shard %d/%d of %d cases: size %d, has %d", i, of, n, s.size(n), len(list))
+				}
+				for _, k := range list {
+					seen[k]++
+				}
+			}
+			for k, times := range seen {
+				if times != 1 {
+					t.Fatalf("%d shards, %d cases: case %d comes %d times", of, n, k, times)
+				}
+			}
+		}
+	}
+}

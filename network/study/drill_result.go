@@ -24,7 +24,7 @@ type DrillResult struct {
 
 // DrillOf puts the units of a whole drill together and ranks them.
 func DrillOf(p *DrillPart) *DrillResult {
-	d := &DrillResult{DrillHead: p.Head, Stopped: "done", Done: len(p.Units), Of: len(p.Shard.cases(p.Count)), Cases: []*DrillRow{}, Steps: []*MovedStep{}}
+	d := &DrillResult{DrillHead: p.Head, Stopped: "done", Done: len(p.Units), Of: p.Shard.size(p.Count), Cases: []*DrillRow{}, Steps: []*MovedStep{}}
 	for i := range p.Count {
 		u, ok := p.Units[i]
 		switch {

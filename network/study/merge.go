@@ -24,11 +24,21 @@ func Merge(parts []*PartFile) (*Merged, error) {
 		if err != nil {
 			return nil, err
 		}
+		for i, u := range p.Units {
+			if u.Row == nil && u.Move == nil {
+				return nil, fmt.Errorf("unit %d is damaged; make its part again", i)
+			}
+		}
 		return &Merged{Drill: DrillOf(p)}, nil
 	case "spread":
 		p, err := join[SpreadHead, SpreadUnit](parts)
 		if err != nil {
 			return nil, err
+		}
+		for i, u := range p.Units {
+			if !u.whole(&p.Head) {
+				return nil, fmt.Errorf("sample %d is damaged; make its part again", i)
+			}
 		}
 		return &Merged{Spread: SpreadOf(p)}, nil
 	default:
@@ -62,8 +72,13 @@ func fit(parts []*PartFile) error {
 		return fmt.Errorf("of %d parts these are missing: %s", first.shard.Of, strings.Join(missing, ", "))
 	}
 	for _, p := range parts {
-		if want := len(p.shard.cases(p.count)); !p.ended || len(p.units) < want {
+		if want := p.shard.size(p.count); !p.ended || len(p.units) < want {
 			return fmt.Errorf("%s is not finished: it has %d of %d; make part %d of %d again", p.Name, len(p.units), want, p.shard.Index, p.shard.Of)
+		}
+		for i := range p.units {
+			if i < 0 || i >= p.count || i%p.shard.Of != p.shard.Index-1 {
+				return fmt.Errorf("%s is damaged: unit %d does not belong to part %d of %d; make it again", p.Name, i, p.shard.Index, p.shard.Of)
+			}
 		}
 	}
 	return nil

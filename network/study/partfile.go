@@ -71,12 +71,15 @@ type PartFile struct {
 	ended   bool
 }
 
+// mostParts is the number of parts that a study may be split into.
+const mostParts = 1 << 20
+
 // ReadPart reads a part; name is for messages.
 func ReadPart(name string, r io.Reader) (*PartFile, error) {
 	in := bufio.NewReader(r)
 	line, err := in.ReadBytes('\n')
 	var first firstLine
-	if json.Unmarshal(line, &first) != nil || first.Of < 1 || len(first.Head) == 0 {
+	if json.Unmarshal(line, &first) != nil || first.Of < 1 || first.Of > mostParts || first.Units < 0 || len(first.Head) == 0 {
 		if err != nil && !errors.Is(err, io.EOF) {
 			return nil, err
 		}

@@ -14,7 +14,7 @@ type Shard struct{ Index, Of int }
 func ParseShard(text string, auto func() (int, error)) (Shard, error) {
 	i, n, both := strings.Cut(text, "/")
 	of, err := strconv.Atoi(n)
-	if !both || err != nil || of < 1 {
+	if !both || err != nil || of < 1 || of > mostParts {
 		return Shard{}, fmt.Errorf("%q is not a part of a whole: write 2/8, or auto/8 in a job array", text)
 	}
 	var index int
@@ -47,6 +47,14 @@ func (s Shard) cases(n int) []int {
 	return list
 }
 
+// size returns how many of n cases are the shard's.
+func (s Shard) size(n int) int {
+	if s.whole() {
+		return n
+	}
+	return (n - s.Index + s.Of) / s.Of
+}
+
 // Part is what one shard of a study gives back: its head, and those of its units that were done, by their number among all.
 type Part[H, U any] struct {
 	Head  H
@@ -56,7 +64,7 @@ type Part[H, U any] struct {
 }
 
 // complete tells that every unit of the shard was done.
-func (p *Part[H, U]) complete() bool { return len(p.Units) == len(p.Shard.cases(p.Count)) }
+func (p *Part[H, U]) complete() bool { return len(p.Units) == p.Shard.size(p.Count) }
 
 // carry does the shard's share of n units.
 func carry[H, U any](ctx context.Context, r *Runner, p *Part[H, U], unit func(ctx context.Context, b *Bench, i int) (U, error)) error {

@@ -106,6 +106,12 @@ type SpreadUnit struct {
 	Stalls     bool   `json:"some_step_never_reached"`
 }
 
+// whole tells that a sample has everything that its head speaks of.
+func (u *SpreadUnit) whole(h *SpreadHead) bool {
+	return u.Failed != "" || len(u.Drawn) == len(h.Doubts) && len(u.Emptied) == len(h.Vessels) && len(u.Peak) == len(h.Vessels) &&
+		len(u.Milestones) == len(h.Milestones) && len(u.Margin) == len(h.Limits) && len(u.Fails) == len(h.Limits)
+}
+
 func spreadUnit(s sample, d *Draws, i int) SpreadUnit {
 	u := SpreadUnit{Failed: s.failed, Emptied: s.emptied, Peak: s.peak, Milestones: s.reported, Margin: s.margin, Fails: s.fails, Whole: s.whole, Stalls: s.stalls}
 	for k := range d.Names {

@@ -131,3 +131,29 @@ func TestInterruptedSpread(t *testing.T) {
 		t.Errorf("complete %v, %s, %d samples", r.Complete, r.Stopped, r.Samples)
 	}
 }
+
+// Damaged parts are refused, whatever they hold; nothing panics.
+func FuzzParts(f *testing.F) {
+	var b bytes.Buffer
+	opt := study.SpreadOptions{Samples: 2}
+	part, err := study.Spread(context.Background(), demo(f, "day_tank"), opt)
+	if err != nil {
+		f.Fatal(err)
+	}
+	if err := study.WritePart(&b, "spread", part); err != nil {
+		f.Fatal(err)
+	}
+	f.Add(b.String())
+	f.Add(strings.Replace(b.String(), `"drawn":[`, `"drawn":[0.5,`, 1))
+	f.Add(strings.Replace(b.String(), `"unit":1`, `"unit":7`, 1))
+	f.Add(strings.Replace(b.String(), `"unit":1`, `"unit":-1`, 1))
+	f.Add(strings.Replace(b.String(), `"command":"spread"`, `"command":"drill"`, 1))
+	f.Add(strings.Replace(b.String(), `"vessels":[`, `"vessels":["X",`, 1))
+	f.Fuzz(func(t *testing.T, text string) {
+		p, err := study.ReadPart("part", strings.NewReader(text))
+		if err != nil {
+			return
+		}
+		study.Merge([]*study.PartFile{p})
+	})
+}
