@@ -73,5 +73,8 @@ func (a *app) plan(ctx context.Context, path string, o doubtful) error {
 	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
 		return err
 	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Plan(w, plant, res, opt) })
+	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error {
+		opt.Set = a.opt.set
+		return text.Plan(w, plant, res, opt)
+	})
 }

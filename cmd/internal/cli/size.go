@@ -94,7 +94,10 @@ func (a *app) size(ctx context.Context, path string, o sizeOptions) error {
 	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
 		return err
 	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Size(w, plant, res, opt) })
+	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error {
+		opt.Set = a.opt.set
+		return text.Size(w, plant, res, opt)
+	})
 }
 
 // sizing reads what was asked for.

@@ -62,13 +62,17 @@ func (p *page) close(exit int) error {
 	return p.err
 }
 
-// tried writes how to run what was found.
-func (p *page) tryIt(file string, set []string) {
+// tryIt writes how to run what was found.
+func (p *page) tryIt(of network.Scenario, set []string) {
+	file := of.File
 	if file == "" || strings.ContainsAny(file, " ") {
 		file = "FILE"
 	}
 	said := "headfall run " + file
-	for _, s := range set {
+	if of.Case != nil {
+		said += " --case " + *of.Case
+	}
+	for _, s := range append(p.opt.Set[:len(p.opt.Set):len(p.opt.Set)], set...) {
 		if strings.ContainsAny(s, " %:") {
 			s = "'" + s + "'"
 		}

@@ -45,7 +45,7 @@ func Plan(w io.Writer, plant *network.Plant, r *study.FoundPlan, opt Options) er
 	p.put("As written", "%s", said)
 	p.put("Tried", "%s, %d judged", counted(r.Searched, "plan", "plans"), r.Judged)
 	if r.Found {
-		p.tryIt(r.Scenario.File, r.Set)
+		p.tryIt(r.Scenario, r.Set)
 	}
 	return p.close(r.ExitCode)
 }

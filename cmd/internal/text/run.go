@@ -13,6 +13,7 @@ type Options struct {
 	Quiet  bool // the first line only
 	All    bool // every rehearsal of a drill
 	Report string
+	Set    []string // what --set changed, for words that tell how to run it again
 	Saved  []string // other files written
 }
 

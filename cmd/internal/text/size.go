@@ -42,7 +42,7 @@ func Size(w io.Writer, plant *network.Plant, r *study.SizeResult, opt Options) e
 		p.put("Mind", "it holds in several stretches with gaps between them: more is not always worse")
 	}
 	if r.Found {
-		p.tryIt(r.Scenario.File, []string{r.Name + "=" + r.As})
+		p.tryIt(r.Scenario, []string{r.Name + "=" + r.As})
 	}
 	return p.close(r.ExitCode)
 }
