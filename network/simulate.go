@@ -250,7 +250,11 @@ func (sim *simulation) settleActions() {
 func (sim *simulation) atRest() bool {
 	w := &sim.obs.now
 	for i := range sim.sys.stations {
-		if sim.sys.stations[i].inflow != 0 || math.Abs(w.dv[i]) > restFlow {
+		st := &sim.sys.stations[i]
+		if st.inflow != 0 || math.Abs(w.dv[i]) > restFlow {
+			return false
+		}
+		if st.massRow >= 0 && math.Abs(w.dv[st.massRow])*st.gasN > restGas {
 			return false
 		}
 	}

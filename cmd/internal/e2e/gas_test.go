@@ -24,6 +24,20 @@ lines:
 	}
 }
 
+// A run does not end at rest while gas still leaves through a vent, though no liquid moves.
+func TestNotAtRestWhileGasLeaves(t *testing.T) {
+	r := run(t, plant("600 s", "liquid: {water: 12 °C}", `
+vessels:
+  G: {shape: {box: {length: 1 m, width: 1 m, height: 3 m}}, base: 0 m, level: 1 m, cover: {gas: {pressure: 30 mbar(g), temperature: 15 °C}, vents: {VN: {hole: {bore: 2 mm}}}}}
+outside:
+  AIR: {free_fall: {elevation: 0 m}}
+lines:
+  L: {from: G, to: AIR, parts: [{pipe: {length: 2 m, bore: 50 mm, roughness: 0.05 mm}}, {valve: {tag: V, kv: 10}}]}`), how{})
+	if r.Stopped != "time" || r.Vessels["G"].Gas.LowAt != 600 {
+		t.Errorf("%s at %g s, %+v", r.Stopped, r.End, r.Vessels["G"].Gas)
+	}
+}
+
 // vented is the vessel of G05, open or with a vent.
 func vented(cover, liquid string) string {
 	return plant("3000 s", liquid, `
