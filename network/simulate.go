@@ -263,8 +263,16 @@ func (sim *simulation) atRest() bool {
 			return false
 		}
 	}
+	for _, k := range sim.sys.inertial { // at the turn of a swing nothing flows either
+		if math.Abs(w.dv[sim.sys.lines[k].row]) > restFlow {
+			return false
+		}
+	}
 	return math.IsInf(sim.nextStop(), 1)
 }
+
+// restGas is the change of a gas pressure, Pa/s, under which nothing changes.
+const restGas = 1e-4
 
 // restFlow is the flow, m³/s, under which nothing flows: a drop in a minute.
 const restFlow = 1e-9
