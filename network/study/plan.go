@@ -91,11 +91,14 @@ func (p *planning) written(ctx context.Context) error {
 	opt := p.opt
 	opt.Progress = func(share float64) { p.opt.Progress(0.05 * share) }
 	res, err := Judge(ctx, p.load, opt)
-	if err != nil {
+	if err != nil && (res == nil || ctx.Err() != nil) {
 		return err
 	}
 	p.res.Judged++
 	p.res.Written = Written{Verdict: res.Verdict, Why: whyNotRun(res)}
+	if err != nil { // the plan of the file need not be one that can be calculated
+		p.res.Written = Written{Verdict: network.NotJudged, Why: "it cannot be calculated"}
+	}
 	if f, ok := finishOf(res, p.must); ok {
 		p.res.Written.Finish = &f
 	}

@@ -15,7 +15,11 @@ func (p *planning) rounds(ctx context.Context) error {
 	judged := map[string]bool{}
 	for round := range planRounds {
 		p.opt.Progress(0.1 + 0.9*float64(round)/planRounds)
-		t, err := p.search(ctx, from)
+		first := shortStride
+		if round == 0 {
+			first = 0
+		}
+		t, err := p.search(ctx, from, first)
 		if err != nil {
 			return err
 		}
@@ -68,8 +72,12 @@ func (p *planning) judge(ctx context.Context, t *trial) error {
 	}
 	for _, o := range []Options{quick, opt} {
 		res, err := Judge(ctx, p.plan(t.k), o)
-		if err != nil {
+		if err != nil && ctx.Err() != nil {
 			return err
+		}
+		if err != nil { // not with the doubts: another plan is looked for
+			t.known = false
+			return nil
 		}
 		p.res.Judged++
 		if res.Verdict != network.Run {

@@ -11,15 +11,16 @@ import (
 )
 
 const (
-	starts    = 3  // plans from which the search goes on
-	pairsUpTo = 8  // free numbers up to which two are moved at once
-	mostPolls = 60 // of one search
+	starts      = 3  // plans from which the search goes on
+	pairsUpTo   = 8  // free numbers up to which two are moved at once
+	mostPolls   = 60 // of one search
+	shortStride = 2  // from this one on strides are short
 )
 
 // spreadOut tries the plan of the file and plans spread evenly over what is free, and returns the best few to go on from.
 func (p *planning) spreadOut(ctx context.Context) ([][]int, error) {
 	d := len(p.vars)
-	n := min(64+32*d, 400)
+	n := min(48+24*d, 300)
 	unit := mat.NewDense(n, d, nil)
 	samplemv.LatinHypercube{Q: distmv.NewUnitUniform(d, nil), Src: rand.NewPCG(uint64(p.opt.Seed), 7)}.Sample(unit)
 	first := make([]int, d)
@@ -49,61 +50,81 @@ func (p *planning) spreadOut(ctx context.Context) ([][]int, error) {
 	return from, nil
 }
 
-// search goes on from some plans and returns the best that is reached from any: a pattern search, which needs no slopes and stays on the grid that
-// people set by. Around the present plan every number is moved one stride either way, and every two of them at once, all side by side; the best is
-// taken; where none is better the stride is shortened, down to one step of the grid.
+// search goes on from some plans and returns the best that is reached: a pattern search, which needs no slopes and stays on the grid that people
+// set by. Around the present plan every number is moved one stride either way, all side by side, and where no such plan is better every two
+// numbers at once; the best is taken; where none is better the stride is shortened, down to one step of the grid. From the second plan on only
+// the long strides are taken; the best of all then goes on with the short ones.
 //
 // Source: Hooke and Jeeves, J. ACM 8 (1961); for two numbers at once, Kolda, Lewis and Torczon, SIAM Review 45 (2003), on enough directions.
-func (p *planning) search(ctx context.Context, from [][]int) (*trial, error) {
+func (p *planning) search(ctx context.Context, from [][]int, first int) (*trial, error) {
 	var best *trial
 	for _, k := range from {
 		got, err := p.try(ctx, [][]int{k})
 		if err != nil {
 			return nil, err
 		}
-		t := got[0]
-		stride := 0
-		for polls := 0; stride < len(p.vars[0].coarse) && polls < mostPolls; polls++ {
-			around, err := p.try(ctx, p.neighbours(t.k, stride))
-			if err != nil {
-				return nil, err
-			}
-			next := t
-			for _, o := range around {
-				if better(o, next) {
-					next = o
-				}
-			}
-			if next == t {
-				stride++
-			}
-			t = next
+		t, err := p.descend(ctx, got[0], first, shortStride)
+		if err != nil {
+			return nil, err
 		}
 		if better(t, best) {
 			best = t
 		}
 	}
-	return best, nil
+	return p.descend(ctx, best, max(first, shortStride), len(p.vars[0].coarse))
 }
 
-// neighbours are the plans one stride away, in one number or in two.
-func (p *planning) neighbours(k []int, stride int) (points [][]int) {
-	move := func(i, by, j, also int) {
-		q := append([]int(nil), k...)
-		q[i] = p.vars[i].clamp(q[i] + by*p.vars[i].coarse[stride])
-		if j >= 0 {
-			q[j] = p.vars[j].clamp(q[j] + also*p.vars[j].coarse[stride])
+// descend polls around a plan with strides from one to before another.
+func (p *planning) descend(ctx context.Context, t *trial, stride, last int) (*trial, error) {
+	for polls := 0; stride < last && polls < mostPolls; polls++ {
+		next := t
+		for _, around := range [][][]int{p.singles(t.k, stride), p.pairs(t.k, stride)} {
+			got, err := p.try(ctx, around)
+			if err != nil {
+				return nil, err
+			}
+			for _, o := range got {
+				if better(o, next) {
+					next = o
+				}
+			}
+			if next != t {
+				break
+			}
 		}
-		if keyOf(q) != keyOf(k) {
-			points = append(points, q)
+		if next == t {
+			stride++
 		}
+		t = next
 	}
+	return t, nil
+}
+
+// moved is a plan with some numbers moved, kept within what is free.
+func (p *planning) moved(k []int, by map[int]int) []int {
+	q := append([]int(nil), k...)
+	for i, d := range by {
+		q[i] = p.vars[i].clamp(q[i] + d)
+	}
+	return q
+}
+
+// singles are the plans one stride away in one number.
+func (p *planning) singles(k []int, stride int) (points [][]int) {
 	for i := range k {
-		move(i, 1, -1, 0)
-		move(i, -1, -1, 0)
+		d := p.vars[i].coarse[stride]
+		points = append(points, p.moved(k, map[int]int{i: d}), p.moved(k, map[int]int{i: -d}))
+	}
+	return points
+}
+
+// pairs are the plans one stride away in two numbers at once.
+func (p *planning) pairs(k []int, stride int) (points [][]int) {
+	for i := range k {
 		for j := i + 1; j < len(k) && len(k) <= pairsUpTo; j++ {
-			for _, s := range [][2]int{{1, 1}, {1, -1}, {-1, 1}, {-1, -1}} {
-				move(i, s[0], j, s[1])
+			a, b := p.vars[i].coarse[stride], p.vars[j].coarse[stride]
+			for _, s := range [][2]int{{a, b}, {a, -b}, {-a, b}, {-a, -b}} {
+				points = append(points, p.moved(k, map[int]int{i: s[0], j: s[1]}))
 			}
 		}
 	}

@@ -123,8 +123,12 @@ func (s *sizing) judge(ctx context.Context, v float64, i, of int) (bool, error) 
 	opt.Progress = func(share float64) { s.opt.Progress(0.5 + 0.5*(float64(i)+share)/float64(of)) }
 	res, err := Judge(ctx, with(s.load, []string{s.number.Name}, []float64{v}), opt)
 	s.res.Work.Judged++
-	if err != nil {
+	if err != nil && ctx.Err() != nil {
 		return false, err
+	}
+	if err != nil {
+		s.res.Next, s.res.NextAs = "it cannot be calculated with all doubts", shown(s.plant, s.number, v)
+		return false, nil
 	}
 	why := whyNotRun(res)
 	if l := broken(res); l != nil && l.Verdict == network.TooClose {

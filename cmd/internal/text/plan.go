@@ -40,7 +40,10 @@ func Plan(w io.Writer, plant *network.Plant, r *study.FoundPlan, opt Options) er
 		said += ", empty by " + keep(p.clock.When(*r.Written.Finish, Up))
 	}
 	if r.Written.Why != "" {
-		said += "; " + r.Written.Why + " does not hold"
+		said += "; " + r.Written.Why
+		if r.Written.Verdict != network.NotJudged {
+			said += " does not hold"
+		}
 	}
 	p.put("As written", "%s", said)
 	p.put("Tried", "%s, %d judged", counted(r.Searched, "plan", "plans"), r.Judged)
