@@ -60,6 +60,8 @@ type planning struct {
 	last    *trial          // judged last
 	best    *trial          // the best that runs
 	judged  *network.Result // its judgement
+	round   int
+	told    float64 // progress told last
 }
 
 func newPlanning(load Load, opt Options) (*planning, error) {

@@ -2,6 +2,7 @@ package study
 
 import (
 	"context"
+	"math"
 
 	"headfall/network"
 )
@@ -14,7 +15,8 @@ func (p *planning) rounds(ctx context.Context) error {
 	}
 	judged := map[string]bool{}
 	for round := range planRounds {
-		p.opt.Progress(0.1 + 0.9*float64(round)/planRounds)
+		p.round = round
+		p.opt.Progress(p.share(0))
 		first := shortStride
 		if round == 0 {
 			first = 0
@@ -46,6 +48,13 @@ func (p *planning) rounds(ctx context.Context) error {
 		}
 	}
 	return nil
+}
+
+// share is the progress of the whole with a part of the present round done: every round is taken to be half of what is left, since most plans need
+// few.
+func (p *planning) share(part float64) float64 {
+	p.told = math.Max(p.told, 1-0.9*math.Pow(0.5, float64(p.round)+part))
+	return p.told
 }
 
 // relax halves the back-offs where no plan meets them: those measured at a bad plan may be too wide. It says whether there were any.

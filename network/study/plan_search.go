@@ -94,6 +94,7 @@ func (p *planning) descend(ctx context.Context, t *trial, stride, last int) (*tr
 		}
 		if next == t {
 			stride++
+			p.opt.Progress(p.share(float64(stride) / float64(len(p.vars[0].coarse))))
 		}
 		t = next
 	}

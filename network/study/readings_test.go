@@ -39,6 +39,28 @@ func TestReadReadings(t *testing.T) {
 	}
 }
 
+// FuzzReadReadings: no file makes it panic, and what is read is in the order of time.
+func FuzzReadReadings(f *testing.F) {
+	plant, err := loads(bench)()
+	if err != nil {
+		f.Fatal(err)
+	}
+	for _, s := range []string{"time,T-1 [m]\n06:20,2.10", "time [min];LT-1\n+1d 00:10;50 %", "\ufeff# x\ntime,T-1 [m3]\n1 h 2 min,\"3\"", "time,T-1 [m]\n\"", ",\n,,"} {
+		f.Add(s)
+	}
+	f.Fuzz(func(t *testing.T, s string) {
+		r, err := study.ReadReadings(strings.NewReader(s), plant)
+		if err != nil {
+			return
+		}
+		for i := 1; i < len(r.List); i++ {
+			if r.List[i].Time < r.List[i-1].Time || math.IsNaN(r.List[i].Level) {
+				t.Fatalf("%q: %+v", s, r.List)
+			}
+		}
+	})
+}
+
 func TestReadReadingsFaults(t *testing.T) {
 	plant, err := loads(bench)()
 	if err != nil {
