@@ -8,7 +8,7 @@ import (
 )
 
 const (
-	settled    = 1e-6 // size of a Newton correction, in tolerances, that is not worth making
+	settled    = 1e-3 // size of a Newton correction, in tolerances, that is not worth making
 	rounding   = 1e-2 // size below which a correction that does not shrink is taken for rounding
 	iterations = 40   // of Newton at a restart
 	halvings   = 12   // of a Newton correction
@@ -24,13 +24,14 @@ func (s *Solver) settle() error {
 		s.linearise()
 	}
 	before := math.Inf(1)
+	size := before
 	for range iterations {
 		if err := s.factoriseAlgebraic(); err != nil {
 			return s.singular(0, err)
 		}
 		s.algebraicResidual(d, s.f)
 		s.factor.Solve(d)
-		size := norm(d, s.scale)
+		size = norm(d, s.scale)
 		if size <= settled || size <= rounding && size > before/4 {
 			return nil // the latter where rounding keeps the correction from shrinking
 		}
@@ -45,6 +46,9 @@ func (s *Solver) settle() error {
 		copy(s.y, trial)
 		s.linear = false
 		s.linearise()
+	}
+	if size <= 1 { // within its tolerance, if no better
+		return nil
 	}
 	return s.fail(NotSettled, 0, worst(d, s.scale), nil)
 }

@@ -21,6 +21,11 @@ func (s *Solver) Step(tEnd float64, ev Events) (Outcome, error) {
 		return out, s.fail(TooManySteps, s.next, worst(s.err, s.scale), nil)
 	}
 	s.linearise()
+	if s.settler != nil && !s.settler.Settled(s.f) {
+		if err := s.resettle(); err != nil {
+			return out, err
+		}
+	}
 	h, held, e, err := s.advance(tEnd)
 	if err != nil {
 		return out, err

@@ -43,9 +43,11 @@ type Guard interface {
 }
 
 // Settler is a System that knows how to bring its algebraic unknowns near to consistency better than Newton's method from where they are: Settle
-// changes those of y in place, for the present differential ones. The solver then finishes by itself.
+// changes those of y in place, for the present differential ones; the solver then finishes by itself. Settled tells from the rates f at the point
+// that was linearised last whether they are near enough: if not, the solver settles them before its next step.
 type Settler interface {
 	Settle(t float64, y []float64)
+	Settled(f []float64) bool
 }
 
 // Events is a set of functions of time and state whose sign changes matter. The solver asks for all of them at once.

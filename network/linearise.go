@@ -1,6 +1,10 @@
 package network
 
-import "headfall/integrate"
+import (
+	"math"
+
+	"headfall/integrate"
+)
 
 // teeStiffness is added to the slopes of every line at a tee, m³/(s·Pa), alike in all rows so that the balance stays exact: nothing against any
 // open path, but where one-way ends just take up flow, or all is shut, it keeps a pressure that means nothing from being thrown about.
@@ -15,6 +19,9 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 	clear(lin.DgDt)
 	s.look(t, y)
 	clear(f)
+	for i := range s.tees {
+		s.tees[i].ease, s.tees[i].through = 0, 0
+	}
 	for i := range s.stations {
 		s.addVessel(i, t, f, g, lin)
 		s.lineariseVessel(i, lin)
@@ -26,6 +33,7 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 		g[i] = l.q
 		if l.gmin > 0 {
 			l.byA, l.byB = l.byA+teeStiffness, l.byB-teeStiffness
+			s.ease(l)
 		}
 		d := [5]float64{l.byA*a.phiV + l.byYa*a.depV, l.byA * a.phiN, l.byB*b.phiV + l.byYb*b.depV, l.byB * b.phiN, l.byQ}
 		if l.from.kind == toTee {
@@ -61,6 +69,18 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 		}
 	}
 	s.lineariseTees(f, lin)
+}
+
+// ease adds a line's slope to the tees at its ends.
+func (s *system) ease(l *line) {
+	if l.from.kind == toTee {
+		s.tees[l.from.at].ease += l.byA
+		s.tees[l.from.at].through += math.Abs(l.q)
+	}
+	if l.to.kind == toTee {
+		s.tees[l.to.at].ease -= l.byB
+		s.tees[l.to.at].through += math.Abs(l.q)
+	}
 }
 
 // lineariseVessel adds the partials of inflow, spill and vents of vessel i.

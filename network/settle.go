@@ -60,6 +60,10 @@ func newSettler(s *system) *settler {
 	return r
 }
 
+// settleFloor is added to the slopes of the balances, m³/(s·Pa): nothing against any open path. Where nothing is open the direction is then still
+// downhill, and a pressure that means nothing is left alone.
+const settleFloor = 1e-15
+
 // balances fills f with what flows into each tee, m³/s, and the matrix with minus its slopes.
 func (r *settler) balances(s *system, matrix bool) {
 	clear(r.f)
@@ -84,6 +88,11 @@ func (r *settler) balances(s *system, matrix bool) {
 			if sl[j] >= 0 {
 				r.values[sl[j]] += v
 			}
+		}
+	}
+	if matrix {
+		for _, k := range r.diag {
+			r.values[k] += settleFloor
 		}
 	}
 	for i := range s.tees {
@@ -119,6 +128,19 @@ func (r *settler) along(s *system, part float64) (sum float64) {
 	}
 	return sum
 }
+
+// Settled tells whether the tees are near enough to balance, f being the rates where the system was linearised last.
+func (s *system) Settled(f []float64) bool {
+	for i := range s.tees {
+		if t := &s.tees[i]; !t.slow && math.Abs(f[s.teeRow+i]) > offBalance*t.through+10*stillFlow {
+			return false
+		}
+	}
+	return true
+}
+
+// offBalance is the share of the flows through a tee by which it may be out of balance at the start of a step.
+const offBalance = 1e-3
 
 // Settle balances the tees at (t, y), changing y in place.
 func (s *system) Settle(t float64, y []float64) {

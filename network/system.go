@@ -174,12 +174,18 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 	}
 	for i := s.teeRow; i < s.teeRow+len(s.teeAt); i++ {
 		scale[i] = s.gamma * tol(1)
+		if t := &s.tees[i-s.teeRow]; t.ease > 0 && !t.slow { // where next to nothing flows a pressure means little
+			scale[i] = math.Max(scale[i], 1e6*rtol*stillFlow/t.ease)
+		}
 	}
 	for _, k := range s.inertial {
 		l := &s.lines[k]
 		scale[l.row] = rtol * (math.Abs(y[l.row]) + 1e-3*math.Max(l.area, 1e-6))
 	}
 }
+
+// stillFlow is the flow, m³/s, that a tee may be out of balance by: 4 mL an hour.
+const stillFlow = 1e-9
 
 // levelCap bounds the error allowed in a level, m: a quarter of the head under which flows are made linear, so that an equilibrium is quiet.
 const levelCap = 2e-5
