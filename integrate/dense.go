@@ -116,6 +116,35 @@ func (d *Dense) RateZ(i int, t float64) float64 {
 	return (d.Z1[i] - d.Z0[i] + (1-2*x)*inner + x*(1-x)*slope) / d.H
 }
 
+// Rates sets r to the time derivatives of all unknowns at time t.
+func (d *Dense) Rates(t float64, r []float64) { d.rates(t, d.Y0, d.Y1, d.K, r) }
+
+// RatesZ sets r to the time derivatives of all integrals at time t.
+func (d *Dense) RatesZ(t float64, r []float64) { d.rates(t, d.Z0, d.Z1, d.KZ, r) }
+
+func (d *Dense) rates(t float64, v0, v1 []float64, k [][]float64, r []float64) {
+	if d.H == 0 {
+		clear(r)
+		return
+	}
+	x := d.place(t)
+	v0, v1 = v0[:len(r)], v1[:len(r)]
+	by := 1 / d.H
+	// d/dθ of θ(1−θ)θʲ is (j+1)θʲ − (j+2)θʲ⁺¹
+	for i := range r {
+		r[i] = (v1[i] - v0[i]) * by
+	}
+	p := by
+	for j, kj := range k {
+		w := p * (float64(j+1) - float64(j+2)*x)
+		p *= x
+		kj = kj[:len(r)]
+		for i := range r {
+			r[i] += w * kj[i]
+		}
+	}
+}
+
 // place returns θ of a time; exactly 1 at the end of the step.
 func (d *Dense) place(t float64) float64 {
 	if d.H == 0 {

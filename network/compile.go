@@ -256,13 +256,17 @@ func (s *system) shareTables() {
 	}
 }
 
-// meetOutside notes which lines meet each outside point.
+// meetOutside notes which lines meet each outside point, and which have high points.
 func (s *system) meetOutside() {
+	s.crowned = s.crowned[:0]
 	for k := range s.outside {
 		s.outside[k].fed, s.outside[k].drawn = nil, nil
 	}
 	for i := range s.lines {
 		l := &s.lines[i]
+		if len(l.crowns) > 0 {
+			s.crowned = append(s.crowned, int32(i))
+		}
 		if l.to.outside() {
 			s.outside[l.to.at].fed = append(s.outside[l.to.at].fed, int32(i))
 		}

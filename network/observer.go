@@ -26,6 +26,9 @@ type observer struct {
 	sums       [3]float64
 	spilled    []float64 // s, when a vessel was last seen spilling
 	trackers   []*tracker
+	turned     []turn // of the vessels in the step just taken
+	watched    []bool // vessels whose level is followed in a window of time
+	rz         []float64
 	keep       bool
 	columns    []column
 	series     *Series
@@ -59,7 +62,16 @@ func newObserver(sim *simulation) (*observer, error) {
 	o.flow, o.crest, o.over = make([]extreme, len(s.lines)), make([]extreme, len(s.lines)), make([]float64, len(s.outside))
 	o.inflow, o.spilled = make([]extreme, len(s.outside)), make([]float64, len(s.stations))
 	o.regimes = make([]regime, len(s.lines))
-	return o, o.addTrackers()
+	o.turned, o.watched, o.rz = make([]turn, len(s.stations)), make([]bool, len(s.stations)), make([]float64, s.m)
+	if err := o.addTrackers(); err != nil {
+		return nil, err
+	}
+	for _, m := range o.trackers {
+		if i := m.level(); i >= 0 && m.window != nil {
+			o.watched[i] = true
+		}
+	}
+	return o, nil
 }
 
 func (o *observer) begin(series bool) {
@@ -131,8 +143,11 @@ func (o *observer) step(out *integrate.Outcome) {
 	o.regime() // while the system stands at the end of the step: what follows looks about within it
 	o.middle(out.T0 + (out.T-out.T0)/2)
 	o.samples(out)
-	o.between(&o.prev, &o.mid)
-	o.between(&o.mid, &o.now)
+	for i := range o.turned {
+		o.turned[i].at = math.NaN()
+	}
+	o.turns(&o.prev, &o.mid)
+	o.turns(&o.mid, &o.now)
 	o.peaks()
 	for _, m := range o.trackers {
 		m.step(o)
@@ -192,22 +207,28 @@ func (o *observer) here(t float64) {
 func (o *observer) middle(t float64) {
 	sim, s, d, w := o.sim, o.sim.sys, o.sim.solver.Dense(), &o.mid
 	w.t = t
-	for i := range w.z {
-		w.z[i] = d.OneZ(i, t)
-	}
+	sim.solver.Eval(t, o.y)
+	sim.solver.EvalZ(t, w.z)
+	d.Rates(t, w.dv)
+	d.RatesZ(t, o.rz)
+	copy(w.q, o.rz)
 	for i := range w.q {
-		w.q[i] = d.RateZ(i, t)
 		a, b := o.prev.q[i], o.now.q[i]
-		if crest := len(s.lines[i].crowns) > 0; crest || w.q[i] < 0 && a >= 0 && b >= 0 || w.q[i] > 0 && a <= 0 && b <= 0 {
+		if w.q[i] < 0 && a >= 0 && b >= 0 || w.q[i] > 0 && a <= 0 && b <= 0 {
 			w.q[i] = sim.flowAt(i, t) // a turn and back within the step, if it is no rounding of the polynomial
-			if crest {
-				o.crest[i].see(s.crestHead(i), t)
-			}
 		}
 	}
+	for _, i := range s.crowned {
+		w.q[i] = sim.flowAt(int(i), t)
+		o.crest[i].see(s.crestHead(int(i)), t)
+	}
 	for i := range s.stations {
-		w.dv[i] = d.Rate(i, t)
-		st := sim.lookAt(i, t)
+		st := &s.stations[i]
+		m := st.mass
+		if st.massRow >= 0 {
+			m = o.y[st.massRow]
+		}
+		st.look(o.y[i], m)
 		w.level[i], w.gas[i], w.spill[i] = st.level, st.gas, st.spill
 	}
 	o.look(w, 1)
@@ -238,25 +259,48 @@ func (o *observer) look(w *snapshot, k int) {
 	}
 }
 
-// between finds extremes of level where a volume turns between two snapshots.
-func (o *observer) between(a, b *snapshot) {
+// turn is where the level of a vessel turns within the step just taken, and that level; at is NaN where it does not, or where it matters to nobody.
+type turn struct{ at, level float64 }
+
+// turns finds the extremes of level where a volume turns between two snapshots.
+func (o *observer) turns(a, b *snapshot) {
 	s, d := o.sim.sys, o.sim.solver.Dense()
 	for i := range o.level {
-		if a.dv[i]*b.dv[i] >= 0 || !o.level[i].beyond(a.level[i], b.level[i], math.Max(math.Abs(a.dv[i]), math.Abs(b.dv[i]))*(b.t-a.t)*s.stations[i].slope, a.dv[i] > 0) {
+		if a.dv[i]*b.dv[i] >= 0 {
 			continue
 		}
-		t := turning(a.t, b.t, d.Rate(i, a.t), d.Rate(i, b.t), func(t float64) float64 { return d.Rate(i, t) })
+		if e := &o.level[i]; !o.watched[i] {
+			top := hermiteTurn(a.level[i], b.level[i], a.dv[i]*s.stations[i].slope, b.dv[i]*s.stations[i].slope, b.t-a.t)
+			slack := turnSlack * math.Abs(top-a.level[i])
+			if a.dv[i] > 0 && top+slack <= e.high || a.dv[i] < 0 && top-slack >= e.low {
+				continue
+			}
+		}
+		t := turning(a.t, b.t, a.dv[i], b.dv[i], func(t float64) float64 { return d.Rate(i, t) })
 		h, _ := s.stations[i].shape.Level(d.One(i, t))
 		o.level[i].see(h, t)
+		o.turned[i] = turn{t, h}
 	}
 }
 
-// beyond tells that a turn between levels a and b, no further from them than reach, may be a new extreme: the highest or the lowest.
-func (e *extreme) beyond(a, b, reach float64, high bool) bool {
-	if high {
-		return math.Max(a, b)+reach > e.high
+// turnSlack is the share of its rise by which the estimate of a turn may be off.
+const turnSlack = 0.05
+
+// hermiteTurn returns the extreme between its ends of the cubic with values va, vb and slopes da, db of opposite signs over a time h.
+func hermiteTurn(va, vb, da, db, h float64) float64 {
+	// v' = da + 2(3e/h − 2da − db)·u·… with e = vb − va; in u = t/h: c₀ + c₁u + c₂u²
+	e := (vb - va) / h
+	c0, c1, c2 := da, 6*e-4*da-2*db, 3*(da+db)-6*e
+	u := da / (da - db)
+	if disc := c1*c1 - 4*c0*c2; disc > 0 {
+		q := -(c1 + math.Copysign(math.Sqrt(disc), c1)) / 2
+		for _, r := range [2]float64{q / c2, c0 / q} {
+			if r > 0 && r < 1 {
+				u = r
+			}
+		}
 	}
-	return math.Min(a, b)-reach < e.low
+	return va + h*u*(c0+u*(c1/2+u*c2/3))
 }
 
 // peaks refines extremes of flow, spill and gas pressure that lie inside the step.
@@ -280,7 +324,7 @@ func (o *observer) peaks() {
 func (e *extreme) refine(a, b, va, vm, vb float64, f func(float64) float64) {
 	up := vm > va && vm > vb && vm-math.Max(va, vb) > 1e-9*math.Abs(vm)
 	down := vm < va && vm < vb && math.Min(va, vb)-vm > 1e-9*math.Abs(vm)
-	if !up && !down {
+	if !up && !down || up && vm+(vm-math.Min(va, vb))/4 <= e.high || down && vm-(math.Max(va, vb)-vm)/4 >= e.low {
 		return
 	}
 	vm = f(a + (b-a)/2)

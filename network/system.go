@@ -29,6 +29,7 @@ type system struct {
 	lines     []line
 	actuators []actuator
 	inertial  []int32
+	crowned   []int32 // lines with high points
 
 	vesselAt, teeAt, outsideAt, lineAt, actuatorAt map[string]int
 

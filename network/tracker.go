@@ -55,10 +55,12 @@ func (m *tracker) step(o *observer) {
 	g0, g1, g2 := m.sign*m.v[0], m.sign*m.v[1], m.sign*m.v[2]
 	top, topAt := math.Inf(-1), o.mid.t
 	switch i := m.level(); {
-	case i >= 0 && a.dv[i]*b.dv[i] < 0 && m.matters(math.Min(g0, g2), math.Max(g0, g2)+math.Max(math.Abs(a.dv[i]), math.Abs(b.dv[i]))*(b.t-a.t)*o.sim.sys.stations[i].slope, 0):
-		d := o.sim.solver.Dense()
-		topAt = turning(a.t, b.t, d.Rate(i, a.t), d.Rate(i, b.t), func(t float64) float64 { return d.Rate(i, t) })
-		top = g(topAt)
+	case i >= 0:
+		if turn := o.turned[i]; !math.IsNaN(turn.at) {
+			topAt, top = turn.at, m.sign*(turn.level-m.probe.bound)
+		} else {
+			topAt = a.t
+		}
 	case g1 > g0 && g1 > g2 && m.matters(g0, g1, g2):
 		topAt, top = summit(a.t, b.t, g0, g(o.mid.t), g2, g)
 	default:
