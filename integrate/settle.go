@@ -8,7 +8,7 @@ import (
 )
 
 const (
-	settled    = 1e-3 // size of a Newton correction, in tolerances, that is not worth making
+	settled    = 1e-6 // size of a Newton correction, in tolerances, that is not worth making
 	rounding   = 1e-2 // size below which a correction that does not shrink is taken for rounding
 	iterations = 40   // of Newton at a restart
 	halvings   = 12   // of a Newton correction
@@ -23,8 +23,7 @@ func (s *Solver) settle() error {
 		s.linear = false
 		s.linearise()
 	}
-	before := math.Inf(1)
-	size := before
+	before, size := math.Inf(1), math.Inf(1)
 	for range iterations {
 		if err := s.factoriseAlgebraic(); err != nil {
 			return s.singular(0, err)
@@ -35,7 +34,14 @@ func (s *Solver) settle() error {
 		if size <= settled || size <= rounding && size > before/4 {
 			return nil // the latter where rounding keeps the correction from shrinking
 		}
+		if before <= rounding && size > before { // at a corner of the law the next correction may lead away again
+			copy(s.y, s.best)
+			s.linear = false
+			s.linearise()
+			return nil
+		}
 		before = size
+		copy(s.best, s.y)
 		if size <= rounding {
 			for i := range trial {
 				trial[i] = s.y[i] + d[i]

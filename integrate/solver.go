@@ -44,6 +44,7 @@ type Solver struct {
 	y0, z0 []float64 // start of the step in hand
 	y1, z1 []float64 // its end
 	err    []float64 // estimate of its error
+	best   []float64 // state before the last correction of settle
 	slope  []float64 // y' at the last restart
 	poly   Dense     // the last step
 
@@ -73,7 +74,7 @@ func NewSolver(sys System, opt Options) *Solver {
 	s.factor = sparse.Analyse(s.pat)
 	s.matrix = make([]float64, len(s.pat.Row))
 	s.lin = Linear{DfDy: make([]float64, len(s.pat.Row)), DgDy: make([]float64, len(s.icol)), DfDt: make([]float64, n), DgDt: make([]float64, m)}
-	for _, v := range []*[]float64{&s.y, &s.f, &s.scale, &s.y0, &s.y1, &s.err, &s.slope} {
+	for _, v := range []*[]float64{&s.y, &s.f, &s.scale, &s.y0, &s.y1, &s.err, &s.best, &s.slope} {
 		*v = make([]float64, n)
 	}
 	for _, v := range []*[]float64{&s.z, &s.g, &s.z0, &s.z1} {
