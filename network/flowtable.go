@@ -16,6 +16,7 @@ type flowTable struct {
 type octave struct {
 	first, shift int32
 	scale        float64 // cells a unit of x
+	unit         float64 // 2^-shift
 }
 
 const (
@@ -64,7 +65,7 @@ func (t *flowTable) fill(c *chain, sign, x0, tol float64, guess *float64) octave
 			v0, m0 = v1, m1
 		}
 		if worst < tol || k == 9 {
-			return octave{first: int32(first), shift: int32(52 - k), scale: 1 / w}
+			return octave{first: int32(first), shift: int32(52 - k), scale: 1 / w, unit: math.Ldexp(1, k-52)}
 		}
 	}
 }
@@ -85,7 +86,7 @@ func (t *flowTable) at(dp float64) (q, slope float64, ok bool) {
 	const mantissa = 1<<52 - 1
 	m := bits & mantissa
 	c := &t.cell[int(o.first)+int(m>>o.shift)]
-	u := float64(m&(1<<o.shift-1)) / float64(uint64(1)<<o.shift)
+	u := float64(m&(1<<o.shift-1)) * o.unit
 	q = c[0] + u*(c[1]+u*(c[2]+u*c[3]))
 	slope = (c[1] + u*(2*c[2]+3*u*c[3])) * o.scale * 0.5 / x
 	if dp < 0 {

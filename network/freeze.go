@@ -87,6 +87,7 @@ func (s *system) freeze(sim *simulation) {
 	for i := range s.lines {
 		s.freezeLine(&s.lines[i], t)
 	}
+	s.sortPlain()
 	for i := range s.tees {
 		s.freezeTee(&s.tees[i])
 	}

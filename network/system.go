@@ -29,6 +29,8 @@ type system struct {
 	lines     []line
 	actuators []actuator
 	inertial  []int32
+	plain     []plainLine
+	rest      []int32 // the other lines
 	crowned   []int32 // lines with high points
 
 	vesselAt, teeAt, outsideAt, lineAt, actuatorAt map[string]int
@@ -66,7 +68,7 @@ func (s *system) IntegralPattern() (ptr, cols []int32) { return s.iPtr, s.iCol }
 // look sets everything that depends on time and state but lines: openings, outside levels, vessels.
 func (s *system) look(t float64, y []float64) {
 	s.y = y
-	for i := range s.lines {
+	for _, i := range s.rest {
 		l := &s.lines[i]
 		for _, m := range l.moving {
 			l.locals[m.local].Opening = s.actuators[m.actuator].at(t)
@@ -86,6 +88,7 @@ func (s *system) look(t float64, y []float64) {
 			m = y[st.massRow]
 		}
 		st.look(y[i], m)
+		st.floor = st.gas + s.gamma*st.surface
 	}
 }
 
@@ -98,7 +101,8 @@ func (s *system) Rates(t float64, y, f, g []float64) {
 	for i := range s.stations {
 		s.addVessel(i, t, f, g, nil)
 	}
-	for i := range s.lines {
+	s.plainRates(f, g)
+	for _, i := range s.rest {
 		l := &s.lines[i]
 		a, b := s.see(&l.from), s.see(&l.to)
 		l.evaluate(&a, &b, s.gamma)
