@@ -163,9 +163,9 @@ func (s *system) balanceTees(f []float64) {
 // teeScale brings the differentiated balance of a tee to the size of a balance of flows.
 func (s *system) teeScale(int) float64 { return 1 }
 
-// Scale fills the error allowed in each unknown: of a level l, atol + min(rtol·|l|, 2·10⁻⁵ m), as a volume over the present surface.
+// Scale fills the error allowed in each unknown: of a level l, rtol·(0.1 m + |l|) up to 2·10⁻⁵ m, as a volume over the present surface.
 func (s *system) Scale(y []float64, rtol float64, scale []float64) {
-	tol := func(l float64) float64 { return 1e-3*rtol + math.Min(rtol*l, levelCap) }
+	tol := func(l float64) float64 { return math.Min(rtol*(leastLevel+l), levelCap) }
 	for i := range s.stations {
 		st := &s.stations[i]
 		h, slope := st.shape.Level(y[i])
@@ -191,6 +191,9 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 
 // stillFlow is the flow, m³/s, that a tee may be out of balance by: 4 mL an hour.
 const stillFlow = 1e-9
+
+// leastLevel is the level, m, under which the error allowed does not shrink with the level any more: the last of a heel needs no micrometres.
+const leastLevel = 0.1
 
 // levelCap bounds the error allowed in a level, m: a quarter of the head under which flows are made linear, so that an equilibrium is quiet.
 const levelCap = 2e-5
