@@ -242,6 +242,10 @@ func (sim *simulation) finishFlags(r *Result) {
 				to = "the floor"
 			}
 			vol := x.Spilled
+			if sim.breached(v) {
+				sim.flags = append(sim.flags, sim.breachFlag(v, x))
+				continue
+			}
 			sim.flags = append(sim.flags, &Flag{Kind: "overtopped", Where: v.Tag, From: *x.FirstSpill, To: *x.SpillEnds, Size: &vol,
 				Says: fmt.Sprintf("%s overtops: %s over the rim to %s", v.Tag, quantity.Format(vol, quantity.Volume, p.Show.Volume, 3), to), Do: "shut what fills it, or open what empties it, before then"})
 		}

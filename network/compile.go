@@ -190,6 +190,9 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 		}
 		s.addActuators(c, f, i, k)
 	}
+	if c.weir != nil && len(c.chain.parts) == 0 {
+		c.to.width = 0 // it sees the surface there, not a mouth
+	}
 	c.setLeak(s.plan.Assume.CheckLeak)
 	if c.from.kind == toTee || c.to.kind == toTee {
 		c.gmin = weepage

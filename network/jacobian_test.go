@@ -352,6 +352,17 @@ func benches() []bench {
 			}
 			s.line("A", "B", "weir {rectangular: {width: 0.5 m, c: 1.7}}").Leaves = Port{Form: Crest, Height: 1.8, Given: true}
 		}, sets: []func(*simulation, []float64){level(0, 2.99), level(1, 2.9)}},
+		{name: "weirs under gas, and full vessels", liquid: water, build: func(s *sketch) {
+			s.cover(s.vessel("A", box, 0, 2), 800)
+			s.cover(s.vessel("B", box, 0.1, 1), -300, "hole {bore: 20 mm}")
+			c := s.vessel("C", box, 0, 1)
+			c.Rim = 2.9
+			s.outside("X", "gully {elevation: 0 m, capacity: 6 L/s}")
+			for _, ends := range [][2]string{{"A", "B"}, {"B", "C"}, {"C", "A"}, {"A", "X"}} {
+				s.line(ends[0], ends[1], "weir {rectangular: {width: 0.5 m, c: 1.7}}").Leaves = Port{Form: Crest, Height: 1.6, Given: true}
+			}
+			s.line("A", "X", "weir {rectangular: {width: 0.5 m, c: 1.7}}", "pipe {length: 5 m, bore: 60 mm, roughness: 0.05 mm}").Leaves = Port{Form: Crest, Height: 1.8, Given: true}
+		}, sets: []func(*simulation, []float64){level(0, 2.999), level(0, 3.001), level(1, 2.9985), level(1, 1.8), level(0, 1.605), level(1, 1.75), level(2, 2.2)}},
 		{name: "high points", liquid: water, build: func(s *sketch) {
 			s.vessel("A", box, 0, 2)
 			s.vessel("B", box, -12, 1)

@@ -33,8 +33,12 @@ func (o *observer) addTrackers() error {
 		}
 	}
 	for _, v := range p.Vessels {
-		rim := Condition{Subject: Level, Of: []string{v.Tag}, Bound: v.RimLevel(), Text: quantity.Format(v.RimLevel(), quantity.Length, p.Show.Level, 4)}
-		if err := o.addLimit(implicitLimit(rim, "its rim")); err != nil {
+		rim, why := v.RimLevel(), "its rim"
+		if st := &o.sim.sys.stations[o.sim.sys.vesselAt[v.Tag]]; st.closed && len(st.vents) == 0 {
+			rim, why = st.rim, "full and sealed"
+		}
+		top := Condition{Subject: Level, Of: []string{v.Tag}, Bound: rim, Text: quantity.Format(rim, quantity.Length, p.Show.Level, 4)}
+		if err := o.addLimit(implicitLimit(top, why)); err != nil {
 			return err
 		}
 		o.rims = append(o.rims, o.limits[len(o.limits)-1].track)

@@ -17,6 +17,7 @@ type station struct {
 	full    float64 // m³, volume under the top of the shape
 	rim     float64 // m above base
 	rimLen  float64 // m
+	breach  float64 // m above base, where a covered vessel is full
 	spillTo int32   // vessel; -1: the floor or an outside point
 	closed  bool    // has a cover
 	sealed  bool    // no vent: the mass of gas is a constant
@@ -55,9 +56,13 @@ func newStation(v *Vessel, p *Plant) station {
 	if math.IsNaN(st.rimLen) {
 		st.rimLen = v.Shape.Perimeter(st.rim)
 	}
+	st.breach, _ = v.Shape.Level(st.full * (1 - gasLeft))
 	if c := v.Cover; c != nil {
 		st.closed, st.temp = true, c.Temperature
 		st.sealed = len(c.Vents) == 0 && !p.mayBreathe(v)
+		if len(c.Vents) == 0 {
+			st.rim = v.fullLevel(st.breach)
+		}
 		for _, w := range c.Vents {
 			st.vents = append(st.vents, ventAt{w, w.Vent, elements.Local{Opening: 1 - w.Blocked, Gravity: p.Gravity, Band: 1}})
 		}
@@ -65,18 +70,38 @@ func newStation(v *Vessel, p *Plant) station {
 	return st
 }
 
-// startMass returns the mass of gas, kg, at the start.
-func (st *station) startMass() float64 {
-	return st.plan.Cover.Pressure * (st.full - st.plan.StartVolume()) / (gasConstant * st.temp)
+// gasLeft is the share of a covered vessel under which its gas space counts as gone. Below it no gas law says what the pressure does: gas has left by
+// the vents or through what gave way. The space is then counted, once differentiable, as no less than half of that share, so that the pressure stays
+// finite, and liquid leaves by the law of the rim: over the rim where there are vents, from the level at which the gas is gone where there are none.
+// Common practice, no source.
+const gasLeft = 1e-3
+
+// fullLevel returns the level, m above base, at which a vessel without vents counts as full and sealed: where its gas space is gone, or a lower
+// rim that was stated.
+func (v *Vessel) fullLevel(gone float64) float64 {
+	if v.Rim < gone {
+		return v.Rim
+	}
+	return gone
 }
 
-// gasVolume returns the space left to gas, m³, never under a millionth of the vessel.
+// startMass returns the mass of gas, kg, at the start.
+func (st *station) startMass() float64 {
+	g, _ := st.gasVolume(st.plan.StartVolume())
+	return st.plan.Cover.Pressure * g / (gasConstant * st.temp)
+}
+
+// gasVolume returns the space left to gas, m³, and its slope by the volume of liquid v, m³: g = full − v down to gasLeft·full = 2e, then
+// e + g²/4e, and e where none is left.
 func (st *station) gasVolume(v float64) (vol, slope float64) {
-	least := 1e-6 * st.full
-	if g := st.full - v; g > least {
+	e := gasLeft / 2 * st.full
+	switch g := st.full - v; {
+	case g >= 2*e:
 		return g, -1
+	case g > 0:
+		return e + g*g/(4*e), -g / (2 * e)
 	}
-	return least, 0
+	return e, 0
 }
 
 // look works out what follows from the volume v, m³, and the gas mass m, kg.
@@ -94,7 +119,7 @@ func (st *station) look(v, m float64) {
 		}
 	}
 	st.spill, st.spillV = 0, 0
-	if h := st.level - st.rim; h > 0 && (!st.closed || len(st.vents) > 0) {
+	if h := st.level - st.rim; h > 0 {
 		r := math.Sqrt(h)
 		st.spill = rimCoefficient * st.rimLen * h * r
 		st.spillV = 1.5 * rimCoefficient * st.rimLen * r * st.slope

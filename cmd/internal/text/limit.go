@@ -76,6 +76,8 @@ func (p *page) named(l *network.LimitResult) string {
 // bound writes the bound as in the file; what the vessel itself bears is called by its name.
 func (p *page) bound(l *network.LimitResult) string {
 	switch {
+	case l.Implicit && l.Why == "full and sealed" && l.BoundSI != nil:
+		return "full and sealed, " + keep(p.units.LevelOf(*l.BoundSI, Down))
 	case l.Implicit && l.Subject == "level" && l.BoundSI != nil:
 		return "its rim, " + keep(p.units.LevelOf(*l.BoundSI, Down))
 	case l.Implicit && l.Subject == "pressure":
