@@ -44,6 +44,6 @@ func (sim *simulation) flowAt(i int, t float64) float64 {
 }
 
 // turn returns when the flow of line i changes its sign between t0 and t1.
-func (sim *simulation) turn(i int, t0, t1 float64, rising bool) float64 {
-	return bisect(t0, t1, rising, func(t float64) float64 { return sim.flowAt(i, t) })
+func (sim *simulation) turn(i int, t0, t1, q0, q1 float64) float64 {
+	return turning(t0, t1, q0, q1, 1e-9, func(t float64) float64 { return sim.flowAt(i, t) })
 }

@@ -51,7 +51,7 @@ func (b *ledger) line(sim *simulation, i int, from, to *snapshot) {
 	case qa <= 0 && qb <= 0:
 		b.back(i, from.t, to.t, to.z[i]-from.z[i], math.Min(qa, qb))
 	default:
-		t := sim.turn(i, from.t, to.t, qa < 0)
+		t := sim.turn(i, from.t, to.t, qa, qb)
 		z := sim.solver.Dense().OneZ(i, t)
 		if qa < 0 {
 			b.back(i, from.t, t, z-from.z[i], qa)

@@ -276,7 +276,7 @@ func (o *observer) turns(a, b *snapshot) {
 				continue
 			}
 		}
-		t := turning(a.t, b.t, a.dv[i], b.dv[i], func(t float64) float64 { return d.Rate(i, t) })
+		t := turning(a.t, b.t, a.dv[i], b.dv[i], 1e-6, func(t float64) float64 { return d.Rate(i, t) })
 		h, _ := s.stations[i].shape.Level(d.One(i, t))
 		o.level[i].see(h, t)
 		o.turned[i] = turn{t, h}

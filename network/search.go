@@ -18,16 +18,19 @@ func bisect(a, b float64, rising bool, f func(float64) float64) float64 {
 	return b
 }
 
-// turning returns where a smooth f, of values fa and fb of opposite signs at a and b, crosses zero between them: the rule of false position with
-// the Illinois halving (Dowell and Jarratt, BIT 11, 1971).
-func turning(a, b, fa, fb float64, f func(float64) float64) float64 {
-	for range 40 {
+// turning returns where a smooth f, of values fa and fb of opposite signs at a and b, crosses zero between them, to a share near of b − a: the rule of
+// false position with the Illinois halving (Dowell and Jarratt, BIT 11, 1971).
+func turning(a, b, fa, fb, near float64, f func(float64) float64) float64 {
+	near *= b - a
+	last := math.Inf(1)
+	for range 60 {
 		x := b - fb*(b-a)/(fb-fa)
-		if !(x > a && x < b) {
-			break
+		if !(x > a && x < b) || math.Abs(x-last) < near {
+			return math.Min(math.Max(x, a), b)
 		}
+		last = x
 		v := f(x)
-		if v == 0 || b-a < 1e-12*math.Abs(b) {
+		if v == 0 {
 			return x
 		}
 		if (v > 0) == (fb > 0) {
@@ -36,9 +39,6 @@ func turning(a, b, fa, fb float64, f func(float64) float64) float64 {
 		} else {
 			a, fa = x, v
 			fb /= 2
-		}
-		if math.Abs(v) < 1e-12*math.Max(math.Abs(fa), math.Abs(fb)) {
-			return x
 		}
 	}
 	return b
