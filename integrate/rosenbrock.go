@@ -108,18 +108,15 @@ func (r *rosenbrock) assemble(i int, h float64, f, b []float64) {
 func (r *rosenbrock) integrals(i int, h float64, g []float64) {
 	s := r.s
 	hg, d := h*r.tab.Gamma, h*r.tab.D[i]
-	u := r.u[i]
+	u, uz := r.u[i], r.uz[i][:len(g)]
+	combine(uz, r.c[:i], r.uz)
+	byT, ptr := s.lin.DgDt[:len(g)], s.iptr[:len(g)+1]
 	for k := range g {
-		a, b := s.iptr[k], s.iptr[k+1]
-		sum := g[k] + d*s.lin.DgDt[k]
-		vals := s.lin.DgDy[a:b]
-		for l, col := range s.icol[a:b] {
-			sum += vals[l] * u[col]
+		sum := g[k] + d*byT[k]
+		for l := ptr[k]; l < ptr[k+1]; l++ {
+			sum += s.lin.DgDy[l] * u[s.icol[l]]
 		}
-		for j, c := range r.c[:i] {
-			sum += c * r.uz[j][k]
-		}
-		r.uz[i][k] = hg * sum
+		uz[k] = hg * (sum + uz[k])
 	}
 }
 
@@ -140,15 +137,14 @@ func (r *rosenbrock) finish() float64 {
 			}
 		}
 	}
-	for k := range s.z1 {
-		sum := 0.0
-		for j, uz := range r.uz {
-			sum += m.M[j] * uz[k]
-		}
+	combine(s.z1, m.M, r.uz)
+	bad := 0.0
+	for k, sum := range s.z1 {
 		s.z1[k] = s.z0[k] + sum
-		if sum-sum != 0 {
-			return math.NaN()
-		}
+		bad += sum - sum
+	}
+	if bad != 0 {
+		return math.NaN()
 	}
 	return norm(s.err, s.scale)
 }
