@@ -66,6 +66,7 @@ func (e *pump) ready(f *faults) {
 	d.Passes, d.Stated = e.stopped == "passes", e.saidPasses
 	d.Curved, d.Rate = e.byCurve, e.rate
 	f.when(e.byRate && d.Passes, "a pump given by its rate lets nothing through when stopped")
+	f.when(d.StandbyFor != "" && d.StandbyFor == d.Tag, "a pump cannot stand by for itself")
 	f.when(d.Mode == Auto && !d.Starts.Given, "mode auto needs a start level")
 	f.when(d.Mode == Standby && d.StandbyFor == "" && !d.Starts.Given, "mode standby needs standby_for or a start level")
 	on, off := d.Starts, d.Stops

@@ -17,9 +17,7 @@ func (p *Plant) Validate() (faults, warnings []Problem) {
 		c.line(l)
 	}
 	for _, t := range p.Tees {
-		if n := len(p.meets[t.Tag]); n < 2 {
-			c.warn(t.Place, "", "only %d line meets at %s: nothing can pass it", n, t.Tag)
-		}
+		c.met(t)
 	}
 	c.conditions()
 	return c.faults, c.warnings
@@ -140,6 +138,7 @@ func (c *checker) conditions() {
 	for _, s := range c.p.Steps {
 		see(s.When, "step "+s.ID)
 		see(s.StopIf, "step "+s.ID)
+		c.still(s)
 	}
 	for _, m := range c.p.Milestones {
 		see(&m.When, "milestone "+m.Name)

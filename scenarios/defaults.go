@@ -21,7 +21,7 @@ func (d *decoder) spacing(root *node) {
 		d.assumed("", "report_every", quantity.FormatDuration(p.ReportEvery))
 	}
 	if p.ReportEvery > 0 && p.RunFor/p.ReportEvery > mostSamples {
-		d.problem(first(root.get("report_every"), root), "report_every is too short for this run_for: the stored series would be too long", "")
+		d.problem(first(root.get("report_every"), first(root.get("run_for"), root)), "report_every is too short for this run_for: the stored series would be too long", "")
 	}
 }
 

@@ -2,6 +2,7 @@ package scenarios
 
 import (
 	"errors"
+	"fmt"
 	"strings"
 	"testing"
 )
@@ -105,6 +106,39 @@ func TestFaults(t *testing.T) {
 		{"{water: 12 °C}", "{water: 120 °C}", ""},
 		{"  T-2: {shape", "  T-2: {like: T-9, shape", `like: there is no vessel "T-9" | did you mean T-1?`},
 		{"  T-2: {shape: {box: {length: 2 m, width: 2 m, height: 3 m}}", "  T-2: {like: T-2", "vessel T-2 needs shape; like goes round in a circle at T-2"},
+		{"at: 5 min, valve", "when: {opening: V-1, above: 20 %}, valve", "step s1 waits for what cannot change: opening of V-1 | no other step moves it"},
+		{"at: 5 min, valve", "when: {level: T-2, above: 7 m}, valve", "step s1 waits for a level that T-2 never comes to: 7 m, its rim is at 3 m"},
+		{"at: 5 min, valve", "when: {level: T-2, below: -1 m}, valve", "step s1 waits for a level under the base of T-2"},
+		{"at: 5 min, valve", "when: {pressure: T-1, above: 1 mbar(g)}, valve", "step s1: T-1 is open, its pressure is that of the air"},
+		{"at: 5 min, valve", "when: {crest: L-1, above: 1 m}, valve", "step s1: L-1 has no high point"},
+		{"at: 5 min, valve", "when: {level: AIR, above: 1 m}, valve", "level: AIR is an outside point, not a vessel"},
+		{"at: 5 min, valve", "at: 5 min, when: {level: T-1, below: 1 m}, valve", "step s1 has two triggers: at and when"},
+		{"at: 5 min, valve: V-1", "at: 5 min, valve: P-1", "valve: P-1 is a pump, not a valve"},
+		{"at: 5 min", "at: -5 min", "at lies before the start"},
+		{"valve: V-1, to: 50 %", "pump: P-1, to: 50 %", "to: \"50 %\" is not understood | one of off, on, auto, standby"},
+		{"HDR: {elevation: 4 m}", "HDR: {elevation: 4 m}\n  H2: {elevation: 1 m}", "no line meets at H2 | take it out"},
+		{"below: 2.5 m}", "below: 2.5 m, since: 1 h, until: 30 min}", "until is not after since: the limit would never be judged"},
+		{"below: 2.5 m}", "below: 2.5 m, since: 9 h}", "since is not before the end of the run"},
+		{"rate: 5 m3/h,", "rate: 5 m3/h, standby_for: P-1,", "a pump cannot stand by for itself"},
+		{"rate: 5 m3/h,", "curve: [[0 m3/h, 9 m], [10 m3/h, 4 m]],", "P-1 has a curve and no check valve in its line"},
+		{"rate: 5 m3/h,", "curve: [[0 m3/h, 5 m], [10 m3/h, 9 m]], when_stopped: shut,", "the head must fall from row to row"},
+		{"from: T-2, to: AIR, parts: [", "from: T-2, to: AIR, leaves: {crest: 2 m}, parts: [{orifice: {diameter: 3 cm, cd: 0.6}}, {weir: {v_notch: {angle: 90 deg}}}, ", "the weir in L-3 must be the first part of its line"},
+		{"from: T-2, to: AIR, parts: [", "from: T-2, to: AIR, parts: [{weir: {v_notch: {angle: 90 deg}}}, ", "the weir in L-3 needs the height of its crest in the vessel that it leaves"},
+		{"from: T-1, to: HDR", "from: T-1, leaves: {centre: 9 m}, to: HDR", "L-1 leaves T-1 at 9 m, above the top of its shape at 3 m"},
+		{"level: 1 m}", "level: 62 %, gauge: {zero: 0 m, span: 40 m}}", "the start level, 24.8 m, is above the rim, 3 m"},
+		{"level: 1 m}", "level: 3 m, cover: {gas: {pressure: 0 mbar(g), temperature: 15 °C}}}", "T-2 starts full and sealed"},
+		{"level: 1 m}", "level: 1 m, spills_to: T-2}", "T-2 cannot spill into itself"},
+		{"level: 1 m}", "level: \"1,5 m\"}", "level: decimals are parted by a point | write 1.5 m"},
+		{"level: 1 m}", "level: 1 m, inside: [{from: 0 m, to: 1 m, displaces: 44 m3}]}", "it leaves no room for liquid at level 0 m"},
+		{"{box: {length: 2 m, width: 2 m, height: 3 m}}", "{upright_cylinder: {diameter: 2 m, height: 0.3 m, bottom: {cone: {depth: 0.9 m}}}}", "height 300 mm is over all and less than its bottom and top take, 900 mm"},
+		{"roughness: 0.05 mm", "roughness: 90 mm", "the roughness is more than a tenth of the bore"},
+		{"kv: 60", "kv: 1e999", "kv: \"1e999\" is beyond what can be reckoned with"},
+		{"kv: 60", "kv: 70 to 60", "kv: the lower end comes first | write 60 to 70"},
+		{"run_for: 2 h", "run_for: 2 h\nreport_every: 1e-6 s", "report_every is too short for this run_for"},
+		{"headfall: 1\n", "headfall: 1\ntitle: \"x\\e[31m\"\n", "title has a character in it that does not print, U+001B"},
+		{"headfall: 1\n", "headfall: 1\ntitle: " + strings.Repeat("x", 10_001) + "\n", "title is too long: 10001 characters, 10000 are taken"},
+		{"headfall: 1\n", "headfall: 1\ntitle: a\x00b\n", "there is a character here that does not print | take it out"},
+		{"headfall: 1\n", "headfall: 1\ntitle: *nope\n", "*nope stands for nothing: there is no &nope before it"},
 	} {
 		if !strings.Contains(plan, c.old) {
 			t.Fatalf("no %q in the plan", c.old)
@@ -115,6 +149,40 @@ func TestFaults(t *testing.T) {
 			t.Errorf("%q for %q:\n got %s\nwant %s", c.with, c.old, got, c.says)
 		}
 	}
+}
+
+// A vessel that no line meets and into which nothing comes stands still.
+func TestWaitingForWhatStandsStill(t *testing.T) {
+	with := strings.NewReplacer("tees:", "  T-3: {shape: {box: {length: 1 m, width: 1 m, height: 3 m}}, base: 1 m, level: 0.5 m}\ntees:",
+		"at: 5 min, valve", "when: {level: T-3, above: 1 m}, valve").Replace(plan)
+	want := "step s1 waits for what cannot change: level of T-3 | no line meets it and nothing comes in"
+	if got := strings.Join(faultsOf(t, with, Options{}), "; "); got != want {
+		t.Errorf("got %s, want %s", got, want)
+	}
+	for _, comes := range []string{"level: 0.5 m, inflow: 2 m3/h}", "level: 0.5 m, batches: [{id: b, at: 1 h, volume: 1 m3, over: 1 min}]}"} {
+		if got := faultsOf(t, strings.Replace(with, "level: 0.5 m}", comes, 1), Options{}); got != nil {
+			t.Errorf("%s: %v", comes, got)
+		}
+	}
+	if got := faultsOf(t, strings.Replace(with, "base: 5 m, level: 2 m}", "base: 5 m, level: 2 m, spills_to: T-3}", 1), Options{}); got != nil {
+		t.Errorf("spilled into: %v", got)
+	}
+}
+
+// Very many faults are counted, not printed.
+func TestManyFaults(t *testing.T) {
+	_, err := Load("p.yaml", []byte(plan+manyKeys(1000)), Options{})
+	if err == nil || !strings.HasSuffix(err.Error(), "p.yaml: 900 more faults are not shown") {
+		t.Errorf("%.200v", err)
+	}
+}
+
+func manyKeys(n int) string {
+	var b strings.Builder
+	for i := range n {
+		fmt.Fprintf(&b, "k%d: 1\n", i)
+	}
+	return b.String()
 }
 
 func TestAllFaultsInOnePass(t *testing.T) {

@@ -127,6 +127,10 @@ var (
 func (d *decoder) window(l *limit, n *node) bool {
 	volume, starts := slices.Contains(counted, l.Must.Subject), l.Must.Subject == network.Starts
 	switch {
+	case l.Since.Given && l.Until.Given && l.Since.At.Given && l.Until.At.Given && l.Until.At.S <= l.Since.At.S:
+		d.problem(n.get("until"), "until is not after since: the limit would never be judged", "")
+	case l.Since.At.Given && d.plant.RunFor > 0 && l.Since.At.S >= d.plant.RunFor:
+		d.problem(n.get("since"), "since is not before the end of the run: the limit would never be judged", "")
 	case l.AveragedOver > 0 && !slices.Contains(averaged, l.Must.Subject):
 		d.problem(n.get("averaged_over"), "averaged_over does not go with "+l.must.kind.key, "")
 	case l.InAny > 0 && !volume:

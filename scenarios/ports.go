@@ -51,7 +51,7 @@ func (d *decoder) portField(p *network.Port, key, end string, tag *string) field
 func (d *decoder) onlyVessels(n *node, key string, tag *string) {
 	d.after = append(d.after, func() {
 		if t := d.things[*tag]; t != nil && (t.class == aTee || t.class == anOutside) {
-			d.problem(n, fmt.Sprintf("%s: %s is a %s; only a vessel is met at a height", key, *tag, t.class), "leave "+key+" out")
+			d.problem(n, fmt.Sprintf("%s: %s is %s; only a vessel is met at a height", key, *tag, withArticle(t.class)), "leave "+key+" out")
 		}
 	})
 }

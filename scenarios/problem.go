@@ -73,11 +73,16 @@ func window(line string, column, width int) (text string, at, wide int) {
 // Problems is every fault of a file, in the order of their places.
 type Problems struct{ List []Problem }
 
-// Error prints them all.
+const mostShown = 100 // faults that are printed; who mends these sees the next
+
+// Error prints them all; where there are very many, the first of them and how many more there are.
 func (p *Problems) Error() string {
-	parts := make([]string, len(p.List))
-	for i, q := range p.List {
-		parts[i] = q.Error()
+	parts := make([]string, min(len(p.List), mostShown))
+	for i := range parts {
+		parts[i] = p.List[i].Error()
+	}
+	if more := len(p.List) - len(parts); more > 0 {
+		parts = append(parts, fmt.Sprintf("%s: %d more faults are not shown", p.List[0].File, more))
 	}
 	return strings.Join(parts, "\n")
 }

@@ -5,6 +5,8 @@ import (
 	"fmt"
 	"math"
 	"strings"
+	"unicode"
+	"unicode/utf8"
 
 	"headfall/elements"
 	"headfall/elements/quantity"
@@ -110,10 +112,27 @@ func (d *decoder) plainNumber(p *float64, key string, dim quantity.Dim, need ele
 // freeText makes a field for words that a person reads.
 func (d *decoder) freeText(p *string, key string, need elements.Need, help string) field {
 	return field{key: key, need: need, help: help, written: asText, read: func(n *node, _ string) {
-		if d.text(n, key) {
+		if d.text(n, key) && d.readable(n, key) {
 			*p = strings.TrimSpace(n.text)
 		}
 	}}
+}
+
+const longestText = 10_000 // bytes of words that a person reads
+
+// readable refuses words that would upset a terminal or fill a page.
+func (d *decoder) readable(n *node, key string) bool {
+	if len(n.text) > longestText {
+		d.problem(n, fmt.Sprintf("%s is too long: %d characters, %d are taken", key, utf8.RuneCountInString(n.text), longestText), "")
+		return false
+	}
+	for _, r := range n.text {
+		if r != '\n' && r != '\t' && unicode.IsControl(r) || r >= 0x202a && r <= 0x202e || r >= 0x2066 && r <= 0x2069 {
+			d.problem(n, fmt.Sprintf("%s has a character in it that does not print, %U", key, r), "write it anew without")
+			return false
+		}
+	}
+	return true
 }
 
 // word makes a field for one of some words.

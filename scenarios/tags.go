@@ -125,7 +125,7 @@ func (d *decoder) resolve() {
 		case t == nil:
 			d.problem(r.n, fmt.Sprintf("%s: there is no %s %s", r.key, classes(r.classes), quoted(r.n.text)), d.hint(r.n.text, d.tagsOf(r.classes)))
 		case !slices.Contains(r.classes, t.class):
-			d.problem(r.n, fmt.Sprintf("%s: %s is a %s, not a %s", r.key, r.n.text, t.class, classes(r.classes)), oneOf(d.tagsOf(r.classes)))
+			d.problem(r.n, fmt.Sprintf("%s: %s is %s, not a %s", r.key, r.n.text, withArticle(t.class), classes(r.classes)), oneOf(d.tagsOf(r.classes)))
 		case r.then != nil:
 			r.then(t)
 		}
@@ -153,4 +153,12 @@ func (d *decoder) tagsOf(classes []class) []string {
 	}
 	slices.Sort(tags)
 	return tags
+}
+
+// withArticle speaks of one thing of a class.
+func withArticle(c class) string {
+	if strings.ContainsRune("aeiou", rune(c[0])) {
+		return "an " + string(c)
+	}
+	return "a " + string(c)
 }

@@ -23,8 +23,11 @@ func (d *decoder) tree() *node {
 		d.problem(top, fmt.Sprintf("this file is larger than %d MB", maxSize>>20), "")
 		return nil
 	case !utf8.ValidString(text):
-		line := 1 + strings.Count(text[:invalidAt(text)], "\n")
-		d.problem(&node{src: d.src, at: network.Place{Line: line, Column: 1}}, "this is not UTF-8 text", "save the file as UTF-8")
+		d.problem(d.src.spot(invalidAt(text)), "this is not UTF-8 text", "save the file as UTF-8")
+		return nil
+	}
+	if at := strings.IndexFunc(d.src.text, unprintable); at >= 0 {
+		d.problem(d.src.spot(at), "there is a character here that does not print", "take it out; a plant file is plain text")
 		return nil
 	}
 	docs, err := parse(d.src.text)
@@ -46,6 +49,11 @@ func (d *decoder) tree() *node {
 		return nil
 	}
 	return t.n
+}
+
+// unprintable reports what readers of YAML refuse without telling where.
+func unprintable(r rune) bool {
+	return r < ' ' && r != '\t' && r != '\n' && r != '\r' || r == 0x7f || r >= 0x80 && r < 0xa0 && r != 0x85
 }
 
 func invalidAt(s string) int {
@@ -78,12 +86,20 @@ func parse(text string) (docs []*yaml.Node, err error) {
 	return docs, nil
 }
 
+var yamlAnchor = regexp.MustCompile(`^unknown anchor '(.*)' referenced`)
+
 var yamlLine = regexp.MustCompile(`^(?:yaml: )?(?:line (\d+): )?(.*)$`)
 
 // badYAML notes what the reader of YAML said.
 func (d *decoder) badYAML(err error) {
 	m := yamlLine.FindStringSubmatch(strings.SplitN(err.Error(), "\n", 2)[0])
 	line, _ := strconv.Atoi(m[1])
+	if name := yamlAnchor.FindStringSubmatch(m[2]); name != nil {
+		if i := strings.Index(d.src.text, "*"+name[1]); i >= 0 {
+			d.problem(d.src.spot(i), fmt.Sprintf("*%s stands for nothing: there is no &%s before it", name[1], name[1]), "put a text that begins with * in quotes")
+			return
+		}
+	}
 	text := d.src.line(line)
 	at := network.Place{Line: line, Column: 1 + len(text) - len(strings.TrimLeft(text, " \t"))}
 	hint := "look at this line and the one before it: indentation, and text with a colon or a comma that stands without quotes"
