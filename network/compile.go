@@ -200,6 +200,7 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 	s.setBand(c)
 	s.endLosses(c)
 	s.addFloors(c)
+	s.findSide(c)
 	return nil
 }
 

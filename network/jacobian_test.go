@@ -249,6 +249,21 @@ func benches() []bench {
 			l.Leaves = Port{Form: Dip, Height: 0.3, Given: true}
 			l.InletFull = true
 		}, sets: []func(*simulation, []float64){level(0, 0.5), level(0, 0.53), level(0, 0.46), level(0, 0.7), level(0, 0.75), level(1, 0.85), level(0, 0.302), level(0, 0.29)}},
+		{name: "tall openings in a wall", liquid: water, build: func(s *sketch) {
+			s.vessel("A", box, 0, 1)
+			s.cover(s.vessel("B", box, 0.2, 1), 300, "hole {bore: 20 mm}")
+			s.vessel("C", box, 0.1, 1)
+			s.outside("X", "free_fall {elevation: 0.7 m}")
+			s.outside("R", "water {surface: [[0 s, 0.5 m], [100 s, 1.5 m]]}")
+			for _, part := range []string{"orifice {width: 300 mm, height: 400 mm, cd: 0.6}", "orifice {diameter: 400 mm, cd: 0.6}"} {
+				l := s.line("A", "B", part)
+				l.Leaves, l.Enters = Port{Form: Centre, Height: 0.7, Given: true}, Port{Form: Centre, Height: 0.5, Given: true}
+				l = s.line("C", "A", part)
+				l.Leaves, l.Enters = Port{Form: Centre, Height: 0.6, Given: true}, Port{Form: Centre, Height: 0.7, Given: true}
+				s.line("A", "X", part).Leaves = Port{Form: Centre, Height: 0.7, Given: true}
+				s.line("R", "C", part).Enters = Port{Form: Centre, Height: 0.6, Given: true}
+			}
+		}, sets: []func(*simulation, []float64){level(0, 0.51), level(0, 0.53), level(0, 0.9), level(0, 0.95), level(0, 1.29), level(0, 1.31), level(1, 0.4), level(2, 0.9001), level(2, 0.8), level(0, 0.49)}},
 		{name: "valve that moves", liquid: water, build: func(s *sketch) {
 			s.vessel("A", box, 1, 2)
 			s.vessel("B", box, 0, 1)

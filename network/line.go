@@ -24,7 +24,8 @@ type line struct {
 	crowns   []crown
 	weir     elements.Crest
 	weirAt   *elements.Local
-	crestZ   float64   // m over datum, of the weir
+	crestZ   float64 // m over datum, of the weir
+	side     *sideOpening
 	gmin     float64   // m³/(s·Pa), the weepage at a tee; else 0
 	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
 	own      float64   // the flow itself where it is an unknown of the plant
@@ -77,6 +78,8 @@ func (l *line) evaluate(a, b *end, gamma float64) {
 		l.q = 0
 	case l.weir != nil:
 		l.spill(a, b, gamma)
+	case l.side != nil:
+		l.strips(a, b, gamma)
 	default:
 		l.pass(a, b, gamma)
 	}

@@ -50,6 +50,36 @@ func CentreLine(ratio float64) float64 {
 	return q / (math.Pi / 4 * math.Sqrt(ratio-0.5))
 }
 
+// RoundStrips returns ∫ chord(y)·√(top − y) dy, −, of a round opening of diameter 1 between the heights lo and hi over its invert, under a head that reaches
+// to top ≥ hi, and its derivative by top. Computed by 24-point Gauss quadrature.
+func RoundStrips(top, lo, hi float64) (q, byTop float64) {
+	from := math.Acos(1 - 2*max(0, min(1, lo)))
+	span := math.Acos(1-2*max(0, min(1, hi))) - from
+	for i := range gaussX {
+		for _, side := range [2]float64{-1, 1} {
+			u := (1 + side*gaussX[i]) / 2
+			s, c := math.Sincos(from + span*u*(2-u))
+			w := gaussW[i] / 2 * span * 2 * (1 - u) * s * s / 2
+			d := math.Sqrt(max(top-(1-c)/2, 1e-300))
+			q += w * d
+			byTop += w / (2 * d)
+		}
+	}
+	return q, byTop
+}
+
+// RoundSideDeep returns the ratio (−) of the strips of a round opening, fully covered, to area·√(head of its centre), for that head in diameters, ≥ 1.5, and its
+// derivative:
+//
+//	1 − x/128 − 5x²/16384 − 105x³/4194304 − 3003x⁴/2³⁰,  x = (D/h)²,
+//
+// good to 1e-7 there. Source: binomial series of the strips with the even moments of the disc.
+func RoundSideDeep(h float64) (ratio, slope float64) {
+	x := 1 / (h * h)
+	const a, b, c, d = 1.0 / 128, 5.0 / 16384, 105.0 / 4194304, 3003.0 / (1 << 30)
+	return 1 - x*(a+x*(b+x*(c+x*d))), 2 * x / h * (a + x*(2*b+x*(3*c+x*4*d)))
+}
+
 // Nodes and weights of Gauss–Legendre quadrature over −1..1, 24 points, the positive half. Source: roots of P₂₄.
 var gaussX, gaussW = gauss(24)
 
