@@ -53,6 +53,9 @@ func (p *page) allFailures() []failure {
 	for _, s := range p.missed() {
 		list = append(list, failure{nil, fmt.Sprintf("step %s is never reached: %s", s.ID, s.Says)})
 	}
+	for _, h := range p.missedHolds() {
+		list = append(list, failure{nil, fmt.Sprintf("hold %s is never reached: %s", h.ID, h.Says)})
+	}
 	sort.SliceStable(list, func(i, j int) bool {
 		a, b := list[i].at, list[j].at
 		return a != nil && (b == nil || *a < *b)
@@ -67,6 +70,18 @@ func (p *page) missed() []*network.StepResult {
 		planned := p.steps[s.ID]
 		if s.Done == nil && p.res.Complete && (planned == nil || !planned.Optional) {
 			list = append(list, s)
+		}
+	}
+	return list
+}
+
+// missedHolds returns the holds that were never reached and should have been.
+func (p *page) missedHolds() []*network.HoldResult {
+	var list []*network.HoldResult
+	for _, h := range p.res.Holds {
+		planned := p.steps[h.ID]
+		if h.At == nil && p.res.Complete && (planned == nil || !planned.Optional) {
+			list = append(list, h)
 		}
 	}
 	return list

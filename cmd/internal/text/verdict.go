@@ -41,6 +41,9 @@ func (p *page) count() string {
 	if k := len(p.missed()); k > 0 {
 		said = append(said, counted(k, "step is never reached", "steps are never reached"))
 	}
+	if k := len(p.missedHolds()); k > 0 {
+		said = append(said, counted(k, "hold is never reached", "holds are never reached"))
+	}
 	if n[network.TooClose] > 0 {
 		said = append(said, fmt.Sprintf("%d of %s too close to call", n[network.TooClose], counted(all, "limit", "limits")))
 	}
