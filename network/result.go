@@ -31,6 +31,7 @@ type Result struct {
 	Balance     Balance                    `json:"balance"`
 	Work        Work                       `json:"work"`
 	Series      *Series                    `json:"series"`
+	SeriesBand  *SeriesBand                `json:"series_band"`
 	Allowance   Allowance                  `json:"allowance"`
 
 	unreached []string // steps that are not optional and never came
@@ -287,4 +288,18 @@ type Series struct {
 	Running map[string][]float64  `json:"running"`
 	TeeHead map[string][]*float64 `json:"tee_head_m"`
 	Crest   map[string][]float64  `json:"crest_m"`
+}
+
+// SeriesBand holds the 5, 50 and 95 % points of the levels over the samples, at moments of its own: about a hundred, evenly spread from 0 to run_for, and
+// those of the steps. nil when nothing was sampled.
+type SeriesBand struct {
+	Time  []float64             `json:"time_s"`
+	Level map[string]*LevelBand `json:"level_m"`
+}
+
+// LevelBand is of one vessel, m, a number for each moment of its SeriesBand.
+type LevelBand struct {
+	Low  []float64 `json:"low"`
+	Mid  []float64 `json:"mid"`
+	High []float64 `json:"high"`
 }

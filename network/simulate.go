@@ -23,6 +23,7 @@ type simulation struct {
 	changes Changes
 	watch   *watcher
 	obs     *observer
+	grid    gridder
 
 	t       float64
 	y       []float64
@@ -101,6 +102,7 @@ func (m *Model) Run(ctx context.Context, opt RunOptions) (*Result, error) {
 	}
 	err = sim.run(ctx, &opt)
 	sim.obs.finish()
+	sim.grid.finish(sim)
 	r := sim.result()
 	r.Work.Wall = now().Sub(began).Seconds()
 	return r, err
@@ -128,6 +130,7 @@ func (sim *simulation) begin(opt *RunOptions) error {
 	sim.solver.Reset()
 	sim.control.begin(sim)
 	sim.obs.begin(opt.Series)
+	sim.grid = gridder{grid: opt.Grid}
 	return sim.watch.begin()
 }
 
@@ -169,6 +172,7 @@ func (sim *simulation) segment(ctx context.Context, stop float64, opt *RunOption
 		sim.t = out.T
 		copy(sim.y, sim.solver.Y())
 		sim.obs.step(&out)
+		sim.grid.step(sim, &out)
 		if opt.Progress != nil {
 			opt.Progress(sim.t / sim.plan.RunFor)
 		}

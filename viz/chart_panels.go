@@ -28,7 +28,7 @@ func (h *charter) groups() []group {
 		}
 	}
 	add(group{"levels", "Levels", "Above each vessel's base. Thin lines: rim; dashes: overflow sill; dots: alarm; heavy: limit, with the forbidden side tinted. " +
-		"Triangle: peak. Whiskers: 5 to 95 % of the samples.", h.panels("levels", "level", "Levels", h.u.Level, h.levels(), levelsAPanel)})
+		"Triangle: peak. Tinted band and whiskers: 5 to 95 % of the samples.", h.panels("levels", "level", "Levels", h.u.Level, h.levels(), levelsAPanel)})
 	add(group{"flows", "Flows", "Positive in the line's direction.", h.panels("flows", "flow", "Flows", h.u.Flow, h.flows(), linesAPanel)})
 	add(group{"openings", "Openings", "Travel of valves; a running pump is at 100 %.", h.panels("openings", "opening", "Openings", h.u.Share, h.openings(), linesAPanel)})
 	gas := h.u.Pressure
@@ -62,7 +62,7 @@ func (h *charter) levels() []curve {
 		if !h.set.Keys[key] {
 			continue
 		}
-		c := curve{key: key, name: v.Tag, marks: vesselLines(h.plant, h.r, v.Tag)}
+		c := curve{key: key, name: v.Tag, marks: vesselLines(h.plant, h.r, v.Tag), toward: later, spread: bandOf(h.r, v.Tag)}
 		if q := h.r.Vessels[v.Tag]; q != nil {
 			c.peak, c.peakT, c.peakV = true, q.PeakAt, q.PeakLevel
 			if b, ok := h.r.Bands["peak_level_m"][v.Tag]; ok && wide(b) && finite(q.PeakAt) {
@@ -88,7 +88,7 @@ func (h *charter) flows() []curve {
 		if !h.set.Keys[key] {
 			continue
 		}
-		c := curve{key: key, name: l.Tag, marks: h.bounds("flow", l.Tag)}
+		c := curve{key: key, name: l.Tag, marks: h.bounds("flow", l.Tag), toward: later}
 		if q := h.r.Lines[l.Tag]; q != nil {
 			c.peak, c.peakT, c.peakV = true, q.PeakFlowAt, q.PeakFlow
 			if math.Abs(q.LowFlow) > math.Abs(q.PeakFlow) {

@@ -31,8 +31,9 @@ type curve struct {
 	peakT     float64
 	peakV     float64 // SI
 	peak      bool
-	bands     [][2][2]float64 // whiskers: two points each, s and SI
-	width     float32
+	toward    side               // to which its peak is rounded
+	bands     [][2][2]float64    // whiskers: two points each, s and SI
+	spread    *network.LevelBand // of the samples; nil when there were none
 }
 
 // charter makes the charts of a page.
@@ -118,7 +119,7 @@ func (h *charter) describe(title string, u unit, curves []curve) string {
 	words := clean(title) + " over time, in " + u.Name + "."
 	for _, c := range curves {
 		if c.peak {
-			words += fmt.Sprintf(" %s: peak %s at %s.", clean(c.name), u.Toward(c.peakV, near), h.c.At(c.peakT, near))
+			words += fmt.Sprintf(" %s: peak %s at %s.", clean(c.name), u.Toward(c.peakV, c.toward), h.c.At(c.peakT, near))
 		}
 	}
 	return words
@@ -142,11 +143,14 @@ func (h *charter) addCurve(line *charts.Line, c curve, u unit, low, high float64
 	if c.peak && finite(c.peakV) && finite(c.peakT) && c.peakV != 0 {
 		tell := c.peakT > 0.04*h.r.End // one at the start is in the table, and its label would stand on the axis
 		options = append(options, charts.WithMarkPointNameCoordItemOpts(opts.MarkPointNameCoordItem{
-			Name: "peak", Coordinate: []any{h.x(c.peakT), round6(c.peakV * u.K)}, Value: u.Text(c.peakV), Symbol: "triangle", SymbolSize: 9,
+			Name: "peak", Coordinate: []any{h.x(c.peakT), round6(c.peakV * u.K)}, Value: u.Toward(c.peakV, c.toward), Symbol: "triangle", SymbolSize: 9,
 			Label: &opts.Label{Show: opts.Bool(tell), Position: "top", Formatter: "{c}", FontSize: 11},
 		}))
 	}
 	line.AddSeries(clean(c.name), []opts.LineData{}, options...)
+	if c.spread != nil {
+		addSpread(line, c)
+	}
 	for _, b := range c.bands {
 		size := []int{2, 11}
 		if b[0][0] == b[1][0] {
@@ -181,13 +185,9 @@ func (h *charter) markLines(c curve, u unit) *opts.MarkLines {
 		from, to := h.window(k)
 		look := looks[k.Kind]
 		y := round6(k.At * u.K)
-		place := k.place
-		if place == "" {
-			place = "insideStartTop"
-		}
 		m.Data = append(m.Data, []end{
 			{Name: short(clean(c.name), 14) + " " + short(clean(k.Words), 22), Coord: []any{from, y}, LineStyle: &look,
-				Label: &opts.Label{Show: opts.Bool(true), Position: place, Formatter: "{b}", FontSize: 10}},
+				Label: &opts.Label{Show: opts.Bool(k.place != ""), Position: k.place, Formatter: "{b}", FontSize: 10}},
 			{Coord: []any{to, y}},
 		})
 	}

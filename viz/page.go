@@ -153,7 +153,7 @@ func newView(p Page) (*view, error) {
 		return nil, err
 	}
 	bare := *r
-	bare.Series, bare.Work.Wall = nil, 0
+	bare.Series, bare.SeriesBand, bare.Work.Wall = nil, plainBand(r.SeriesBand), 0
 	v.ResultJSON, err = island(bare)
 	return v, err
 }

@@ -18,8 +18,9 @@ func (j *judgement) doubts() error {
 		return nil
 	}
 	many := &Runner{Load: j.run.Load, Model: sampled(j.run.Model), Workers: j.run.Workers, Progress: j.part(0.2, 1)}
+	at := bandTimes(j.plant, j.res)
 	samples, done, err := Each(j.ctx, many, j.opt.Samples, func(ctx context.Context, b *Bench, i int) (sample, error) {
-		return takeSample(ctx, b, draws, i, j.holds)
+		return takeSample(ctx, b, draws, i, j.holds, at)
 	})
 	kept := calculated(samples, done)
 	j.res.Allowance = network.Allowance{Doubts: j.plant.Assume.Doubts, Samples: len(kept), Seed: j.opt.Seed}
@@ -70,6 +71,7 @@ func whyNot(samples []sample) string {
 func (j *judgement) lay(samples []sample) {
 	r := j.res
 	r.Bands = vesselBands(j.plant, samples)
+	r.SeriesBand = seriesBand(j.plant, samples)
 	for i, s := range r.Steps {
 		if s.Expect == nil {
 			continue

@@ -18,6 +18,7 @@ type sample struct {
 	whole    bool // every limit holds and every step is reached
 	stalls   bool // some step is never reached
 	reported []float64
+	levels   *network.Grid // nil where they are not wanted
 }
 
 // sampleTolerance is the relative accuracy of samples where none is asked for: a tenth of a millimetre in a metre, far within any doubt, at half the
@@ -32,10 +33,15 @@ func sampled(opt network.Options) network.Options {
 	return opt
 }
 
-// takeSample runs the plan with one draw of the numbers, with holds at zero wait and, where there are some, at up_to.
-func takeSample(ctx context.Context, b *Bench, d *Draws, i int, holds bool) (sample, error) {
+// takeSample runs the plan with one draw of the numbers, with holds at zero wait and, where there are some, at up_to. The levels at the moments of at, if
+// any, are of the former.
+func takeSample(ctx context.Context, b *Bench, d *Draws, i int, holds bool, at []float64) (sample, error) {
 	b.Put(d.Numbers, d.Values(i))
-	r, err := b.Run(ctx, network.RunOptions{})
+	var levels *network.Grid
+	if len(at) > 0 {
+		levels = network.NewGrid(at, len(b.Plant.Vessels))
+	}
+	r, err := b.Run(ctx, network.RunOptions{Grid: levels})
 	if ctx.Err() != nil {
 		return sample{}, context.Cause(ctx)
 	}
@@ -43,6 +49,7 @@ func takeSample(ctx context.Context, b *Bench, d *Draws, i int, holds bool) (sam
 		return sample{failed: err.Error()}, nil
 	}
 	s := sampleOf(b.Plant, r)
+	s.levels = levels
 	if !holds {
 		return s, nil
 	}

@@ -67,7 +67,7 @@ func Spread(ctx context.Context, load Load, opt SpreadOptions) (*SpreadPart, err
 	holds := lasts(b.Plant)
 	many := &Runner{Load: load, Model: sampled(r.Model), Workers: r.Workers, Progress: opt.Progress}
 	return part, carry(ctx, many, part, func(ctx context.Context, b *Bench, i int) (SpreadUnit, error) {
-		s, err := takeSample(ctx, b, draws, i, holds)
+		s, err := takeSample(ctx, b, draws, i, holds, nil)
 		return spreadUnit(s, draws, i), err
 	})
 }

@@ -201,6 +201,13 @@
       return box;
     };
   }
+  // the lower edge of a band, or what lies over it
+  var bands = null;
+  function band(s, color, k) {
+    var b = bands = bands || read("result").series_band || { time_s: [], level_m: {} }, l = b.level_m[s.name], up = /^bandup/.test(s.id);
+    if (l) s.data = b.time_s.map(function (t, i) { return [x(t), +((up ? l.high[i] - l.low[i] : l.low[i]) * k).toPrecision(6)]; });
+    s.color = color; s.itemStyle = { color: color }; s.areaStyle.color = color; s.silent = true; s.z = 1; s.symbol = "none"; s.tooltip = { show: false }; s.emphasis = { disabled: true };
+  }
   function finish(o, el) {
     var u = D.units[el.dataset.unit], colors = dark() ? DARK : LIGHT, order = Object.create(null), n = 0, narrow = narrowed(el);
     var INK = ink("--ink"), SOFT = ink("--soft"), HAIR = ink("--hair"), font = ink("--sans");
@@ -228,6 +235,7 @@
       if (s.id === "steps") { s.markLine && (s.markLine.lineStyle.color = SOFT, s.markLine.label.color = SOFT, s.markLine.silent = true, s.markLine.animation = false); s.data = []; s.tooltip = { show: false }; return; }
       if (!(s.name in order)) order[s.name] = n++;
       var k = order[s.name], color = colors[k % colors.length], d = S[s.id];
+      if (/^band(low|up)\//.test(s.id)) { band(s, color, u.k); return; }
       s.color = color; s.itemStyle = { color: color }; s.lineStyle = s.lineStyle || {}; s.lineStyle.color = color; s.emphasis = { disabled: true };
       if (d) {
         s.data = d.t.map(function (t, i) { return [x(t), d.v[i] === null ? null : +(d.v[i] * u.k).toPrecision(9)]; });

@@ -87,3 +87,23 @@ limits: [{level: PIT, below: 1.6 m}]
 		}
 	}
 }
+
+// The band of the levels: at the start that of the doubt stated, and the same on its way up at 1 m/h; every step has a moment of its own.
+func TestSeriesBand(t *testing.T) {
+	file := strings.Replace(filling, "%LEVEL%", "0.5 m ± 0.1 m", 1)
+	r := must(study.Judge(t.Context(), text(file), study.Options{}))(t)
+	b := r.SeriesBand
+	if b == nil || b.Time[0] != 0 || len(b.Time) < 60 || len(b.Time) > 121 {
+		t.Fatalf("the band is %+v", b)
+	}
+	half := 0.1 * 1.644854 / 1.959964 // the 95 % point of a normal doubt of ± 0.1 m at 95 %
+	l := b.Level["T-1"]
+	for k, at := range b.Time {
+		if mid := 0.5 + at/3600; at <= 1800 && (math.Abs(l.Low[k]-mid+half) > 0.003 || math.Abs(l.Mid[k]-mid) > 0.003 || math.Abs(l.High[k]-mid-half) > 0.003) {
+			t.Errorf("at %g s the band is %g to %g to %g, want %g ± %g", at, l.Low[k], l.Mid[k], l.High[k], mid, half)
+		}
+	}
+	if r = must(study.Judge(t.Context(), text(file), study.Options{Samples: -1}))(t); r.SeriesBand != nil {
+		t.Error("a band without samples")
+	}
+}
