@@ -72,6 +72,9 @@ func (sim *simulation) vesselResults(r *Result) {
 		x := &VesselResult{StartLevel: v.StartLevel(), EndLevel: level, StartVolume: v.StartVolume(), EndVolume: vol, Left: math.Max(0, vol), LeftWhy: why,
 			PeakLevel: o.level[i].high, PeakAt: o.level[i].highAt, LowLevel: o.level[i].low, LowAt: o.level[i].lowAt,
 			EmptyAtLevel: opt(e), Spilled: sim.led.z[len(s.lines)+i], PeakSpill: math.Max(0, o.spill[i].high)}
+		if x.PeakLevel-x.StartLevel < standing {
+			x.PeakAt = 0 // it stood still: what rounding adds is no peak
+		}
 		if t := o.emptied[i].first; v.StartLevel() > e {
 			x.EmptiedAt = opt(t)
 		}

@@ -43,7 +43,7 @@ func newVerdict(plant *network.Plant, r *network.Result, u units, c clock) verdi
 	} else {
 		v.Facts = append(v.Facts, fact{Label: "First fail", Value: "none"})
 	}
-	if l := smallest(r); l != nil {
+	if l := r.Tightest(); l != nil && finite(*l.Margin) {
 		text := l.Says + ": " + inHand(l, u, c)
 		if b := marginBand(l, u, c); b != "" {
 			text += ", band " + b
@@ -133,16 +133,6 @@ func reference(l *network.LimitResult) float64 {
 		ref = math.Max(math.Abs(*l.Margin), 1e-300)
 	}
 	return ref
-}
-
-func smallest(r *network.Result) *network.LimitResult {
-	var least *network.LimitResult
-	for _, l := range r.Limits {
-		if finite(share(l)) && (least == nil || share(l) < share(least)) {
-			least = l
-		}
-	}
-	return least
 }
 
 // broken writes how a limit fails: "level of PIT-4 goes over 2.4 m".

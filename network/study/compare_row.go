@@ -22,7 +22,7 @@ func compareOne(ctx context.Context, c Contender, load Load, must []string, opt 
 		row.Why, row.Result = "the calculation could not finish", res
 		return row, nil
 	}
-	row.Result, row.Verdict, row.Why, row.Tightest = res, res.Verdict, whyNotRun(res), marginOf(tightest(res.Limits))
+	row.Result, row.Verdict, row.Why, row.Tightest = res, res.Verdict, whyNotRun(res), marginOf(res.Tightest())
 	if l := firstFailure(res, ""); l != nil {
 		row.FailsAt = l.FirstFail
 	}

@@ -14,7 +14,7 @@ func (p *planning) report() {
 	r.Found, r.Verdict, r.Result = true, p.judged.Verdict, p.judged
 	finish := t.finish
 	r.Finish = &finish
-	r.Tightest = marginOf(tightest(p.judged.Limits))
+	r.Tightest = marginOf(p.judged.Tightest())
 	r.Low, r.High = finishBand(p.judged, p.must)
 	r.Steps, r.Set = []PlannedStep{}, []string{}
 	for i := range p.vars {

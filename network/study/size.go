@@ -148,8 +148,8 @@ func (s *sizing) try(ctx context.Context, values []float64) ([]Tried, []bool, er
 			return t, err
 		}
 		t.Why = whyNotRun(res)
-		if l := tightest(res.Limits); l != nil {
-			t.Share = marginShare(l)
+		if l := res.Tightest(); l != nil {
+			t.Share = l.Share()
 		}
 		if l := unmet(s.opt.Needs, res.Limits); l != nil && t.Why == "" {
 			t.Why = l.Says + " holds with less than the margin wanted"

@@ -143,7 +143,7 @@ func (s *sizing) judge(ctx context.Context, v float64, i, of int) (bool, error) 
 	}
 	s.res.Found, s.res.ExitCode = true, 0
 	s.res.Value, s.res.As, s.res.Verdict, s.res.Result = &v, shown(s.plant, s.number, v), res.Verdict, res
-	s.res.Tightest = marginOf(tightest(res.Limits))
+	s.res.Tightest = marginOf(res.Tightest())
 	return true, nil
 }
 

@@ -22,7 +22,7 @@ func (t *tracking) forecast(ctx context.Context) error {
 	}
 	f := &t.res.Forecast
 	t.res.Result = res
-	f.Verdict, f.Why, f.Tightest = res.Verdict, whyNotRun(res), marginOf(tightest(res.Limits))
+	f.Verdict, f.Why, f.Tightest = res.Verdict, whyNotRun(res), marginOf(res.Tightest())
 	if l := firstFailure(res, ""); l != nil {
 		f.FailsAt = l.FirstFail
 	}

@@ -1,7 +1,6 @@
 package text
 
 import (
-	"math"
 	"strings"
 
 	"headfall/elements/quantity"
@@ -123,22 +122,6 @@ func (p *page) worst(l *network.LimitResult) string {
 	return said
 }
 
-// share is a limit's margin as a share of its bound, or of its worst value where the bound is nothing, for ranking limits of different kinds. The
-// report ranks them alike.
-func share(l *network.LimitResult) float64 {
-	scale := 0.0
-	if l.BoundSI != nil {
-		scale = math.Abs(*l.BoundSI)
-	}
-	if scale == 0 && l.Worst != nil {
-		scale = math.Abs(*l.Worst)
-	}
-	if scale == 0 {
-		scale = math.Max(math.Abs(*l.Margin), math.SmallestNonzeroFloat64)
-	}
-	return *l.Margin / scale
-}
-
 // gravity ranks verdicts, the worst first.
 func gravity(v network.Verdict) int {
 	switch v {
@@ -150,18 +133,4 @@ func gravity(v network.Verdict) int {
 		return 2
 	}
 	return 3
-}
-
-// tightest returns the limit with the least in hand, or nil.
-func tightest(limits []*network.LimitResult) *network.LimitResult {
-	var least *network.LimitResult
-	for _, l := range limits {
-		if l.Margin == nil {
-			continue
-		}
-		if least == nil || share(l) < share(least) {
-			least = l
-		}
-	}
-	return least
 }

@@ -2,7 +2,7 @@ package text
 
 // margin writes the smallest margin with its band, whatever the verdict.
 func (p *page) margin() {
-	l := tightest(p.res.Limits)
+	l := p.res.Tightest()
 	if l == nil {
 		return
 	}
