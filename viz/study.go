@@ -72,6 +72,7 @@ type spreadView struct {
 	Limits            []chanceRow
 	Tornados          []tornado
 	Bands             [][]string
+	Finish            *histogram
 }
 
 type chanceRow struct {
@@ -94,7 +95,7 @@ func newSpread(s *study.SpreadResult, plant *network.Plant, u units, c clock) *s
 	if s == nil {
 		return nil
 	}
-	v := &spreadView{Count: strconv.Itoa(s.Samples), Any: percent(s.AnyFails.Share) + " (" + percent(s.AnyFails.Low) + " to " + percent(s.AnyFails.High) + ")"}
+	v := &spreadView{Finish: newHistogram(s.Finish, c), Count: strconv.Itoa(s.Samples), Any: percent(s.AnyFails.Share) + " (" + percent(s.AnyFails.Low) + " to " + percent(s.AnyFails.High) + ")"}
 	if m := s.Measure; m != nil {
 		v.First = m.What + " (" + m.Doubt + "): it makes " + percent(m.Share) + " of the spread of " + m.For
 	}

@@ -21,6 +21,7 @@ type SpreadResult struct {
 	Influences map[string][]Influence             `json:"influences"` // on empty times and peaks: "emptied_at_s T-1"
 	Doubts     []Doubt                            `json:"doubts"`
 	Measure    *Measure                           `json:"measure_first"`
+	Finish     *Histogram                         `json:"finish"` // nil when nothing is ever empty
 }
 
 // Chance is how often something came, with its interval at 95 % (Wilson).
@@ -90,6 +91,7 @@ func SpreadOf(p *SpreadPart) *SpreadResult {
 		s.Limits = append(s.Limits, c.limit(i, l))
 	}
 	s.decide()
+	s.Finish = c.finishes(h.Vessels, s.Bands["emptied_at_s"])
 	s.Measure = s.measureFirst(h.Vessels)
 	return s
 }

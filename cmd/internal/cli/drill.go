@@ -47,6 +47,7 @@ Exit code 0: every limit holds in the plan itself. 1: one fails there. 2: bad us
 calculation could not finish. 130: interrupted; what was done is kept and marked.`,
 		Example: `  headfall drill plant.yaml
   headfall drill plant.yaml --pairs --json drill.json
+  headfall drill plant.yaml --html drill.html
   headfall drill plant.yaml --shard 2/8 --json part-2.jsonl`,
 		Args: oneFile,
 		RunE: func(c *cobra.Command, args []string) error { return a.drill(c.Context(), args[0], o) },
@@ -81,8 +82,13 @@ func (a *app) drill(ctx context.Context, path string, o drillOptions) error {
 	if opt.Common, err = a.common(o.many, bar); err != nil {
 		return err
 	}
+	rep, err := a.report(o.many, load)
+	if err != nil {
+		return err
+	}
 	var res *study.DrillResult
 	files := outputs{}
+	rep.add(&files)
 	if opt.Shard.Of == 0 {
 		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
 	}
@@ -103,6 +109,12 @@ func (a *app) drill(ctx context.Context, path string, o drillOptions) error {
 	if err != nil {
 		res.Complete = false
 		res.Stopped, res.Trouble, res.ExitCode = halted(ctx, err)
+	}
+	if rep != nil {
+		if err := rep.answer(ctx, a, src); err != nil {
+			return err
+		}
+		rep.page.Drill = res
 	}
 	return a.tellDrill(files, res, o.all)
 }

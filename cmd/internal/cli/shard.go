@@ -10,9 +10,10 @@ import (
 )
 
 // many are the flags of studies made of many cases.
-type many struct{ shard string }
+type many struct{ shard, html string }
 
 func (m *many) bind(f *pflag.FlagSet) {
+	f.StringVar(&m.html, "html", "", "also write the report of the plan, with this study in it, to `PATH`")
 	f.StringVar(&m.shard, "shard", "", "do part `I/N` only, as 2/8 or auto/8 in a job array, and write it for merge")
 }
 

@@ -38,12 +38,15 @@ JSON: one object; each of its limits is as
    "influences": [{"what": "V-1.kv", "doubt": "± 15 %", "rank_correlation": -0.93, "share_of_variance": 0.86}]}
 and "measure_first" as
   {"what": "V-1.kv", "doubt": "± 15 %", "for": "level of SUMP below 1.9 m", "share_of_variance": 0.86}
+and "finish", how many samples end when, as
+  {"of": "the last of T-1, T-2 is empty", "from_s": 7080, "bin_s": 35.2, "counts": [1, 4, 9], "never": 0}
 
 Exit code 0: every limit holds, and in at least 95 % of the samples. 1: not so. 2: bad usage, a bad file, or
 nothing in it carries a doubt. 3: the calculation could not finish. 130: interrupted; what was done is kept and
 marked.`,
 		Example: `  headfall spread plant.yaml
   headfall spread plant.yaml --samples 10000 --seed 7 --json spread.json
+  headfall spread plant.yaml --html spread.html
   headfall spread plant.yaml --samples 100000 --shard auto/32 --json part.jsonl`,
 		Args: oneFile,
 		RunE: func(c *cobra.Command, args []string) error { return a.spread(c.Context(), args[0], o) },
@@ -72,8 +75,13 @@ func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 	if opt.Common, err = a.common(o.many, bar); err != nil {
 		return err
 	}
+	rep, err := a.report(o.many, load)
+	if err != nil {
+		return err
+	}
 	var res *study.SpreadResult
 	files := outputs{}
+	rep.add(&files)
 	if opt.Shard.Of == 0 {
 		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
 	}
@@ -96,6 +104,12 @@ func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 	if err != nil {
 		res.Complete = false
 		res.Stopped, res.Trouble, res.ExitCode = halted(ctx, err)
+	}
+	if rep != nil {
+		if err := rep.answer(ctx, a, src); err != nil {
+			return err
+		}
+		rep.page.Spread = res
 	}
 	return a.tellSpread(files, res)
 }
