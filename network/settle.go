@@ -10,15 +10,16 @@ import (
 // function of their pressures, so Newton's direction with an exact search along it gets there from anywhere; shut valves, dry ends and check
 // valves make the balances so uneven that Newton's method with the integrator's damping does not.
 type settler struct {
-	pat    sparse.Pattern
-	factor *sparse.Factor
-	values []float64
-	lines  []int32    // that touch a tee
-	slots  [][4]int32 // of each: (from,from), (from,to), (to,from), (to,to); -1 where an end is no tee
-	ends   [][2]int32 // tees at the ends; -1
-	diag   []int32
-	f, d   []float64
-	x      []float64
+	pat     sparse.Pattern
+	factor  *sparse.Factor
+	values  []float64
+	lines   []int32    // that touch a tee
+	slots   [][4]int32 // of each: (from,from), (from,to), (to,from), (to,to); -1 where an end is no tee
+	ends    [][2]int32 // tees at the ends; -1
+	diag    []int32
+	f, d    []float64
+	through []float64 // flows of the lines of each tee, without their signs, m³/s
+	x       []float64
 }
 
 // newSettler fixes the pattern of the balances of the tees.
@@ -27,7 +28,7 @@ func newSettler(s *system) *settler {
 	if n == 0 {
 		return nil
 	}
-	r := &settler{f: make([]float64, n), d: make([]float64, n), x: make([]float64, n), diag: make([]int32, n)}
+	r := &settler{f: make([]float64, n), through: make([]float64, n), d: make([]float64, n), x: make([]float64, n), diag: make([]int32, n)}
 	b := &patternBuilder{n: n}
 	for i := range n {
 		b.add(int32(i), int32(i))
@@ -67,6 +68,7 @@ const settleFloor = 1e-15
 // balances fills f with what flows into each tee, m³/s, and the matrix with minus its slopes.
 func (r *settler) balances(s *system, matrix bool) {
 	clear(r.f)
+	clear(r.through)
 	if matrix {
 		clear(r.values)
 	}
@@ -77,9 +79,11 @@ func (r *settler) balances(s *system, matrix bool) {
 		e, sl := r.ends[k], &r.slots[k]
 		if e[0] >= 0 {
 			r.f[e[0]] -= l.q
+			r.through[e[0]] += math.Abs(l.q)
 		}
 		if e[1] >= 0 {
 			r.f[e[1]] += l.q
+			r.through[e[1]] += math.Abs(l.q)
 		}
 		if !matrix {
 			continue
@@ -152,6 +156,9 @@ func (s *system) Settle(t float64, y []float64) {
 	tol := 1e-7 * s.gamma * levelCap
 	for range 200 {
 		r.balances(s, true)
+		if r.balanced(s) {
+			return
+		}
 		copy(r.d, r.f)
 		copy(r.x, s.y[s.teeRow:s.teeRow+len(r.x)])
 		if r.factor.Refactor(r.values) != nil {
@@ -167,6 +174,23 @@ func (s *system) Settle(t float64, y []float64) {
 		}
 		r.search(s, most)
 	}
+}
+
+// settledFlow and settledShare are what is left out of balance where the descent ends, m³/s and of the flows through a tee: the solver's own Newton
+// steps do the rest.
+const (
+	settledFlow  = 1e-16
+	settledShare = 1e-9
+)
+
+// balanced tells that what is out of balance is next to nothing.
+func (r *settler) balanced(s *system) bool {
+	for i, f := range r.f {
+		if math.Abs(f) > settledFlow+settledShare*r.through[i] {
+			return false
+		}
+	}
+	return true
 }
 
 // search goes along d until f·d has fallen to a hundredth of what it was.
