@@ -1,6 +1,9 @@
 package network
 
-import "fmt"
+import (
+	"fmt"
+	"math"
+)
 
 // cautions returns the cautions that apply to this run, and the standing one first.
 func cautions(p *Plant, r *Result) []string {
@@ -24,6 +27,11 @@ func cautions(p *Plant, r *Result) []string {
 			add("Liquid runs back through %s into %s. A shut valve on the sheet must be proved shut.", l.Tag, l.From)
 		}
 		if x.CrestLow != nil && *x.CrestLow < 0 {
+			for _, tag := range []string{l.From, l.To} {
+				if t := p.tee(tag); t != nil && math.IsNaN(t.Elevation) && p.Assume.HeaderAir != "ignored" {
+					add("%s has no elevation: whether a branch of it that runs dry breaks the siphon of %s is not judged.", tag, l.Tag)
+				}
+			}
 			add("%s runs under suction at its high point: it may break siphon, draw in air or dirt, or collapse weak pipe.", l.Tag)
 		}
 	}

@@ -14,6 +14,7 @@ type Changes struct {
 	Open      map[string]float64 // travel at the start, by valve
 	Weaken    map[string]float64 // share of head or rate that a pump has left
 	CheckLeak float64            // share of Kv that every check valve leaks; 0 as in the file
+	Break     map[string]bool    // lines with air at their last high point throughout, or at their upper end
 	BlockVent map[string]float64 // share of a vent that is blocked
 }
 

@@ -22,6 +22,7 @@ type floor struct {
 	vapour   bool    // the floor is vapour pressure: holding there is marked unreliable
 	base     float64 // fwd coefficient of up without share
 	active   bool
+	off      bool // not in this run
 }
 
 // hold applies the floor to the line's flow.

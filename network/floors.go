@@ -23,6 +23,28 @@ func (s *system) addFloors(c *line) {
 			}
 		}
 	}
+	s.addBreak(c)
+}
+
+// addBreak gives a pipe to the open air without a high point a floor at its upper end, off unless a run breaks the line there (Changes.Break).
+func (s *system) addBreak(c *line) {
+	c.breakAt = -1
+	if z := s.endElevation(&c.from); c.long && c.weir == nil && c.inertia == 0 && len(c.crowns) == 0 && c.to.kind == toAir && z > c.to.centre {
+		f := s.upstream(c, 0, false, false)
+		f.z, f.pressure, f.off = z, s.atmosphere, true
+		c.breakAt = len(c.floors)
+		c.floors = append(c.floors, f)
+	}
+}
+
+// breakLine sets whether air stands throughout the run in the last high point of a line, or at its upper end where it has none.
+func (c *line) breakLine(broken bool) {
+	for k := range c.crowns {
+		c.crowns[k].broken = broken && k == len(c.crowns)-1
+	}
+	if c.breakAt >= 0 {
+		c.floors[c.breakAt].off = !broken
+	}
 }
 
 // crown is a high point of a line: its two floors, one for each direction of flow, and whether it is full.
@@ -32,6 +54,7 @@ type crown struct {
 	vent       int // actuator of its vent; -1 for none
 	primed     bool
 	wasPrimed  bool // at the start
+	broken     bool // air stands in it throughout this run (Changes.Break)
 	fwd, back  int  // floors of the line
 	bore       float64
 	low, lowAt float64 // m gauge head

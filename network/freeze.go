@@ -36,6 +36,7 @@ func (s *system) begin(ch *Changes) {
 		for k := range l.locals {
 			l.locals[k].Strength = 1
 		}
+		l.breakLine(ch.Break[l.plan.Tag])
 		for k := range l.crowns {
 			c := &l.crowns[k]
 			c.primed = c.plan.Primed || !c.plan.PrimedSet && s.headAbove(l, c.plan.Elevation)
@@ -156,7 +157,7 @@ func (l *line) moves(part int) bool {
 // freezeCrown sets the floor pressures of a high point.
 func (s *system) freezeCrown(l *line, c *crown) {
 	p := s.atmosphere
-	vented := c.vent >= 0 && s.actuators[c.vent].to > 0
+	vented := s.vented(c)
 	if !vented && c.primed {
 		p = s.fluid.Vapour
 	}

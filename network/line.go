@@ -22,6 +22,7 @@ type line struct {
 	losses   []directed
 	floors   []floor
 	crowns   []crown
+	breakAt  int // floor at its upper end, for runs that break it there; -1
 	weir     elements.Crest
 	weirAt   *elements.Local
 	crestZ   float64 // m over datum, of the weir
@@ -216,7 +217,7 @@ func (l *line) limit(a, b *end, gamma float64) {
 	for i := range l.floors {
 		f := &l.floors[i]
 		f.active = false
-		if f.back == (l.q < 0) && l.q != 0 {
+		if !f.off && f.back == (l.q < 0) && l.q != 0 {
 			f.hold(l, a, b, gamma)
 		}
 	}

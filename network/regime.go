@@ -21,7 +21,8 @@ type span struct {
 const (
 	airDrawn = iota // the inlet pulls air down
 	airEnters
-	partFull
+	surging  // part full now and then: Froude number 0.3 to 1
+	selfVent // part full: Froude number under 0.3
 	choked
 	held
 	offCurve
@@ -55,7 +56,9 @@ func (o *observer) regime() {
 		if l.bore > 0 {
 			froude = math.Abs(l.q) / l.area / math.Sqrt(s.plan.Gravity*l.bore)
 		}
-		o.mark(i, partFull, t, moving && froude < 1 && l.to.kind == toAir && l.long && s.falls(l), froude)
+		part := moving && froude < 1 && l.to.kind == toAir && l.long && s.falls(l)
+		o.mark(i, surging, t, part && froude >= ventsItself, froude)
+		o.mark(i, selfVent, t, part && froude < ventsItself, froude)
 		var c, h bool
 		for k := range l.floors {
 			f := &l.floors[k]
@@ -69,6 +72,10 @@ func (o *observer) regime() {
 		}
 	}
 }
+
+// ventsItself is the pipe Froude number v/√(gD) under which a pipe to the open air vents itself; up to 1 it surges. Common practice for siphonic and drain
+// lines (e.g. P. D. Hills, Chem. Eng. 1983), from memory.
+const ventsItself = 0.3
 
 // drawsAir tells that the depth over an inlet is under that at which gas is pulled through: h = (Q/2.53√g)^0.4 in a floor (Lubin & Springer
 // 1967), the crown of a mouth in a wall.
@@ -141,8 +148,11 @@ func (o *observer) raise(i, kind int) {
 	case airEnters:
 		f.Kind, f.Says = "air_enters", fmt.Sprintf("%s would draw from its open end: air enters there and nothing flows", tag)
 		f.Do, f.Size = "shut it, or keep its end drowned", &size
-	case partFull:
-		f.Kind, f.Says = "part_full", fmt.Sprintf("%s may run part full near its open end (pipe Froude number at most %.2g): full-pipe flow is assumed", tag, r.size)
+	case surging:
+		f.Kind, f.Says = "part_full", fmt.Sprintf("%s surges: near its open end it runs full and part full by turns (pipe Froude number at most %.2g, between 0.3 and 1); full-pipe flow is assumed", tag, r.size)
+		f.Do, f.Size = "take the flow as an upper estimate", &size
+	case selfVent:
+		f.Kind, f.Says = "part_full", fmt.Sprintf("%s vents itself and runs part full near its open end (pipe Froude number at most %.2g, under 0.3); full-pipe flow is assumed", tag, r.size)
 		f.Do, f.Size = "take the flow as an upper estimate", &size
 	case choked:
 		f.Kind, f.Says = "valve_choked", fmt.Sprintf("a valve in %s chokes: opening it further does not add flow", tag)

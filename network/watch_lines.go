@@ -13,9 +13,10 @@ func (w *watcher) addCrowns() {
 		l := &s.lines[i]
 		for k := range l.crowns {
 			c := &l.crowns[k]
+			feeds := [2][]airPath{s.airPaths(i, &l.from), s.airPaths(i, &l.to)}
 			w.triggers = append(w.triggers,
 				trigger{
-					value:  func(*snapshot) float64 { return s.airMargin(l, c) },
+					value:  func(*snapshot) float64 { return s.airMargin(l, c, &feeds) },
 					active: func() bool { return c.primed && !s.vented(c) },
 					dir:    -1, deep: true, jumps: true,
 					fire: func(t float64) {
@@ -38,22 +39,46 @@ func (w *watcher) addCrowns() {
 	}
 }
 
-func (s *system) vented(c *crown) bool { return c.vent >= 0 && s.actuators[c.vent].to > 0 }
+func (s *system) vented(c *crown) bool { return c.broken || c.vent >= 0 && s.actuators[c.vent].to > 0 }
 
-// airMargin is how far the mouth that feeds the high point is from drawing air, m, while the crest is under suction; more than 0 otherwise.
-// Half the bore over the invert of a mouth in a wall; in a floor the onset of gas pull-through, h = (Q/2.53√g)^0.4 (Lubin & Springer 1967).
-func (s *system) airMargin(l *line, c *crown) float64 {
-	m, e := &l.from, s.see(&l.from)
+// airMargin is how far the mouth that feeds the high point is from drawing air, m, while the crest is under suction; more than 0 otherwise. A mouth in a
+// vessel draws air at its onset depth; a tee lets in what its branches draw (feeds: the paths by which air may come to either end of the line).
+func (s *system) airMargin(l *line, c *crown, feeds *[2][]airPath) float64 {
+	m, paths := &l.from, feeds[0]
 	if l.q < 0 {
-		m, e = &l.to, s.see(&l.to)
+		m, paths = &l.to, feeds[1]
 	}
-	if math.IsInf(e.depth, 0) || s.crestHead(s.lineAt[l.plan.Tag]) >= 0 {
+	if s.crownPressure(l, c) >= s.atmosphere {
 		return 1
 	}
+	if m.kind == toVessel {
+		return s.onsetMargin(m, math.Abs(l.q))
+	}
+	margin := 1.0
+	for i := range paths {
+		margin = math.Min(margin, s.pathMargin(&paths[i]))
+	}
+	return margin
+}
+
+// onsetMargin is the depth over a mouth in a vessel less that at which flow q leaving there draws air, m: half the bore over the invert of a mouth in
+// a wall; in a floor the onset of gas pull-through, h = (Q/2.53√g)^0.4 (Lubin & Springer 1967).
+func (s *system) onsetMargin(m *mouth, q float64) float64 {
+	e := s.see(m)
 	if m.inlet.form == sideInlet || m.inlet.form == slotInlet {
 		return e.depth - m.width/2
 	}
-	return e.depth - math.Pow(math.Abs(l.q)/(2.53*math.Sqrt(s.plan.Gravity)), 0.4)
+	return e.depth - math.Pow(q/(2.53*math.Sqrt(s.plan.Gravity)), 0.4)
+}
+
+// crownPressure is the static pressure at a high point, Pa absolute.
+func (s *system) crownPressure(l *line, c *crown) float64 {
+	f, m := &l.floors[c.fwd], &l.from
+	if l.q < 0 {
+		f, m = &l.floors[c.back], &l.to
+	}
+	e := s.see(m)
+	return f.pressureAt(e.phi, l.q, s.gamma)
 }
 
 // sweep is the pipe Froude number at the high point, less 1, while liquid stands over the crest upstream.

@@ -66,7 +66,7 @@ func Judge(ctx context.Context, load Load, opt Options) (*network.Result, error)
 	if j.res, err = bench.Run(ctx, network.RunOptions{Series: true, Progress: j.part(0, first)}); err != nil {
 		return j.res, err
 	}
-	for _, step := range []func() error{j.atUpTo, j.longestWaits, j.answers, j.doubts} {
+	for _, step := range []func() error{j.broken, j.atUpTo, j.longestWaits, j.answers, j.doubts} {
 		if err := step(); err != nil {
 			return j.res, j.unfinished(err)
 		}
