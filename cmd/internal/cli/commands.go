@@ -78,6 +78,7 @@ room is left in every other one, what runs backwards, and what goes over first.`
 			root.AddGroup(&g)
 		}
 	}
+	root.SetHelpCommand(a.help())
 	root.SetHelpCommandGroupID(groupAbout)
 	root.SetCompletionCommandGroupID(groupAbout)
 	root.SetFlagErrorFunc(func(c *cobra.Command, err error) error { return badFlag(c, err) })

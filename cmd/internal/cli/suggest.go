@@ -1,6 +1,7 @@
 package cli
 
 import (
+	"errors"
 	"strings"
 
 	"github.com/agnivade/levenshtein"
@@ -35,6 +36,10 @@ func badFlag(c *cobra.Command, err error) error {
 		if near := nearest(word, names); near != "" {
 			hint = "did you mean --" + near + "?"
 		}
+	}
+	var value *pflag.InvalidValueError
+	if errors.As(err, &value) {
+		return bad(hint, "--%s: %q is not understood", value.GetFlag().Name, value.GetValue())
 	}
 	return bad(hint, "%w", err)
 }
