@@ -106,3 +106,11 @@ func (e *orifice) Mouth() Mouth {
 	}
 	return Mouth{Diameter: math.Sqrt(e.clear * 4 / math.Pi)}
 }
+
+// Outside tells that a plate between pipes has a ratio of bores that ISO 5167-2 does not cover.
+func (e *orifice) Outside(float64, float64, *Local) string {
+	if beta := math.Sqrt(e.clear*4/math.Pi) / e.pipeBore(); !e.wall && e.clear > 0 && (beta < 0.1 || beta > 0.75) {
+		return "the ratio of the orifice to its pipe is not between 0.1 and 0.75, the range of ISO 5167-2"
+	}
+	return ""
+}

@@ -139,3 +139,9 @@ type Reduces interface {
 
 // Runs is a pump with an end to its curve: Runout is the largest flow, m³/s, that it is made for.
 type Runs interface{ Runout() float64 }
+
+// Ranged is a part whose law holds within a range: Outside says, for the flow q, m³/s, and the head h over its crest, m (NaN for what has none), in what
+// it is used outside; "" within. The words are ready made: nothing is allocated.
+type Ranged interface {
+	Outside(q, h float64, at *Local) string
+}

@@ -83,3 +83,16 @@ func (e *pipe) Inertance(f *Fluid) float64 {
 	}
 	return f.Density * e.length / circle(e.bore)
 }
+
+// Outside tells that the wall is rougher than the friction laws cover, or the flow faster.
+func (e *pipe) Outside(q, _ float64, at *Local) string {
+	switch {
+	case !e.rough:
+		return ""
+	case e.roughness > 0.05*e.bore:
+		return "the roughness of the pipe is more than 0.05 of its bore, the range of the friction laws"
+	case math.Abs(q)*4*at.Fluid.Density > 1e9*math.Pi*e.bore*at.Fluid.Dynamic:
+		return "the Reynolds number is more than 10⁹, the range of the friction laws"
+	}
+	return ""
+}

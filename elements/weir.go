@@ -86,3 +86,11 @@ func (e *weir) Shut(*Local) bool { return e.blocked >= 1 }
 
 // CrestWidth returns the clear width at the crest, m; 0 of a notch that comes to a point.
 func (e *weir) CrestWidth() float64 { return e.law.mouthed * e.law.clear }
+
+// Outside tells that the head passes 2.5 times the height of the crest, up to which Kindsvater and Carter measured.
+func (e *weir) Outside(_, h float64, _ *Local) string {
+	if e.isRect && e.rectangular.hasChannel && h > 2.5*e.rectangular.height {
+		return "the head over the weir is more than 2.5 crest heights, the range of Kindsvater and Carter"
+	}
+	return ""
+}

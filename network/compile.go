@@ -166,6 +166,9 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 	c.locals = make([]elements.Local, len(l.Parts))
 	for i, f := range l.Parts {
 		c.locals[i] = elements.Local{Fluid: s.fluid, Gravity: s.plan.Gravity, Opening: 1, Strength: 1}
+		if _, ok := f.Part.(elements.Ranged); ok {
+			c.ranged = append(c.ranged, i)
+		}
 		if w, ok := f.Part.(elements.Crest); ok {
 			if i > 0 {
 				return fmt.Errorf("a weir must be the first part of its line")

@@ -87,6 +87,7 @@ func (s *system) layout() {
 	s.pat.Ptr, s.pat.Row = b.columns()
 	s.resolve()
 	s.linkAirways()
+	s.findFloating()
 	s.settler = newSettler(s)
 }
 

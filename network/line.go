@@ -37,6 +37,7 @@ type line struct {
 	sources  bool      // it has a pump
 	long     bool      // it has a pipe
 	clean    *unfouled // what it was before an upset fouled it; nil while it is clean
+	ranged   []int     // parts whose laws have a range
 	checks   bool      // it has a check valve
 	join     float64   // Pa over which a one-way end takes up flow
 	reach    float64   // pressure that drives the flow, in bands

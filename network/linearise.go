@@ -133,6 +133,9 @@ func (s *system) lineariseOwn(i int, a, b *end, f []float64, lin *integrate.Line
 // lineariseTees replaces the rows of tees whose balance is differentiated.
 func (s *system) lineariseTees(f []float64, lin *integrate.Linear) {
 	s.balanceTees(f)
+	for _, k := range s.floating {
+		lin.DfDy[k] -= groundStiffness
+	}
 	for i := range s.tees {
 		t := &s.tees[i]
 		if !t.slow {

@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"headfall/elements"
+	"headfall/elements/quantity"
 )
 
 // regime is the spans of time in which a line is in some state worth a flag, as seen at the ends of steps.
@@ -15,7 +16,8 @@ type span struct {
 	seen     bool
 	from, to float64
 	size     float64
-	flags    int // flags raised so far
+	why      string // in whose words it is
+	flags    int    // flags raised so far
 }
 
 const (
@@ -26,6 +28,8 @@ const (
 	choked
 	held
 	offCurve
+	shallow // less submerged than ANSI/HI 9.8 asks for
+	outside // of a law's range
 	regimes
 )
 
@@ -50,6 +54,7 @@ func (o *observer) regime() {
 			in, depth = &l.to.inlet, b.depth
 		}
 		o.mark(i, airDrawn, t, moving && drawsAir(in, depth, math.Abs(l.q), s.plan.Gravity), depth)
+		o.mark(i, shallow, t, moving && s.shallow(in, depth, math.Abs(l.q)), depth)
 		enters := l.to.kind == toAir && !l.shut && !l.oneWay && a.phi+s.gamma*1e-3 < b.phi && s.reachesLiquid(&l.from)
 		o.mark(i, airEnters, t, enters, (b.phi-a.phi)/s.gamma)
 		froude := 0.0
@@ -67,6 +72,15 @@ func (o *observer) regime() {
 		}
 		o.mark(i, choked, t, c && moving, 0)
 		o.mark(i, held, t, h && moving, 0)
+		if len(l.ranged) > 0 {
+			why := ""
+			if moving {
+				why = l.outsideRange(a.depth)
+			}
+			if o.mark(i, outside, t, why != "", math.Abs(l.q)); why != "" {
+				o.regimes[i][outside].why = why
+			}
+		}
 		if l.sources {
 			o.mark(i, offCurve, t, l.beyondCurve(), l.q)
 		}
@@ -87,6 +101,37 @@ func drawsAir(in *inletLaw, depth, q, g float64) bool {
 		return depth < in.bore
 	}
 	return false
+}
+
+// shallow tells that a mouth has less liquid over it than ANSI/HI 9.8 asks for against surface vortices: S/D = 1 + 2.3·Fr, Fr = v/√(gD), S over the mouth
+// in a floor, over the middle of one in a wall; bores under which no vortex matters are not asked for. Source: ANSI/HI 9.8, intake design, from memory.
+func (s *system) shallow(in *inletLaw, depth, q float64) bool {
+	d := in.bore
+	if d <= 0 {
+		return false
+	}
+	switch in.form {
+	case sideInlet:
+		depth -= d / 2
+	case floorInlet:
+	default:
+		return false
+	}
+	return depth < d+2.3*q/(math.Pi/4*d*math.Sqrt(s.plan.Gravity*d))
+}
+
+// outsideRange says in what a part of the line is used outside its law's range, depth being that over the crest of its weir, m; "" for none.
+func (l *line) outsideRange(depth float64) string {
+	for _, i := range l.ranged {
+		h := math.NaN()
+		if l.weir != nil && i == 0 {
+			h = depth
+		}
+		if why := l.plan.Parts[i].Part.(elements.Ranged).Outside(l.q, h, &l.locals[i]); why != "" {
+			return why
+		}
+	}
+	return ""
 }
 
 // reachesLiquid tells that there is something beyond a mouth that the line could empty.
@@ -138,12 +183,18 @@ func (o *observer) raise(i, kind int) {
 	if r.flags++; r.flags > mostFlags || r.to-r.from <= 0 {
 		return
 	}
+	if kind == shallow && !o.sim.sys.lines[i].sources { // said with the air that is drawn in, else of pumps only
+		return
+	}
 	tag := o.sim.plan.Lines[i].Tag
 	f := &Flag{Where: tag, From: r.from, To: r.to}
 	size := r.size
 	switch kind {
 	case airDrawn:
 		f.Kind, f.Says = "air_drawn_in", fmt.Sprintf("the inlet of %s is so shallow that it pulls air: flow surges and is slower than shown", tag)
+		if early := &o.regimes[i][shallow]; early.seen && early.from < r.from {
+			f.Says += fmt.Sprintf("; vortices may begin %s earlier, where the depth falls under that of ANSI/HI 9.8", quantity.FormatDuration(math.Ceil(r.from-early.from)))
+		}
 		f.Do = "expect gulping; throttle, or stop before the last of it"
 	case airEnters:
 		f.Kind, f.Says = "air_enters", fmt.Sprintf("%s would draw from its open end: air enters there and nothing flows", tag)
@@ -160,6 +211,12 @@ func (o *observer) raise(i, kind int) {
 	case held:
 		f.Kind, f.Says = "held_at_vapour_pressure", fmt.Sprintf("the high point of %s is held at vapour pressure: this flow is unreliable", tag)
 		f.Do = "vent the high point, or throttle downstream of it"
+	case shallow:
+		f.Kind, f.Says = "air_drawn_in", fmt.Sprintf("the inlet of %s has less liquid over it than ANSI/HI 9.8 asks of a pump's suction: vortices may draw air", tag)
+		f.Do, f.Size = "stop the pump at a higher level, or throttle it", &size
+	case outside:
+		f.Kind, f.Says = "outside_range", fmt.Sprintf("%s: %s; its flow is an extrapolation", tag, r.why)
+		f.Do = "check the data, or state a loss that was measured"
 	case offCurve:
 		f.Kind, f.Says = "pump_off_curve", fmt.Sprintf("the pump in %s runs beyond the last point of its curve", tag)
 		f.Do, f.Size = "throttle its discharge", &size

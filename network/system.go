@@ -35,17 +35,18 @@ type system struct {
 
 	vesselAt, teeAt, outsideAt, lineAt, actuatorAt map[string]int
 
-	t0      float64   // start of the segment
-	y       []float64 // where Rates was called last
-	mass    []bool
-	pat     sparse.Pattern
-	iPtr    []int32
-	iCol    []int32
-	slot    []slots
-	rims    []rimSlots
-	gasS    []gasSlots
-	tees    []teeSlots
-	settler *settler
+	t0       float64   // start of the segment
+	y        []float64 // where Rates was called last
+	mass     []bool
+	pat      sparse.Pattern
+	iPtr     []int32
+	iCol     []int32
+	slot     []slots
+	rims     []rimSlots
+	gasS     []gasSlots
+	tees     []teeSlots
+	floating []int32 // diagonal slots of tees that nothing holds
+	settler  *settler
 }
 
 var (

@@ -164,3 +164,27 @@ lines:
 	}
 	near(t, "what spilled is in the bund", r.Vessels["BUND"].EndVolume, r.Vessels["A"].Spilled, 1e-9)
 }
+
+// Two tees that are joined to each other only: nothing flows, their head is not defined, and the rest of the plant does not mind.
+func TestFloatingTees(t *testing.T) {
+	for _, method := range []string{"", "bdf"} {
+		r := run(t, plant("1 h", "liquid: {water: 15 °C}", `
+vessels:
+  A: {shape: {box: {length: 2 m, width: 1 m, height: 2 m}}, base: 0 m, level: 1 m}
+tees: {T: {}, U: {}}
+outside:
+  X: {free_fall: {elevation: 0 m}}
+lines:
+  L: {from: A, to: X, parts: [{pipe: {length: 3 m, bore: 25 mm, roughness: 0.05 mm}}]}
+  M: {from: T, to: U, parts: [{pipe: {length: 3 m, bore: 25 mm, roughness: 0.05 mm}}]}
+  N: {from: U, to: T, parts: [{pipe: {length: 3 m, bore: 25 mm, roughness: 0.05 mm}}]}`), how{method: method})
+		if r.Lines["M"].Forward+r.Lines["M"].Backward+r.Lines["N"].Forward > 0 || r.Vessels["A"].EndLevel > 0.05 {
+			t.Errorf("%+v %+v", r.Lines["M"], r.Vessels["A"])
+		}
+		for _, h := range r.Series.TeeHead["T"] {
+			if h != nil {
+				t.Fatalf("a head of %g m", *h)
+			}
+		}
+	}
+}
