@@ -32,6 +32,7 @@ func (sim *simulation) result() *Result {
 	sim.pumpResults(r)
 	sim.stepResults(r)
 	sim.limitResults(r)
+	r.stand()
 	sim.alarmResults(r)
 	sim.handoverResults(r)
 	sim.balance(r)

@@ -33,3 +33,15 @@ func (r *Result) news(l *LimitResult) bool {
 	v := r.Vessels[l.Of[0]]
 	return v == nil || *l.Worst > v.StartLevel+standing
 }
+
+// stand puts the worst moment of a level that never rises to the start, when it stood as high: what rounding adds later is no peak.
+func (r *Result) stand() {
+	for _, l := range r.Limits {
+		if l.Subject != "level" || l.Bound != "below" || len(l.Of) != 1 || l.Worst == nil || l.Window[0] != nil && *l.Window[0] > 0 {
+			continue
+		}
+		if v := r.Vessels[l.Of[0]]; v != nil && v.PeakAt == 0 && *l.Worst >= v.StartLevel && *l.Worst < v.StartLevel+standing {
+			l.WorstAt = opt(0)
+		}
+	}
+}

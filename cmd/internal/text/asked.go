@@ -11,7 +11,7 @@ import (
 
 // asked is the page of a study that answers one question about one plan.
 func asked(w io.Writer, plant *network.Plant, opt Options) *page {
-	return &page{sheet: newSheet(w, opt.Width), plant: plant, opt: opt, clock: Clock{plant.Start}, units: UnitsOf(plant.Show)}
+	return &page{sheet: newSheet(w, opt.Width), plant: plant, opt: opt, clock: Clock{Start: plant.Start}, units: UnitsOf(plant.Show)}
 }
 
 // first writes the answer's first words and what they are about.

@@ -2,12 +2,35 @@ package text
 
 import "strings"
 
-// cautions writes those that apply to this run; one that applies to several things is written once.
+const cautionLines = 4 // of the page; the rest is counted, and in the report
+
+// cautions writes those that apply to this run; one that applies to several things is written once. The standing one is written in full, of the others
+// the first sentence: the report has all of it.
 func (p *page) cautions() {
-	for i, c := range p.merged() {
+	all, used := p.merged(), 0
+	for i, c := range all {
+		if i > 0 {
+			c = sentence(c)
+		}
+		lines := len(wrap(c, p.width-indent))
+		if i > 0 && (used+lines > cautionLines || used+lines == cautionLines && i < len(all)-1) {
+			p.put("", "and %s in the report", counted(len(all)-i, "more", "more"))
+			return
+		}
 		p.put(first(i, "Caution"), "%s", c)
+		used += lines
 	}
 }
+
+// sentence is the first sentence of a text.
+func sentence(s string) string {
+	if i := strings.Index(s, ". "); i >= 0 {
+		return s[:i+1]
+	}
+	return s
+}
+
+const alsoShown = 3 // vessels of one caution besides the first
 
 const hole = "\x00" // where the tag stood
 
@@ -29,6 +52,9 @@ func (p *page) merged() []string {
 	for i, key := range order {
 		all := tags[key][0]
 		if rest := tags[key][1:]; len(rest) > 0 && all != "" {
+			if n := len(rest) - alsoShown; n > 0 {
+				rest = append(rest[:alsoShown:alsoShown], counted(n, "more", "more"))
+			}
 			all += " (also " + strings.Join(rest, ", ") + ")"
 		}
 		order[i] = strings.Replace(key, hole, all, 1)

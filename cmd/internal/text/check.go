@@ -19,7 +19,7 @@ type echo struct {
 // Check writes a plant as it was understood, with every default that was used; the plant must have been refreshed. A star marks what the file
 // does not say.
 func Check(w io.Writer, plant *network.Plant, opt Options) error {
-	e := &echo{sheet: newSheet(w, opt.Width), plant: plant, clock: Clock{plant.Start}, units: UnitsOf(plant.Show)}
+	e := &echo{sheet: newSheet(w, opt.Width), plant: plant, clock: Clock{Start: plant.Start}, units: UnitsOf(plant.Show)}
 	e.summary()
 	if opt.Quiet {
 		return e.err

@@ -10,6 +10,7 @@ import (
 // Clock writes moments, given in s from the start, as people speak of them: the clock first, what has gone by in brackets.
 type Clock struct {
 	Start time.Time // zero when the plan names no start; then only what has gone by is written
+	Whole float64   // s, the length of the whole answer; from ten minutes on the clock shows whole minutes, as in the report. 0: it is not known
 }
 
 const (
@@ -18,6 +19,14 @@ const (
 	minute = 60.0
 	hour   = 3600.0
 )
+
+// face rounds a moment to what the clock shows.
+func (c Clock) face(s float64, dir Dir) float64 {
+	if c.Whole >= fine {
+		return round(s, minute, dir)
+	}
+	return snap(s, dir)
+}
 
 // snap rounds a moment or a duration to what is read off a watch.
 func snap(s float64, dir Dir) float64 {
@@ -33,9 +42,8 @@ func snap(s float64, dir Dir) float64 {
 
 // When writes "06:41 (41 min)", or "41 min" without a start.
 func (c Clock) When(s float64, dir Dir) string {
-	s = snap(s, dir)
-	gone := Duration(s, Near)
-	if s == 0 {
+	gone := Duration(snap(s, dir), Near)
+	if snap(s, dir) == 0 {
 		gone = "start"
 	}
 	if c.Start.IsZero() {
@@ -46,13 +54,13 @@ func (c Clock) When(s float64, dir Dir) string {
 
 // At writes the clock alone: "06:41", "+1d 00:20"; without a start what has gone by.
 func (c Clock) At(s float64, dir Dir) string {
-	s = snap(s, dir)
 	if c.Start.IsZero() {
-		if s == 0 {
+		if s = snap(s, dir); s == 0 {
 			return "start"
 		}
 		return Duration(s, Near)
 	}
+	s = c.face(s, dir)
 	t := c.Start.Add(time.Duration(math.Round(s*1e3)) * time.Millisecond)
 	form := "15:04"
 	if t.Second() != 0 || t.Nanosecond() != 0 {

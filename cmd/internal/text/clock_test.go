@@ -9,6 +9,8 @@ import (
 
 var six = text.Clock{Start: time.Date(2027, 10, 9, 6, 0, 0, 0, time.UTC)}
 
+var long = text.Clock{Start: six.Start, Whole: 4 * 3600}
+
 func TestWhen(t *testing.T) {
 	for _, c := range []struct {
 		clock text.Clock
@@ -24,6 +26,8 @@ func TestWhen(t *testing.T) {
 		{six, 299.9999999999, text.Down, "06:05 (5 min)"}, // rounding noise is not a second
 		{six, 18*3600 + 1200, text.Down, "+1d 00:20 (18 h 20 min)"},
 		{six, 42 * 3600, text.Up, "+2d 00:00 (42 h)"},
+		{long, 446.2, text.Down, "06:07 (7 min 26 s)"}, // the clock of a long answer shows whole minutes
+		{long, 446.2, text.Up, "06:08 (7 min 27 s)"},
 		{text.Clock{}, 5.04, text.Down, "5 s"},
 		{text.Clock{}, 5.04, text.Up, "5.1 s"},
 		{text.Clock{}, 5.04e3, text.Near, "1 h 24 min"},

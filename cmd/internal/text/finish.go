@@ -4,11 +4,9 @@ import (
 	"fmt"
 	"sort"
 	"strings"
-
-	"headfall/network"
 )
 
-// finishes writes when each vessel is empty, with its band, the last one first; then what stays in those that are drained but not empty.
+// finishes writes when the last vessel is empty, with its band, the others being in the table; then what stays in those that are drained but not empty.
 func (p *page) finishes() {
 	type done struct {
 		tag string
@@ -21,15 +19,18 @@ func (p *page) finishes() {
 		}
 	}
 	sort.SliceStable(list, func(i, j int) bool { return list[i].at > list[j].at })
-	var said []string
-	for _, d := range list {
-		said = append(said, stamp(p.clock.When(d.at, Up))+d.tag+p.emptyBand(d.tag))
-	}
-	if len(said) > 0 {
-		p.put("Empty by", "%s", strings.Join(said, "; "))
+	if len(list) > 0 {
+		last := list[0]
+		said := stamp(p.clock.When(last.at, Up)) + last.tag
+		if len(list) > 1 {
+			said += fmt.Sprintf(", the last of %d", len(list))
+		}
+		p.put("Empty by", "%s", said+p.emptyBand(last.tag))
 	}
 	p.left()
 }
+
+const leftShown = 4 // vessels that are not empty; the rest is counted
 
 // emptyBand writes ", band 08:14 to 08:50".
 func (p *page) emptyBand(tag string) string {
@@ -51,7 +52,10 @@ func (p *page) left() {
 		if r == nil || r.EmptiedAt != nil || r.EndVolume >= r.StartVolume {
 			continue
 		}
-		said = append(said, v.Tag+" "+p.stays(r))
+		said = append(said, v.Tag+" "+keep(p.units.VolumeOf(r.EndVolume, Up)+" at "+p.units.LevelOf(r.EndLevel, Up)))
+	}
+	if n := len(said) - leftShown; n > 0 {
+		said = append(said[:leftShown], fmt.Sprintf("%d more", n))
 	}
 	if len(said) > 0 {
 		label := "Not empty"
@@ -60,12 +64,4 @@ func (p *page) left() {
 		}
 		p.put(label, "%s", strings.Join(said, "; "))
 	}
-}
-
-func (p *page) stays(r *network.VesselResult) string {
-	s := keep(p.units.VolumeOf(r.EndVolume, Up)) + " at " + keep(p.units.LevelOf(r.EndLevel, Up))
-	if r.LeftWhy != "" {
-		s += fmt.Sprintf(" (%s)", r.LeftWhy)
-	}
-	return s
 }

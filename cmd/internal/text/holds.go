@@ -1,6 +1,10 @@
 package text
 
-import "strings"
+import (
+	"strings"
+
+	"headfall/network"
+)
 
 // holds writes how long each hold may last before a limit goes.
 func (p *page) holds() {
@@ -11,7 +15,11 @@ func (p *page) holds() {
 		at := stamp(p.clock.At(*h.At, Near))
 		switch {
 		case h.LongestWait == nil:
-			p.put("Hold", "%s%s: how long it may last is not known", at, h.ID)
+			said := "how long it may last is not known"
+			if p.res.Verdict == network.DoNotRun {
+				said = "no wait is told, since the plan fails without one"
+			}
+			p.put("Hold", "%s%s: %s", at, h.ID, said)
 		case *h.LongestWait >= h.UpTo:
 			p.put("Hold", "%s%s may last its full %s", at, h.ID, keep(Duration(h.UpTo, Down)))
 		default:

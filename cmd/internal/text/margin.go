@@ -11,7 +11,9 @@ func (p *page) margin() {
 		said = keep(p.value(l, -*l.Margin, true, Up)) + " short"
 	}
 	if l.MarginLow != nil && l.MarginHigh != nil {
-		said += ", band " + keep(p.value(l, *l.MarginLow, true, Down)+" to "+p.value(l, *l.MarginHigh, true, Down))
+		if low, high := p.value(l, *l.MarginLow, true, Down), p.value(l, *l.MarginHigh, true, Down); low != high {
+			said += ", band " + keep(low+" to "+high)
+		}
 	}
 	when := ""
 	if l.WorstAt != nil {

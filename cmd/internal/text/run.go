@@ -32,7 +32,7 @@ type page struct {
 func Run(w io.Writer, plant *network.Plant, res *network.Result, opt Options) error {
 	p := &page{
 		sheet: newSheet(w, opt.Width), plant: plant, res: res, opt: opt,
-		clock: Clock{plant.Start}, units: UnitsOf(plant.Show), steps: map[string]*network.Step{},
+		clock: Clock{plant.Start, res.End}, units: UnitsOf(plant.Show), steps: map[string]*network.Step{},
 	}
 	for _, s := range plant.Steps {
 		p.steps[s.ID] = s
