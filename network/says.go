@@ -116,7 +116,7 @@ func (p *Plant) LineUp() []LineUpRow {
 			switch part := f.Part.(type) {
 			case elements.Actuated:
 				a := part.Actuator()
-				rows = append(rows, LineUpRow{Valve: a.Tag, Position: position(a.Open), Where: a.Location, Kind: "valve"})
+				rows = append(rows, LineUpRow{Valve: a.Tag, Position: position(a.Open), Where: a.Location, Kind: "valve", Opens: p.secondPath(l, a)})
 			case elements.Pumps:
 				d := part.Drive()
 				rows = append(rows, LineUpRow{Valve: d.Tag, Position: d.Mode.String(), Kind: "pump"})
