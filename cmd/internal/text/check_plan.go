@@ -16,6 +16,13 @@ func (e *echo) lineUp() {
 	if len(said) > 0 {
 		e.put("Line-up", "%s", strings.Join(said, ", "))
 	}
+	label := "Not in plan"
+	for _, row := range e.plant.LineUp() {
+		if row.Opens != "" {
+			e.put(label, "%s %s; if it is not, liquid can go from %s", row.Valve, row.Position, row.Opens)
+			label = ""
+		}
+	}
 }
 
 // steps writes what people do, in the order of the file.
