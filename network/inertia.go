@@ -1,6 +1,10 @@
 package network
 
-import "math"
+import (
+	"math"
+
+	"headfall/elements"
+)
 
 // settleTime is the time, s, within which an inertial flow is brought under a limit of its ends: short against anything that is planned.
 const settleTime = 1e-3
@@ -23,24 +27,57 @@ func (l *line) carry(a, b *end, gamma float64) {
 		l.pushT -= m.rate * dropByOpening(l.chain.parts[m.part], l.own, l.chain.locals[m.part]) / l.inertia
 	}
 	l.q, l.byQ = l.own, 1
-	forbidden := l.own < 0 && (l.oneWay || b.depth == never) || l.own > 0 && a.depth == never
-	if forbidden {
-		const k = 1 / (settleTime * settleTime)
-		l.push -= k * l.own
-		l.pushQ -= k
+	onlyOn, onlyBack := l.oneWay || b.depth == never, a.depth == never
+	if onlyOn || onlyBack {
+		l.turnBack(onlyOn, onlyBack)
+	}
+	own, byOwn := l.q, l.byQ
+	if own == 0 && byOwn == 0 {
+		return
+	}
+	if own >= 0 {
+		l.q, l.byQ, l.byYa, _ = l.admit(&l.from.inlet, a.depth, own, byOwn, 0)
+	} else {
+		l.q, l.byQ, l.byYb, _ = l.admit(&l.to.inlet, b.depth, -own, byOwn, 0)
+		l.q, l.byYb = -l.q, -l.byYb
+	}
+	if over := own - l.q; math.Abs(over) > 0 {
+		l.push -= over / settleTime
+		l.pushQ -= (byOwn - l.byQ) / settleTime
+		l.pushYa += l.byYa / settleTime
+		l.pushYb += l.byYb / settleTime
+	}
+}
+
+// turnSpeed is the velocity, m/s, over which a one-way line with a mass of liquid takes up flow: 0.01 mm/s.
+const turnSpeed = 1e-5
+
+// turnBack lets the flow of the unknown x = own (or −own, where liquid may only come back) through one way only: q = Join(x), and below nothing it is held by
+//
+//	dx/dt += x²/2δτ²  for −δ < x < 0,  −(x + δ/2)/τ²  below,
+//
+// τ = settleTime, δ the flow at turnSpeed: once differentiable, and so stiff that x is nothing to speak of.
+func (l *line) turnBack(onlyOn, onlyBack bool) {
+	const k = 1 / (settleTime * settleTime)
+	if onlyOn && onlyBack {
+		l.push -= l.own / settleTime
+		l.pushQ -= 1 / settleTime
 		l.q, l.byQ = 0, 0
 		return
 	}
-	if l.own >= 0 {
-		l.q, l.byQ, l.byYa, _ = l.admit(&l.from.inlet, a.depth, l.own, 1, 0)
-	} else {
-		l.q, l.byQ, l.byYb, _ = l.admit(&l.to.inlet, b.depth, -l.own, 1, 0)
-		l.q, l.byYb = -l.q, -l.byYb
+	x, sign := l.own, 1.0
+	if onlyBack {
+		x, sign = -x, -1
 	}
-	if over := l.own - l.q; math.Abs(over) > 0 {
-		l.push -= over / settleTime
-		l.pushQ -= (1 - l.byQ) / settleTime
-		l.pushYa += l.byYa / settleTime
-		l.pushYb += l.byYb / settleTime
+	d := turnSpeed * math.Max(l.area, 1e-6)
+	l.q, l.byQ = elements.Join(x, d)
+	l.q *= sign
+	switch {
+	case x <= -d:
+		l.push -= sign * k * (x + d/2)
+		l.pushQ -= k
+	case x < 0:
+		l.push += sign * k * x * x / (2 * d)
+		l.pushQ += k * x / d
 	}
 }
