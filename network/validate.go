@@ -67,6 +67,7 @@ func (c *checker) line(l *Line) {
 		return
 	}
 	c.resists(l)
+	c.uphill(l)
 	for _, to := range []bool{false, true} {
 		tag, port := l.From, l.Leaves
 		if to {

@@ -1,0 +1,28 @@
+package network
+
+import "headfall/elements"
+
+// uphill warns of a line without a pump whose end stands above the rim of the open vessel that it leaves: a wrong datum is half of all wrong answers.
+func (c *checker) uphill(l *Line) {
+	v := c.p.vessel(l.From)
+	if v == nil || v.Cover != nil {
+		return
+	}
+	for _, f := range l.Parts {
+		if _, ok := f.Part.(elements.Pumps); ok {
+			return
+		}
+	}
+	end, to := 0.0, ""
+	if w := c.p.vessel(l.To); w != nil && l.Enters.Form != Bottom {
+		end, to = w.Base+l.Enters.centre(l.endBore(true)), w.Tag
+	} else if o := c.p.beyond(l.To); o != nil && o.Element.Outside().FreeFall {
+		end, to = o.Element.Outside().Elevation, o.Tag
+	}
+	if to == "" {
+		return
+	}
+	if top := v.Base + v.RimLevel(); end > top {
+		c.warn(l.Place, "are both heights over one datum?", "%s cannot run from %s to %s: it ends at elevation %.4g m, above the rim of %s at %.4g m", l.Tag, l.From, to, end, v.Tag, top)
+	}
+}
