@@ -30,6 +30,21 @@ func (c *checker) still(s *Step) {
 	}
 }
 
+// idle warns of a limit on a level that no run can break: most often a slip of the unit.
+func (c *checker) idle(l *Limit) {
+	if l.Must.Subject != Level || l.Permitted {
+		return
+	}
+	v := c.p.vessel(l.Must.Of[0])
+	switch {
+	case v == nil:
+	case !l.Must.Above && l.Must.Bound > v.RimLevel()+above:
+		c.warn(l.Place, "", "the limit on the level of %s cannot fail: %s is above its rim at %.4g m", v.Tag, l.Must.Text, v.RimLevel())
+	case l.Must.Above && l.Must.Bound < 0:
+		c.warn(l.Place, "", "the limit on the level of %s cannot fail: it is never under the base", v.Tag)
+	}
+}
+
 func (p *Plant) stillHint(is Subject) string {
 	switch is {
 	case Opening:

@@ -146,6 +146,7 @@ func (c *checker) conditions() {
 	}
 	for _, l := range c.p.Limits {
 		see(&l.Must, "limit")
+		c.idle(l)
 		see(l.Since.When, "limit")
 		see(l.Until.When, "limit")
 	}

@@ -19,7 +19,11 @@ func Spread(w io.Writer, r *study.SpreadResult, opt Options) error {
 	if !r.Complete {
 		words, v = "NOT FINISHED", network.NotJudged
 	}
-	s.raw(soft(fmt.Sprintf("%s - some limit fails in %s of %s (%s)\n", paint(words, v, opt.Colour), percent(r.AnyFails.Share, Up), counted(r.Samples, "sample", "samples"), between(r.AnyFails))))
+	found := "no sample was calculated"
+	if r.Samples > 0 {
+		found = fmt.Sprintf("some limit fails in %s of %s (%s)", percent(r.AnyFails.Share, Up), counted(r.Samples, "sample", "samples"), between(r.AnyFails))
+	}
+	s.raw(soft(paint(words, v, opt.Colour) + " - " + found + "\n"))
 	if opt.Quiet {
 		return s.err
 	}
