@@ -25,6 +25,7 @@ type balanceView struct {
 
 func balance(plant *network.Plant, r *network.Result, u units, c clock) balanceView {
 	v, b := u.Volume, r.Balance
+	v.Least = 1e-5 * v.K * (b.Start + b.In) // what is less is no volume to speak of
 	out := balanceView{Unit: v.Name, Relative: digits(b.Relative, 2),
 		Whole: balanceRow{"Whole plant", v.Text(b.Start), v.Text(b.In), v.Text(b.Out), v.Text(b.Spilled), v.Text(b.Left), "", ""}}
 	for _, x := range plant.Vessels {

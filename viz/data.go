@@ -154,9 +154,10 @@ func writeUnits(b *strings.Builder, u units) {
 		K    float64 `json:"k"`
 		Dec  int     `json:"dec"`
 	}
+	of := func(u unit) out { return out{u.Name, u.K, u.Dec} }
 	js, _ := json.Marshal(map[string]out{
-		"level": out(u.Level), "flow": out(u.Flow), "into": out(u.Flow), "volume": out(u.Volume), "gas": out(u.Pressure),
-		"opening": out(u.Share), "running": out(u.Share), "crest": out(u.Level), "head": out(u.Level),
+		"level": of(u.Level), "flow": of(u.Flow), "into": of(u.Flow), "volume": of(u.Volume), "gas": of(u.Pressure),
+		"opening": of(u.Share), "running": of(u.Share), "crest": of(u.Level), "head": of(u.Level),
 	})
 	b.Write(js)
 }

@@ -80,7 +80,7 @@ func sheetRows(p Page, u units, c clock) []sheetRow {
 			n++
 			row.N = strconv.Itoa(n)
 		}
-		row.Together = i > 0 && row.at != nil && rows[i-1].at != nil && *row.at == *rows[i-1].at
+		row.Together = i > 0 && !row.Hold && !rows[i-1].Hold && row.at != nil && rows[i-1].at != nil && *row.at == *rows[i-1].at
 		row.height = rowHeight(*row)
 	}
 	return rows
@@ -94,7 +94,7 @@ func order(at *float64) float64 {
 }
 
 func stepRow(p Page, s *network.StepResult, u units, c clock) sheetRow {
-	row := sheetRow{at: s.Done, Who: s.Who, Action: s.Says, StopIf: s.StopIf, Where: s.Where, Note: s.Note}
+	row := sheetRow{at: s.Done, Who: s.Who, Action: s.Says, StopIf: stopWords(s.StopIf), Where: s.Where, Note: s.Note}
 	row.Verb, row.Rest, _ = strings.Cut(s.Says, " ")
 	if row.at == nil {
 		row.at = s.Due
@@ -105,9 +105,9 @@ func stepRow(p Page, s *network.StepResult, u units, c clock) sheetRow {
 	if s.Turns != nil && finite(*s.Turns) {
 		row.Where = strings.TrimPrefix(row.Where+", "+digits(*s.Turns, 2)+" turns", ", ")
 	}
-	if e := s.Expect; e != nil {
+	if e := expected(p, s); e != nil {
 		mid, low, high := reading(p.Plant, e, u)
-		row.Expect = e.Read + " " + mid + " at " + c.At(e.At, earlier)
+		row.Expect = e.Read + " " + mid + " at\u00a0" + strings.ReplaceAll(c.At(e.At, earlier), " ", "\u00a0")
 		if low != high {
 			row.Range = low + " to " + high
 		}
@@ -145,8 +145,8 @@ func rowHeight(r sheetRow) float64 {
 }
 
 const (
-	pageHigh = 268.0 // mm of an A4 page that may be filled
-	headHigh = 34.0  // mm of the heading, and of the head of the table
+	pageHigh = 270.0 // mm of an A4 page that may be filled
+	headHigh = 30.0  // mm of the heading, and of the head of the table
 )
 
 // sheetPages lays the sheet out on A4 pages.
@@ -184,7 +184,7 @@ func sheetPages(p Page, rows []sheetRow, c clock, handovers []handoverView) []*s
 		last.Rows = append(last.Rows, row)
 	}
 	for _, h := range handovers {
-		turn(40 + 4.2*float64(len(wrap(strings.Join(h.Levels, "; "), 80))+len(wrap(strings.Join(h.Valves, "; "), 80))))
+		turn(32 + 4.2*float64(len(wrap(strings.Join(h.Levels, "; "), 80))+len(wrap(strings.Join(h.Valves, "; "), 80))))
 		last := pages[len(pages)-1]
 		last.Handover = append(last.Handover, h)
 	}

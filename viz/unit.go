@@ -13,6 +13,8 @@ type unit struct {
 	Name string  // as printed: m³/h
 	K    float64 // display units in one SI unit
 	Dec  int     // decimals of a number read off an instrument; -1: three significant digits
+
+	Least float64 // in display units: what is less is written 0; of volumes in a balance
 }
 
 // units are those that a plant shows.
@@ -26,7 +28,7 @@ func newUnits(s network.Show) units {
 		Pressure: pick(quantity.Pressure, s.Pressure, "mbar"),
 		Rate:     pick(quantity.Velocity, "mm/min", "mm/min"),
 		Speed:    pick(quantity.Velocity, "m/s", "m/s"),
-		Share:    unit{"%", 100, 0},
+		Share:    unit{Name: "%", K: 100},
 	}
 	u.Rate.Dec, u.Speed.Dec = 1, 2
 	return u
@@ -63,7 +65,7 @@ func pretty(name string) string { return raised.Replace(name) }
 // Text writes an SI number in the unit, without its name.
 func (u unit) Text(si float64) string {
 	if u.Dec < 0 {
-		if math.Abs(si*u.K) < dust {
+		if math.Abs(si*u.K) < max(dust, u.Least) {
 			return "0"
 		}
 		return digits(si*u.K, 3)
@@ -133,9 +135,9 @@ func (u units) bySI(si, subject string) (unit, bool) {
 		if subject == "opening" {
 			return u.Share, true
 		}
-		return unit{"", 1, 0}, true
+		return unit{K: 1}, true
 	}
-	return unit{si, 1, -1}, false
+	return unit{Name: si, K: 1, Dec: -1}, false
 }
 
 func finite(x float64) bool { return !math.IsNaN(x) && !math.IsInf(x, 0) }

@@ -166,8 +166,12 @@ func amount(si *float64, l *network.LimitResult, u units, c clock, to side) stri
 		return c.Span(*si, to)
 	}
 	x := *si
-	if l.BoundSI != nil && math.Abs(x) < 1e-9*math.Abs(*l.BoundSI) {
-		x = 0 // what rounding left of nothing
+	if l.BoundSI != nil && *l.BoundSI != 0 {
+		if b := *l.BoundSI; math.Abs(x) < 1e-6*math.Abs(b) {
+			x = 0 // what rounding left of nothing
+		} else if math.Abs(x-b) < 1e-6*math.Abs(b) && l.Verdict == network.Holds {
+			x = b // the whole of the limit in hand
+		}
 	}
 	k, _ := u.bySI(l.UnitSI, l.Subject)
 	return k.Toward(x, to)
