@@ -53,6 +53,9 @@ type tab struct {
 func openTab(t testing.TB, html []byte, width, height int64, before ...chromedp.Action[chromedp.Void]) *tab {
 	t.Helper()
 	exe := findBrowser()
+	if exe == "" && os.Getenv("HEADFALL_BROWSER") == "required" {
+		t.Fatal("no browser found, and one is required")
+	}
 	if exe == "" {
 		t.Skip("no browser found: install chromium to run this test")
 	}
@@ -79,7 +82,7 @@ func openTab(t testing.TB, html []byte, width, height int64, before ...chromedp.
 		t.Fatal(err)
 	}
 	ctx, cancel := chromedp.NewContext(browser)
-	ctx, stop := context.WithTimeout(ctx, 40*time.Second)
+	ctx, stop := context.WithTimeout(ctx, 2*time.Minute)
 	t.Cleanup(func() { stop(); cancel() })
 	b := &tab{t: t, ctx: ctx, path: path}
 	b.do(chromedp.Func(func(ctx context.Context, s *chromedp.Target) error {
@@ -154,7 +157,7 @@ func get[T any](b *tab, expression string) T {
 // until waits for an expression to become true.
 func (b *tab) until(expression string) {
 	b.t.Helper()
-	for range 200 {
+	for range 1500 {
 		if get[bool](b, "!!("+expression+")") {
 			return
 		}
