@@ -22,8 +22,8 @@ func TestSecondPath(t *testing.T) {
 		Vessels: []*Vessel{{Tag: "A"}, {Tag: "B"}, {Tag: "C"}},
 		Tees:    []*Tee{{Tag: "H"}},
 		Outside: []*Outside{{Tag: "X"}},
-		Lines: []*Line{line("1", "A", "H", "V-1", 0), line("2", "B", "H", "V-2", 0), line("3", "H", "X", "V-3", 1), line("4", "H", "C", "V-4", 0)},
-		Steps: []*Step{{ID: "s", Action: MoveValve, Target: "V-1"}},
+		Lines:   []*Line{line("1", "A", "H", "V-1", 0), line("2", "B", "H", "V-2", 0), line("3", "H", "X", "V-3", 1), line("4", "H", "C", "V-4", 0)},
+		Steps:   []*Step{{ID: "s", Action: MoveValve, Target: "V-1"}},
 	}
 	p.index()
 	for valve, want := range map[string]string{"V-1": "", "V-2": "B to A, X", "V-3": "", "V-4": "A, X to C"} {
