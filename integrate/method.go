@@ -23,6 +23,8 @@ type stepper interface {
 	reject(norm float64) float64
 	// polynomial fills the inner coefficients of the dense output of the last attempt, for the unknowns and the integrals.
 	polynomial(k, kz [][]float64)
+	// implicit tells that the algebraic equations are solved at the end of every step.
+	implicit() bool
 	// degree returns how many inner coefficients there may be.
 	degree() int
 }

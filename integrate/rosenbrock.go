@@ -120,6 +120,8 @@ func (r *rosenbrock) integrals(i int, h float64, g []float64) {
 	}
 }
 
+func (r *rosenbrock) implicit() bool { return false }
+
 // finish forms the result and the error estimate.
 func (r *rosenbrock) finish() float64 {
 	s, m := r.s, r.tab

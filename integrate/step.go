@@ -21,7 +21,7 @@ func (s *Solver) Step(tEnd float64, ev Events) (Outcome, error) {
 		return out, s.fail(TooManySteps, s.next, worst(s.err, s.scale), nil)
 	}
 	s.linearise()
-	if s.settler != nil && !s.settler.Settled(s.f) {
+	if s.settler != nil && !s.settler.Settled(s.f, s.step.implicit()) {
 		if err := s.resettle(); err != nil {
 			return out, err
 		}

@@ -44,10 +44,11 @@ type Guard interface {
 
 // Settler is a System that knows how to bring its algebraic unknowns near to consistency better than Newton's method from where they are: Settle
 // changes those of y in place, for the present differential ones; the solver then finishes by itself. Settled tells from the rates f at the point
-// that was linearised last whether they are near enough: if not, the solver settles them before its next step.
+// that was linearised last whether they are near enough, or, for a method that solves them in every step (implicit), whether they are within reason:
+// if not, the solver settles them before its next step.
 type Settler interface {
 	Settle(t float64, y []float64)
-	Settled(f []float64) bool
+	Settled(f []float64, implicit bool) bool
 }
 
 // Events is a set of functions of time and state whose sign changes matter. The solver asks for all of them at once.

@@ -22,6 +22,28 @@ type settler struct {
 	x       []float64
 }
 
+// deepest is how far under the lowest mouth of the plant the head at a tee may be, m: more than a vacuum could pull.
+const deepest = 30
+
+// lowestPressure returns the total pressure, Pa, that no tee falls below.
+func (s *system) lowestPressure() float64 {
+	z := math.Inf(1)
+	for i := range s.lines {
+		for _, m := range []*mouth{&s.lines[i].from, &s.lines[i].to} {
+			switch m.kind {
+			case toTee:
+			case toWater:
+				for _, row := range s.outside[m.at].point.Surface {
+					z = math.Min(z, row[1])
+				}
+			default:
+				z = math.Min(z, m.invert)
+			}
+		}
+	}
+	return s.atmosphere + s.gamma*(z-deepest)
+}
+
 // newSettler fixes the pattern of the balances of the tees.
 func newSettler(s *system) *settler {
 	n := len(s.tees)
@@ -133,10 +155,14 @@ func (r *settler) along(s *system, part float64) (sum float64) {
 	return sum
 }
 
-// Settled tells whether the tees are near enough to balance, f being the rates where the system was linearised last.
-func (s *system) Settled(f []float64) bool {
+// Settled tells whether the tees are near enough to balance, and not lower than anything in the plant could pull them, f being the rates where the system was linearised last.
+func (s *system) Settled(f []float64, implicit bool) bool {
 	for i := range s.tees {
-		if t := &s.tees[i]; !t.slow && math.Abs(f[s.teeRow+i]) > offBalance*t.through+10*stillFlow {
+		t := &s.tees[i]
+		if t.slow {
+			continue
+		}
+		if !implicit && math.Abs(f[s.teeRow+i]) > offBalance*t.through+10*stillFlow || s.y[s.teeRow+i] < s.lowest {
 			return false
 		}
 	}
@@ -151,6 +177,11 @@ func (s *system) Settle(t float64, y []float64) {
 	r := s.settler
 	if r == nil {
 		return
+	}
+	for i := range s.tees {
+		if y[s.teeRow+i] < s.lowest { // where nothing flows in it may have strayed
+			y[s.teeRow+i] = s.lowest + deepest*s.gamma
+		}
 	}
 	s.look(t, y)
 	tol := 1e-7 * s.gamma * levelCap

@@ -47,6 +47,7 @@ type system struct {
 	tees     []teeSlots
 	floating []int32 // diagonal slots of tees that nothing holds
 	settler  *settler
+	lowest   float64 // Pa, total pressure that no tee falls below
 }
 
 var (
