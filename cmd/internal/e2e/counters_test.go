@@ -9,14 +9,14 @@ import (
 // golden is the work of the demos' plans: steps, rejected steps. Counts move with reversals and events; a band of a fifth and five steps holds them. A change
 // beyond it wants a reason in the commit.
 var golden = map[string][2]int{
-	"balance_tanks":  {153, 71},
-	"cellar":         {225, 52},
-	"cellar_passing": {223, 47},
-	"cellar_free":    {229, 54},
-	"day_tank":       {155, 22},
-	"equalisation":   {79, 16},
-	"hillside":       {426, 62},
-	"ten_vessels":    {1084, 200},
+	"balance_tanks":  {148, 66},
+	"cellar":         {213, 49},
+	"cellar_passing": {201, 43},
+	"cellar_free":    {213, 49},
+	"day_tank":       {103, 9},
+	"equalisation":   {73, 8},
+	"hillside":       {399, 69},
+	"ten_vessels":    {908, 166},
 }
 
 // TestWork holds the demos to their golden counters.
