@@ -27,15 +27,21 @@ func (j *judgement) doubts() error {
 	if len(kept) > 0 {
 		j.lay(kept)
 	}
-	if n := len(samples) - len(kept); n > 0 && err == nil {
-		j.res.Cautions = append(j.res.Cautions, fmt.Sprintf("%d of %d samples of the doubts could not be calculated and are left out.", n, len(samples)))
-		if float64(n) > FailsAllowed*float64(len(samples)) {
-			return fmt.Errorf("%d of %d samples of the doubts could not be calculated: %s", n, len(samples), whyNot(samples))
-		}
-	}
 	j.res.Decide()
 	j.stalls(kept)
+	if n := len(samples) - len(kept); n > 0 && err == nil {
+		j.leftOut(n, len(samples), whyNot(samples))
+	}
 	return err
+}
+
+// leftOut tells of samples that could not be calculated. They may have failed any limit: a plan that holds is too close to call when they are more
+// than a share that may fail; one that fails does so without them.
+func (j *judgement) leftOut(n, of int, why string) {
+	j.res.Cautions = append(j.res.Cautions, fmt.Sprintf("%d of %d samples of the doubts could not be calculated and are left out (%s).", n, of, why))
+	if float64(n) > FailsAllowed*float64(of) && j.res.Verdict == network.Run {
+		j.res.Verdict, j.res.ExitCode = network.TooClose, 1
+	}
 }
 
 // stalls makes a plan too close to call whose steps are all reached in the middle, but not in enough of the samples.
