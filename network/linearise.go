@@ -154,7 +154,7 @@ func (s *system) lineariseTees(f []float64, lin *integrate.Linear) {
 			if l.shut {
 				continue
 			}
-			w := k.sign * s.teeScale(i)
+			w := k.sign
 			a, b := s.see(&l.from), s.see(&l.to)
 			for j, v := range l.push5(&a, &b) {
 				if p := k.cols[j]; p >= 0 {

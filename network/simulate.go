@@ -32,7 +32,6 @@ type simulation struct {
 	flags   []*Flag
 	edges   map[*Edge]float64  // when conditional edges of windows came
 	answers map[*Alarm]*answer // of the alarms that were answered
-	bumps   int                // restarts without progress at one time
 }
 
 // Failure tells that the calculation could not finish.
@@ -111,7 +110,7 @@ func (m *Model) Run(ctx context.Context, opt RunOptions) (*Result, error) {
 // begin puts the plant at its start.
 func (sim *simulation) begin(opt *RunOptions) error {
 	sim.changes = opt.Changes
-	sim.t, sim.stopped, sim.trouble, sim.flags, sim.bumps = 0, "", nil, nil, 0
+	sim.t, sim.stopped, sim.trouble, sim.flags = 0, "", nil, nil
 	sim.edges = map[*Edge]float64{}
 	s := sim.sys
 	s.begin(&sim.changes)

@@ -158,12 +158,9 @@ func (s *system) balanceTees(f []float64) {
 				sum += k.sign * l.push
 			}
 		}
-		f[s.teeRow+i] = sum * s.teeScale(i)
+		f[s.teeRow+i] = sum
 	}
 }
-
-// teeScale brings the differentiated balance of a tee to the size of a balance of flows.
-func (s *system) teeScale(int) float64 { return 1 }
 
 // Scale fills the error allowed in each unknown: of a level l, rtol·(0.1 m + |l|) up to 2·10⁻⁵ m, as a volume over the present surface.
 func (s *system) Scale(y []float64, rtol float64, scale []float64) {
