@@ -193,6 +193,9 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 		}
 		s.addActuators(c, f, i, k)
 	}
+	if c.weir != nil { // it runs from a free surface: no column
+		c.inertia = 0
+	}
 	if c.weir != nil && len(c.chain.parts) == 0 {
 		c.to.width = 0 // it sees the surface there, not a mouth
 	}

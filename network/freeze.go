@@ -180,7 +180,7 @@ func (s *system) freezeTee(t *teeSlots) {
 		if l.shut {
 			continue
 		}
-		if l.inertia == 0 {
+		if !l.carries() {
 			return
 		}
 		open++
@@ -193,7 +193,7 @@ func (s *system) freezeTee(t *teeSlots) {
 func (sim *simulation) project() {
 	s := sim.sys
 	for _, k := range s.inertial {
-		if l := &s.lines[k]; l.shut {
+		if l := &s.lines[k]; l.shut && !l.parted {
 			sim.y[l.row] = 0
 		}
 	}

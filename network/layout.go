@@ -30,9 +30,10 @@ type gasSlots struct{ byV, byM int32 } // in the row of the gas mass
 // teeSlots are the lines that meet at a tee.
 type teeSlots struct {
 	lines    []teeLine
-	slow     bool    // all open lines are inertial: the balance is differentiated
+	slow     bool    // all open lines carry columns: the balance is differentiated
 	inertial bool    // some line is inertial
 	ease     float64 // what one pascal more would send out of the tee, m³/(s·Pa), when it was linearised last
+	direct   float64 // the share of it that goes to vessels and outside the plant
 	through  float64 // flows of its lines then, added up without their signs, m³/s
 }
 

@@ -30,6 +30,7 @@ type line struct {
 	gmin     float64   // m³/(s·Pa), the weepage at a tee; else 0
 	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
 	own      float64   // the flow itself where it is an unknown of the plant
+	parted   bool      // it is none for the moment: its column has parted
 	bore     float64   // m, the narrowest, for velocities; 0 for none
 	area     float64   // m², of it
 	row      int32     // unknown of an inertial flow; -1
@@ -74,7 +75,7 @@ const joinHead = 1e-4
 func (l *line) evaluate(a, b *end, gamma float64) {
 	l.byA, l.byB, l.byYa, l.byYb, l.byT, l.byQ = 0, 0, 0, 0, 0, 0
 	switch {
-	case l.inertia > 0:
+	case l.carries():
 		l.carry(a, b, gamma)
 	case l.shut:
 		l.q = 0

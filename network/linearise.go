@@ -20,7 +20,7 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 	s.look(t, y)
 	clear(f)
 	for i := range s.tees {
-		s.tees[i].ease, s.tees[i].through = 0, 0
+		s.tees[i].ease, s.tees[i].direct, s.tees[i].through = 0, 0, 0
 	}
 	for i := range s.stations {
 		s.addVessel(i, t, f, g, lin)
@@ -73,14 +73,21 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 
 // ease adds a line's slope to the tees at its ends.
 func (s *system) ease(l *line) {
+	between := l.from.kind == toTee && l.to.kind == toTee
 	if l.from.kind == toTee {
-		s.tees[l.from.at].ease += l.byA
-		s.tees[l.from.at].through += math.Abs(l.q)
+		s.tees[l.from.at].add(l.byA, l.q, between)
 	}
 	if l.to.kind == toTee {
-		s.tees[l.to.at].ease -= l.byB
-		s.tees[l.to.at].through += math.Abs(l.q)
+		s.tees[l.to.at].add(-l.byB, l.q, between)
 	}
+}
+
+func (t *teeSlots) add(slope, q float64, between bool) {
+	t.ease += slope
+	if !between {
+		t.direct += slope - teeStiffness
+	}
+	t.through += math.Abs(q)
 }
 
 // lineariseVessel adds the partials of inflow, spill and vents of vessel i.

@@ -19,6 +19,7 @@ type settler struct {
 	diag    []int32
 	f, d    []float64
 	through []float64 // flows of the lines of each tee, without their signs, m³/s
+	sound   bool      // factor holds the slopes of the present state
 	x       []float64
 }
 

@@ -32,6 +32,8 @@ type simulation struct {
 	flags   []*Flag
 	edges   map[*Edge]float64  // when conditional edges of windows came
 	answers map[*Alarm]*answer // of the alarms that were answered
+	columns []liquidColumn     // lines with a mass that may part
+	rescues int                // of them that parted for the solver's sake
 }
 
 // Failure tells that the calculation could not finish.
@@ -122,6 +124,7 @@ func (sim *simulation) begin(opt *RunOptions) error {
 		}
 	}
 	s.guessTees(sim.y)
+	sim.beginColumns()
 	for _, k := range s.inertial {
 		sim.y[s.lines[k].row] = 0
 	}
@@ -142,9 +145,12 @@ func (sim *simulation) run(ctx context.Context, opt *RunOptions) error {
 		sim.sys.freeze(sim)
 		sim.project()
 		if err := sim.solver.Restart(sim.t, sim.y); err != nil {
+			if sim.rescue(err) {
+				continue
+			}
 			return sim.fail(err)
 		}
-		if sim.watch.settled() {
+		if sim.watch.settled() || sim.reconsider() {
 			continue
 		}
 		sim.watch.arm()
@@ -166,6 +172,9 @@ func (sim *simulation) segment(ctx context.Context, stop float64, opt *RunOption
 	for {
 		out, err := sim.solver.Step(stop, sim.watch)
 		if err != nil {
+			if sim.rescue(err) {
+				return nil, nil
+			}
 			return nil, sim.fail(err)
 		}
 		sim.t = out.T
@@ -177,6 +186,9 @@ func (sim *simulation) segment(ctx context.Context, stop float64, opt *RunOption
 		}
 		if out.Stop != integrate.Stepped {
 			return out.Fired, nil
+		}
+		if sim.reconsider() {
+			return nil, nil
 		}
 		if sim.atRest() {
 			sim.stopped = "at_rest"

@@ -1,0 +1,266 @@
+package network
+
+import (
+	"errors"
+	"fmt"
+	"math"
+
+	"headfall/integrate"
+)
+
+// A line with a mass of liquid (inertia: yes) carries one column as long as it is full and the pressures at its ends answer to its flow. It does so
+// neither where its feed is down to a trickle that no pressure at the tee makes more of, nor where a high point or a valve of its own stands at its floor
+// pressure. Meanwhile it is parted: it runs part full, its flow is that of a line without mass, and its unknown stands still.
+//
+// The measure is the lag, s: inertance times the conductance by which the rest of the plant answers at its ends,
+//
+//	lag = ρL/A / (bᵀK⁻¹b),
+//
+// K the slopes of the balances of the tees without the line, m³/(s·Pa), b = +1 and −1 at the tees at its ends. Within that time the flow of the line
+// falls in with what the plant gives it; at nothing, the balance of the tee has no solution but by chance.
+const (
+	shortestLag = 1e-3 // s: under that a column parts
+	rejoinedLag = 10   // times that, and it carries again
+	mostRescues = 40   // columns parted because the solver got no further, in one run
+)
+
+// liquidColumn is what a run keeps of a line with a mass.
+type liquidColumn struct {
+	line    int32
+	least   float64 // s, lag under which it parts; more where the solver could not cope
+	changed float64 // s, when it parted or joined last
+	flag    *Flag   // of the last parting that was told
+}
+
+// carries tells that the flow of the line is an unknown of its own at present.
+func (l *line) carries() bool { return l.inertia > 0 && !l.parted }
+
+// part makes the line one without mass until it is whole again.
+func (l *line) part() {
+	l.parted = true
+	l.push, l.pushA, l.pushB, l.pushQ, l.pushYa, l.pushYb, l.pushT = 0, 0, 0, 0, 0, 0, 0
+}
+
+// beginColumns makes all columns whole.
+func (sim *simulation) beginColumns() {
+	s := sim.sys
+	sim.columns, sim.rescues = sim.columns[:0], 0
+	for _, k := range s.inertial {
+		l := &s.lines[k]
+		l.parted = false
+		if l.from.kind == toTee || l.to.kind == toTee || len(l.floors) > 0 {
+			sim.columns = append(sim.columns, liquidColumn{k, shortestLag, math.Inf(-1), nil})
+		}
+	}
+}
+
+// reconsider parts columns that have lost their feed and joins those that have it back, one after the other, and tells whether there were any.
+func (sim *simulation) reconsider() (changed bool) {
+	if len(sim.columns) == 0 {
+		return false
+	}
+	s := sim.sys
+	looked := false
+	for range 2 * len(sim.columns) {
+		best, lag := -1, math.Inf(1)
+		for i := range sim.columns {
+			c := &sim.columns[i]
+			l := &s.lines[c.line]
+			if l.shut || c.changed == sim.t {
+				continue
+			}
+			if !looked && s.easyColumn(l, c.least) {
+				continue
+			}
+			if !looked {
+				looked = true
+				s.look(sim.t, sim.solver.Y())
+				s.formBalances()
+			}
+			now := s.lag(l)
+			if l.floored(s) {
+				now = 0
+			} else {
+				now = math.Max(now, 1e-300)
+			}
+			if l.parted {
+				if now >= rejoinedLag*c.least && best < 0 {
+					best, lag = i, math.Inf(1)
+				}
+			} else if now < c.least && (best < 0 || s.lines[sim.columns[best].line].parted || l.inertia < s.lines[sim.columns[best].line].inertia) {
+				best, lag = i, now
+			}
+		}
+		if best < 0 {
+			return changed
+		}
+		changed = true
+		sim.turnColumn(&sim.columns[best], lag)
+		s.look(sim.t, sim.solver.Y())
+		s.formBalances()
+	}
+	return changed
+}
+
+// turnColumn parts a column, or joins one that is parted.
+func (sim *simulation) turnColumn(c *liquidColumn, lag float64) {
+	l := &sim.sys.lines[c.line]
+	c.changed = sim.t
+	if l.parted {
+		l.parted = false
+		sim.y[l.row] = l.q
+		if c.flag != nil {
+			c.flag.To = sim.t
+		}
+		return
+	}
+	if math.Abs(l.own) > flowing && lag < shortestLag {
+		sim.flagParting(c, lag)
+	}
+	l.part()
+}
+
+// flagParting tells that a column with some flow parts; partings that follow soon are one.
+func (sim *simulation) flagParting(c *liquidColumn, lag float64) {
+	const soon = 60 // s
+	if c.flag != nil && c.flag.To > c.flag.From && sim.t < c.flag.To+soon {
+		return
+	}
+	tag := sim.sys.lines[c.line].plan.Tag
+	says := fmt.Sprintf("%s is fed no more than a trickle: its column parts and it runs part full", tag)
+	if lag == 0 {
+		says = fmt.Sprintf("the column of %s parts at its high point or a choked valve: it runs part full beyond", tag)
+	}
+	n := len(sim.flags)
+	sim.flag("column_parted", tag, sim.t, says, "expect air in it, and a knock when it fills again; meanwhile its flow is reckoned without the mass of its liquid")
+	if len(sim.flags) > n {
+		c.flag = sim.flags[n]
+	}
+}
+
+// rescue parts the column at the tee, or the line, where the solver got no further, and tells whether there was one.
+func (sim *simulation) rescue(err error) bool {
+	var e *integrate.Error
+	if !errors.As(err, &e) || e.Unknown < 0 || sim.rescues >= mostRescues || e.Reason == integrate.TooManySteps {
+		return false
+	}
+	s := sim.sys
+	best := -1
+	for i := range sim.columns {
+		l := &s.lines[sim.columns[i].line]
+		if l.parted || l.shut {
+			continue
+		}
+		sl := &s.slot[sim.columns[i].line]
+		if u := int32(e.Unknown); sl.from != u && sl.to != u && l.row != u {
+			continue
+		}
+		if best < 0 || l.inertia < s.lines[sim.columns[best].line].inertia {
+			best = i
+		}
+	}
+	if best < 0 {
+		return false
+	}
+	c := &sim.columns[best]
+	l := &s.lines[c.line]
+	s.look(sim.t, sim.y)
+	s.formBalances()
+	c.least = math.Max(10*c.least, 2*s.lag(l))
+	sim.turnColumn(c, 0)
+	sim.rescues++
+	return true
+}
+
+// easyColumn tells from the last linearisation, without solving anything, that a column has nothing to fear: the lines that lead from its tees to
+// vessels and the outside answer well enough by themselves, and it has no floors.
+func (s *system) easyColumn(l *line, least float64) bool {
+	if l.parted || len(l.floors) > 0 {
+		return false
+	}
+	stiff := 0.0
+	for _, m := range [2]*mouth{&l.from, &l.to} {
+		if m.kind == toTee && !s.tees[m.at].slow {
+			stiff += 1 / s.tees[m.at].direct
+		}
+	}
+	return l.inertia > rejoinedLag*least*stiff
+}
+
+// formBalances works out the slopes of the balances of the tees in the present state.
+func (s *system) formBalances() {
+	if s.settler == nil {
+		for _, k := range s.inertial {
+			l := &s.lines[k]
+			a, b := s.see(&l.from), s.see(&l.to)
+			l.evaluate(&a, &b, s.gamma)
+		}
+		return
+	}
+	s.settler.balances(s, true)
+	s.settler.sound = s.settler.factor.Refactor(s.settler.values) == nil
+}
+
+// lag returns inertance times the conductance of the plant at the ends of the line, s; infinite where an end is held.
+func (s *system) lag(l *line) float64 {
+	r := s.settler
+	ends := [2]int{-1, -1}
+	for k, m := range [2]*mouth{&l.from, &l.to} {
+		if m.kind == toTee && !s.tees[m.at].slow {
+			ends[k] = m.at
+		}
+	}
+	if ends[0] < 0 && ends[1] < 0 || r == nil {
+		return math.Inf(1)
+	}
+	if !r.sound {
+		return 0
+	}
+	clear(r.d)
+	for k, i := range ends {
+		if i >= 0 {
+			r.d[i] = float64(1 - 2*k)
+		}
+	}
+	r.factor.Solve(r.d)
+	give := 0.0
+	for k, i := range ends {
+		if i >= 0 {
+			give += float64(1-2*k) * r.d[i]
+		}
+	}
+	own := 0.0
+	if l.parted {
+		own = (l.byA - l.byB) / 2
+	}
+	return l.inertia * math.Max(0, 1/give-own)
+}
+
+// floored tells that at the flow of the line a high point or a valve of it stands at its floor pressure: with a margin of a tenth of the flow where it
+// is parted.
+func (l *line) floored(s *system) bool {
+	if len(l.floors) == 0 {
+		return false
+	}
+	a, b := s.see(&l.from), s.see(&l.to)
+	q := l.own
+	if l.parted {
+		q = l.q / 0.9
+	}
+	back := q < 0 || q == 0 && a.phi < b.phi
+	for i := range l.floors {
+		f := &l.floors[i]
+		if f.off || f.back != back {
+			continue
+		}
+		up := &a
+		if back {
+			up = &b
+		}
+		share := f.share(l)
+		if d, _ := f.up.drop(math.Abs(q)); d > share*(up.phi-s.gamma*f.z-f.pressure) {
+			return true
+		}
+	}
+	return false
+}
