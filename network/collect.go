@@ -7,13 +7,10 @@ import (
 	"headfall/elements"
 )
 
-// Version of the program, shown in results and reports.
-const Version = "0.1.0"
-
 // result puts together what a run gives back.
 func (sim *simulation) result() *Result {
 	p := sim.plan
-	r := &Result{Schema: 1, Command: "run", Program: Program{"headfall", Version}, End: sim.t, Stopped: sim.stopped,
+	r := &Result{Schema: 1, Command: "run", Program: Program{"headfall", Version()}, End: sim.t, Stopped: sim.stopped,
 		Complete: sim.stopped == "time" || sim.stopped == "at_rest", Series: sim.obs.series,
 		Bands: map[string]map[string]Band{}, Assumptions: []Assumption{}, Cautions: []string{}, Handover: []*HandoverBlock{},
 		Allowance: Allowance{Doubts: "none"}}

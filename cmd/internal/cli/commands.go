@@ -7,6 +7,8 @@ import (
 	"strings"
 
 	"github.com/spf13/cobra"
+
+	"headfall/network"
 )
 
 // The groups of the help.
@@ -60,11 +62,11 @@ func (a *app) root() *cobra.Command {
 		Long: `headfall reads a plant, what is in it, what will be done to it and what must not happen,
 and answers whether the sequence can run as written: when each vessel is empty, how much
 room is left in every other one, what runs backwards, and what goes over first.`,
-		Example: `  headfall new > plant.yaml        a commented file to start from
-  headfall check plant.yaml        what was understood, with every default
-  headfall run plant.yaml          the verdict, and plant.html`,
+		Example: `  headfall new plant.yaml          # a commented file to start from
+  headfall check plant.yaml        # what was understood, with every default
+  headfall run plant.yaml          # the verdict, and plant.html`,
 		SilenceErrors: true, SilenceUsage: true,
-		Version: Version,
+		Version: network.Version(),
 		Args:    cobra.ArbitraryArgs,
 		RunE:    func(c *cobra.Command, args []string) error { return a.noCommand(c, args) },
 	}
@@ -72,7 +74,7 @@ room is left in every other one, what runs backwards, and what goes over first.`
 	root.SetIn(a.In)
 	root.SetOut(a.Out)
 	root.SetErr(a.Err)
-	root.CompletionOptions.HiddenDefaultCmd = true
+	root.CompletionOptions.DisableDefaultCmd = true // completion.go has its own
 	for _, g := range groups {
 		if slices.ContainsFunc(verbs, func(v verb) bool { return v.group == g.ID }) {
 			root.AddGroup(&g)
@@ -80,7 +82,6 @@ room is left in every other one, what runs backwards, and what goes over first.`
 	}
 	root.SetHelpCommand(a.help())
 	root.SetHelpCommandGroupID(groupAbout)
-	root.SetCompletionCommandGroupID(groupAbout)
 	root.SetFlagErrorFunc(func(c *cobra.Command, err error) error { return badFlag(c, err) })
 	a.opt.bind(root)
 	for _, v := range verbs {
@@ -88,6 +89,7 @@ room is left in every other one, what runs backwards, and what goes over first.`
 		c.GroupID = v.group
 		root.AddCommand(c)
 	}
+	a.complete(root)
 	return root
 }
 
@@ -102,7 +104,7 @@ func (a *app) noCommand(c *cobra.Command, args []string) error {
 	}
 	var names []string
 	for _, sub := range c.Commands() {
-		if sub.IsAvailableCommand() {
+		if sub.IsAvailableCommand() || isTopic(sub) {
 			names = append(names, sub.Name())
 		}
 	}

@@ -42,7 +42,7 @@ JSON: {"schema": 1, "command": "fit", "verdict": "fitted", "exit_code": 0, "comp
 
 Exit code 0: fitted. 1: the readings do not tell. 2: bad usage or a bad file. 3: the calculation could not finish.
 130: interrupted; what was found is kept and marked.`,
-		Example: `  headfall fit plant.yaml --readings test.csv --vary L-1.orifice.cd
+		Example: `  headfall fit plant.yaml --readings test.csv --vary V-1.kv
   headfall fit plant.yaml --readings test.csv --vary V-1.kv --vary T-1.level --json fit.json`,
 		Args: oneFile,
 		RunE: func(c *cobra.Command, args []string) error { return a.fit(c.Context(), args[0], o) },

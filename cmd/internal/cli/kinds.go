@@ -16,14 +16,16 @@ import (
 func init() { register(groupFile, newKinds) }
 
 func newKinds(a *app) *cobra.Command {
-	return &cobra.Command{
+	markdown := false
+	c := &cobra.Command{
 		Use:   "kinds [NAME]",
 		Short: "What a plant may be built of: parameters, law, source",
 		Long: `Kinds lists everything that a plant may be built of. With a NAME it prints that kind's parameters with
 their units and defaults, its law, where the law holds and where it comes from, and a specimen.`,
 		Example: `  headfall kinds
   headfall kinds valve
-  headfall kinds fittings          with the loss coefficients`,
+  headfall kinds fittings          # with the loss coefficients
+  headfall kinds --markdown > kinds.md`,
 		RunE: func(c *cobra.Command, args []string) error {
 			if len(args) > 1 {
 				return bad("headfall help kinds", "kinds takes one NAME, got %d", len(args))
@@ -36,6 +38,10 @@ their units and defaults, its law, where the law holds and where it comes from, 
 				return a.kindsJSON(kinds)
 			}
 			return buffered(a.Out, func(w io.Writer) error {
+				if markdown {
+					writeMarkdown(w, kinds)
+					return nil
+				}
 				if len(args) == 0 {
 					return listKinds(w)
 				}
@@ -49,6 +55,8 @@ their units and defaults, its law, where the law holds and where it comes from, 
 			})
 		},
 	}
+	c.Flags().BoolVar(&markdown, "markdown", false, "all of it as a page in Markdown")
+	return c
 }
 
 // kindsNamed returns the kinds of that name in every room, or all of them.
@@ -143,16 +151,18 @@ func need(p *elements.Param) string {
 	return "optional"
 }
 
+func fittingsByName() []friction.Fitting {
+	list := friction.Fittings()
+	sort.SliceStable(list, func(i, j int) bool { return list[i].Name < list[j].Name })
+	return list
+}
+
 // showFittings prints the loss coefficients by name, in two bores.
 func showFittings(w io.Writer) {
 	t := tabwriter.NewWriter(w, 0, 0, 2, ' ', 0)
 	fmt.Fprintf(t, "  fitting\tK at 50 mm\tK at 100 mm\t\tsource\n")
-	list := friction.Fittings()
-	sort.SliceStable(list, func(i, j int) bool { return list[i].Name < list[j].Name })
-	for _, f := range list {
-		narrow, _ := friction.FittingK(f.Name, 0.05)
-		wide, _ := friction.FittingK(f.Name, 0.1)
-		fmt.Fprintf(t, "  %s\t%.2f\t%.2f\t%s\t%s\n", f.Name, narrow, wide, f.Says, f.Source)
+	for _, f := range fittingsByName() {
+		fmt.Fprintf(t, "  %s\t%.2f\t%.2f\t%s\t%s\n", f.Name, fittingK(f.Name, 0.05), fittingK(f.Name, 0.1), f.Says, f.Source)
 	}
 	t.Flush()
 	fmt.Fprintln(w)

@@ -3,6 +3,7 @@ package cli
 import (
 	"io"
 	"os"
+	"strings"
 
 	"github.com/spf13/cobra"
 
@@ -15,12 +16,25 @@ func init() {
 }
 
 func newNew(a *app) *cobra.Command {
-	return &cobra.Command{
-		Use:     "new [FILE]",
-		Short:   "A commented file to start from",
-		Long:    "New writes a small plant that runs, with a comment on every key, to FILE or to standard output. A FILE that is there already is left alone.",
-		Example: "  headfall new plant.yaml\n  headfall new > plant.yaml",
+	demo := ""
+	c := &cobra.Command{
+		Use:   "new [FILE]",
+		Short: "A commented file to start from",
+		Long: `New writes a small plant that runs, with a comment on every key, to FILE or to standard output. A FILE that is there
+already is left alone. With --demo it writes one of the demo plants:
+
+  ` + strings.Join(scenarios.Demos(), "\n  "),
+		Example: `  headfall new plant.yaml
+  headfall new > plant.yaml
+  headfall new --demo cellar cellar.yaml`,
 		RunE: func(c *cobra.Command, args []string) error {
+			plant := scenarios.Starter()
+			if demo != "" {
+				var known bool
+				if plant, known = scenarios.Demo(demo); !known {
+					return bad(among(demo, scenarios.Demos()), "there is no demo %q", demo)
+				}
+			}
 			if a.opt.json != "" {
 				return bad("headfall schema --json PATH writes the schema", "new has nothing to write as JSON")
 			}
@@ -28,12 +42,15 @@ func newNew(a *app) *cobra.Command {
 				return bad("headfall new plant.yaml", "new takes one FILE, got %d", len(args))
 			}
 			if len(args) == 0 || args[0] == "-" {
-				_, err := a.Out.Write(scenarios.Starter())
+				_, err := a.Out.Write(plant)
 				return err
 			}
-			return a.create(args[0], scenarios.Starter())
+			return a.create(args[0], plant)
 		},
+		ValidArgsFunction: firstArg(ends("yaml")),
 	}
+	c.Flags().StringVar(&demo, "demo", "", "write the demo plant of this `NAME` instead")
+	return c
 }
 
 // create writes a file that is not there yet.

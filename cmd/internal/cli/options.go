@@ -38,11 +38,11 @@ func (o *options) bind(root *cobra.Command) {
 	f.StringArrayVar(&o.set, "set", nil, "change a number of the file: `TAG.x=VALUE`, as V-1.kv=80; may be repeated")
 	f.StringVar(&o.caseName, "case", "", "apply the case `NAME` of the file")
 	f.BoolVarP(&o.quiet, "quiet", "q", false, "the first line only, no progress")
-	f.StringVar(&o.color, "color", "auto", "auto, always or never; NO_COLOR is honoured")
-	f.StringVar(&o.method, "method", methods[0], "way of calculating: "+strings.Join(methods, ", "))
-	f.Float64Var(&o.tolerance, "tolerance", 0, "relative accuracy of the calculation; 0 takes the default")
-	f.IntVar(&o.workers, "workers", 0, "calculations side by side; 0 takes one a processor")
-	f.StringVar(&o.timeout, "timeout", "", "give up after this long: 90s, 5 min")
+	f.StringVar(&o.color, "color", "auto", "`WHEN` to paint: auto, always or never; NO_COLOR is honoured")
+	f.StringVar(&o.method, "method", methods[0], "`WAY` of calculating: "+strings.Join(methods, ", "))
+	f.Float64Var(&o.tolerance, "tolerance", 0, "relative accuracy of the calculation, a `SHARE`; 0 takes the default")
+	f.IntVar(&o.workers, "workers", 0, "`COUNT` of calculations side by side; 0 takes one a processor")
+	f.StringVar(&o.timeout, "timeout", "", "give up after this `TIME`: 90s, 5 min")
 	root.PersistentPreRunE = func(*cobra.Command, []string) error { return o.check() }
 }
 

@@ -35,8 +35,9 @@ JSON: {"schema": 1, "command": "plan", "exit_code": 0, "complete": true, "found"
 
 Exit code 0: a plan was found. 1: none. 2: bad usage or a bad file. 3: the calculation could not finish. 130:
 interrupted; the best plan by then is kept and marked.`,
-		Example: `  headfall plan plant.yaml
-  headfall plan plant.yaml --samples 1000 --json plan.json`,
+		Example: `  headfall new --demo cellar_free plant.yaml
+  headfall plan plant.yaml --json plan.json
+  headfall plan plant.yaml --samples 0             # without allowance`,
 		Args: oneFile,
 		RunE: func(c *cobra.Command, args []string) error { return a.plan(c.Context(), args[0], o) },
 	}

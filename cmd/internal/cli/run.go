@@ -40,7 +40,7 @@ Exit code 0: every limit holds. 1: a limit fails, a step was never reached, or t
 2: bad usage or a bad file, nothing written. 3: the calculation could not finish. 130: interrupted;
 what was computed is kept and marked.`,
 		Example: `  headfall run plant.yaml
-  headfall run plant.yaml --case G --set V-1.kv=80 --no-report
+  headfall run plant.yaml --case wide --set V-1.kv=80 --no-report
   headfall run plant.yaml --json answer.json --csv series.csv --xlsx plant.xlsx
   headfall run - --json - < plant.yaml`,
 		Args: oneFile,

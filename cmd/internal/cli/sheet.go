@@ -23,8 +23,8 @@ func newSheet(a *app) *cobra.Command {
 		Long: `Sheet calculates the plan and writes the page that goes to the plant: every valve's position before the
 first step, the steps with clock, action and what to expect, when to stop, how long a hold may last, and
 the handover blocks. Print it from a browser, or take it as text. The exit code is that of run.`,
-		Example: `  headfall sheet plant.yaml                    writes plant-sheet.html
-  headfall sheet plant.yaml --text             prints it as text`,
+		Example: `  headfall sheet plant.yaml                    # writes plant-sheet.html
+  headfall sheet plant.yaml --text             # prints it as text`,
 		Args: oneFile,
 		RunE: func(c *cobra.Command, args []string) error { return a.sheet(c.Context(), args[0], html, plain) },
 	}

@@ -45,7 +45,7 @@ Exit code 0: something was found. 1: nothing. 2: bad usage or a bad file. 3: the
 130: interrupted; what was found is kept and marked.`,
 		Example: `  headfall size plant.yaml --vary s1.to --from 10% --to 100%
   headfall size plant.yaml --vary L-1.pipe.bore --from 50mm --to 150mm --smallest
-  headfall size plant.yaml --vary s2.at --from 06:10 --to 08:00 --smallest --need level:PIT-4=0.2m`,
+  headfall size plant.yaml --vary s1.at --from 06:00 --to 10:00 --need level:SUMP=0.2m`,
 		Args: oneFile,
 		RunE: func(c *cobra.Command, args []string) error { return a.size(c.Context(), args[0], o) },
 	}

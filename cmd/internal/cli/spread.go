@@ -45,16 +45,16 @@ Exit code 0: every limit holds, and in at least 95 % of the samples. 1: not so. 
 nothing in it carries a doubt. 3: the calculation could not finish. 130: interrupted; what was done is kept and
 marked.`,
 		Example: `  headfall spread plant.yaml
-  headfall spread plant.yaml --samples 10000 --seed 7 --json spread.json
+  headfall spread plant.yaml --samples 5000 --seed 7 --json spread.json
   headfall spread plant.yaml --html spread.html
-  headfall spread plant.yaml --samples 100000 --shard auto/32 --json part.jsonl`,
+  headfall spread plant.yaml --samples 20000 --shard auto/32 --json part.jsonl    # in a job array`,
 		Args: oneFile,
 		RunE: func(c *cobra.Command, args []string) error { return a.spread(c.Context(), args[0], o) },
 	}
 	f := c.Flags()
 	f.SortFlags = false
-	f.IntVar(&o.samples, "samples", study.SpreadSamples, "how many samples")
-	f.Int64Var(&o.seed, "seed", study.DefaultSeed, "where the draws begin; the same seed gives the same samples")
+	f.IntVar(&o.samples, "samples", study.SpreadSamples, "`COUNT` of samples")
+	f.Int64Var(&o.seed, "seed", study.DefaultSeed, "`NUMBER` where the draws begin; the same seed gives the same samples")
 	o.many.bind(f)
 	return c
 }

@@ -5,10 +5,9 @@ import (
 	"io"
 
 	"github.com/spf13/cobra"
-)
 
-// Version of the program; it stands on every report.
-const Version = "0.1.0"
+	"headfall/network"
+)
 
 func init() { register(groupAbout, newVersion) }
 
@@ -25,11 +24,11 @@ func newVersion(a *app) *cobra.Command {
 			}
 			if a.opt.json != "" {
 				return a.only(a.opt.json, func(w io.Writer) error {
-					_, err := fmt.Fprintf(w, "{\"schema\": 1, \"command\": \"version\", \"name\": \"headfall\", \"version\": %q}\n", Version)
+					_, err := fmt.Fprintf(w, "{\"schema\": 1, \"command\": \"version\", \"name\": \"headfall\", \"version\": %q}\n", network.Version())
 					return err
 				})
 			}
-			_, err := fmt.Fprintln(a.Out, "headfall", Version)
+			_, err := fmt.Fprintln(a.Out, "headfall", network.Version())
 			return err
 		},
 	}

@@ -19,8 +19,8 @@ type doubtful struct {
 }
 
 func (d *doubtful) bind(f *pflag.FlagSet) {
-	f.IntVar(&d.samples, "samples", study.DefaultSamples, "samples of the doubts in each judgement; 0 for none")
-	f.Int64Var(&d.seed, "seed", study.DefaultSeed, "where the draws begin; the same seed gives the same samples")
+	f.IntVar(&d.samples, "samples", study.DefaultSamples, "`COUNT` of samples of the doubts in each judgement; 0 for none")
+	f.Int64Var(&d.seed, "seed", study.DefaultSeed, "`NUMBER` where the draws begin; the same seed gives the same samples")
 }
 
 // weigh makes the options of a study.
