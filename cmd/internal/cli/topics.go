@@ -41,7 +41,9 @@ func topic(name, page string) *cobra.Command {
 		Use: name, Short: title, Example: strings.TrimRight(examples, "\n"), DisableFlagsInUseLine: true,
 		Long: strings.ReplaceAll(strings.Trim(long, "\n"), "{{units}}", unitTable()),
 	}
-	c.SetHelpFunc(func(c *cobra.Command, _ []string) { fmt.Fprintf(c.OutOrStdout(), "%s\n\n%s\n\nExamples:\n%s\n", c.Short, c.Long, c.Example) })
+	c.SetHelpFunc(func(c *cobra.Command, _ []string) {
+		fmt.Fprintf(c.OutOrStdout(), "%s\n\n%s\n\nExamples:\n%s\n", c.Short, c.Long, c.Example)
+	})
 	return c
 }
 
