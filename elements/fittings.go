@@ -62,6 +62,9 @@ func (e *fittingSet) Drop(q float64, at *Local) (dp, slope float64) {
 	return Quadratic(e.square*at.Fluid.Density, q, at.Band)
 }
 
+// Even tells that counted fittings lose the same both ways.
+func (e *fittingSet) Even() bool { return true }
+
 // Bore returns the bore that was written; 0 when the fittings take that of their neighbour.
 func (e *fittingSet) Bore() float64 { return e.bore }
 

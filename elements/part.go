@@ -40,6 +40,8 @@ type (
 	Bored interface{ Bore() float64 }
 	// Placed wants to know its place.
 	Placed interface{ SetPlace(Place) }
+	// Even tells that the part loses the same both ways: Drop(−q) = −Drop(q).
+	Even interface{ Even() bool }
 	// OwnEnd is a part whose law includes the end loss where it stands at the end of its line: orifices, nozzles, weirs.
 	OwnEnd interface{ OwnEnd() bool }
 	// Tagged has a tag of its own: valves, pumps, check valves.

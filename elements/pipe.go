@@ -72,6 +72,7 @@ func (e *pipe) Drop(q float64, at *Local) (dp, slope float64) {
 	return k * fre * q, k * (fre + re*rise)
 }
 
+func (e *pipe) Even() bool      { return true }
 func (e *pipe) Bore() float64   { return e.bore }
 func (e *pipe) Length() float64 { return e.length }
 func (e *pipe) Holds() float64  { return circle(e.bore) * e.length }

@@ -18,6 +18,19 @@ type chain struct {
 	back   bool              // seen from the other end: q counts against the parts' direction
 }
 
+// symmetric tells that the loss is the same both ways.
+func (c *chain) symmetric() bool {
+	if c.fwd != c.rev {
+		return false
+	}
+	for _, p := range c.parts {
+		if e, ok := p.(elements.Even); !ok || !e.Even() {
+			return false
+		}
+	}
+	return true
+}
+
 // drop returns the pressure lost at flow q, Pa, and its slope, Pa·s/m³.
 func (c *chain) drop(q float64) (dp, slope float64) {
 	if c.fwd > 0 || c.rev > 0 {

@@ -44,6 +44,8 @@ func (s *system) number() {
 		s.vesselAt[v.Tag] = i
 		s.stations[i] = newStation(v, p)
 	}
+	s.basins, s.floor, s.isWide = make([]basin, len(p.Vessels)), make([]float64, len(p.Vessels)), make([]bool, len(p.Vessels))
+	s.wide, s.narrow, s.odd = make([]int32, 0, len(p.Vessels)), make([]int32, 0, len(p.Vessels)), make([]int32, 0, len(p.Vessels))
 	n := int32(len(p.Vessels))
 	for i := range s.stations {
 		st := &s.stations[i]
@@ -254,16 +256,26 @@ func (s *system) shareTables() {
 		}
 		alike[key] = append(alike[key], i)
 	}
-	tol := math.Max(1e-10, math.Min(1e-7, s.rtol/10))
+	tol, most := math.Max(1e-10, math.Min(1e-7, s.rtol/10)), s.headOver()*s.gamma
 	for _, group := range alike {
 		if len(group) < enough {
 			continue
 		}
-		t := newFlowTable(&s.lines[group[0]].chain, tol)
+		t := newFlowTable(&s.lines[group[0]].chain, most, tol)
 		for _, i := range group {
 			s.lines[i].table = t
 		}
 	}
+}
+
+// headOver returns the difference of level, m, that the open vessels of the plant span, and a half more.
+func (s *system) headOver() float64 {
+	low, high := math.Inf(1), math.Inf(-1)
+	for i := range s.stations {
+		st := &s.stations[i]
+		low, high = math.Min(low, st.base), math.Max(high, st.base+st.rim)
+	}
+	return 1.5 * (high - low)
 }
 
 // meetOutside notes which lines meet each outside point, and which have high points.

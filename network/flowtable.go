@@ -6,91 +6,137 @@ import "math"
 // taken from the bits of x, 2^k cells an octave with k chosen octave by octave so that the relative error is under tol. Read-only once built;
 // the grid depends on nothing but the law.
 type flowTable struct {
-	base int // binary exponent of the lowest octave
-	side [2][]octave
-	low  float64 // Δp under which the law itself is solved
-	high float64 // Δp beyond which the law itself is solved
-	cell [][4]float64
+	low, high float64 // Pa: outside of them the law itself is solved
+	octaves   [2][]octave
+	cells     []tableCell
 }
 
+type tableCell [4]float64 // coefficients of the cubic in 0 ≤ u < 1
+
+// octave is the cells of 2ⁿ ≤ x < 2ⁿ⁺¹.
 type octave struct {
-	first, shift int32
-	scale        float64 // cells a unit of x
-	unit         float64 // 2^-shift
+	first int     // cell
+	bits  uint    // mantissa bits under those that number the cell
+	unit  float64 // 2^-bits
+	scale float64 // cells a unit of x
 }
 
 const (
-	tableOctaves = 16 // of x: from 0.03 Pa to 8 MPa
-	tableBase    = -3 // lowest x = 2^(base) √Pa
+	tableBase    = -3 // x from 2^tableBase √Pa on: Δp from 0.016 Pa
+	mostCellBits = 9
+	mantissaBits = 52
+	mantissa     = 1<<mantissaBits - 1
+	exponentBias = 1023
 )
 
-func newFlowTable(c *chain, tol float64) *flowTable {
-	t := &flowTable{base: tableBase}
-	x0 := math.Ldexp(1, tableBase)
-	t.low, t.high = x0*x0, math.Ldexp(1, 2*(tableBase+tableOctaves))
-	for side := range t.side {
-		sign := 1 - 2*float64(side)
-		t.side[side] = make([]octave, tableOctaves)
-		q := 0.0
-		for o := range t.side[side] {
-			t.side[side][o] = t.fill(c, sign, math.Ldexp(1, tableBase+o), tol, &q)
+// newFlowTable makes the table of a chain for pressures up to most, Pa.
+func newFlowTable(c *chain, most, tol float64) *flowTable {
+	t := &flowTable{low: math.Ldexp(1, 2*tableBase)}
+	n := 1
+	for t.high = 4 * t.low; t.high < most; t.high *= 4 {
+		n++
+	}
+	for side, sign := range [2]float64{1, -1} {
+		if side == 1 && c.symmetric() {
+			t.octaves[1] = t.octaves[0]
+			break
+		}
+		b := tableBuilder{chain: c, sign: sign, tol: tol, bits: 2}
+		for o := range n {
+			t.octaves[side] = append(t.octaves[side], b.octave(t, math.Ldexp(1, tableBase+o)))
 		}
 	}
 	return t
 }
 
-// fill adds the cells of one octave starting at x0, doubling their number until the middle of each is good to tol.
-func (t *flowTable) fill(c *chain, sign, x0, tol float64, guess *float64) octave {
-	first := len(t.cell)
-	for k := 2; ; k++ {
-		t.cell = t.cell[:first]
-		n, worst := 1<<k, 0.0
-		w := x0 / float64(n)
-		law := func(x float64) (v, m float64) {
-			q, s := c.solve(sign*x*x, *guess)
-			*guess = q
-			return q, sign * s * 2 * x * w
-		}
-		v0, m0 := law(x0)
-		for i := 0; i < n; i++ {
-			x := x0 + float64(i)*w
-			vm, _ := law(x + w/2)
-			v1, m1 := law(x + w)
-			a := [4]float64{v0, m0, 3*(v1-v0) - 2*m0 - m1, 2*(v0-v1) + m0 + m1}
-			mid := a[0] + (a[1]+(a[2]+a[3]/2)/2)/2
-			if vm != 0 {
-				worst = math.Max(worst, math.Abs(mid/vm-1))
-			}
-			t.cell = append(t.cell, a)
-			v0, m0 = v1, m1
-		}
-		if worst < tol || k == 9 {
-			return octave{first: int32(first), shift: int32(52 - k), scale: 1 / w, unit: math.Ldexp(1, k-52)}
+// tableBuilder adds octaves from the lowest up.
+type tableBuilder struct {
+	chain *chain
+	sign  float64
+	tol   float64
+	bits  uint    // log₂ of the cells of the last octave
+	q, s  float64 // flow and slope found last
+	dp    float64
+}
+
+// law returns |Q| and its slope by x.
+func (b *tableBuilder) law(x float64) (v, slope float64) {
+	dp := b.sign * x * x
+	q, s := b.chain.solve(dp, b.q+b.s*(dp-b.dp))
+	b.q, b.s, b.dp = q, s, dp
+	return b.sign * q, s * 2 * x
+}
+
+// octave adds the cells from x0 to 2·x0, in twos of what the last octave took until the middle of each is good to tol.
+func (b *tableBuilder) octave(t *flowTable, x0 float64) octave {
+	first := len(t.cells)
+	for k := max(2, b.bits-1); ; k++ {
+		t.cells = t.cells[:first]
+		if n := 1 << k; b.fill(t, x0, n) < b.tol || k == mostCellBits {
+			b.bits = k
+			return octave{first: first, bits: mantissaBits - k, unit: math.Ldexp(1, -int(mantissaBits-k)), scale: float64(n) / x0}
 		}
 	}
 }
 
+// fill adds n cells and returns the worst relative error in the middle of one; it stops where that is over tol.
+func (b *tableBuilder) fill(t *flowTable, x0 float64, n int) (worst float64) {
+	w := x0 / float64(n)
+	v0, m0 := b.law(x0)
+	for i := range n {
+		x := x0 + float64(i)*w
+		vm, _ := b.law(x + w/2)
+		v1, m1 := b.law(x + w)
+		a := tableCell{v0, m0 * w, 3*(v1-v0) - (2*m0+m1)*w, 2*(v0-v1) + (m0+m1)*w}
+		if vm != 0 {
+			worst = math.Max(worst, math.Abs((a[0]+(a[1]+(a[2]+a[3]/2)/2)/2)/vm-1))
+		}
+		if worst >= b.tol && n < 1<<mostCellBits {
+			return worst
+		}
+		t.cells = append(t.cells, a)
+		v0, m0 = v1, m1
+	}
+	return worst
+}
+
 // at returns the flow and ∂q/∂Δp; ok is false outside the table.
 func (t *flowTable) at(dp float64) (q, slope float64, ok bool) {
-	side := t.side[0]
-	a := dp
+	side, a := t.octaves[0], dp
 	if dp < 0 {
-		side, a = t.side[1], -dp
+		side, a = t.octaves[1], -dp
 	}
 	if !(a >= t.low && a < t.high) {
 		return 0, 0, false
 	}
 	x := math.Sqrt(a)
-	bits := math.Float64bits(x)
-	o := &side[int(bits>>52)-1023-t.base]
-	const mantissa = 1<<52 - 1
-	m := bits & mantissa
-	c := &t.cell[int(o.first)+int(m>>o.shift)]
-	u := float64(m&(1<<o.shift-1)) * o.unit
+	o, u, i := findCell(side, x)
+	c := &t.cells[i]
 	q = c[0] + u*(c[1]+u*(c[2]+u*c[3]))
 	slope = (c[1] + u*(2*c[2]+3*u*c[3])) * o.scale * 0.5 / x
+	return math.Copysign(q, dp), slope, true
+}
+
+// flow is at without the slope.
+func (t *flowTable) flow(dp float64) (q float64, ok bool) {
+	side, a := t.octaves[0], dp
 	if dp < 0 {
-		slope = -slope
+		side, a = t.octaves[1], -dp
 	}
-	return q, slope, true
+	if !(a >= t.low && a < t.high) {
+		return 0, false
+	}
+	_, u, i := findCell(side, math.Sqrt(a))
+	c := &t.cells[i]
+	return math.Copysign(c[0]+u*(c[1]+u*(c[2]+u*c[3])), dp), true
+}
+
+// findCell returns the octave of x, its cell and the place in it, 0 ≤ u < 1, from the bits of x.
+func findCell(side []octave, x float64) (o *octave, u float64, cell int) {
+	b := math.Float64bits(x)
+	o = &side[int(b>>mantissaBits)-exponentBias-tableBase]
+	m := b & mantissa
+	top := m >> (o.bits & 63)
+	u = float64(m-top<<(o.bits&63)) * o.unit
+	return o, u, o.first + int(top)
 }

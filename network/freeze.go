@@ -89,6 +89,7 @@ func (s *system) freeze(sim *simulation) {
 		s.freezeLine(&s.lines[i], t)
 	}
 	s.sortPlain()
+	s.sortStations()
 	s.lowest = s.lowestPressure()
 	for i := range s.tees {
 		s.freezeTee(&s.tees[i])

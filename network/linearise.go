@@ -19,56 +19,65 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 	clear(lin.DgDt)
 	s.look(t, y)
 	clear(f)
+	clear(g[len(s.lines):])
 	for i := range s.tees {
 		s.tees[i].ease, s.tees[i].direct, s.tees[i].through = 0, 0, 0
 	}
-	for i := range s.stations {
-		s.addVessel(i, t, f, g, lin)
-		s.lineariseVessel(i, lin)
+	for _, list := range [2][]int32{s.wide, s.odd} {
+		for _, i := range list {
+			s.addVessel(int(i), t, f, g, lin)
+			s.lineariseVessel(int(i), lin)
+		}
 	}
-	for i := range s.lines {
-		l, sl := &s.lines[i], &s.slot[i]
-		a, b := s.see(&l.from), s.see(&l.to)
-		l.evaluate(&a, &b, s.gamma)
-		g[i] = l.q
-		if l.gmin > 0 {
-			l.byA, l.byB = l.byA+teeStiffness, l.byB-teeStiffness
-			s.ease(l)
-		}
-		d := [5]float64{l.byA*a.phiV + l.byYa*a.depV, l.byA * a.phiN, l.byB*b.phiV + l.byYb*b.depV, l.byB * b.phiN, l.byQ}
-		if l.from.kind == toTee {
-			d[0] = l.byA
-		}
-		if l.to.kind == toTee {
-			d[2] = l.byB
-		}
-		dt := l.byT + l.byA*a.phiT + l.byB*b.phiT
-		if sl.from >= 0 {
-			f[sl.from] -= l.q
-			lin.DfDt[sl.from] -= dt
-		}
-		if sl.to >= 0 {
-			f[sl.to] += l.q
-			lin.DfDt[sl.to] += dt
-		}
-		for k, v := range d {
-			if sl.inZ[k] < 0 {
-				continue
-			}
-			lin.DgDy[sl.inZ[k]] = v
-			if p := sl.inFrom[k]; p >= 0 {
-				lin.DfDy[p] -= v
-			}
-			if p := sl.inTo[k]; p >= 0 {
-				lin.DfDy[p] += v
-			}
-		}
-		lin.DgDt[i] = dt
-		if l.row >= 0 {
-			s.lineariseOwn(i, &a, &b, f, lin)
-		}
+	s.linearisePlain(f, g, lin)
+	for _, i := range s.rest {
+		s.lineariseLine(int(i), f, g, lin)
 	}
 	s.lineariseTees(f, lin)
+}
+
+// lineariseLine adds the flow of line i and its partials.
+func (s *system) lineariseLine(i int, f, g []float64, lin *integrate.Linear) {
+	l, sl := &s.lines[i], &s.slot[i]
+	a, b := s.see(&l.from), s.see(&l.to)
+	l.evaluate(&a, &b, s.gamma)
+	g[i] = l.q
+	if l.gmin > 0 {
+		l.byA, l.byB = l.byA+teeStiffness, l.byB-teeStiffness
+		s.ease(l)
+	}
+	d := [5]float64{l.byA*a.phiV + l.byYa*a.depV, l.byA * a.phiN, l.byB*b.phiV + l.byYb*b.depV, l.byB * b.phiN, l.byQ}
+	if l.from.kind == toTee {
+		d[0] = l.byA
+	}
+	if l.to.kind == toTee {
+		d[2] = l.byB
+	}
+	dt := l.byT + l.byA*a.phiT + l.byB*b.phiT
+	if sl.from >= 0 {
+		f[sl.from] -= l.q
+		lin.DfDt[sl.from] -= dt
+	}
+	if sl.to >= 0 {
+		f[sl.to] += l.q
+		lin.DfDt[sl.to] += dt
+	}
+	for k, v := range d {
+		if sl.inZ[k] < 0 {
+			continue
+		}
+		lin.DgDy[sl.inZ[k]] = v
+		if p := sl.inFrom[k]; p >= 0 {
+			lin.DfDy[p] -= v
+		}
+		if p := sl.inTo[k]; p >= 0 {
+			lin.DfDy[p] += v
+		}
+	}
+	lin.DgDt[i] = dt
+	if l.row >= 0 {
+		s.lineariseOwn(i, &a, &b, f, lin)
+	}
 }
 
 // ease adds a line's slope to the tees at its ends.

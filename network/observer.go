@@ -104,6 +104,7 @@ func (sim *simulation) fill(w *snapshot, t float64, y, f []float64) {
 	w.t = t
 	s.Rates(t, y, f, w.z) // w.z holds the rates of the integrals for a moment: the flows
 	copy(w.q, w.z[:len(s.lines)])
+	s.lookAll(y)
 	for i := range s.stations {
 		st := &s.stations[i]
 		w.level[i], w.gas[i], w.spill[i] = st.level, st.gas, st.spill

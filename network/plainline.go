@@ -1,16 +1,47 @@
 package network
 
-import "math"
+import (
+	"math"
 
-// plainLine is a line between two vessels' floors that needs nothing but its flow table: no end that uncovers in a wall, no limit but its inlets, nothing
-// that moves. Most lines of large plants are; they are kept apart, small and in a row, since the law is where the time goes.
+	"headfall/integrate"
+)
+
+// plainLine is a line between the floors of two open vessels that needs nothing but its flow table: no end that uncovers in a wall, no limit but its inlets,
+// nothing that moves. Most lines of large plants are; they are kept apart, small and in a row, since the law is where the time goes.
 type plainLine struct {
 	line     int32
 	from, to int32 // vessels
 	table    *flowTable
-	invertA  float64 // m over datum
-	invertB  float64
-	in, out  inletLaw
+	in, out  gate
+	bySlot   plainSlots
+	calm     bool // no part's range matters
+}
+
+// plainSlots are the slots of a plain line: in the rows of the vessels it leaves and enters and in its integral, each by the volumes of both.
+type plainSlots struct{ fromA, fromB, toA, toB, zA, zB int32 }
+
+// gate tells quickly that a mouth in a floor admits a flow with room to spare. See inletLaw.ample.
+type gate struct {
+	zero  float64 // Pa, total pressure at the invert
+	least float64 // m, depth
+	lip   float64 // m⁵/s² over m³: of the weir over the lip, squared, with a margin
+}
+
+func (s *system) gateOf(m *mouth) gate {
+	g := gate{zero: s.atmosphere + s.gamma*m.invert}
+	if m.inlet.form == fadeInlet {
+		g.least, g.lip = 0.05*m.inlet.bore, math.Inf(1)
+		return g
+	}
+	w := 1.7 * math.Pi * m.inlet.bore
+	g.lip = w * w / 1.3
+	return g
+}
+
+// passes tells that a flow q is well within what the mouth admits under a total pressure phi; perGamma is 1/ρg.
+func (g *gate) passes(phi, q, perGamma float64) bool {
+	y := (phi - g.zero) * perGamma
+	return y > g.least && g.lip*y*y*y >= q*q
 }
 
 // sortPlain separates the plain lines from the rest, as they stand in this segment.
@@ -18,28 +49,32 @@ func (s *system) sortPlain() {
 	s.plain, s.rest = s.plain[:0], s.rest[:0]
 	for i := range s.lines {
 		l := &s.lines[i]
-		if l.table == nil || l.shut || len(l.moving) > 0 || len(l.floors) > 0 || l.oneWay || l.zero != 0 ||
-			l.from.kind != toVessel || l.to.kind != toVessel || l.from.width > 0 || l.to.width > 0 {
+		if !s.isPlain(l) {
 			s.rest = append(s.rest, int32(i))
 			continue
 		}
-		s.plain = append(s.plain, plainLine{line: int32(i), from: int32(l.from.at), to: int32(l.to.at), table: l.table,
-			invertA: l.from.invert, invertB: l.to.invert, in: l.from.inlet, out: l.to.inlet})
+		sl := &s.slot[i]
+		s.plain = append(s.plain, plainLine{line: int32(i), from: int32(l.from.at), to: int32(l.to.at), table: l.table, in: s.gateOf(&l.from), out: s.gateOf(&l.to),
+			bySlot: plainSlots{sl.inFrom[0], sl.inFrom[2], sl.inTo[0], sl.inTo[2], sl.inZ[0], sl.inZ[2]}})
 	}
+}
+
+func (s *system) isPlain(l *line) bool {
+	floor := func(m *mouth) bool {
+		return m.kind == toVessel && m.width == 0 && !s.stations[m.at].closed && (m.inlet.form == floorInlet || m.inlet.form == fadeInlet)
+	}
+	return l.table != nil && !l.shut && len(l.moving) == 0 && len(l.floors) == 0 && !l.oneWay && l.zero == 0 && floor(&l.from) && floor(&l.to)
 }
 
 // plainRates adds the flows of the plain lines.
 func (s *system) plainRates(f, g []float64) {
+	floor, per := s.floor, 1/s.gamma
 	for k := range s.plain {
 		p := &s.plain[k]
-		a, b := &s.stations[p.from], &s.stations[p.to]
-		dp := a.floor - b.floor
-		q, ok := p.table.flow(dp)
-		if !ok || q > 0 && !p.in.ample(a.surface-p.invertA, q) || q < 0 && !p.out.ample(b.surface-p.invertB, -q) {
-			l := &s.lines[p.line]
-			from, to := s.see(&l.from), s.see(&l.to)
-			l.evaluate(&from, &to, s.gamma)
-			q = l.q
+		a, b := floor[p.from], floor[p.to]
+		q, ok := p.table.flow(a - b)
+		if !ok || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
+			q = s.evaluate(int(p.line)).q
 		}
 		f[p.from] -= q
 		f[p.to] += q
@@ -47,22 +82,37 @@ func (s *system) plainRates(f, g []float64) {
 	}
 }
 
-// flow is at without the slope.
-func (t *flowTable) flow(dp float64) (q float64, ok bool) {
-	side := t.side[0]
-	a := dp
-	if dp < 0 {
-		side, a = t.side[1], -dp
+// evaluate works out a line by the full law, its vessels being looked into first.
+func (s *system) evaluate(i int) *line {
+	l := &s.lines[i]
+	s.lookInto(l.from.at, s.y)
+	s.lookInto(l.to.at, s.y)
+	a, b := s.see(&l.from), s.see(&l.to)
+	l.evaluate(&a, &b, s.gamma)
+	return l
+}
+
+// linearisePlain adds the flows of the plain lines and their partials.
+func (s *system) linearisePlain(f, g []float64, lin *integrate.Linear) {
+	floor, per := s.floor, 1/s.gamma
+	for k := range s.plain {
+		p := &s.plain[k]
+		a, b := floor[p.from], floor[p.to]
+		q, slope, ok := p.table.at(a - b)
+		if !ok || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
+			s.lookInto(int(p.from), s.y)
+			s.lookInto(int(p.to), s.y)
+			s.lineariseLine(int(p.line), f, g, lin)
+			continue
+		}
+		f[p.from] -= q
+		f[p.to] += q
+		g[p.line] = q
+		byA, byB, at := slope*s.gamma*s.slopeOf(int(p.from)), -slope*s.gamma*s.slopeOf(int(p.to)), &p.bySlot
+		lin.DgDy[at.zA], lin.DgDy[at.zB] = byA, byB
+		lin.DfDy[at.fromA] -= byA
+		lin.DfDy[at.fromB] -= byB
+		lin.DfDy[at.toA] += byA
+		lin.DfDy[at.toB] += byB
 	}
-	if !(a >= t.low && a < t.high) {
-		return 0, false
-	}
-	x := math.Sqrt(a)
-	bits := math.Float64bits(x)
-	o := &side[int(bits>>52)-1023-t.base]
-	const mantissa = 1<<52 - 1
-	m := bits & mantissa
-	c := &t.cell[int(o.first)+int(m>>o.shift)]
-	u := float64(m&(1<<o.shift-1)) * o.unit
-	return c[0] + u*(c[1]+u*(c[2]+u*c[3])), true
 }

@@ -113,7 +113,7 @@ func (p *probe) raw(sim *simulation, w *snapshot) float64 {
 		return w.gas[p.at[0]]
 	case Rising, Falling:
 		i := p.at[0]
-		r := w.dv[i] * s.stations[i].slope
+		r := w.dv[i] * s.slopeOf(i)
 		if p.subject == Falling {
 			r = -r
 		}

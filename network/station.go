@@ -34,7 +34,6 @@ type station struct {
 	slope   float64 // dh/dV, 1/m²
 	surface float64 // m over datum
 	gas     float64 // Pa absolute
-	floor   float64 // Pa: gas + γ·surface, the total pressure in the liquid
 	gasV    float64 // ∂gas/∂V, Pa/m³
 	gasN    float64 // ∂gas/∂m, Pa/kg
 	spill   float64 // m³/s over the rim

@@ -25,6 +25,12 @@ type system struct {
 	teeRow    int // first unknown of the tees
 	flowRow   int // first unknown of the inertial lines
 	stations  []station
+	basins    []basin
+	floor     []float64 // Pa, total pressures at the floors of the vessels where they were looked at last
+	wide      []int32   // vessels of which a segment asks more than their basins tell
+	narrow    []int32   // the others
+	odd       []int32   // of these, what stood outside its basin's span when looked at last
+	isWide    []bool
 	outside   []beyond
 	lines     []line
 	actuators []actuator
@@ -83,25 +89,18 @@ func (s *system) look(t float64, y []float64) {
 		b := &s.outside[i]
 		b.surface = b.start + b.rate*(t-s.t0)
 	}
-	for i := range s.stations {
-		st := &s.stations[i]
-		m := st.mass
-		if st.massRow >= 0 {
-			m = y[st.massRow]
-		}
-		st.look(y[i], m)
-		st.floor = st.gas + s.gamma*st.surface
-	}
+	s.lookAtVessels(y)
 }
 
 // Rates fills f and g.
 func (s *system) Rates(t float64, y, f, g []float64) {
 	s.look(t, y)
-	for i := range f {
-		f[i] = 0
-	}
-	for i := range s.stations {
-		s.addVessel(i, t, f, g, nil)
+	clear(f)
+	clear(g[len(s.lines):])
+	for _, list := range [2][]int32{s.wide, s.odd} {
+		for _, i := range list {
+			s.addVessel(int(i), t, f, g, nil)
+		}
 	}
 	s.plainRates(f, g)
 	for _, i := range s.rest {
@@ -165,10 +164,15 @@ func (s *system) balanceTees(f []float64) {
 // Scale fills the error allowed in each unknown: of a level l, rtol·(0.1 m + |l|) up to 2·10⁻⁵ m, as a volume over the present surface.
 func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 	tol := func(l float64) float64 { return math.Min(rtol*(leastLevel+l), levelCap) }
+	least := 1e-9 * math.Min(1, rtol*1e6)
 	for i := range s.stations {
+		if b := &s.basins[i]; b.holds(y[i]) {
+			scale[i] = math.Max(tol(math.Abs(b.at(y[i])))/b.slope, least*b.full)
+			continue
+		}
 		st := &s.stations[i]
 		h, slope := st.shape.Level(y[i])
-		scale[i] = math.Max(tol(math.Abs(h))/slope, 1e-9*st.full*math.Min(1, rtol*1e6))
+		scale[i] = math.Max(tol(math.Abs(h))/slope, least*st.full)
 		if st.massRow >= 0 {
 			m := y[st.massRow]
 			g, _ := st.gasVolume(y[i])
@@ -199,12 +203,13 @@ const levelCap = 2e-5
 
 // Admit refuses a state with a volume well under nothing or gas that has gone.
 func (s *system) Admit(_ float64, y []float64) bool {
-	for i := range s.stations {
-		st := &s.stations[i]
-		if y[i] < -1e-7*st.full {
+	for i, v := range y[:len(s.stations)] {
+		if v < 0 && v < -1e-7*s.stations[i].full {
 			return false
 		}
-		if st.massRow >= 0 && y[st.massRow] < 0 {
+	}
+	for _, i := range s.wide {
+		if r := s.stations[i].massRow; r >= 0 && y[r] < 0 {
 			return false
 		}
 	}

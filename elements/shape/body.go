@@ -122,6 +122,21 @@ func (b *body) Level(v float64) (h, slope float64) {
 	return s.z + min(h, s.h), slope
 }
 
+// Straight returns the volumes, m³, between which the level goes straight with the volume around v.
+func (b *body) Straight(v float64) (lo, hi float64) {
+	switch {
+	case !(v > 0):
+		return math.Inf(-1), 0
+	case v > b.volume:
+		return b.volume, math.Inf(1)
+	}
+	s := b.sliceOf(v)
+	if _, is := s.piece.(prism); !is {
+		return 0, 0
+	}
+	return s.v, s.v + s.dv
+}
+
 // few is the number of slices up to which looking at each beats halving.
 const few = 8
 

@@ -18,6 +18,8 @@ type Shape interface {
 	Volume(h float64) (v, area float64)
 	// Level is the inverse: the level, m, at volume v, m³, and dh/dV, 1/m².
 	Level(v float64) (h, slope float64)
+	// Straight returns the span of volumes, m³, around v within which Level is a straight line; lo is not under hi where it is none.
+	Straight(v float64) (lo, hi float64)
 	// Corners returns the levels, m, where dV/dh jumps by more than 1 %, ascending; Height is one of them where the top is a pole or a point. The
 	// slice is the shape's own.
 	Corners() []float64
