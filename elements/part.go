@@ -143,7 +143,7 @@ type Reduces interface {
 type Runs interface{ Runout() float64 }
 
 // Ranged is a part whose law holds within a range: Outside says, for the flow q, m³/s, and the head h over its crest, m (NaN for what has none), in what
-// it is used outside; "" within. The words are ready made: nothing is allocated.
+// it is used outside; "" within. What is within at two flows is so between them. The words are ready made: nothing is allocated.
 type Ranged interface {
 	Outside(q, h float64, at *Local) string
 }

@@ -69,7 +69,7 @@ func (sim *simulation) vesselResults(r *Result) {
 		e, why := sim.plan.EmptyLevel(v)
 		x := &VesselResult{StartLevel: v.StartLevel(), EndLevel: level, StartVolume: v.StartVolume(), EndVolume: vol, Left: math.Max(0, vol), LeftWhy: why,
 			PeakLevel: o.level[i].high, PeakAt: o.level[i].highAt, LowLevel: o.level[i].low, LowAt: o.level[i].lowAt,
-			EmptyAtLevel: opt(e), Spilled: sim.led.z[len(s.lines)+i], PeakSpill: math.Max(0, o.spill[i].high)}
+			EmptyAtLevel: opt(e), Spilled: sim.solver.Z()[len(s.lines)+i], PeakSpill: math.Max(0, o.spill[i].high)}
 		if x.PeakLevel-x.StartLevel < standing {
 			x.PeakAt = 0 // it stood still: what rounding adds is no peak
 		}
@@ -106,7 +106,7 @@ func (sim *simulation) vesselResults(r *Result) {
 	for i := range s.stations {
 		st := &s.stations[i]
 		if st.spillTo >= 0 {
-			r.Vessels[sim.plan.Vessels[st.spillTo].Tag].In += sim.led.z[len(s.lines)+i]
+			r.Vessels[sim.plan.Vessels[st.spillTo].Tag].In += sim.solver.Z()[len(s.lines)+i]
 		}
 	}
 }
@@ -114,7 +114,7 @@ func (sim *simulation) vesselResults(r *Result) {
 // inflow returns what came into vessel i from outside the plant so far, other than by lines, m³.
 func (sim *simulation) inflow(i int) float64 {
 	if k := sim.sys.stations[i].inflowZ; k >= 0 {
-		return sim.led.z[k]
+		return sim.solver.Z()[k]
 	}
 	return 0
 }
@@ -207,7 +207,7 @@ func (sim *simulation) outsideResults(r *Result) {
 	}
 	for i, v := range sim.plan.Vessels {
 		if x, ok := r.Outside[v.SpillsTo]; ok {
-			x.Received += sim.led.z[len(s.lines)+i]
+			x.Received += sim.solver.Z()[len(s.lines)+i]
 		}
 	}
 }
@@ -245,7 +245,7 @@ func (sim *simulation) balance(r *Result) {
 		b.In += sim.inflow(i)
 		b.Left += sim.y[i]
 		if sim.sys.stations[i].spillTo < 0 {
-			b.Spilled += sim.led.z[len(sim.sys.lines)+i]
+			b.Spilled += sim.solver.Z()[len(sim.sys.lines)+i]
 		}
 	}
 	for _, o := range sim.plan.Outside {

@@ -49,6 +49,9 @@ func (s *system) number() {
 	n := int32(len(p.Vessels))
 	for i := range s.stations {
 		st := &s.stations[i]
+		if st.closed {
+			s.closed = append(s.closed, int32(i))
+		}
 		st.massRow = -1
 		if st.closed && !st.sealed {
 			st.massRow = n
@@ -262,6 +265,7 @@ func (s *system) shareTables() {
 			continue
 		}
 		t := newFlowTable(&s.lines[group[0]].chain, most, tol)
+		t.within = s.lines[group[0]].withinRange(t)
 		for _, i := range group {
 			s.lines[i].table = t
 		}

@@ -7,6 +7,7 @@ import "math"
 // the grid depends on nothing but the law.
 type flowTable struct {
 	low, high float64 // Pa: outside of them the law itself is solved
+	within    float64 // m³/s: the greatest flow, either way, known to be within the ranges of the parts
 	octaves   [2][]octave
 	cells     []tableCell
 }

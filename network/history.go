@@ -80,9 +80,9 @@ func (h *history) at(w *snapshot) (v, d float64) {
 	for k, i := range lines {
 		q, z := signs[k]*w.q[i], signs[k]*w.z[i]
 		if h.kind == hVolume {
-			z = h.sim.led.forward[i]
+			z, _ = h.sim.led.passed(i, w.z[i])
 			if (signs[k] < 0) != (p.subject == Backflow) {
-				z = h.sim.led.backward[i]
+				_, z = h.sim.led.passed(i, w.z[i])
 			}
 			if p.subject == Backflow {
 				q = -q

@@ -2,18 +2,17 @@ package network
 
 import "math"
 
-// ledger books the volumes: what each line passed each way, what came in, and when lines ran backwards.
+// ledger books the volumes: what each line passed each way, and when lines ran backwards. A line's integral is taken over where its flow turns.
 type ledger struct {
-	forward, backward []float64 // m³ up to the last booked time
+	forward, backward []float64 // m³ up to the last turn
 	z                 []float64 // integrals there
 	reversals         [][]Reversal
 	open              []bool // the last reversal of the line still runs
 }
 
 func newLedger(s *system) *ledger {
-	nl := len(s.lines)
-	return &ledger{forward: make([]float64, nl), backward: make([]float64, nl), z: make([]float64, s.m),
-		reversals: make([][]Reversal, nl), open: make([]bool, nl)}
+	n := len(s.lines)
+	return &ledger{forward: make([]float64, n), backward: make([]float64, n), z: make([]float64, n), reversals: make([][]Reversal, n), open: make([]bool, n)}
 }
 
 func (b *ledger) reset() {
@@ -26,76 +25,80 @@ func (b *ledger) reset() {
 	}
 }
 
-// passed returns what line i has passed each way when its integral stands at z, taking the flow since the last booking as one way.
+// passed returns what line i has passed each way when its integral stands at z.
 func (b *ledger) passed(i int, z float64) (forward, backward float64) {
 	d := z - b.z[i]
 	return b.forward[i] + math.Max(d, 0), b.backward[i] + math.Max(-d, 0)
 }
 
-// book takes the integrals over from one snapshot to the next, between which the flow of a line turns at most once.
-func (b *ledger) book(sim *simulation, from, to *snapshot) {
-	for i := range b.forward {
-		b.line(sim, i, from, to)
+// take books what line i has passed until its integral stood at z.
+func (b *ledger) take(i int, z float64) {
+	b.forward[i], b.backward[i] = b.passed(i, z)
+	if r := b.reversals[i]; b.open[i] && z < b.z[i] {
+		r[len(r)-1].Volume += b.z[i] - z
 	}
-	copy(b.z, to.z)
+	b.z[i] = z
 }
 
-func (b *ledger) line(sim *simulation, i int, from, to *snapshot) {
-	qa, qb := from.q[i], to.q[i]
+// finish books what is left at the end of a run.
+func (b *ledger) finish(z []float64) {
+	for i := range b.forward {
+		b.take(i, z[i])
+	}
+}
+
+// book follows the flows from one snapshot to the next, between which that of a line turns at most once.
+func (b *ledger) book(sim *simulation, from, to *snapshot) {
+	for i, qa := range from.q {
+		if qb := to.q[i]; qa < 0 || qb < 0 || b.open[i] {
+			b.follow(sim, i, from.t, to.t, qa, qb)
+		}
+	}
+}
+
+// follow is book for a line that runs backwards, or did.
+func (b *ledger) follow(sim *simulation, i int, t0, t1, qa, qb float64) {
 	switch {
 	case qa >= 0 && qb >= 0:
-		b.ahead(i, to.z[i]-from.z[i])
-		if b.open[i] {
-			b.close(i, from.t)
-		}
+		b.turn(sim, i, t0)
 	case qa <= 0 && qb <= 0:
-		b.back(i, from.t, to.t, to.z[i]-from.z[i], math.Min(qa, qb))
-	default:
-		t := sim.turn(i, from.t, to.t, qa, qb)
-		z := sim.solver.Dense().OneZ(i, t)
-		if qa < 0 {
-			b.back(i, from.t, t, z-from.z[i], qa)
-			b.close(i, t)
-			b.ahead(i, to.z[i]-z)
-		} else {
-			b.ahead(i, z-from.z[i])
-			b.back(i, t, to.t, to.z[i]-z, qb)
+		if !b.open[i] {
+			b.turn(sim, i, t0)
 		}
+		b.back(i, t1, math.Min(qa, qb))
+	default:
+		t := sim.turn(i, t0, t1, qa, qb)
+		if qa < 0 {
+			if !b.open[i] {
+				b.turn(sim, i, t0)
+			}
+			b.back(i, t, qa)
+			b.turn(sim, i, t)
+			return
+		}
+		if b.open[i] {
+			b.turn(sim, i, t0)
+		}
+		b.turn(sim, i, t)
+		b.back(i, t1, qb)
 	}
 }
 
-// ahead books dz of forward flow; what is less than nothing ran back for a moment between the ends.
-func (b *ledger) ahead(i int, dz float64) {
-	if dz < 0 {
-		b.backward[i] -= dz
+// turn ends the reversal of a line that runs, or begins one.
+func (b *ledger) turn(sim *simulation, i int, t float64) {
+	b.take(i, sim.solver.Dense().OneZ(i, t))
+	b.open[i] = !b.open[i]
+	if b.open[i] {
+		b.reversals[i] = append(b.reversals[i], Reversal{From: t, To: t})
 		return
 	}
-	b.forward[i] += dz
-}
-
-// back books dz ≤ 0 of backward flow from t0 to t1.
-func (b *ledger) back(i int, t0, t1, dz, peak float64) {
-	if dz > 0 { // it ran forward for a moment between
-		b.forward[i] += dz
-		dz = 0
-	}
-	b.backward[i] -= dz
-	if peak == 0 {
-		return
-	}
-	if !b.open[i] {
-		b.reversals[i] = append(b.reversals[i], Reversal{From: t0})
-		b.open[i] = true
-	}
-	r := &b.reversals[i][len(b.reversals[i])-1]
-	r.To = t1
-	r.Volume -= dz
-	r.Peak = math.Max(r.Peak, -peak)
-}
-
-// close ends the reversal that runs.
-func (b *ledger) close(i int, t float64) {
-	b.open[i] = false
 	r := &b.reversals[i][len(b.reversals[i])-1]
 	r.To = math.Max(r.To, t)
+}
+
+// back notes that the reversal goes on to t.
+func (b *ledger) back(i int, t, q float64) {
+	r := &b.reversals[i][len(b.reversals[i])-1]
+	r.To = t
+	r.Peak = math.Max(r.Peak, -q)
 }

@@ -26,8 +26,12 @@ type observer struct {
 	sums       [3]float64
 	spilled    []float64 // s, when a vessel was last seen spilling
 	trackers   []*tracker
-	turned     []turn // of the vessels in the step just taken
+	followed   []*tracker // those of the trackers that are evaluated step by step
+	marks      []marks    // the others, by vessel
+	turned     []turn     // of the vessels in the step just taken
+	turnedNow  []int32
 	watched    []bool // vessels whose level is followed in a window of time
+	summed     bool   // integrals within steps are asked for
 	rz         []float64
 	keep       bool
 	columns    []column
@@ -40,6 +44,7 @@ type observer struct {
 	alarms     []*moment
 	histories  []*history
 	regimes    []regime
+	noted      []int8 // by line, the regimes that last
 }
 
 // extreme is the least and the most of a number, and when.
@@ -61,16 +66,21 @@ func newObserver(sim *simulation) (*observer, error) {
 	o.level, o.gas, o.spill = make([]extreme, len(s.stations)), make([]extreme, len(s.stations)), make([]extreme, len(s.stations))
 	o.flow, o.crest, o.over = make([]extreme, len(s.lines)), make([]extreme, len(s.lines)), make([]float64, len(s.outside))
 	o.inflow, o.spilled = make([]extreme, len(s.outside)), make([]float64, len(s.stations))
-	o.regimes = make([]regime, len(s.lines))
+	o.regimes, o.noted = make([]regime, len(s.lines)), make([]int8, len(s.lines))
 	o.turned, o.watched, o.rz = make([]turn, len(s.stations)), make([]bool, len(s.stations)), make([]float64, s.m)
+	o.turnedNow = make([]int32, 0, 2*len(s.stations))
+	for i := range o.turned {
+		o.turned[i].at = math.NaN()
+	}
+	for _, w := range []*snapshot{&o.prev, &o.mid, &o.now, &o.sample} {
+		for i := range w.gas {
+			w.gas[i] = s.atmosphere
+		}
+	}
 	if err := o.addTrackers(); err != nil {
 		return nil, err
 	}
-	for _, m := range o.trackers {
-		if i := m.level(); i >= 0 && m.window != nil {
-			o.watched[i] = true
-		}
-	}
+	o.sortTrackers()
 	return o, nil
 }
 
@@ -86,9 +96,11 @@ func (o *observer) begin(series bool) {
 	clear(o.now.q)
 	clear(o.now.dv)
 	clear(o.regimes)
+	clear(o.noted)
 	for _, m := range o.trackers {
 		m.begin()
 	}
+	o.beginMarks()
 	for _, h := range o.histories {
 		h.begin()
 	}
@@ -120,9 +132,10 @@ func (o *observer) start() {
 	copy(sim.y, sim.solver.Y())
 	o.note(&o.now)
 	o.look(&o.now, 2)
-	for _, m := range o.trackers {
+	for _, m := range o.followed {
 		m.resume(o)
 	}
+	o.startMarks()
 	if o.keep {
 		if sim.t >= o.next {
 			o.advance()
@@ -135,7 +148,7 @@ func (o *observer) start() {
 func (o *observer) step(out *integrate.Outcome) {
 	sim := o.sim
 	o.prev, o.now = o.now, o.prev
-	for _, m := range o.trackers {
+	for _, m := range o.followed {
 		m.v[0] = m.v[2]
 	}
 	o.here(out.T)
@@ -144,15 +157,17 @@ func (o *observer) step(out *integrate.Outcome) {
 	o.regime() // while the system stands at the end of the step: what follows looks about within it
 	o.middle(out.T0 + (out.T-out.T0)/2)
 	o.samples(out)
-	for i := range o.turned {
+	for _, i := range o.turnedNow {
 		o.turned[i].at = math.NaN()
 	}
+	o.turnedNow = o.turnedNow[:0]
 	o.turns(&o.prev, &o.mid)
 	o.turns(&o.mid, &o.now)
 	o.peaks()
-	for _, m := range o.trackers {
+	for _, m := range o.followed {
 		m.step(o)
 	}
+	o.passMarks()
 	o.knots(&o.prev)
 	sim.led.book(sim, &o.prev, &o.mid)
 	o.knots(&o.mid)
@@ -192,15 +207,18 @@ func (o *observer) at(w *snapshot, t float64) {
 // here fills o.now with the end of the step. The solver's own rates there serve: its next step begins with them.
 func (o *observer) here(t float64) {
 	sim, s := o.sim, o.sim.sys
-	w := &o.now
+	w, y := &o.now, sim.y
 	f, g := sim.solver.Rates()
 	w.t = t
 	copy(w.q, g[:len(s.lines)])
 	copy(w.dv, f)
 	copy(w.z, sim.solver.Z())
-	for i := range s.stations {
-		st := &s.stations[i]
-		w.level[i], w.gas[i], w.spill[i] = st.level, st.gas, st.spill
+	copy(w.spill, g[len(s.lines):])
+	for i := range w.level {
+		w.level[i] = s.levelOf(i, y[i])
+	}
+	for _, i := range s.closed {
+		w.gas[i] = s.stations[i].gas
 	}
 }
 
@@ -209,13 +227,15 @@ func (o *observer) middle(t float64) {
 	sim, s, d, w := o.sim, o.sim.sys, o.sim.solver.Dense(), &o.mid
 	w.t = t
 	sim.solver.Eval(t, o.y)
-	sim.solver.EvalZ(t, w.z)
+	if o.summed {
+		sim.solver.EvalZ(t, w.z)
+	}
 	d.Rates(t, w.dv)
 	d.RatesZ(t, o.rz)
 	copy(w.q, o.rz)
-	for i := range w.q {
+	for i, q := range w.q {
 		a, b := o.prev.q[i], o.now.q[i]
-		if w.q[i] < 0 && a >= 0 && b >= 0 || w.q[i] > 0 && a <= 0 && b <= 0 {
+		if q < 0 && a >= 0 && b >= 0 || q > 0 && a <= 0 && b <= 0 {
 			w.q[i] = sim.flowAt(i, t) // a turn and back within the step, if it is no rounding of the polynomial
 		}
 	}
@@ -223,13 +243,13 @@ func (o *observer) middle(t float64) {
 		w.q[i] = sim.flowAt(int(i), t)
 		o.crest[i].see(s.crestHead(int(i)), t)
 	}
-	for i := range s.stations {
-		st := &s.stations[i]
-		m := st.mass
-		if st.massRow >= 0 {
-			m = o.y[st.massRow]
+	clear(w.spill)
+	for i, v := range o.y[:len(w.level)] {
+		if b := &s.basins[i]; b.holds(v) {
+			w.level[i] = b.at(v)
+			continue
 		}
-		st.look(o.y[i], m)
+		st := s.lookInto(i, o.y)
 		w.level[i], w.gas[i], w.spill[i] = st.level, st.gas, st.spill
 	}
 	o.look(w, 1)
@@ -238,24 +258,28 @@ func (o *observer) middle(t float64) {
 // note takes the values at a snapshot that belongs to the present state of the system.
 func (o *observer) note(w *snapshot) {
 	s := o.sim.sys
-	for i := range o.level {
-		o.level[i].see(w.level[i], w.t)
-		o.spill[i].see(w.spill[i], w.t)
-		if s.stations[i].closed {
-			o.gas[i].see(w.gas[i], w.t)
+	for i, h := range w.level {
+		o.level[i].see(h, w.t)
+	}
+	for i, q := range w.q {
+		o.flow[i].see(q, w.t)
+	}
+	for i, q := range w.spill {
+		if q > 0 {
+			o.spill[i].see(q, w.t)
 		}
 	}
-	for i := range o.flow {
-		o.flow[i].see(w.q[i], w.t)
-		if len(s.lines[i].crowns) > 0 {
-			o.crest[i].see(s.crestHead(i), w.t)
-		}
+	for _, i := range s.closed {
+		o.gas[i].see(w.gas[i], w.t)
+	}
+	for _, i := range s.crowned {
+		o.crest[i].see(s.crestHead(int(i)), w.t)
 	}
 }
 
 // look evaluates what is followed; k is 1 in the middle and 2 at the end of a step.
 func (o *observer) look(w *snapshot, k int) {
-	for _, m := range o.trackers {
+	for _, m := range o.followed {
 		m.v[k] = m.probe.value(o.sim, w)
 	}
 }
@@ -267,11 +291,12 @@ type turn struct{ at, level float64 }
 func (o *observer) turns(a, b *snapshot) {
 	s, d := o.sim.sys, o.sim.solver.Dense()
 	for i := range o.level {
-		if a.dv[i]*b.dv[i] >= 0 {
+		if !(a.dv[i]*b.dv[i] < 0) {
 			continue
 		}
 		if e := &o.level[i]; !o.watched[i] {
-			top := hermiteTurn(a.level[i], b.level[i], a.dv[i]*s.stations[i].slope, b.dv[i]*s.stations[i].slope, b.t-a.t)
+			slope := s.slopeOf(i)
+			top := hermiteTurn(a.level[i], b.level[i], a.dv[i]*slope, b.dv[i]*slope, b.t-a.t)
 			slack := turnSlack * math.Abs(top-a.level[i])
 			if a.dv[i] > 0 && top+slack <= e.high || a.dv[i] < 0 && top-slack >= e.low {
 				continue
@@ -281,6 +306,7 @@ func (o *observer) turns(a, b *snapshot) {
 		h, _ := s.stations[i].shape.Level(d.One(i, t))
 		o.level[i].see(h, t)
 		o.turned[i] = turn{t, h}
+		o.turnedNow = append(o.turnedNow, int32(i))
 	}
 }
 
@@ -311,11 +337,11 @@ func (o *observer) peaks() {
 	for i := range o.flow {
 		o.flow[i].refine(a.t, b.t, a.q[i], m.q[i], b.q[i], func(t float64) float64 { return sim.flowAt(i, t) })
 	}
-	for i := range o.gas {
-		if sim.sys.stations[i].closed {
-			o.gas[i].refine(a.t, b.t, a.gas[i], m.gas[i], b.gas[i], func(t float64) float64 { return sim.gasAt(i, t) })
-		}
-		if m.spill[i] > 0 {
+	for _, i := range sim.sys.closed {
+		o.gas[i].refine(a.t, b.t, a.gas[i], m.gas[i], b.gas[i], func(t float64) float64 { return sim.gasAt(int(i), t) })
+	}
+	for i, q := range m.spill {
+		if q > 0 {
 			o.spill[i].refine(a.t, b.t, a.spill[i], m.spill[i], b.spill[i], func(t float64) float64 { return sim.spillAt(i, t) })
 		}
 	}

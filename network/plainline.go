@@ -14,7 +14,6 @@ type plainLine struct {
 	table    *flowTable
 	in, out  gate
 	bySlot   plainSlots
-	calm     bool // no part's range matters
 }
 
 // plainSlots are the slots of a plain line: in the rows of the vessels it leaves and enters and in its integral, each by the volumes of both.
@@ -25,16 +24,20 @@ type gate struct {
 	zero  float64 // Pa, total pressure at the invert
 	least float64 // m, depth
 	lip   float64 // m⁵/s² over m³: of the weir over the lip, squared, with a margin
+	bore  float64 // Pa, of liquid as deep as the mouth is wide; less than any depth for one that draws no air
+	swirl float64 // Pa·s/m³: how much deeper the mouth must lie for a flow not to make vortices. See system.shallow
 }
 
 func (s *system) gateOf(m *mouth) gate {
 	g := gate{zero: s.atmosphere + s.gamma*m.invert}
 	if m.inlet.form == fadeInlet {
-		g.least, g.lip = 0.05*m.inlet.bore, math.Inf(1)
+		g.least, g.lip, g.bore = 0.05*m.inlet.bore, math.Inf(1), math.Inf(-1)
 		return g
 	}
-	w := 1.7 * math.Pi * m.inlet.bore
+	d := m.inlet.bore
+	w := 1.7 * math.Pi * d
 	g.lip = w * w / 1.3
+	g.bore, g.swirl = s.gamma*d, s.gamma*2.3/(math.Pi/4*d*math.Sqrt(s.plan.Gravity*d))
 	return g
 }
 

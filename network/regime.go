@@ -41,49 +41,70 @@ const mostFlags = 6
 
 // regime looks at every line in the present state.
 func (o *observer) regime() {
-	s, t := o.sim.sys, o.now.t
-	for i := range s.lines {
-		l := &s.lines[i]
-		if l.table != nil && o.now.q[i] == o.prev.q[i] {
+	s := o.sim.sys
+	for k := range s.plain {
+		p := &s.plain[k]
+		if q := o.now.q[p.line]; q == o.prev.q[p.line] || o.noted[p.line] == 0 && s.calm(p, q) {
 			continue
 		}
-		a, b := s.see(&l.from), s.see(&l.to)
-		moving := math.Abs(l.q) > flowing
-		in, depth := &l.from.inlet, a.depth
-		if l.q < 0 {
-			in, depth = &l.to.inlet, b.depth
+		s.evaluate(int(p.line))
+		o.regimeOf(int(p.line))
+	}
+	for _, i := range s.rest {
+		o.regimeOf(int(i))
+	}
+}
+
+// calm tells that a plain line is in no state worth a flag: it stands, or the mouth that it draws from lies deeper than where vortices may begin, which is
+// deeper than where air is drawn, and its flow is within the ranges of its parts.
+func (s *system) calm(p *plainLine, q float64) bool {
+	in, phi, a := &p.in, s.floor[p.from], q
+	if q < 0 {
+		in, phi, a = &p.out, s.floor[p.to], -q
+	}
+	return a <= flowing || a <= p.table.within && phi-in.zero > in.bore+in.swirl*a
+}
+
+// regimeOf looks at line i.
+func (o *observer) regimeOf(i int) {
+	s, t := o.sim.sys, o.now.t
+	l := &s.lines[i]
+	a, b := s.see(&l.from), s.see(&l.to)
+	moving := math.Abs(l.q) > flowing
+	in, depth := &l.from.inlet, a.depth
+	if l.q < 0 {
+		in, depth = &l.to.inlet, b.depth
+	}
+	o.mark(i, airDrawn, t, moving && drawsAir(in, depth, math.Abs(l.q), s.plan.Gravity), depth)
+	o.mark(i, shallow, t, moving && s.shallow(in, depth, math.Abs(l.q)), depth)
+	enters := l.to.kind == toAir && !l.shut && !l.oneWay && a.phi+s.gamma*1e-3 < b.phi && s.reachesLiquid(&l.from)
+	o.mark(i, airEnters, t, enters, (b.phi-a.phi)/s.gamma)
+	froude := 0.0
+	if l.bore > 0 {
+		froude = math.Abs(l.q) / l.area / math.Sqrt(s.plan.Gravity*l.bore)
+	}
+	part := moving && froude < 1 && l.to.kind == toAir && l.long && s.falls(l)
+	o.mark(i, surging, t, part && froude >= ventsItself, froude)
+	o.mark(i, selfVent, t, part && froude < ventsItself, froude)
+	var c, h bool
+	for k := range l.floors {
+		f := &l.floors[k]
+		c = c || f.active && f.throat != nil
+		h = h || f.active && f.throat == nil && f.vapour
+	}
+	o.mark(i, choked, t, c && moving, 0)
+	o.mark(i, held, t, h && moving, 0)
+	if len(l.ranged) > 0 {
+		why := ""
+		if moving {
+			why = l.outsideRange(a.depth)
 		}
-		o.mark(i, airDrawn, t, moving && drawsAir(in, depth, math.Abs(l.q), s.plan.Gravity), depth)
-		o.mark(i, shallow, t, moving && s.shallow(in, depth, math.Abs(l.q)), depth)
-		enters := l.to.kind == toAir && !l.shut && !l.oneWay && a.phi+s.gamma*1e-3 < b.phi && s.reachesLiquid(&l.from)
-		o.mark(i, airEnters, t, enters, (b.phi-a.phi)/s.gamma)
-		froude := 0.0
-		if l.bore > 0 {
-			froude = math.Abs(l.q) / l.area / math.Sqrt(s.plan.Gravity*l.bore)
+		if o.mark(i, outside, t, why != "", math.Abs(l.q)); why != "" {
+			o.regimes[i][outside].why = why
 		}
-		part := moving && froude < 1 && l.to.kind == toAir && l.long && s.falls(l)
-		o.mark(i, surging, t, part && froude >= ventsItself, froude)
-		o.mark(i, selfVent, t, part && froude < ventsItself, froude)
-		var c, h bool
-		for k := range l.floors {
-			f := &l.floors[k]
-			c = c || f.active && f.throat != nil
-			h = h || f.active && f.throat == nil && f.vapour
-		}
-		o.mark(i, choked, t, c && moving, 0)
-		o.mark(i, held, t, h && moving, 0)
-		if len(l.ranged) > 0 {
-			why := ""
-			if moving {
-				why = l.outsideRange(a.depth)
-			}
-			if o.mark(i, outside, t, why != "", math.Abs(l.q)); why != "" {
-				o.regimes[i][outside].why = why
-			}
-		}
-		if l.sources {
-			o.mark(i, offCurve, t, l.beyondCurve(), l.q)
-		}
+	}
+	if l.sources {
+		o.mark(i, offCurve, t, l.beyondCurve(), l.q)
 	}
 }
 
@@ -96,7 +117,7 @@ const ventsItself = 0.3
 func drawsAir(in *inletLaw, depth, q, g float64) bool {
 	switch in.form {
 	case floorInlet:
-		return depth < math.Pow(q/(2.53*math.Sqrt(g)), 0.4)
+		return depth <= 0 || 2.53*math.Sqrt(g*depth)*depth*depth < q
 	case sideInlet:
 		return depth < in.bore
 	}
@@ -134,6 +155,20 @@ func (l *line) outsideRange(depth float64) string {
 	return ""
 }
 
+// withinRange returns the greatest flow of a table, either way, if that and the least that counts are within the ranges of the line's parts; else 0.
+func (l *line) withinRange(t *flowTable) float64 {
+	last := math.Nextafter(t.high, 0)
+	forward, _ := t.flow(last)
+	back, _ := t.flow(-last)
+	for _, q := range [4]float64{flowing, -flowing, forward, back} {
+		l.q = q
+		if l.outsideRange(math.Inf(1)) != "" {
+			return 0
+		}
+	}
+	return math.Min(forward, -back)
+}
+
 // reachesLiquid tells that there is something beyond a mouth that the line could empty.
 func (s *system) reachesLiquid(m *mouth) bool { return m.kind == toTee }
 
@@ -155,11 +190,13 @@ func (o *observer) mark(i, kind int, t float64, on bool, size float64) {
 	r := &o.regimes[i][kind]
 	switch {
 	case on && !r.open:
+		o.noted[i]++
 		r.open, r.seen, r.from, r.to, r.size = true, true, math.Min(o.prev.t, t), t, size
 	case on:
 		r.to = t
 		r.size = math.Max(r.size, size)
 	case r.open:
+		o.noted[i]--
 		r.open, r.to = false, t
 		o.raise(i, kind)
 	}

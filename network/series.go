@@ -118,6 +118,8 @@ func (o *observer) smooth(w *snapshot) {
 
 // finish closes the series: after an end at rest the last values repeat up to run_for.
 func (o *observer) finish() {
+	o.finishMarks()
+	o.sim.led.finish(o.sim.solver.Z())
 	if !o.keep {
 		return
 	}

@@ -31,6 +31,7 @@ type system struct {
 	narrow    []int32   // the others
 	odd       []int32   // of these, what stood outside its basin's span when looked at last
 	isWide    []bool
+	closed    []int32 // vessels with covers
 	outside   []beyond
 	lines     []line
 	actuators []actuator

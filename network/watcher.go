@@ -14,6 +14,7 @@ type watcher struct {
 	begun    []func() // what forgets the last run
 	fixed    int      // triggers of the plan; those of one run come after
 	deep     bool     // some active trigger needs more than levels
+	any      bool     // some trigger is active
 	look     snapshot
 	f        []float64
 }
@@ -113,10 +114,11 @@ func (w *watcher) addCorners() {
 
 // arm chooses what is watched in the coming segment.
 func (w *watcher) arm() {
-	w.deep = false
+	w.deep, w.any = false, false
 	for i := range w.triggers {
 		t := &w.triggers[i]
 		t.on = t.active()
+		w.any = w.any || t.on
 		w.deep = w.deep || t.on && t.deep
 	}
 }
@@ -129,7 +131,9 @@ func (w *watcher) Direction(i int) int { return w.triggers[i].dir }
 
 // Values evaluates the functions.
 func (w *watcher) Values(t float64, y, v []float64) {
-	w.see(t, y)
+	if w.any {
+		w.see(t, y)
+	}
 	for i := range w.triggers {
 		if tr := &w.triggers[i]; tr.on {
 			v[i] = tr.value(&w.look)
@@ -145,7 +149,11 @@ func (w *watcher) see(t float64, y []float64) {
 	w.look.t = t
 	if !w.deep {
 		for i := range s.stations {
-			w.look.level[i], _ = s.stations[i].shape.Level(y[i])
+			if b := &s.basins[i]; b.holds(y[i]) {
+				w.look.level[i] = b.at(y[i])
+			} else {
+				w.look.level[i], _ = s.stations[i].shape.Level(y[i])
+			}
 		}
 		return
 	}
