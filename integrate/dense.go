@@ -1,5 +1,7 @@
 package integrate
 
+import "math"
+
 // Dense is the dense output of one step, a polynomial for each unknown and integral:
 //
 //	y(T0+θH) = (1−θ) Y0 + θ (Y1 + (1−θ) (K[0] + θ (K[1] + θ (K[2] + …)))),   0 ≤ θ ≤ 1
@@ -114,6 +116,51 @@ func (d *Dense) RateZ(i int, t float64) float64 {
 		inner = inner*x + d.KZ[k][i]
 	}
 	return (d.Z1[i] - d.Z0[i] + (1-2*x)*inner + x*(1-x)*slope) / d.H
+}
+
+// Turn returns the time between t0 and t1 at which the rate of unknown i, of opposite signs there, is zero.
+func (d *Dense) Turn(i int, t0, t1 float64) float64 { return d.turn(i, t0, t1, d.Y0, d.Y1, d.K) }
+
+// TurnZ is Turn for integral i.
+func (d *Dense) TurnZ(i int, t0, t1 float64) float64 { return d.turn(i, t0, t1, d.Z0, d.Z1, d.KZ) }
+
+func (d *Dense) turn(i int, t0, t1 float64, v0, v1 []float64, k [][]float64) float64 {
+	if d.H == 0 {
+		return t0
+	}
+	var c [6]float64 // of the rate as a polynomial in θ: that of θ(1−θ)θʲ is (j+1)θʲ − (j+2)θʲ⁺¹
+	c[0] = v1[i] - v0[i]
+	for j, kj := range k {
+		c[j] += float64(j+1) * kj[i]
+		c[j+1] -= float64(j+2) * kj[i]
+	}
+	rate := func(x float64) (r, slope float64) {
+		for j := len(k); j >= 0; j-- {
+			slope = slope*x + r
+			r = r*x + c[j]
+		}
+		return r, slope
+	}
+	lo, hi := d.place(t0), d.place(t1)
+	rising, _ := rate(hi)
+	x := lo + (hi-lo)/2
+	for range 60 { // Newton's method, halving where it would leave the bracket
+		r, slope := rate(x)
+		if (r > 0) == (rising > 0) {
+			hi = x
+		} else {
+			lo = x
+		}
+		next := x - r/slope
+		if !(next > lo && next < hi) {
+			next = lo + (hi-lo)/2
+		}
+		if math.Abs(next-x) <= 1e-12 {
+			break
+		}
+		x = next
+	}
+	return d.T0 + x*d.H
 }
 
 // Rates sets r to the time derivatives of all unknowns at time t.

@@ -8,14 +8,18 @@ type rosenbrock struct {
 	tab *Tableau
 	control
 	u       [][]float64 // Uᵢ
-	uz      [][]float64 // of the integrals
+	g       [][]float64 // rates of the integrals
 	point   []float64   // where the stage's rates are taken
 	sum     []float64   // Σ Cᵢⱼ/h Uⱼ
 	rate    []float64
-	zrate   []float64
-	c       []float64 // a row of C divided by h
-	extends []bool    // by stage
+	mean    []float64   // Σ of stages by which the integrals move with the unknowns
+	byStage []float64   // weights of the integrals' rates; see weights
+	along   [][]float64 // the same for their polynomial
+	c       []float64   // a row of C divided by h
+	extends []bool      // by stage
 	stiffly bool
+	busy    int // integrals that moved in the last attempt
+	used    int // those that have a polynomial
 }
 
 func (m *Tableau) stepper(s *Solver) stepper {
@@ -23,11 +27,15 @@ func (m *Tableau) stepper(s *Solver) stepper {
 	r := &rosenbrock{s: s, tab: m, control: control{q: float64(m.Embedded + 1)}, stiffly: m.stiffly()}
 	for i := range k {
 		r.u = append(r.u, make([]float64, s.n))
-		r.uz = append(r.uz, make([]float64, s.m))
+		r.g = append(r.g, make([]float64, s.m))
 		r.extends = append(r.extends, m.extends(i))
 	}
 	r.point, r.sum, r.rate = make([]float64, s.n), make([]float64, s.n), make([]float64, s.n)
-	r.zrate, r.c = make([]float64, s.m), make([]float64, k)
+	r.mean, r.c = make([]float64, s.n), make([]float64, k)
+	r.byStage = m.weights(m.M)
+	for _, h := range m.H {
+		r.along = append(r.along, m.weights(h))
+	}
 	return r
 }
 
@@ -41,11 +49,13 @@ func (r *rosenbrock) attempt(h float64) (float64, error) {
 	}
 	for i := range m.M {
 		u := r.u[i]
-		f, g := s.f, s.g
-		if i > 0 {
+		f := s.f
+		if i == 0 {
+			copy(r.g[0], s.g)
+		} else {
 			r.sums(i, h)
-			f, g = r.rate, r.zrate
-			s.rates(s.t+m.Node[i]*h, r.point, f, g)
+			f = r.rate
+			s.rates(s.t+m.Node[i]*h, r.point, f, r.g[i])
 		}
 		r.assemble(i, h, f, u)
 		if i == 0 {
@@ -55,9 +65,12 @@ func (r *rosenbrock) attempt(h float64) (float64, error) {
 		} else {
 			s.factor.Solve(u)
 		}
-		r.integrals(i, h, g)
 	}
-	return r.finish(), nil
+	r.busy = s.m
+	if s.idler != nil {
+		r.busy = s.idler.Busy()
+	}
+	return r.finish(h), nil
 }
 
 // sums forms the stage's point and Σ Cᵢⱼ/h Uⱼ in one pass.
@@ -103,27 +116,10 @@ func (r *rosenbrock) assemble(i int, h float64, f, b []float64) {
 	}
 }
 
-// integrals does stage i of the rows that nothing depends on: Uzᵢ = hγ (g + ∂g/∂y Uᵢ + Σ Cᵢⱼ/h Uzⱼ + dᵢ h ∂g/∂t). These are the same operations as
-// for the unknowns, so what is invariant between the two stays so to rounding.
-func (r *rosenbrock) integrals(i int, h float64, g []float64) {
-	s := r.s
-	hg, d := h*r.tab.Gamma, h*r.tab.D[i]
-	u, uz := r.u[i], r.uz[i][:len(g)]
-	combine(uz, r.c[:i], r.uz)
-	byT, ptr := s.lin.DgDt[:len(g)], s.iptr[:len(g)+1]
-	for k := range g {
-		sum := g[k] + d*byT[k]
-		for l := ptr[k]; l < ptr[k+1]; l++ {
-			sum += s.lin.DgDy[l] * u[s.icol[l]]
-		}
-		uz[k] = hg * (sum + uz[k])
-	}
-}
-
 func (r *rosenbrock) implicit() bool { return false }
 
 // finish forms the result and the error estimate.
-func (r *rosenbrock) finish() float64 {
+func (r *rosenbrock) finish(h float64) float64 {
 	s, m := r.s, r.tab
 	last := len(m.M) - 1
 	if r.stiffly {
@@ -139,28 +135,82 @@ func (r *rosenbrock) finish() float64 {
 			}
 		}
 	}
-	combine(s.z1, m.M, r.uz)
+	z1 := s.z1[:r.busy]
+	r.integrals(z1, h, r.byStage)
 	bad := 0.0
-	for k, sum := range s.z1 {
-		s.z1[k] = s.z0[k] + sum
+	for k, sum := range z1 {
+		z1[k] = s.z0[k] + sum
 		bad += sum - sum
 	}
+	copy(s.z1[r.busy:], s.z0[r.busy:])
 	if bad != 0 {
 		return math.NaN()
 	}
 	return norm(s.err, s.scale)
 }
 
+// weights returns ω with Σ mᵢUzᵢ = h Σ ωᵢ(gᵢ + ∂g/∂y Uᵢ + dᵢ h ∂g/∂t) for the stages of a row that nothing depends on,
+// Uzᵢ = hγ (gᵢ + ∂g/∂y Uᵢ + dᵢ h ∂g/∂t + Σ Cᵢⱼ/h Uzⱼ): these are linear in what stands in brackets, with constants of the method.
+func (m *Tableau) weights(of []float64) []float64 {
+	k := m.stages()
+	w := make([]float64, k)
+	x := make([]float64, k)
+	for j := range k {
+		clear(x)
+		for i := j; i < k; i++ {
+			if i == j {
+				x[i] = 1
+			}
+			for l := j; l < i; l++ {
+				x[i] += m.C[i][l] * x[l]
+			}
+			x[i] *= m.Gamma
+			w[j] += of[i] * x[i]
+		}
+	}
+	return w
+}
+
+// integrals sets z to h Σ ωᵢ(gᵢ + ∂g/∂y Uᵢ + dᵢ h ∂g/∂t), the change of the first integrals.
+func (r *rosenbrock) integrals(z []float64, h float64, weight []float64) {
+	s := r.s
+	combine(z, weight, r.g)
+	combine(r.mean, weight, r.u)
+	d := 0.0
+	for i, w := range weight {
+		d += w * h * r.tab.D[i]
+	}
+	ptr, u := s.iptr[:len(z)+1], r.mean
+	byT, by, col := s.lin.DgDt[:len(z)], s.lin.DgDy, s.icol
+	l := ptr[0]
+	for k := range z {
+		sum, end := z[k]+d*byT[k], ptr[k+1]
+		for ; l+1 < end; l += 2 {
+			sum += by[l]*u[col[l]] + by[l+1]*u[col[l+1]]
+		}
+		if l < end {
+			sum += by[l] * u[col[l]]
+			l++
+		}
+		z[k] = h * sum
+	}
+}
+
 func (r *rosenbrock) polynomial(k, kz [][]float64) {
 	h := r.tab.H
+	for i := range kz {
+		if r.busy < r.used {
+			clear(kz[i][r.busy:r.used])
+		}
+		r.integrals(kz[i][:r.busy], r.s.poly.H, r.along[i])
+	}
+	r.used = r.busy
 	if len(r.u) == 8 && len(h) == 3 {
 		combine3(k[0], k[1], k[2], h[0], h[1], h[2], r.u)
-		combine3(kz[0], kz[1], kz[2], h[0], h[1], h[2], r.uz)
 		return
 	}
 	for i := range k {
 		combine(k[i], h[i], r.u)
-		combine(kz[i], h[i], r.uz)
 	}
 }
 

@@ -19,6 +19,7 @@ type Solver struct {
 	sys     System
 	guard   Guard // nil if the System is none
 	settler Settler
+	idler   Idler
 	opt     Options
 	n, m    int
 	mass    []bool
@@ -63,6 +64,7 @@ func NewSolver(sys System, opt Options) *Solver {
 	s := &Solver{sys: sys, opt: opt, n: n, m: m, mass: sys.Mass(), pat: sys.Pattern()}
 	s.guard, _ = sys.(Guard)
 	s.settler, _ = sys.(Settler)
+	s.idler, _ = sys.(Idler)
 	if opt.Method == nil {
 		s.opt.Method = Rodas5P
 	}

@@ -51,6 +51,12 @@ type Settler interface {
 	Settled(f []float64, implicit bool) bool
 }
 
+// Idler is a System whose last integrals stand still for long: Busy returns how many of the first ones may have moved, by their rates and by the partials
+// of these, at any point since the last Linearise, that included.
+type Idler interface {
+	Busy() int
+}
+
 // Events is a set of functions of time and state whose sign changes matter. The solver asks for all of them at once.
 type Events interface {
 	// Len returns the number of functions.

@@ -115,7 +115,10 @@ func (t *flowTable) at(dp float64) (q, slope float64, ok bool) {
 	c := &t.cells[i]
 	q = c[0] + u*(c[1]+u*(c[2]+u*c[3]))
 	slope = (c[1] + u*(2*c[2]+3*u*c[3])) * o.scale * 0.5 / x
-	return math.Copysign(q, dp), slope, true
+	if dp < 0 {
+		q = -q
+	}
+	return q, slope, true
 }
 
 // flow is at without the slope.
@@ -129,7 +132,10 @@ func (t *flowTable) flow(dp float64) (q float64, ok bool) {
 	}
 	_, u, i := findCell(side, math.Sqrt(a))
 	c := &t.cells[i]
-	return math.Copysign(c[0]+u*(c[1]+u*(c[2]+u*c[3])), dp), true
+	if q = c[0] + u*(c[1]+u*(c[2]+u*c[3])); dp < 0 {
+		q = -q
+	}
+	return q, true
 }
 
 // findCell returns the octave of x, its cell and the place in it, 0 ≤ u < 1, from the bits of x.

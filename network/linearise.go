@@ -20,6 +20,7 @@ func (s *system) Linearise(t float64, y, f, g []float64, lin *integrate.Linear) 
 	s.look(t, y)
 	clear(f)
 	clear(g[len(s.lines):])
+	s.busy = len(s.lines)
 	for i := range s.tees {
 		s.tees[i].ease, s.tees[i].direct, s.tees[i].through = 0, 0, 0
 	}

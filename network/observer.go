@@ -302,7 +302,7 @@ func (o *observer) turns(a, b *snapshot) {
 				continue
 			}
 		}
-		t := turning(a.t, b.t, a.dv[i], b.dv[i], 1e-6, func(t float64) float64 { return d.Rate(i, t) })
+		t := d.Turn(i, a.t, b.t)
 		h, _ := s.stations[i].shape.Level(d.One(i, t))
 		o.level[i].see(h, t)
 		o.turned[i] = turn{t, h}
@@ -349,8 +349,8 @@ func (o *observer) peaks() {
 
 // refine looks for an extreme between a, the middle and b where the middle is beyond both ends.
 func (e *extreme) refine(a, b, va, vm, vb float64, f func(float64) float64) {
-	up := vm > va && vm > vb && vm-math.Max(va, vb) > 1e-9*math.Abs(vm)
-	down := vm < va && vm < vb && math.Min(va, vb)-vm > 1e-9*math.Abs(vm)
+	up := vm > va && vm > vb && vm-max(va, vb) > 1e-9*math.Abs(vm)
+	down := vm < va && vm < vb && min(va, vb)-vm > 1e-9*math.Abs(vm)
 	if !up && !down || up && vm+(vm-math.Min(va, vb))/4 <= e.high || down && vm-(math.Max(va, vb)-vm)/4 >= e.low {
 		return
 	}

@@ -22,6 +22,7 @@ type system struct {
 	rtol       float64
 
 	n, m      int
+	busy      int // integrals that moved since the last Linearise
 	teeRow    int // first unknown of the tees
 	flowRow   int // first unknown of the inertial lines
 	stations  []station
@@ -60,6 +61,7 @@ type system struct {
 var (
 	_ integrate.System  = (*system)(nil)
 	_ integrate.Settler = (*system)(nil)
+	_ integrate.Idler   = (*system)(nil)
 )
 
 // Dim returns the numbers of unknowns and of integrals.
@@ -123,9 +125,15 @@ func (s *system) Rates(t float64, y, f, g []float64) {
 	s.balanceTees(f)
 }
 
+// Busy tells how many integrals move: while nothing spills and nothing comes in from outside, those of the lines.
+func (s *system) Busy() int { return s.busy }
+
 // addVessel adds inflow, rim spill, vents and air paths of vessel i; the partials of the latter go into lin where it is given.
 func (s *system) addVessel(i int, t float64, f, g []float64, lin *integrate.Linear) {
 	st := &s.stations[i]
+	if st.spill > 0 || st.inflowZ >= 0 {
+		s.busy = s.m
+	}
 	f[i] += st.inflow + st.inflowRate*(t-s.t0) - st.spill
 	if st.spillTo >= 0 {
 		f[st.spillTo] += st.spill
@@ -164,11 +172,11 @@ func (s *system) balanceTees(f []float64) {
 
 // Scale fills the error allowed in each unknown: of a level l, rtol·(0.1 m + |l|) up to 2·10⁻⁵ m, as a volume over the present surface.
 func (s *system) Scale(y []float64, rtol float64, scale []float64) {
-	tol := func(l float64) float64 { return math.Min(rtol*(leastLevel+l), levelCap) }
+	tol := func(l float64) float64 { return min(rtol*(leastLevel+l), levelCap) }
 	least := 1e-9 * math.Min(1, rtol*1e6)
 	for i := range s.stations {
 		if b := &s.basins[i]; b.holds(y[i]) {
-			scale[i] = math.Max(tol(math.Abs(b.at(y[i])))/b.slope, least*b.full)
+			scale[i] = max(tol(math.Abs(b.at(y[i])))/b.slope, least*b.full)
 			continue
 		}
 		st := &s.stations[i]
