@@ -53,7 +53,7 @@ func (c *chain) drop(q float64) (dp, slope float64) {
 }
 
 const (
-	nearEnough = 1e-8 // share of the flow: Newton's next step would be of the order of its square, that is of rounding
+	nearEnough = 1e-7 // share of the flow: Newton's next step would be of the order of its square
 	maxSolves  = 200
 )
 

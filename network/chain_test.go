@@ -32,7 +32,7 @@ func TestChainSolves(t *testing.T) {
 			if off := math.Abs(d-dp) / byQ; !(off <= 1e-14*math.Abs(q)+8*noise+1e-20) {
 				t.Fatalf("%s at %.17g Pa from %.17g: flow %.17g is off by %.2g", sim.sys.lines[i].plan.Tag, dp, guess, q, off)
 			}
-			if math.Abs(slope*byQ-1) > 1e-6 {
+			if math.Abs(slope*byQ-1) > 1e-5 { // it is that at a flow up to nearEnough aside, which shows where a check valve takes up flow
 				t.Fatalf("%s at %.17g Pa: slope %g, %g", sim.sys.lines[i].plan.Tag, dp, slope, 1/byQ)
 			}
 		}

@@ -244,44 +244,6 @@ func (s *system) addActuators(c *line, f *Fitted, i, k int) {
 	}
 }
 
-// shareTables gives lines that are alike and stand still one flow table, where there are enough of them to pay for it.
-func (s *system) shareTables() {
-	const enough = 8
-	alike := map[string][]int{}
-	for i := range s.lines {
-		l := &s.lines[i]
-		if len(l.acts) > 0 || l.weir != nil || l.inertia > 0 || l.checks || len(l.chain.parts) == 0 {
-			continue
-		}
-		key := fmt.Sprint(l.chain.fwd, l.chain.rev)
-		for _, p := range l.chain.parts {
-			key += fmt.Sprintf("|%T%+v", p, p)
-		}
-		alike[key] = append(alike[key], i)
-	}
-	tol, most := math.Max(1e-10, math.Min(1e-7, s.rtol/10)), s.headOver()*s.gamma
-	for _, group := range alike {
-		if len(group) < enough {
-			continue
-		}
-		t := newFlowTable(&s.lines[group[0]].chain, most, tol)
-		t.within = s.lines[group[0]].withinRange(t)
-		for _, i := range group {
-			s.lines[i].table = t
-		}
-	}
-}
-
-// headOver returns the difference of level, m, that the open vessels of the plant span, and a half more.
-func (s *system) headOver() float64 {
-	low, high := math.Inf(1), math.Inf(-1)
-	for i := range s.stations {
-		st := &s.stations[i]
-		low, high = math.Min(low, st.base), math.Max(high, st.base+st.rim)
-	}
-	return 1.5 * (high - low)
-}
-
 // meetOutside notes which lines meet each outside point, and which have high points.
 func (s *system) meetOutside() {
 	s.crowned = s.crowned[:0]

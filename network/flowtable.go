@@ -30,8 +30,9 @@ const (
 	exponentBias = 1023
 )
 
-// newFlowTable makes the table of a chain for pressures up to most, Pa.
-func newFlowTable(c *chain, most, tol float64) *flowTable {
+// newFlowTable makes the table of a chain for pressures up to most, Pa. The relative error is under tol, or under that over the head by which a
+// pressure could move levels, where that is less than easeBelow: gamma is ρg, Pa/m.
+func newFlowTable(c *chain, most, tol, gamma float64) *flowTable {
 	t := &flowTable{low: math.Ldexp(1, 2*tableBase)}
 	n := 1
 	for t.high = 4 * t.low; t.high < most; t.high *= 4 {
@@ -42,62 +43,77 @@ func newFlowTable(c *chain, most, tol float64) *flowTable {
 			t.octaves[1] = t.octaves[0]
 			break
 		}
-		b := tableBuilder{chain: c, sign: sign, tol: tol, bits: 2}
+		b := tableBuilder{chain: c, sign: sign}
 		for o := range n {
-			t.octaves[side] = append(t.octaves[side], b.octave(t, math.Ldexp(1, tableBase+o)))
+			x0 := math.Ldexp(1, tableBase+o)
+			t.octaves[side] = append(t.octaves[side], b.octave(t, x0, tol*math.Max(1, easeBelow*gamma/(4*x0*x0))))
 		}
 	}
 	return t
 }
 
+// easeBelow is the head, m, under which a flow may be off by more: a head moves levels by no more than itself.
+const easeBelow = 0.01
+
 // tableBuilder adds octaves from the lowest up.
 type tableBuilder struct {
-	chain *chain
-	sign  float64
-	tol   float64
-	bits  uint    // log₂ of the cells of the last octave
-	q, s  float64 // flow and slope found last
-	dp    float64
+	chain        *chain
+	sign         float64
+	v, m         []float64 // |Q| and its slope by x at the ends of the cells
+	finer, slope []float64 // the same for twice as many
 }
 
-// law returns |Q| and its slope by x.
-func (b *tableBuilder) law(x float64) (v, slope float64) {
-	dp := b.sign * x * x
-	q, s := b.chain.solve(dp, b.q+b.s*(dp-b.dp))
-	b.q, b.s, b.dp = q, s, dp
+// law returns |Q| and its slope by x, starting from a guess of |Q|.
+func (b *tableBuilder) law(x, guess float64) (v, slope float64) {
+	q, s := b.chain.solve(b.sign*x*x, b.sign*guess)
 	return b.sign * q, s * 2 * x
 }
 
-// octave adds the cells from x0 to 2·x0, in twos of what the last octave took until the middle of each is good to tol.
-func (b *tableBuilder) octave(t *flowTable, x0 float64) octave {
-	first := len(t.cells)
-	for k := max(2, b.bits-1); ; k++ {
-		t.cells = t.cells[:first]
-		if n := 1 << k; b.fill(t, x0, n) < b.tol || k == mostCellBits {
-			b.bits = k
-			return octave{first: first, bits: mantissaBits - k, unit: math.Ldexp(1, -int(mantissaBits-k)), scale: float64(n) / x0}
-		}
+// octave adds the cells from x0 to 2·x0: from four on, twice as many until the middle of each is good to tol. The middles are then the new ends.
+func (b *tableBuilder) octave(t *flowTable, x0, tol float64) octave {
+	k := 2
+	n, w := 1<<k, x0/float64(int(1)<<k)
+	b.v, b.m = b.v[:0], b.m[:0]
+	guess := 0.0
+	for i := range n + 1 {
+		v, m := b.law(x0+float64(i)*w, guess)
+		b.v, b.m = append(b.v, v), append(b.m, m)
+		guess = v + m*w
 	}
+	for ; ; k++ {
+		worst := b.halve(x0, w)
+		if worst < tol || k == mostCellBits {
+			break
+		}
+		b.v, b.finer = b.finer, b.v
+		b.m, b.slope = b.slope, b.m
+		n, w = 2*n, w/2
+	}
+	first := len(t.cells)
+	for i := range n {
+		t.cells = append(t.cells, b.cell(i, w))
+	}
+	return octave{first: first, bits: uint(mantissaBits - k), unit: math.Ldexp(1, k-mantissaBits), scale: 1 / w}
 }
 
-// fill adds n cells and returns the worst relative error in the middle of one; it stops where that is over tol.
-func (b *tableBuilder) fill(t *flowTable, x0 float64, n int) (worst float64) {
-	w := x0 / float64(n)
-	v0, m0 := b.law(x0)
-	for i := range n {
-		x := x0 + float64(i)*w
-		vm, _ := b.law(x + w/2)
-		v1, m1 := b.law(x + w)
-		a := tableCell{v0, m0 * w, 3*(v1-v0) - (2*m0+m1)*w, 2*(v0-v1) + (m0+m1)*w}
-		if vm != 0 {
-			worst = math.Max(worst, math.Abs((a[0]+(a[1]+(a[2]+a[3]/2)/2)/2)/vm-1))
-		}
-		if worst >= b.tol && n < 1<<mostCellBits {
-			return worst
-		}
-		t.cells = append(t.cells, a)
-		v0, m0 = v1, m1
+// cell returns the cubic of cell i of width w.
+func (b *tableBuilder) cell(i int, w float64) tableCell {
+	v0, v1, m0, m1 := b.v[i], b.v[i+1], b.m[i]*w, b.m[i+1]*w
+	return tableCell{v0, m0, 3*(v1-v0) - 2*m0 - m1, 2*(v0-v1) + m0 + m1}
+}
+
+// halve puts the law at the middles of the cells between the values at their ends, and returns the worst relative error of a cell there.
+func (b *tableBuilder) halve(x0, w float64) (worst float64) {
+	b.finer, b.slope = b.finer[:0], b.slope[:0]
+	last := len(b.v) - 1
+	for i := range last {
+		c := b.cell(i, w)
+		mid := c[0] + (c[1]+(c[2]+c[3]/2)/2)/2
+		v, m := b.law(x0+(float64(i)+0.5)*w, mid)
+		worst = math.Max(worst, math.Abs(mid/v-1))
+		b.finer, b.slope = append(b.finer, b.v[i], v), append(b.slope, b.m[i], m)
 	}
+	b.finer, b.slope = append(b.finer, b.v[last]), append(b.slope, b.m[last])
 	return worst
 }
 
