@@ -42,7 +42,10 @@ func (j *judgement) brokenSays(line string, other *network.Result) string {
 	flow := func(r *network.Result) string {
 		return quantity.Format(r.Lines[line].PeakFlow, quantity.Flow, show.Flow, 3)
 	}
-	says := fmt.Sprintf("with air standing in it, it carries at most %s instead of %s", flow(other), flow(j.res))
+	says := "with air standing in it, it carries no less at its peak"
+	if broken, full := flow(other), flow(j.res); broken != full {
+		says = fmt.Sprintf("with air standing in it, it carries at most %s instead of %s", broken, full)
+	}
 	for _, l := range j.plant.Lines {
 		if l.Tag != line {
 			continue

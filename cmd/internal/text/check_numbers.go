@@ -3,10 +3,12 @@ package text
 import (
 	"strings"
 
+	"headfall/elements/quantity"
 	"headfall/network"
+	"headfall/network/study"
 )
 
-// numbers writes every number by its owner, as it is named in --set; a star marks a default.
+// numbers writes every number by its owner, as it is named in --set; a star marks a default. What a step leaves out is not told.
 func (e *echo) numbers() {
 	var owner string
 	var said []string
@@ -16,6 +18,16 @@ func (e *echo) numbers() {
 		}
 		said = nil
 	}
+	steps := map[string]*network.Step{}
+	for _, s := range e.plant.Steps {
+		steps[s.ID] = s
+	}
+	written := map[string]string{} // defaults as they would be written
+	for _, d := range e.plant.Defaults {
+		if name, text, found := strings.Cut(d, ": "); found {
+			written[name] = text
+		}
+	}
 	e.raw("\nNumbers as they are named in --set; * not in the file, ~ doubt assumed\n")
 	for _, n := range e.plant.Numbers {
 		tag, key, _ := strings.Cut(n.Name, ".")
@@ -23,18 +35,31 @@ func (e *echo) numbers() {
 			done()
 			owner = tag
 		}
-		said = append(said, keep(key+" "+number(n)))
+		step := steps[tag]
+		if step != nil && n.Default {
+			continue
+		}
+		value := number(n, written[n.Name])
+		if step != nil && n.At == &step.At.S {
+			value = step.At.Text
+		}
+		said = append(said, keep(key+" "+value))
 	}
 	done()
 }
 
-func number(n *network.Number) string {
+// number writes a value as the file does, a default as it would; a doubt that is assumed as it is declared.
+func number(n *network.Number, written string) string {
 	s := n.Value.Echo()
+	if n.Assumed {
+		bare := n.Value
+		bare.Doubt = quantity.Doubt{}
+		s = bare.Echo() + " " + study.SaysDoubt(n) + "~"
+	} else if n.Default && written != "" {
+		s = written
+	}
 	if n.Default {
 		s += "*"
-	}
-	if n.Assumed {
-		s += "~"
 	}
 	return s
 }

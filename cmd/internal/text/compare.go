@@ -22,6 +22,8 @@ func Compare(w io.Writer, r *study.CompareResult, opt Options) error {
 		}
 	}
 	switch {
+	case r.Best != "" && runs == 1:
+		p.first(r.Best, network.Run, "the only one that holds, of "+counted(len(r.Rows), "plan", "plans"))
 	case r.Best != "":
 		p.first(r.Best, network.Run, counted(runs, "plan holds", "plans hold")+" of "+amount(len(r.Rows))+"; of those it ends first")
 	case !r.Complete:
@@ -36,20 +38,28 @@ func Compare(w io.Writer, r *study.CompareResult, opt Options) error {
 		p.put("Not finished", "%s; what follows is what was judged by then", r.Trouble)
 	}
 	p.compared(r)
-	for _, row := range r.Rows {
-		if row.Why != "" {
-			when := ""
-			if row.FailsAt != nil {
-				when = stamp(p.clock.When(*row.FailsAt, Down))
-			}
-			p.put(row.Name, "%s%s: %s", when, Words(row.Verdict), row.Why)
-		}
-	}
+	p.whyNot(r)
 	p.put("Limits", "%d stated in the file and the rims, the same for all", len(r.Limits))
 	for _, n := range r.Notes {
 		p.put("Mind", "%s", n)
 	}
 	return p.close(r.ExitCode)
+}
+
+// whyNot says of each plan that does not hold what fails first.
+func (p *page) whyNot(r *study.CompareResult) {
+	label := "Why not"
+	for _, row := range r.Rows {
+		if row.Why == "" {
+			continue
+		}
+		when := ""
+		if row.FailsAt != nil {
+			when = stamp(p.clock.When(*row.FailsAt, Down))
+		}
+		p.put(label, "%s: %s%s", row.Name, when, row.Why)
+		label = ""
+	}
 }
 
 // compared writes the table.

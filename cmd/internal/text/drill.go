@@ -56,7 +56,7 @@ func Drill(w io.Writer, d *study.DrillResult, opt Options) error {
 	s.unfinished(d.Complete, d.Done, d.Of, "rehearsals and steps", d.Trouble)
 	s.rehearsals(d)
 	s.drillSteps(d)
-	s.put("Not allowed for", "doubts in the numbers (see spread); faults that come together (--pairs)")
+	s.put("Leaves out", "doubts in the numbers (see spread); faults that come together (--pairs)")
 	for _, name := range opt.Saved {
 		s.put("Saved", "%s", keep(name))
 	}
@@ -133,7 +133,7 @@ func (s *studied) rehearsal(r *study.DrillRow) {
 	said := []string{r.Case + ": " + follows(r)}
 	if r.Spilled > 0 {
 		said = append(said, "spills "+keep(s.units.VolumeOf(r.Spilled, Up)))
-	} else if r.Headroom != nil && *r.Headroom >= 0 {
+	} else if r.Headroom != nil && *r.Headroom >= 0 && strings.HasPrefix(r.Limit, "level") {
 		said = append(said, "least headroom "+keep(s.units.LevelOf(*r.Headroom, Down))+" in "+r.WorstVessel)
 	}
 	if r.TimeToAct != nil && strings.HasPrefix(r.Since, "alarm") {
@@ -156,18 +156,21 @@ func follows(r *study.DrillRow) string {
 
 // answered says how the time to act compares with what an answer to the alarm takes.
 func (s *studied) answered(r *study.DrillRow) string {
-	said := keep(Duration(*r.TimeToAct, Down)) + " from " + r.Since + " to " + r.ActBefore
+	said := "from " + r.Since
+	if r.ActBefore != r.Limit {
+		said += " to " + r.ActBefore
+	}
 	if r.Need == nil {
 		return said
 	}
-	said += ", " + keep(Duration(*r.Need, Up)) + " needed"
+	said += ", " + keep(Duration(*r.Need, Up)) + " needed to act"
 	switch {
 	case r.Answered == "holds":
-		return said + "; answered, that holds"
+		return said + "; acted on, that holds"
 	case *r.Need > *r.TimeToAct:
 		return said + ": TOO SHORT"
 	case r.Answered == "fails":
-		return said + "; answered, it still fails"
+		return said + "; acted on, it still fails"
 	}
 	return said
 }

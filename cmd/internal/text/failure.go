@@ -7,12 +7,14 @@ import (
 	"headfall/network"
 )
 
-const failuresShown = 4 // the rest is counted
+const failuresShown = 2 // the rest is counted
 
-// failure is one thing that goes wrong, at a moment if it has one.
+// failure is one thing that goes wrong, at a moment if it has one; then what else goes wrong of the same thing.
 type failure struct {
 	at   *float64
 	says string
+	more []string
+	end  string // how bad it gets
 }
 
 // failures writes what goes wrong, in the order of the clock: the first one first.
@@ -31,35 +33,53 @@ func (p *page) failures() {
 		if f.at != nil {
 			when = p.clock.When(*f.at, Down)
 		}
-		p.put(label, "%s%s", stamp(when), f.says)
+		says := join(append([]string{f.says}, f.more...), ", then ")
+		p.put(label, "%s%s", stamp(when), join([]string{says, f.end}, "; "))
 	}
 }
 
 func (p *page) allFailures() []failure {
-	var list []failure
-	for _, l := range p.res.Limits {
-		if l.Verdict != network.Fails || !p.res.Complete && l.FirstFail != nil && *l.FirstFail > p.res.End {
-			continue // it holds, or nobody knows yet
-		}
-		says := join([]string{p.broken(l), p.worst(l)}, "; ")
-		if l.AtUpTo {
-			says += ", when every hold lasts its longest"
-		}
-		if l.Why != "" && !l.Implicit {
-			says += " (" + l.Why + ")"
-		}
-		list = append(list, failure{l.FirstFail, says})
-	}
+	list := p.brokenLimits()
 	for _, s := range p.missed() {
-		list = append(list, failure{nil, fmt.Sprintf("step %s is never reached: %s", s.ID, s.Says)})
+		list = append(list, failure{says: fmt.Sprintf("step %s is never reached: %s", s.ID, s.Says)})
 	}
 	for _, h := range p.missedHolds() {
-		list = append(list, failure{nil, fmt.Sprintf("hold %s is never reached: %s", h.ID, h.Says)})
+		list = append(list, failure{says: fmt.Sprintf("hold %s is never reached: %s", h.ID, h.Says)})
 	}
-	sort.SliceStable(list, func(i, j int) bool {
-		a, b := list[i].at, list[j].at
+	return list
+}
+
+// brokenLimits joins the bounds that one thing breaks one after the other: "PIT level goes over 1.9 m, then its rim, 2.20 m, at 06:55".
+func (p *page) brokenLimits() []failure {
+	var limits []*network.LimitResult
+	for _, l := range p.res.Limits {
+		if l.Verdict == network.Fails && (p.res.Complete || l.FirstFail == nil || *l.FirstFail <= p.res.End) { // else it holds, or nobody knows yet
+			limits = append(limits, l)
+		}
+	}
+	sort.SliceStable(limits, func(i, j int) bool {
+		a, b := limits[i].FirstFail, limits[j].FirstFail
 		return a != nil && (b == nil || *a < *b)
 	})
+	var list []failure
+	seen := map[string]int{}
+	for _, l := range limits {
+		why := ""
+		if l.AtUpTo {
+			why = " when every hold lasts its longest"
+		}
+		if l.Why != "" && !l.Implicit {
+			why += " (" + l.Why + ")"
+		}
+		key := p.name(l) + l.Bound + over(l)
+		if i, again := seen[key]; again && p.verb(l) != "" && l.FirstFail != nil {
+			list[i].more = append(list[i].more, p.bound(l)+", at "+keep(p.clock.At(*l.FirstFail, Down))+why)
+			list[i].end = p.worst(l) // of the further bound: it is the same course
+			continue
+		}
+		seen[key] = len(list)
+		list = append(list, failure{at: l.FirstFail, says: p.broken(l) + why, end: p.worst(l)})
+	}
 	return list
 }
 
@@ -89,9 +109,17 @@ func (p *page) missedHolds() []*network.HoldResult {
 
 // tooClose writes the limits that hold in the middle but not in enough of the samples.
 func (p *page) tooClose() {
+	var list []*network.LimitResult
 	for _, l := range p.res.Limits {
-		if l.Verdict != network.TooClose {
-			continue
+		if l.Verdict == network.TooClose {
+			list = append(list, l)
+		}
+	}
+	sort.SliceStable(list, func(i, j int) bool { return list[i].FailsShare > list[j].FailsShare })
+	for i, l := range list {
+		if i == failuresShown {
+			p.put("", "and %s", counted(len(list)-i, "more", "more"))
+			return
 		}
 		when := ""
 		if l.WorstAt != nil {

@@ -6,8 +6,8 @@ import (
 	"strings"
 )
 
-// finishes writes when the last vessel is empty, with its band, the others being in the table; then what stays in those that are drained but not empty.
-func (p *page) finishes() {
+// finish writes when the last vessel is empty, with its band; the others are in the table.
+func (p *page) finish() {
 	type done struct {
 		tag string
 		at  float64
@@ -27,7 +27,6 @@ func (p *page) finishes() {
 		}
 		p.put("Empty by", "%s", said+p.emptyBand(last.tag))
 	}
-	p.left()
 }
 
 const leftShown = 4 // vessels that are not empty; the rest is counted

@@ -23,34 +23,62 @@ func (p *page) flags() {
 			p.put("", "and %s in the report", counted(len(list)-i, "more", "more"))
 			return
 		}
-		when := p.clock.Span(g.first.From, g.first.To)
-		if g.first.Kind == "air_drawn_in" {
-			when = p.clock.Span(g.first.From, g.last)
-			p.put(first(i, "Watch"), "%s%s", stamp(when), p.together(g))
-			continue
-		}
-		if g.again > 0 {
-			when += fmt.Sprintf(" and %s until %s", counted(g.again, "more time", "more times"), p.clock.At(g.last, Up))
-		}
-		p.put(first(i, "Watch"), "%s%s", stamp(when), sentences(g.first.Says, g.first.Do))
+		p.put(first(i, "Watch"), "%s%s", stamp(p.spell(g)), p.gathering(g))
 	}
 }
 
 // gathering is one flag, how often it comes again and when it ends for good.
 type gathering struct {
-	first *network.Flag
-	again int
-	last  float64  // s
-	where []string // the vessels that drain, of air drawn in
+	first   *network.Flag
+	again   int
+	last    float64
+	changes bool // it does not always say the same
+	drains  []drained
+}
+
+// drained is a vessel whose last draws air, from a moment on.
+type drained struct {
+	tag  string
+	from float64
+}
+
+// spell is when it is so.
+func (p *page) spell(g *gathering) string {
+	switch when := p.clock.Span(g.first.From, g.first.To); {
+	case joined[g.first.Kind]:
+		return p.clock.Span(g.first.From, g.last)
+	case g.again > 0:
+		return when + fmt.Sprintf(" and %s until %s", counted(g.again, "more time", "more times"), p.clock.At(g.last, Up))
+	default:
+		return when
+	}
+}
+
+func (p *page) gathering(g *gathering) string {
+	switch {
+	case g.first.Kind == "air_drawn_in":
+		return p.together(g)
+	case g.changes:
+		return sentences(g.first.Where+" runs part full or surges near its open end, at times; full-pipe flow is assumed", g.first.Do)
+	}
+	return sentences(g.first.Says, g.first.Do)
 }
 
 // together words what the inlets of several lines do.
 func (p *page) together(g *gathering) string {
-	places := g.where
-	if n := len(places) - placesShown; n > 0 {
-		places = append(append([]string(nil), places[:placesShown]...), fmt.Sprintf("%d more", n))
+	var said []string
+	for i, d := range g.drains {
+		if i == placesShown {
+			said = append(said, fmt.Sprintf("%d more", len(g.drains)-i))
+			break
+		}
+		tag := d.tag
+		if i > 0 {
+			tag += " from " + p.clock.At(d.from, Down)
+		}
+		said = append(said, keep(tag))
 	}
-	return "the last of " + keep(strings.Join(places, ", ")) + " gulps air: flow surges and is slower than shown. Throttle, or stop before the last of it."
+	return "the last of " + strings.Join(said, ", ") + " gulps air: flow surges and is slower than shown. Throttle, or stop before the last of it."
 }
 
 const placesShown = 6
@@ -65,7 +93,10 @@ func (p *page) drains(tag string) string {
 	return tag
 }
 
-// gathered joins flags that say the same of the same place, and all inlets that draw air.
+// joined are the flags that are told once from their first moment to their last: air drawn in of all lines together, part-full flow of each line.
+var joined = map[string]bool{"air_drawn_in": true, "part_full": true}
+
+// gathered joins flags that say the same of the same place, and those that are told together.
 func (p *page) gathered() []*gathering {
 	var list []*gathering
 	seen := map[[3]string]*gathering{}
@@ -74,18 +105,22 @@ func (p *page) gathered() []*gathering {
 			continue
 		}
 		key := [3]string{f.Kind, f.Where, f.Says}
-		if f.Kind == "air_drawn_in" { // of all lines one
+		switch {
+		case f.Kind == "air_drawn_in":
 			key = [3]string{f.Kind}
+		case joined[f.Kind]:
+			key = [3]string{f.Kind, f.Where}
 		}
-		if g := seen[key]; g != nil {
-			if at := p.drains(f.Where); !slices.Contains(g.where, at) {
-				g.where = append(g.where, at)
-			}
-			g.again, g.last = g.again+1, max(g.last, f.To)
-			continue
+		g := seen[key]
+		if g == nil {
+			g = &gathering{first: f, last: f.To}
+			seen[key], list = g, append(list, g)
+		} else {
+			g.again, g.last, g.changes = g.again+1, max(g.last, f.To), g.changes || f.Says != g.first.Says
 		}
-		seen[key] = &gathering{f, 0, f.To, []string{p.drains(f.Where)}}
-		list = append(list, seen[key])
+		if at := p.drains(f.Where); f.Kind == "air_drawn_in" && !slices.ContainsFunc(g.drains, func(d drained) bool { return d.tag == at }) {
+			g.drains = append(g.drains, drained{at, f.From})
+		}
 	}
 	return list
 }

@@ -96,14 +96,21 @@ func over(l *network.LimitResult) string {
 
 // broken writes what happens when a limit fails: "SUMP level goes over 1.9 m".
 func (p *page) broken(l *network.LimitResult) string {
-	verb := map[string]string{"below": "goes over", "above": "goes under"}[l.Bound]
 	switch {
 	case l.Subject == "emptied" && len(l.Of) > 0:
 		return join([]string{l.Of[0], "is not empty", l.Bound, keep(l.AsWritten)}, " ")
-	case verb == "" || l.AsWritten == "" || len(l.Of) == 0:
+	case p.verb(l) == "":
 		return l.Says + " does not hold"
 	}
-	return join([]string{p.name(l), verb, p.bound(l)}, " ") + over(l)
+	return join([]string{p.name(l), p.verb(l), p.bound(l)}, " ") + over(l)
+}
+
+// verb is what a thing does when it breaks a bound; "" for a limit that is no bound of one thing.
+func (p *page) verb(l *network.LimitResult) string {
+	if l.AsWritten == "" || len(l.Of) == 0 || l.Subject == "emptied" {
+		return ""
+	}
+	return map[string]string{"below": "goes over", "above": "goes under"}[l.Bound]
 }
 
 // worst writes the worst value and when: ", worst 2.91 m at 06:55".

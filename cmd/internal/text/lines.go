@@ -18,6 +18,7 @@ const (
 type sheet struct {
 	w     io.Writer
 	width int
+	blank bool // the last line was
 	err   error
 }
 
@@ -46,6 +47,15 @@ func (s *sheet) put(label, format string, args ...any) {
 func (s *sheet) raw(text string) {
 	if s.err == nil {
 		_, s.err = io.WriteString(s.w, text)
+	}
+	s.blank = strings.HasSuffix(text, "\n\n")
+}
+
+// gap parts two paragraphs, once.
+func (s *sheet) gap() {
+	if !s.blank {
+		s.raw("\n")
+		s.blank = true
 	}
 }
 

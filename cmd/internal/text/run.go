@@ -42,8 +42,8 @@ func Run(w io.Writer, plant *network.Plant, res *network.Result, opt Options) er
 		return p.err
 	}
 	for _, section := range []func(){
-		p.trouble, p.failures, p.tooClose, p.margin, p.finishes, p.backward, p.holds, p.alarms, p.flags,
-		p.headroom, p.cautions, p.assumed, p.files,
+		p.trouble, p.failures, p.tooClose, p.margin, p.finish, p.headroom,
+		p.left, p.backward, p.holds, p.alarms, p.flags, p.gap, p.cautions, p.assumed, p.files,
 	} {
 		section()
 	}

@@ -33,7 +33,7 @@ func Spread(w io.Writer, r *study.SpreadResult, opt Options) error {
 		s.put("Left out", "%s could not be calculated", counted(r.NotDone, "sample", "samples"))
 	}
 	if m := r.Measure; m != nil {
-		s.put("Measure first", "%s (%s): it makes %s of what is uncertain about %s", m.What, keep(m.Doubt), percent(m.Share, Near), m.For)
+		s.put("Measure", "first %s (%s): it makes %s of what is uncertain about %s", m.What, keep(m.Doubt), percent(m.Share, Near), m.For)
 	}
 	if r.Stalls.Share > 0 {
 		s.put("Not reached", "some step never comes in %s (%s)", percent(r.Stalls.Share, Up), between(r.Stalls))

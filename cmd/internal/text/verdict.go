@@ -35,8 +35,12 @@ func (p *page) count() string {
 	}
 	all := len(p.res.Limits)
 	var said []string
-	if n[network.Fails] > 0 {
-		said = append(said, fmt.Sprintf("%d of %s", n[network.Fails], counted(all, "limit fails", "limits fail")))
+	if k := n[network.Fails]; k > 0 {
+		verb := "fail"
+		if k == 1 {
+			verb = "fails"
+		}
+		said = append(said, fmt.Sprintf("%d of %s %s", k, counted(all, "limit", "limits"), verb))
 	}
 	if k := len(p.missed()); k > 0 {
 		said = append(said, counted(k, "step is never reached", "steps are never reached"))
