@@ -230,7 +230,7 @@ func (s *system) addActuators(c *line, f *Fitted, i, k int) {
 	}
 	if p, ok := f.Part.(elements.Pumps); ok {
 		d := p.Drive()
-		c.sources = true
+		c.sources, c.steady = true, c.steady || !d.Curved
 		add(actuator{tag: d.Tag, kind: aPump, drive: d})
 		c.acts = append(c.acts, int32(len(s.actuators)-1))
 	}

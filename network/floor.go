@@ -72,28 +72,44 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	}
 }
 
-// openingRate returns ∂c/∂t, m³/s², of the flow c that the floor admits, by the parts that move upstream of it and its throat: by differences, since
-// the share moves with them.
+// openingRate returns ∂c/∂t, m³/s², of the flow c > 0 that the floor admits, by the parts that move upstream of it and its throat.
 func (f *floor) openingRate(l *line, up *end, c, gamma float64) (rate float64) {
+	share := f.share(l)
+	loss, slope := f.up.drop(c)
+	sign := 1.0
+	if f.back {
+		sign = -1
+	}
 	for _, m := range l.moving {
 		at := &l.locals[m.local]
-		for _, u := range f.up.locals {
+		for i, u := range f.up.locals {
 			if u != at {
 				continue
 			}
-			const e = 1e-5
-			x := at.Opening
-			hi, lo := math.Min(1, x+e), math.Max(0, x-e)
-			at.Opening = hi
-			more := f.admits(l, up, c, gamma)
-			at.Opening = lo
-			less := f.admits(l, up, c, gamma)
-			at.Opening = x
-			f.share(l)
-			rate += m.rate * (more - less) / (hi - lo)
+			d := f.up.weight[i] * sign * dropByOpening(f.up.parts[i], sign*c, at)
+			if f.throat != nil && i == len(f.up.locals)-1 {
+				if s := f.shareByOpening(at); s != 0 {
+					own, _ := f.up.parts[i].Drop(sign*c, at)
+					d += s * ((loss-sign*own)/share - (up.phi - gamma*f.z - f.pressure))
+				}
+			}
+			rate -= m.rate * d / slope
 		}
 	}
 	return rate
+}
+
+// shareByOpening is the slope of F_L² by the opening of the throat, by differences; 0 to the bit where it does not depend on it.
+func (f *floor) shareByOpening(at *elements.Local) float64 {
+	const e = 1e-6
+	x := at.Opening
+	hi, lo := math.Min(1, x+e), math.Max(0, x-e)
+	at.Opening = hi
+	s := f.throat.Recovery(at)
+	at.Opening = lo
+	s -= f.throat.Recovery(at)
+	at.Opening = x
+	return s / (hi - lo)
 }
 
 // share brings the weights of a throat's floor to its present opening and returns F_L², or 1 for a crest.
@@ -108,16 +124,6 @@ func (f *floor) share(l *line) float64 {
 	}
 	f.up.fwd = share * f.base
 	return share
-}
-
-// admits returns the flow, m³/s, that the floor admits as its parts stand, near to c.
-func (f *floor) admits(l *line, up *end, c, gamma float64) float64 {
-	dp, _ := elements.Join(f.share(l)*(up.phi-gamma*f.z-f.pressure), joinHead*gamma)
-	if dp <= 0 {
-		return 0
-	}
-	q, _ := f.up.solve(dp, c)
-	return q
 }
 
 // pressureAt returns the static pressure, Pa absolute, at the floor's point while the line carries q from its `up` side at phi.

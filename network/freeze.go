@@ -88,6 +88,7 @@ func (s *system) freeze(sim *simulation) {
 	for i := range s.lines {
 		s.freezeLine(&s.lines[i], t)
 	}
+	s.freezeDriven()
 	s.sortPlain()
 	s.sortStations()
 	s.lowest = s.lowestPressure()
@@ -166,6 +167,40 @@ func (s *system) freezeCrown(l *line, c *crown) {
 	for _, k := range []int{c.fwd, c.back} {
 		l.floors[k].pressure = p
 		l.floors[k].vapour = !vented && c.primed
+	}
+}
+
+// freezeDriven gives the lines at tees their stiffness: none where a running pump of a steady rate drives the tee, through other tees or not.
+func (s *system) freezeDriven() {
+	more := false
+	for i := range s.lines {
+		l := &s.lines[i]
+		l.stiff = 0
+		if l.gmin > 0 {
+			l.stiff = teeStiffness
+		}
+		if l.steady && l.gmin > 0 && !l.shut {
+			l.stiff, more = 0, true
+		}
+	}
+	for i := range s.tees {
+		s.tees[i].driven = false
+	}
+	for more {
+		more = false
+		for i := range s.tees {
+			t := &s.tees[i]
+			for _, k := range t.lines {
+				if l := &s.lines[k.line]; !t.driven && !l.shut && l.stiff == 0 {
+					t.driven, more = true, true
+				}
+			}
+			for _, k := range t.lines {
+				if t.driven {
+					s.lines[k.line].stiff = 0
+				}
+			}
+		}
 	}
 }
 

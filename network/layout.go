@@ -32,6 +32,7 @@ type teeSlots struct {
 	lines    []teeLine
 	slow     bool    // all open lines carry columns: the balance is differentiated
 	inertial bool    // some line is inertial
+	driven   bool    // by a running pump of a steady rate
 	ease     float64 // what one pascal more would send out of the tee, m³/(s·Pa), when it was linearised last
 	direct   float64 // the share of it that goes to vessels and outside the plant
 	through  float64 // flows of its lines then, added up without their signs, m³/s

@@ -28,6 +28,7 @@ type line struct {
 	crestZ   float64 // m over datum, of the weir
 	side     *sideOpening
 	gmin     float64   // m³/(s·Pa), the weepage at a tee; else 0
+	stiff    float64   // m³/(s·Pa), added to its slopes when it is linearised
 	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
 	own      float64   // the flow itself where it is an unknown of the plant
 	parted   bool      // it is none for the moment: its column has parted
@@ -36,6 +37,7 @@ type line struct {
 	row      int32     // unknown of an inertial flow; -1
 	acts     []int32   // its actuators
 	sources  bool      // it has a pump
+	steady   bool      // of a steady rate
 	long     bool      // it has a pipe
 	clean    *unfouled // what it was before an upset fouled it; nil while it is clean
 	ranged   []int     // parts whose laws have a range

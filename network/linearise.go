@@ -7,7 +7,8 @@ import (
 )
 
 // teeStiffness is added to the slopes of every line at a tee, m³/(s·Pa), alike in all rows so that the balance stays exact: nothing against any
-// open path, but where one-way ends just take up flow, or all is shut, it keeps a pressure that means nothing from being thrown about.
+// open path, but where one-way ends just take up flow, or all is shut, it keeps a pressure that means nothing from being thrown about. A pump of a
+// steady rate hardly answers to pressure: tees that it drives go without (freezeDriven).
 const teeStiffness = 1e-12
 
 // Linearise fills f and g with all their partial derivatives: each line's block by its own end conditions, chained to the unknowns and
@@ -44,7 +45,7 @@ func (s *system) lineariseLine(i int, f, g []float64, lin *integrate.Linear) {
 	l.evaluate(&a, &b, s.gamma)
 	g[i] = l.q
 	if l.gmin > 0 {
-		l.byA, l.byB = l.byA+teeStiffness, l.byB-teeStiffness
+		l.byA, l.byB = l.byA+l.stiff, l.byB-l.stiff
 		s.ease(l)
 	}
 	d := [5]float64{l.byA*a.phiV + l.byYa*a.depV, l.byA * a.phiN, l.byB*b.phiV + l.byYb*b.depV, l.byB * b.phiN, l.byQ}
@@ -85,17 +86,18 @@ func (s *system) lineariseLine(i int, f, g []float64, lin *integrate.Linear) {
 func (s *system) ease(l *line) {
 	between := l.from.kind == toTee && l.to.kind == toTee
 	if l.from.kind == toTee {
-		s.tees[l.from.at].add(l.byA, l.q, between)
+		s.tees[l.from.at].add(l.byA, l.byA-l.stiff, l.q, between)
 	}
 	if l.to.kind == toTee {
-		s.tees[l.to.at].add(-l.byB, l.q, between)
+		s.tees[l.to.at].add(-l.byB, -l.byB-l.stiff, l.q, between)
 	}
 }
 
-func (t *teeSlots) add(slope, q float64, between bool) {
+// add notes a line of the tee: its slope with and without what keeps it from nothing, its flow, and whether it leads to another tee.
+func (t *teeSlots) add(slope, own, q float64, between bool) {
 	t.ease += slope
 	if !between {
-		t.direct += slope - teeStiffness
+		t.direct += own
 	}
 	t.through += math.Abs(q)
 }

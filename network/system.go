@@ -190,7 +190,7 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 		}
 	}
 	for i := s.teeRow; i < s.teeRow+len(s.teeAt); i++ {
-		scale[i] = s.gamma * tol(1)
+		scale[i] = s.gamma * math.Max(tol(1), rtol*(math.Abs(y[i]-s.atmosphere)/s.gamma-plainHead))
 		if t := &s.tees[i-s.teeRow]; t.ease > 0 && !t.slow { // where next to nothing flows a pressure means little
 			scale[i] = math.Max(scale[i], 1e6*rtol*stillFlow/t.ease)
 		}
@@ -203,6 +203,9 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 
 // stillFlow is the flow, m³/s, that a tee may be out of balance by: 4 mL an hour.
 const stillFlow = 1e-9
+
+// plainHead is the head, m, beyond which the error allowed in the pressure of a tee grows with it: pumps of a steady rate against shut valves come there.
+const plainHead = 100
 
 // leastLevel is the level, m, under which the error allowed does not shrink with the level any more: the last of a heel needs no micrometres.
 const leastLevel = 0.1
