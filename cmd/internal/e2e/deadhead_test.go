@@ -35,7 +35,8 @@ steps:
 		}
 		open := run(t, text(100, "limits: [{flow: L-2, below: 100 m3/h}]"), how{})
 		within(t, pump+": flow of L-2 at 11 min", at(t, r, r.Series.Flow["L-2"], 660), at(t, open, open.Series.Flow["L-2"], 10), 0.03)
-		if shut := r.Lines["L-1"].Forward - r.Lines["L-2"].Forward - r.Lines["L-3"].Forward; shut > 1e-9 || shut < -1e-9 {
+		net := func(tag string) float64 { return r.Lines[tag].Forward - r.Lines[tag].Backward }
+		if shut := net("L-1") - net("L-2") - net("L-3"); shut > 1e-9 || shut < -1e-9 {
 			t.Errorf("%s: the header keeps %g m3", pump, shut)
 		}
 	}
