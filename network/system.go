@@ -182,6 +182,9 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 		st := &s.stations[i]
 		h, slope := st.shape.Level(y[i])
 		scale[i] = math.Max(tol(math.Abs(h))/slope, least*st.full)
+		if st.closed {
+			scale[i] = math.Min(scale[i], gasCap/math.Max(st.gasV, 1e-9))
+		}
 		if st.massRow >= 0 {
 			m := y[st.massRow]
 			g, _ := st.gasVolume(y[i])
@@ -203,6 +206,10 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 
 // stillFlow is the flow, m³/s, that a tee may be out of balance by: 4 mL an hour.
 const stillFlow = 1e-9
+
+// gasCap bounds the error allowed in a volume by what it does to the pressure of the gas above it, Pa: where that is all but gone the last of it is a
+// hard spring.
+const gasCap = 1
 
 // plainHead is the head, m, beyond which the error allowed in the pressure of a tee grows with it: pumps of a steady rate against shut valves come there.
 const plainHead = 100
