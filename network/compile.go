@@ -152,11 +152,12 @@ func (s *system) vesselMouth(l *Line, v *Vessel, at int, port Port, bore float64
 		m.inlet.form = fadeInlet
 	}
 	if bore == 0 && m.inlet.form != slotInlet { // no bore: no limit but that nothing leaves from under the mouth
-		m.inlet.form, m.inlet.bore, m.width = fadeInlet, noBoreFade/0.05, 0
+		m.inlet.form, m.inlet.bore, m.width = fadeInlet, noBoreFade/fadeShare, 0
 		if port.Form != Bottom {
 			m.width = noBoreFade
 		}
 	}
+	m.inlet.settle()
 	return m
 }
 

@@ -36,9 +36,9 @@ func (l *line) carry(a, b *end, gamma float64) {
 		return
 	}
 	if own >= 0 {
-		l.q, l.byQ, l.byYa, _ = l.admit(&l.from.inlet, a.depth, own, byOwn, 0)
+		l.q, l.byQ, l.byYa = l.from.inlet.carried(a.depth, own, byOwn)
 	} else {
-		l.q, l.byQ, l.byYb, _ = l.admit(&l.to.inlet, b.depth, -own, byOwn, 0)
+		l.q, l.byQ, l.byYb = l.to.inlet.carried(b.depth, -own, byOwn)
 		l.q, l.byYb = -l.q, -l.byYb
 	}
 	if over := own - l.q; math.Abs(over) > 0 {
@@ -80,4 +80,13 @@ func (l *line) turnBack(onlyOn, onlyBack bool) {
 		l.push += sign * k * x * x / (2 * d)
 		l.pushQ += k * x / d
 	}
+}
+
+// carried returns what an inlet lets through at depth y of the flow q of an unknown, with the partials by the unknown, byOwn that of q, and by y.
+func (l *inletLaw) carried(y, q, byOwn float64) (q1, by, byY float64) {
+	if q == 0 || l.ample(y, q) {
+		return q, byOwn, 0
+	}
+	q1, byQ, byY := l.admit(y, q)
+	return q1, byOwn * byQ, byY
 }

@@ -18,9 +18,10 @@ var (
 // Sources: weir over the lip with the broad-crest coefficient 1.7 m^½/s; onset of gas pull-through, Lubin & Springer, J. Fluid Mech. 29 (1967) 385;
 // critical flow of open channels, any text on hydraulics.
 type inletLaw struct {
-	form inletForm
-	bore float64 // m
-	g    float64 // m/s²
+	form    inletForm
+	bore    float64 // m
+	g       float64 // m/s²
+	shallow float64 // m, depth over the invert under which the turn of the flow is eased
 }
 
 type inletForm int8
@@ -33,6 +34,26 @@ const (
 	fadeInlet                   // ideal
 	dryInlet                    // the open air: nothing to draw
 )
+
+// shallowShare of the bore, and shallowLeast, m, are the depth over an invert within which the turn of a flow is eased; that of an ideal opening is the depth
+// over which it fades. Under it next to nothing leaves whatever the law: common practice, no source.
+const (
+	shallowShare = 0.02
+	shallowLeast = 1e-3
+	fadeShare    = 0.05
+)
+
+// settle works out the shallow depth.
+func (l *inletLaw) settle() {
+	switch l.form {
+	case noInlet, dryInlet:
+		l.shallow = 0
+	case fadeInlet:
+		l.shallow = fadeShare * l.bore
+	default:
+		l.shallow = math.Max(shallowLeast, shallowShare*l.bore)
+	}
+}
 
 // limit returns the largest flow admitted at depth y and its slope, both 0 at y ≤ 0.
 func (l *inletLaw) limit(y float64) (q, slope float64) {
@@ -61,21 +82,22 @@ func (l *inletLaw) limit(y float64) (q, slope float64) {
 
 // ample tells quickly that a flow q is well within what the mouth admits at depth y.
 func (l *inletLaw) ample(y, q float64) bool {
+	if y < l.shallow {
+		return false
+	}
 	switch l.form {
-	case noInlet:
+	case noInlet, fadeInlet:
 		return true
 	case floorInlet:
 		w := 1.7 * math.Pi * l.bore // of the lip alone
-		return w*w*y*y*y > 1.3*q*q && y > 0
-	case fadeInlet:
-		return y > 0.05*l.bore
+		return w*w*y*y*y > 1.3*q*q
 	case slotInlet:
 		w := 1.7 * l.bore
-		return w*w*y*y*y > 1.3*q*q && y > 0
+		return w*w*y*y*y > 1.3*q*q
 	case sideInlet:
 		// The critical flow at depth y is never under that of the wide triangle 0.3·√(g·y⁵)·(D/y)^½ for y ≤ D, nor under 0.3·√g·D²·y^½ beyond.
 		d := math.Min(y, l.bore)
-		return y > 0 && 0.09*l.g*d*d*d*l.bore*math.Max(y, d) > 1.3*q*q
+		return 0.09*l.g*d*d*d*l.bore*math.Max(y, d) > 1.3*q*q
 	}
 	return false
 }

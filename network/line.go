@@ -44,6 +44,7 @@ type line struct {
 	checks   bool      // it has a check valve
 	join     float64   // Pa over which a one-way end takes up flow
 	reach    float64   // pressure that drives the flow, in bands
+	turn     float64   // its slope by the pressure between the ends
 	lastDp   float64   // warm start of the chain
 	lastQ    float64
 	lastS    float64
@@ -126,7 +127,7 @@ func (l *line) pass(a, b *end, gamma float64) {
 	q, s := l.flowAt(drive + l.zero)
 	l.byT = l.openingRate(q, s)
 	s *= turn
-	l.reach = math.Abs(drive) / band
+	l.reach, l.turn = math.Abs(drive)/band, turn
 	l.q, l.byA, l.byB = q, s, -s
 	l.limit(a, b, gamma)
 }
@@ -209,14 +210,13 @@ func dropByOpening(p elements.Part, q float64, at *elements.Local) float64 {
 	return (up - dn) / (hi - lo)
 }
 
-// limit holds the flow within what the end it leaves admits, and within its floor pressures.
+// limit applies the limits of the ends and the floors to the flow.
 func (l *line) limit(a, b *end, gamma float64) {
+	l.shoal(a, b, gamma)
 	if l.q >= 0 {
-		l.q, l.byA, l.byYa, l.byB = l.admit(&l.from.inlet, a.depth, l.q, l.byA, l.byB)
+		l.admitAt(&l.from.inlet, a.depth, &l.byYa)
 	} else {
-		var q float64
-		q, l.byB, l.byYb, l.byA = l.admit(&l.to.inlet, b.depth, -l.q, -l.byB, -l.byA)
-		l.q, l.byB, l.byYb, l.byA = -q, -l.byB, -l.byYb, -l.byA
+		l.admitAt(&l.to.inlet, b.depth, &l.byYb)
 	}
 	for i := range l.floors {
 		f := &l.floors[i]
@@ -227,32 +227,76 @@ func (l *line) limit(a, b *end, gamma float64) {
 	}
 }
 
-// admit applies an inlet's limit at depth y to a flow q ≥ 0 leaving there, with ∂q/∂phi at that end and at the other.
-func (l *line) admit(in *inletLaw, y, q, near, far float64) (q1, near1, byY, far1 float64) {
-	if in.ample(y, q) || q == 0 {
-		return q, near, 0, far
+// shoal eases the turn of the flow where an end has next to no liquid over its mouth: little leaves there whatever the head, but anything may come in, and
+// without more the law would have a corner at no flow. With w, v from 0 to 1 over the shallow depth at the end that liquid leaves and at the one it comes to,
+//
+//	q·w·(v + (1 − v)·u·(2 − u)), u = Δ/band < 1,
+//
+// Δ the pressure that drives the flow and the band that of a tenth of a millimetre: C¹, and the flow itself beyond the band or the shallow depth.
+func (l *line) shoal(a, b *end, gamma float64) {
+	leave, come, y, z, byY, byZ := &l.from.inlet, &l.to.inlet, a.depth, b.depth, &l.byYa, &l.byYb
+	if l.q < 0 {
+		leave, come, y, z, byY, byZ = come, leave, z, y, byZ, byY
 	}
-	var c, byQ, byC, slope float64
-	if in.form == fadeInlet {
-		u := y / (0.05 * in.bore)
-		if u <= 0 {
-			l.byT = 0
-			return 0, 0, 0, 0
+	band := joinHead * gamma
+	drive := l.reach * l.join
+	if y >= leave.shallow && (z >= come.shallow || drive >= band || z == never) {
+		return
+	}
+	w, dw := leave.wet(y)
+	v, dv := come.wet(z)
+	u := drive / band
+	g, dg := 1.0, 0.0
+	if u < 1 {
+		g, dg = u*(2-u), 2*(1-u)
+	}
+	s, q := l.byA, l.q
+	r := v + (1-v)*g
+	slope := s*w*r + math.Abs(q)*w*(1-v)*dg*l.turn/band
+	if l.gmin > 0 { // as in roundCorner
+		const c = corner * (4 - 3*corner)
+		switch {
+		case u < corner:
+			slope = math.Max(slope, c*s)
+		case w < 1:
+			slope = math.Max(slope, c*s*(1-u/(10*corner)))
 		}
-		if u >= 1 {
-			return q, near, 0, far
-		}
-		w, dw := u*u*(3-2*u), 6*u*(1-u)/(0.05*in.bore)
-		l.byT *= w
-		return q * w, near * w, q * dw, far * w
 	}
-	c, slope = in.limit(y)
-	q1, byQ, byC = elements.Min(q, c)
-	if y <= 0 && l.gmin > 0 { // as in roundCorner
-		byQ = math.Max(byQ, 1-l.reach/(10*corner))
+	l.q, l.byA, l.byB = q*w*r, slope, -slope
+	*byY, *byZ = q*dw*r, q*w*(1-g)*dv
+	l.byT *= w * r
+}
+
+// wet goes from 0 to 1 over the shallow depth, with its slope, 1/m.
+func (l *inletLaw) wet(y float64) (w, slope float64) {
+	if y >= l.shallow || y == never {
+		return 1, 0
 	}
-	l.byT *= byQ
-	return q1, near * byQ, byC * slope, far * byQ
+	w, slope = elements.Step(y / l.shallow)
+	return w, slope / l.shallow
+}
+
+// admitAt applies an inlet's limit at depth y to the flow that leaves there.
+func (l *line) admitAt(in *inletLaw, y float64, byY *float64) {
+	if l.q == 0 || in.form == fadeInlet || in.ample(y, math.Abs(l.q)) {
+		return
+	}
+	q, byQ, by := in.admit(y, math.Abs(l.q))
+	l.q = math.Copysign(q, l.q)
+	l.byA, l.byB, l.byT = l.byA*byQ, l.byB*byQ, l.byT*byQ
+	l.byYa, l.byYb = l.byYa*byQ, l.byYb*byQ
+	*byY += math.Copysign(by, l.q)
+}
+
+// admit returns what an inlet lets through of a flow q > 0 that leaves there at depth y, with the partials by q and by y.
+func (l *inletLaw) admit(y, q float64) (q1, byQ, byY float64) {
+	if l.form == fadeInlet {
+		w, dw := l.wet(y)
+		return q * w, w, q * dw
+	}
+	c, slope := l.limit(y)
+	q1, byQ, byC := elements.Min(q, c)
+	return q1, byQ, byC * slope
 }
 
 // weepage is the conductance that every line at a tee has besides its own, m³/(s·Pa), so small that it counts only where a tee has no other path,

@@ -23,15 +23,17 @@ type plainSlots struct{ fromA, fromB, toA, toB, zA, zB int32 }
 type gate struct {
 	zero  float64 // Pa, total pressure at the invert
 	least float64 // m, depth
+	wet   float64 // Pa, total pressure at that depth
 	lip   float64 // m⁵/s² over m³: of the weir over the lip, squared, with a margin
 	bore  float64 // Pa, of liquid as deep as the mouth is wide; less than any depth for one that draws no air
 	swirl float64 // Pa·s/m³: how much deeper the mouth must lie for a flow not to make vortices. See system.shallow
 }
 
 func (s *system) gateOf(m *mouth) gate {
-	g := gate{zero: s.atmosphere + s.gamma*m.invert}
+	g := gate{zero: s.atmosphere + s.gamma*m.invert, least: m.inlet.shallow}
+	g.wet = g.zero + s.gamma*g.least
 	if m.inlet.form == fadeInlet {
-		g.least, g.lip, g.bore = 0.05*m.inlet.bore, math.Inf(1), math.Inf(-1)
+		g.lip, g.bore = math.Inf(1), math.Inf(-1)
 		return g
 	}
 	d := m.inlet.bore
@@ -44,7 +46,12 @@ func (s *system) gateOf(m *mouth) gate {
 // passes tells that a flow q is well within what the mouth admits under a total pressure phi; perGamma is 1/ρg.
 func (g *gate) passes(phi, q, perGamma float64) bool {
 	y := (phi - g.zero) * perGamma
-	return y > g.least && g.lip*y*y*y >= q*q
+	return y >= g.least && g.lip*y*y*y >= q*q
+}
+
+// turns tells that the flow between total pressures a and b is within a band of its turn while there is next to no liquid over a mouth. See line.shoal.
+func (p *plainLine) turns(a, b, band float64) bool {
+	return a-b < band && b-a < band && (a < p.in.wet || b < p.out.wet)
 }
 
 // sortPlain separates the plain lines from the rest, as they stand in this segment.
@@ -71,12 +78,12 @@ func (s *system) isPlain(l *line) bool {
 
 // plainRates adds the flows of the plain lines.
 func (s *system) plainRates(f, g []float64) {
-	floor, per := s.floor, 1/s.gamma
+	floor, per, band := s.floor, 1/s.gamma, joinHead*s.gamma
 	for k := range s.plain {
 		p := &s.plain[k]
 		a, b := floor[p.from], floor[p.to]
 		q, ok := p.table.flow(a - b)
-		if !ok || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
+		if !ok || p.turns(a, b, band) || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
 			q = s.evaluate(int(p.line)).q
 		}
 		f[p.from] -= q
@@ -97,12 +104,12 @@ func (s *system) evaluate(i int) *line {
 
 // linearisePlain adds the flows of the plain lines and their partials.
 func (s *system) linearisePlain(f, g []float64, lin *integrate.Linear) {
-	floor, per := s.floor, 1/s.gamma
+	floor, per, band := s.floor, 1/s.gamma, joinHead*s.gamma
 	for k := range s.plain {
 		p := &s.plain[k]
 		a, b := floor[p.from], floor[p.to]
 		q, slope, ok := p.table.at(a - b)
-		if !ok || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
+		if !ok || p.turns(a, b, band) || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
 			s.lookInto(int(p.from), s.y)
 			s.lookInto(int(p.to), s.y)
 			s.lineariseLine(int(p.line), f, g, lin)

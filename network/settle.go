@@ -163,7 +163,7 @@ func (s *system) Settled(f []float64, implicit bool) bool {
 		if t.slow {
 			continue
 		}
-		if !implicit && math.Abs(f[s.teeRow+i]) > offBalance*t.through+10*stillFlow || s.y[s.teeRow+i] < s.lowest {
+		if !implicit && math.Abs(f[s.teeRow+i]) > offBalance*t.through+0.1*stillFlow || s.y[s.teeRow+i] < s.lowest {
 			return false
 		}
 	}
