@@ -84,6 +84,35 @@ func (b *bdf) restart() {
 	for i, v := range s.g {
 		b.dz[1][i] = b.h * v
 	}
+	b.balance()
+}
+
+// balance takes out of the first differences what the algebraic equations are out of balance by, as one more Newton correction of them would: what is
+// invariant between unknowns and integrals holds for the formulas only when it holds for the history.
+func (b *bdf) balance() {
+	s := b.s
+	if !s.algebraic || !s.linear || s.factoriseAlgebraic() != nil {
+		return
+	}
+	s.algebraicResidual(b.delta, s.f)
+	s.factor.Solve(b.delta)
+	for j, v := range b.delta {
+		if s.mass[j] || v == 0 {
+			continue
+		}
+		for k := s.pat.Ptr[j]; k < s.pat.Ptr[j+1]; k++ {
+			if i := s.pat.Row[k]; s.mass[i] {
+				b.d[1][i] += b.h * s.lin.DfDy[k] * v
+			}
+		}
+	}
+	for i := range s.g {
+		for l := s.iptr[i]; l < s.iptr[i+1]; l++ {
+			if j := s.icol[l]; !s.mass[j] {
+				b.dz[1][i] += b.h * s.lin.DgDy[l] * b.delta[j]
+			}
+		}
+	}
 }
 
 func (b *bdf) attempt(h float64) (float64, error) {
@@ -136,6 +165,9 @@ func (b *bdf) newton(h, shift float64) (ok bool, err error) {
 	before, rate := 0.0, 0.0
 	for b.rounds = 1; b.rounds <= maxRounds; b.rounds++ {
 		s.rates(s.t+h, s.y1, b.rate, b.rateZ)
+		if s.settler != nil && !s.settler.Settled(b.rate, false) {
+			b.settle(s.t + h)
+		}
 		for i, f := range b.rate {
 			b.delta[i] = f
 			if s.mass[i] {
@@ -171,6 +203,23 @@ func (b *bdf) newton(h, shift float64) (ok bool, err error) {
 	}
 	copy(s.err, b.delta)
 	return false, nil
+}
+
+// settle lets the System balance its algebraic unknowns where Newton's method has got to: on the linearisation of the step's start alone it may not.
+func (b *bdf) settle(t float64) {
+	s := b.s
+	for i, differential := range s.mass {
+		if !differential {
+			b.change[i] -= s.y1[i]
+		}
+	}
+	s.settler.Settle(t, s.y1)
+	for i, differential := range s.mass {
+		if !differential {
+			b.change[i] += s.y1[i]
+		}
+	}
+	s.rates(t, s.y1, b.rate, b.rateZ)
 }
 
 // integrals sets z1 and its change against the prediction.
