@@ -26,7 +26,7 @@ func readClock(s string) (Clock, *Error) {
 	bad := func(msg, hint string) (Clock, *Error) { return Clock{}, fault(s, 0, len(s), msg, hint) }
 	t := strings.TrimSpace(s)
 	if len(t) > maxText {
-		return bad("this is too long for a time of day", "")
+		return bad("this is too long for a time of day", `e.g. "06:30"`)
 	}
 	if strings.Contains(t, "±") || strings.Contains(t, " to ") || strings.Contains(t, "+-") || strings.Contains(t, "+/-") {
 		return bad("a time of day carries no doubt", `e.g. "06:30"`)

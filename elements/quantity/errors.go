@@ -11,6 +11,9 @@ type Error struct {
 	Hint   string // the right spelling: "e.g. 4.2 m"; may be empty
 	Offset int    // where the fault begins, runes from the start of the text
 	Length int    // how many runes it spans, at least 1 unless the text is empty
+
+	Number  string // a bare number that lacks nothing but its unit, else ""
+	Example bool   // Hint is any value of the dimension; who knows what is asked for may show a likelier one
 }
 
 // Error returns message and hint in one line.
@@ -32,6 +35,12 @@ func fault(s string, from, to int, msg, hint string) *Error {
 		e.Length = 1
 		e.Offset = min(e.Offset, utf8.RuneCountInString(s)-1)
 	}
+	return e
+}
+
+// example marks the hint as any value of the dimension.
+func (e *Error) example() *Error {
+	e.Example = true
 	return e
 }
 

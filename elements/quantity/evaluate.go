@@ -28,7 +28,7 @@ func (p *parser) single(f *figure) (v Value, err *Error) {
 		return v, err
 	}
 	if p.d == Count && v.SI != math.Trunc(v.SI) {
-		return v, fault(p.s, f.at, f.end, "a whole number is needed", "")
+		return v, fault(p.s, f.at, f.end, "a whole number is needed", "e.g. "+exampleOf(Count))
 	}
 	return v, nil
 }
@@ -43,7 +43,7 @@ func (p *parser) si(f *figure, difference bool) (float64, *Error) {
 		si, ok = toSI(&f.num, f.unit, difference)
 	}
 	if !ok || math.IsInf(si, 0) {
-		return 0, fault(p.s, f.at, f.end, quote(p.s[f.at:f.end])+" is beyond what can be reckoned with", "")
+		return 0, fault(p.s, f.at, f.end, quote(p.s[f.at:f.end])+" is beyond what can be reckoned with", "e.g. "+exampleOf(p.d)).example()
 	}
 	return si, nil
 }
@@ -52,7 +52,7 @@ func (p *parser) si(f *figure, difference bool) (float64, *Error) {
 func (p *parser) plusMinus(q *parts) (v Value, err *Error) {
 	a, b := &q.first, &q.second
 	if b.num.neg {
-		return v, fault(p.s, b.at, b.end, "a doubt has no minus", "")
+		return v, fault(p.s, b.at, b.end, "a doubt has no minus", "leave the minus out")
 	}
 	percent := b.unit == shareUnit || b.unit != nil && b.unit.name == "%" && a.unit != nil && a.unit.name == ""
 	if a.unit == nil && !percent {
@@ -62,7 +62,7 @@ func (p *parser) plusMinus(q *parts) (v Value, err *Error) {
 		return v, err
 	}
 	if p.d == Count {
-		return v, fault(p.s, q.opAt, b.end, "a count carries no doubt", "")
+		return v, fault(p.s, q.opAt, b.end, "a count carries no doubt", "e.g. "+exampleOf(Count))
 	}
 	if percent {
 		v.Doubt.Half, err = p.share(a, b, v.SI)
@@ -88,7 +88,7 @@ func (p *parser) share(a, b *figure, value float64) (float64, *Error) {
 	part, ok := toSI(&b.num, shareUnit, false)
 	half := math.Abs(value) * part
 	if !ok || math.IsInf(half, 0) {
-		return 0, fault(p.s, b.at, b.end, quote(p.s[b.at:b.end])+" is beyond what can be reckoned with", "")
+		return 0, fault(p.s, b.at, b.end, quote(p.s[b.at:b.end])+" is beyond what can be reckoned with", "e.g. ± 5 %")
 	}
 	return half, nil
 }
@@ -109,7 +109,7 @@ func (p *parser) upTo(q *parts) (v Value, err *Error) {
 		return v, err
 	}
 	if p.d == Count {
-		return v, fault(p.s, a.at, b.end, "a count carries no doubt", "")
+		return v, fault(p.s, a.at, b.end, "a count carries no doubt", "e.g. "+exampleOf(Count))
 	}
 	if err := p.agree(a, b); err != nil {
 		return v, err
@@ -140,7 +140,7 @@ func (p *parser) timesOver(q *parts) (v Value, err *Error) {
 		return v, err
 	}
 	if p.d == Count || q.first.unit.offset != nil {
-		return v, fault(p.s, q.opAt, b.end, words[p.d].noun+" carries no factor of doubt", "")
+		return v, fault(p.s, q.opAt, b.end, words[p.d].noun+" carries no factor of doubt", "a doubt is written with ±")
 	}
 	if !b.unitless {
 		return v, fault(p.s, b.unitAt, b.end, "a factor of doubt is a bare number", "write ×÷ "+b.num.plain())

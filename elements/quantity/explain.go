@@ -10,7 +10,9 @@ var shareUnit = newUnit("%", product("1/100"))
 
 // needsUnit is the fault of a bare number at s[i:end].
 func (p *parser) needsUnit(i, end int, number string) *Error {
-	return fault(p.s, i, end, quote(number)+" needs a unit", "e.g. "+number+" "+words[p.d].example)
+	e := fault(p.s, i, end, quote(number)+" needs a unit", "e.g. "+number+" "+words[p.d].example)
+	e.Number = number
+	return e
 }
 
 // badUnit is the fault of a unit that is not one of the dimension's.
@@ -22,14 +24,24 @@ func (p *parser) badUnit(f *figure, name string) *Error {
 	if word, _, more := strings.Cut(name, " "); more && p.tab.find(word) != nil {
 		return p.leftover(p.skip(f.unitAt + len(word)))
 	}
-	msg, better := explainUnit(name, p.d)
-	hint := "e.g. " + exampleOf(p.d)
-	if better != "" {
-		hint = "write " + number + " " + strings.ReplaceAll(better, " or ", " or "+number+" ")
-	} else if strings.HasPrefix(msg, "unknown") {
-		hint = "units of " + words[p.d].noun + ": " + known(p.d)
+	end := f.end
+	if whole := p.wholeUnit(f); p.d == Time && measures(whole) != "" { // "4 m3/h" is no sum of times
+		name, end = whole, f.unitAt+len(whole)
 	}
-	return fault(p.s, f.unitAt, f.end, msg, hint)
+	msg, better := explainUnit(name, p.d)
+	switch {
+	case better != "":
+		return fault(p.s, f.unitAt, end, msg, "write "+number+" "+strings.ReplaceAll(better, " or ", " or "+number+" "))
+	case strings.HasPrefix(msg, "unknown"):
+		return fault(p.s, f.unitAt, end, msg, "units of "+words[p.d].noun+": "+known(p.d))
+	}
+	return fault(p.s, f.unitAt, end, msg, "e.g. "+exampleOf(p.d)).example()
+}
+
+// wholeUnit is a figure's unit up to the next blank.
+func (p *parser) wholeUnit(f *figure) string {
+	name, _, _ := strings.Cut(p.s[f.unitAt:], " ")
+	return name
 }
 
 // bare is the number of a figure without its unit; 62 % is 0.62.
@@ -48,16 +60,18 @@ func (p *parser) leftover(i int) *Error {
 		return nil
 	}
 	rest := p.s[i:]
-	msg, hint := quote(rest)+" is not understood here", "e.g. "+exampleOf(p.d)
+	msg, hint, example := quote(rest)+" is not understood here", "e.g. "+exampleOf(p.d), true
 	switch op, _ := scanOperator(p.s, i); {
 	case op != noOperator:
-		msg, hint = "one doubt is enough", "e.g. 0.62 ± 0.04, or 0.58 to 0.66"
+		msg, hint, example = "one doubt is enough", "e.g. 0.62 ± 0.04, or 0.58 to 0.66", false
 	case rest[0] == '-' || rest[0] == '+':
-		msg, hint = "sums are not read", "write the result, or ± for a doubt"
+		msg, hint, example = "sums are not read", "write the result, or ± for a doubt", false
 	case isDigit(rest[0]) && p.d != Time:
 		msg = "only durations are written in parts"
 	}
-	return fault(p.s, i, len(p.s), msg, hint)
+	e := fault(p.s, i, len(p.s), msg, hint)
+	e.Example = example
+	return e
 }
 
 // explainUnit says what is wrong with a unit's name and which one of d was meant
@@ -70,16 +84,23 @@ func explainUnit(name string, d Dim) (msg, better string) {
 	if near := nearest(short, d, true); near != "" {
 		return "unknown unit " + quote(name), near
 	}
-	for other := Length; other < numDims; other++ {
-		if other == d || tables[other].find(short) == nil {
-			continue
-		}
-		return fmt.Sprintf("%s measures %s; %s is needed", name, words[other].noun, words[d].noun), ""
+	if what := measures(short); what != "" && what != words[d].noun {
+		return fmt.Sprintf("%s measures %s; %s is needed", name, what, words[d].noun), ""
 	}
 	if name == "%" {
 		return "per cent is not understood here; " + words[d].noun + " is needed", ""
 	}
 	return "unknown unit " + quote(name), nearest(short, d, false)
+}
+
+// measures says what a unit measures, with its article; "" for what is no unit.
+func measures(name string) string {
+	for d := Length; d < numDims; d++ {
+		if tables[d].find(name) != nil {
+			return words[d].noun
+		}
+	}
+	return foreign[name]
 }
 
 // known lists the first few units of d.

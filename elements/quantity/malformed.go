@@ -50,11 +50,10 @@ func (p *parser) touching(n *number, i, end int) *Error {
 		return p.rangeHint(i, end, rest[1:])
 	case c == ':' && digit:
 		msg := "this is a time of day; " + words[p.d].noun + " is needed"
-		hint := ""
 		if p.d == Time {
-			hint = "e.g. 6 h 30 min"
+			return fault(p.s, i, len(p.s), msg, "e.g. 6 h 30 min")
 		}
-		return fault(p.s, i, len(p.s), msg, hint)
+		return fault(p.s, i, len(p.s), msg, "e.g. "+exampleOf(p.d)).example()
 	case c == '/' && digit:
 		return fault(p.s, i, end+2, "fractions are not read", "write the decimal, e.g. 0.5")
 	case superscript(rest):
@@ -84,7 +83,7 @@ func (p *parser) noNumber(i int) *Error {
 	case strings.HasPrefix(rest, "<"), strings.HasPrefix(rest, ">"), strings.HasPrefix(rest, "~"):
 		msg = "write the number alone"
 	}
-	return fault(p.s, i, len(p.s), msg, hint)
+	return fault(p.s, i, len(p.s), msg, hint).example()
 }
 
 // exampleOf is a right spelling of something of this dimension.

@@ -48,7 +48,7 @@ func ParseTime(s string) (Value, error) { return Parse(s, Time) }
 func parse(s string, d Dim) (Value, parts, *Error) {
 	p := parser{s: plain(s), d: d, tab: &tables[d]}
 	if len(s) > maxText {
-		return Value{}, parts{}, fault(p.s, 0, len(p.s), "this is too long for a value", "")
+		return Value{}, parts{}, fault(p.s, 0, len(p.s), "this is too long for a value", "e.g. "+exampleOf(d)).example()
 	}
 	q, err := p.split()
 	if err != nil {

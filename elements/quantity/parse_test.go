@@ -1,6 +1,9 @@
 package quantity
 
-import "testing"
+import (
+	"regexp"
+	"testing"
+)
 
 func TestParse(t *testing.T) {
 	for _, c := range []struct {
@@ -75,6 +78,9 @@ func TestParse(t *testing.T) {
 		if err != nil {
 			t.Errorf("%q: %v", c.text, err)
 			continue
+		}
+		if !regexp.MustCompile(Pattern(c.d)).MatchString(c.text) {
+			t.Errorf("%q does not fit the pattern of a %v", c.text, c.d)
 		}
 		if got != c.want {
 			t.Errorf("%q:\n got %+v\nwant %+v", c.text, got, c.want)

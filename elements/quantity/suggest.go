@@ -18,6 +18,14 @@ var commonly = map[string]string{
 	"percent": "%", "pct": "%", "‰": "%", "fps": "ft/s", "kph": "km/h",
 }
 
+// foreign maps units of what no plant file states to what they measure.
+var foreign = map[string]string{
+	"kg": "a mass", "g": "a mass", "mg": "a mass", "t": "a mass", "lb": "a mass", "lbs": "a mass", "ton": "a mass", "tonnes": "a mass",
+	"kg/h": "a mass flow", "kg/s": "a mass flow", "kg/min": "a mass flow", "t/h": "a mass flow", "lb/h": "a mass flow",
+	"N": "a force", "kN": "a force", "lbf": "a force", "W": "a power", "kW": "a power", "hp": "a power", "J": "an energy", "kJ": "an energy", "kWh": "an energy",
+	"V": "a voltage", "A": "a current", "Hz": "a frequency", "rpm": "a speed of rotation", "1/min": "a speed of rotation",
+}
+
 // meant returns the unit of d that a common name stands for.
 func meant(name string, d Dim) string {
 	to, ok := commonly[name]
