@@ -9,6 +9,7 @@ import (
 type Options struct {
 	Method    string  // rodas5p (default), rodas4p, bdf
 	Tolerance float64 // relative; 0 takes the default
+	MaxSteps  int     // of one run; 0 takes a million
 }
 
 // RunOptions are of one run.

@@ -60,7 +60,7 @@ func (m *Model) simulation() (*simulation, error) {
 		if method != nil {
 			sim.method = strings.ToLower(method.Name())
 		}
-		sim.solver = integrate.NewSolver(s, integrate.Options{RTol: m.opt.Tolerance, Method: method})
+		sim.solver = integrate.NewSolver(s, integrate.Options{RTol: m.opt.Tolerance, Method: method, MaxSteps: m.opt.MaxSteps})
 		if sim.watch, err = newWatcher(sim); err != nil {
 			return nil, err
 		}
@@ -205,15 +205,18 @@ func (sim *simulation) segment(ctx context.Context, stop float64, opt *RunOption
 func (sim *simulation) fail(err error) error {
 	sim.stopped = "failed"
 	f := &Failure{T: sim.t, Err: err}
-	what := "the calculation did not settle"
+	what, do := "the calculation did not settle", "Look at the bores, lengths and openings there, or try another --method or a looser --tolerance"
 	var e *integrate.Error
 	if errors.As(err, &e) {
 		f.T = e.T
+		if e.Reason == integrate.TooManySteps {
+			what, do = fmt.Sprintf("the calculation was ended after %d steps, the last ones", e.Steps), "Look at what is small or quick there, or allow more with --max-steps"
+		}
 		if tag := sim.sys.unknownName(e.Unknown); tag != "" {
 			what += " at " + tag
 		}
 	}
-	f.Says = fmt.Sprintf("%s, %s after the start; results up to there are kept. Look at the bores, lengths and openings there, or try another --method or a looser --tolerance", what, quantity.FormatDuration(math.Floor(f.T)))
+	f.Says = fmt.Sprintf("%s, %s after the start; results up to there are kept. %s", what, quantity.FormatDuration(math.Floor(f.T)), do)
 	sim.trouble = f
 	return f
 }

@@ -23,7 +23,7 @@ func (c *checker) still(s *Step) {
 	if v := c.p.vessel(w.Of[0]); v != nil && w.Subject == Level {
 		switch top := v.RimLevel(); {
 		case w.Above && w.Bound > top+above:
-			c.fault(w.Place, "", "step %s waits for a level that %s never comes to: %s, its rim is at %.4g m", s.ID, v.Tag, w.Text, top)
+			c.fault(w.Place, "levels are above the vessel's base", "step %s waits for a level that %s never comes to: %s, its rim is at %.4g m", s.ID, v.Tag, w.Text, top)
 		case !w.Above && w.Bound <= 0:
 			c.fault(w.Place, "levels are above the vessel's base", "step %s waits for a level under the base of %s", s.ID, v.Tag)
 		}

@@ -85,13 +85,13 @@ func (c *checker) line(l *Line) {
 			c.fault(l.Place, fmt.Sprintf("the lowest for this bore is {centre: %.4g m}", b/2), "the mouth of %s in %s reaches %.4g m under the base", l.Tag, tag, -z)
 		}
 		if port.Height > v.Shape.Height()+1e-9 && !to {
-			c.fault(l.Place, "", "%s leaves %s at %.4g m, above the top of its shape at %.4g m", l.Tag, tag, port.Height, v.Shape.Height())
+			c.fault(l.Place, "heights in a vessel are above its base", "%s leaves %s at %.4g m, above the top of its shape at %.4g m", l.Tag, tag, port.Height, v.Shape.Height())
 		}
 	}
 	for i, f := range l.Parts {
 		if _, ok := f.Part.(elements.Crest); ok {
 			if i > 0 {
-				c.fault(f.Place, "", "the weir in %s must be the first part of its line", l.Tag)
+				c.fault(f.Place, "write it first, or put a vessel between", "the weir in %s must be the first part of its line", l.Tag)
 			}
 			if l.Leaves.Form != Crest || c.p.vessel(l.From) == nil {
 				c.fault(l.Place, "write leaves: {crest: height}", "the weir in %s needs the height of its crest in the vessel that it leaves", l.Tag)

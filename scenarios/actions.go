@@ -125,7 +125,7 @@ func (d *decoder) freeFields(f *network.Free, action network.ActionKind) []field
 		}),
 		pair("to", "least and most", &f.To, writing{style: aQuantity, dim: dim}, func(n *node) (float64, bool) {
 			if action != network.MoveValve && action != network.SetInflow {
-				d.problem(n, "free to: only travel and inflow can be free", "")
+				d.problem(n, "free to: only travel and inflow can be free", "leave to out of free")
 				return 0, false
 			}
 			v, ok := d.fixed(n, "to", dim, check)
@@ -137,13 +137,13 @@ func (d *decoder) freeFields(f *network.Free, action network.ActionKind) []field
 // pair reads two values, the second not under the first.
 func (d *decoder) pair(n *node, key string, to *[2]float64, one func(n *node) (float64, bool)) {
 	if n.form != list || len(n.items) != 2 {
-		d.problem(n, key+" is two values: from and to", "")
+		d.problem(n, key+" is two values: from and to", "e.g. "+key+": "+map[string]string{"at": `["07:00", "09:00"]`, "to": "[10 %, 100 %]"}[key])
 		return
 	}
 	a, okA := one(n.items[0])
 	b, okB := one(n.items[1])
 	if okA && okB && b < a {
-		d.problem(n, key+": the second value is under the first", "")
+		d.problem(n, key+": the second value is under the first", "write the lower one first")
 		return
 	}
 	*to = [2]float64{a, b}

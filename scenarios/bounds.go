@@ -31,7 +31,7 @@ func (d *decoder) finish(n *node, what string, b *bound) bool {
 	}
 	if b.kind.unbound {
 		if side := first(b.above, b.below); side != nil {
-			d.problem(side, b.kind.key+" has no bound", "")
+			d.problem(side, b.kind.key+" has no bound", "leave it out")
 		}
 		return first(b.above, b.below) == nil
 	}
@@ -42,7 +42,7 @@ func (d *decoder) finish(n *node, what string, b *bound) bool {
 	case b.above == nil && b.below == nil && b.typo:
 		return false
 	case b.above == nil && b.below == nil:
-		d.problem(n, fmt.Sprintf("%s needs a bound: above or below", what), "e.g. below: 1.2 "+exampleUnit(b.kind.dim))
+		d.problem(n, fmt.Sprintf("%s needs a bound: above or below", what), "e.g. below: "+d.usually(b.kind.key, b.kind.dim).example)
 		return false
 	}
 	b.to.Above = b.above != nil
@@ -79,6 +79,7 @@ func (d *decoder) bound(n *node, b *bound) bool {
 	if _, inShares := asShare(n.text); inShares && b.kind.is == network.Level {
 		return d.gaugeBound(n, key, b)
 	}
+	defer d.during(b.kind.key)()
 	v, ok := d.fixed(n, key, b.kind.dim)
 	if !ok {
 		return false

@@ -54,7 +54,7 @@ func (d *decoder) whole(root *node) {
 		s, fault := v.Element.Shape(0)
 		if fault != nil {
 			for _, one := range split(fault) {
-				d.problem(first(n.get("shape"), n), one.Error(), "")
+				d.badShape(n, one.Error())
 			}
 			continue
 		}
@@ -97,7 +97,11 @@ func (d *decoder) lineParts() {
 					continue
 				}
 				for _, says := range strings.Split(err.Error(), "; ") {
-					d.problem(parts[i], says, "")
+					body := parts[i]
+					if body.form == mapping && len(body.items) == 1 {
+						body = body.items[0]
+					}
+					d.unready(chosen{kind: f.Kind.Name, is: f.Kind, body: body}, parts[i], says)
 				}
 			}
 		}
@@ -137,22 +141,43 @@ func (d *decoder) placeOf(l *network.Line, i int) elements.Place {
 // refreshFault notes a fault that a plant found when it was made ready; it begins with the name of what has it.
 func (d *decoder) refreshFault(root *node, err error) {
 	n := root
-	if name, _, ok := strings.Cut(err.Error(), ":"); ok {
+	if name, rest, ok := strings.Cut(err.Error(), ":"); ok {
 		tag, _, _ := strings.Cut(name, ".")
-		if t := d.things[tag]; t != nil {
+		if t := d.things[tag]; t != nil && t.vessel != nil && t.class == aVessel {
+			d.badShape(t.body, strings.TrimSpace(rest))
+			return
+		} else if t != nil {
 			n = t.at
 		}
 	}
-	d.problem(n, err.Error(), "")
+	d.problem(n, err.Error(), "look at what belongs to it")
+}
+
+// badShape notes what is wrong with the shape of a vessel as a whole.
+func (d *decoder) badShape(n *node, says string) {
+	shape := first(n.get("shape"), n)
+	if strings.HasPrefix(says, "inside: ") {
+		d.problem(first(n.get("inside"), shape), says, "media and internals leave some of the space at every level: voids: 42 %, or a smaller displaces")
+		return
+	}
+	body := shape
+	if len(shape.items) == 1 {
+		body = shape.items[0]
+	}
+	c := chosen{body: body, kind: "shape"}
+	if len(shape.keys) == 1 {
+		c.kind, c.is = shape.keys[0].text, elements.Lookup(elements.Shapes, shape.keys[0].text)
+	}
+	d.unready(c, shape, says)
 }
 
 // startOf checks what is in a vessel at the start against its shape.
 func (d *decoder) startOf(n *node, v *network.Vessel, s shape.Shape) {
 	top := s.Height()
-	place := func(key string) *node { return first(n.get(key), n) }
+	place := func(key string) *node { return first(d.sets[v.Tag+"."+key], first(n.get(key), n)) }
 	if !math.IsNaN(v.Rim) {
 		if v.Rim > top*(1+1e-9) {
-			d.problem(place("rim"), fmt.Sprintf("the rim is above the top of the shape, %s", metres(top)), "")
+			d.problem(place("rim"), fmt.Sprintf("the rim is above the top of the shape, %s", metres(top)), "heights in a vessel are above its base")
 			return
 		}
 		top = v.Rim
@@ -161,13 +186,13 @@ func (d *decoder) startOf(n *node, v *network.Vessel, s shape.Shape) {
 		d.problem(place("level"), fmt.Sprintf("the start level, %s, is above the rim, %s", metres(v.Level), metres(top)), "levels are above the vessel's base")
 	}
 	if most, _ := s.Volume(top); v.Contents > most*(1+1e-9) {
-		d.problem(place("contents"), fmt.Sprintf("the start contents are more than the vessel holds to its rim, %s", fmt.Sprintf("%.4g m3", most)), "")
+		d.problem(place("contents"), fmt.Sprintf("the start contents are more than the vessel holds to its rim, %s", fmt.Sprintf("%.4g m3", most)), "write what is in it, or a level")
 	}
 	if v.EmptyAt > top {
-		d.problem(place("empty_at"), fmt.Sprintf("empty_at is above the rim, %s", metres(top)), "")
+		d.problem(place("empty_at"), fmt.Sprintf("empty_at is above the rim, %s", metres(top)), "e.g. empty_at: 80 mm")
 	}
 	if v.SpillsTo == v.Tag {
-		d.problem(place("spills_to"), v.Tag+" cannot spill into itself", "")
+		d.problem(place("spills_to"), v.Tag+" cannot spill into itself", "name another vessel or an outside point, or leave spills_to out: then it goes to the floor")
 	}
 }
 

@@ -2,6 +2,7 @@ package scenarios
 
 import (
 	"fmt"
+	"math"
 	"strings"
 
 	"headfall/elements"
@@ -14,7 +15,9 @@ type decoder struct {
 	src    *source
 	plant  *network.Plant
 	probs  []Problem
-	advice int // nearest spellings looked for; see hints
+	advice int            // nearest spellings looked for; see hints
+	what   string         // is being read
+	kind   *elements.Kind // of the mapping that is read next
 
 	things map[string]*thing         // by tag
 	refs   []reference               // looked up when all tags are known
@@ -52,6 +55,11 @@ func (d *decoder) problem(n *node, says, hint string) { d.within(n, 0, 0, says, 
 
 // within notes a fault of a part of a scalar's text.
 func (d *decoder) within(n *node, offset, length int, says, hint string) {
+	if len(d.probs) >= mostNoted { // only counted
+		d.probs = append(d.probs, Problem{File: n.src.name, At: network.Place{Line: math.MaxInt32, Column: len(d.probs)}})
+		return
+	}
+	n = n.shown()
 	column, width := n.span(offset, length)
 	d.probs = append(d.probs, Problem{File: n.src.name, At: network.Place{Line: n.at.Line, Column: column}, Says: says, Hint: hint,
 		Source: n.src.line(n.at.Line), Width: width})
@@ -70,27 +78,36 @@ func (d *decoder) hint(w string, words []string) string {
 // mapping reads a mapping along a table of fields and reports whether it had no fault of its own. what is how messages speak of it, owner the name
 // that its numbers begin with.
 func (d *decoder) mapping(n *node, what, owner string, fields []field) bool {
+	kind := d.kind
+	d.kind = nil
+	defer d.during(what)()
 	before := len(d.probs)
 	if n.form != mapping {
-		d.problem(n, what+" is written as keys with values", needs(fields))
+		d.problem(n, what+" is written as keys with values", d.needs(kind, fields))
 		return false
 	}
+	n.respell(keysOf(fields))
 	values := make([]*node, len(fields))
-	meant := map[string]bool(nil) // keys that misspelt ones stand for
+	given := make([]*node, len(fields)) // the keys
+	meant := map[string]bool{}          // keys that unknown ones may stand for
 	for i, k := range n.keys {
 		j := indexOf(fields, k.text)
+		v := n.items[i]
+		if k.was != "" {
+			d.misspelt(k, what)
+		}
 		switch {
 		case j < 0:
-			if near := d.unknown(k, n.items[i], what, fields); near != "" {
-				meant = also(meant, near)
-			}
-		case values[j] != nil:
-			d.problem(k, fmt.Sprintf("%s is given twice", k.text), fmt.Sprintf("it stands in line %d already", values[j].at.Line))
-		case n.items[i].empty && !fields[j].mayBeEmpty():
-			d.problem(k, k.text+" has no value", "")
-			values[j] = n.items[i]
+			meant[d.unknown(k, v, what, fields)] = true
+		case given[j] != nil:
+			d.problem(k, fmt.Sprintf("%s is given twice", k.text), "it stands "+where(given[j], k)+" already")
+		case v.empty && !fields[j].mayBeEmpty():
+			d.problem(k, k.text+" has no value", "e.g. "+d.sample(&fields[j]))
+			values[j], given[j] = v, k
+		case i+1 < len(n.keys) && d.commaBetween(v, n.keys[i+1], n.items[i+1]):
+			values[j], given[j] = &node{empty: true}, k
 		default:
-			values[j] = n.items[i]
+			values[j], given[j] = v, k
 		}
 	}
 	d.override(owner, fields, values)
@@ -108,8 +125,8 @@ func (d *decoder) mapping(n *node, what, owner string, fields []field) bool {
 			f.absent(n, owner)
 		}
 	}
-	if len(missing) > 0 {
-		d.problem(n, what+" needs "+listed(missing, "and"), "")
+	if len(missing) > 0 && !n.lacks {
+		d.problem(n, what+" needs "+listed(missing, "and"), d.needs(kind, fields, missing...))
 	}
 	return len(d.probs) == before
 }
@@ -139,25 +156,58 @@ func (d *decoder) override(owner string, fields []field, values []*node) {
 // set reports whether a value comes from outside.
 func (d *decoder) set(owner, key string) bool { return owner != "" && d.sets[owner+"."+key] != nil }
 
-func also(set map[string]bool, word string) map[string]bool {
-	if set == nil {
-		set = map[string]bool{}
-	}
-	set[word] = true
-	return set
+// during notes what is being read, for the hints, and returns what ends it.
+func (d *decoder) during(what string) (end func()) {
+	before := d.what
+	d.what = what
+	return func() { d.what = before }
 }
 
-// unknown notes a key that is not in the table and returns the one it is most like, or "".
+// misspelt notes a key that was read as the one it is most like.
+func (d *decoder) misspelt(k *node, what string) {
+	d.problem(k, fmt.Sprintf("%s has no key %s", what, quoted(k.was)), "did you mean "+k.text+"?")
+}
+
+// unknown notes a key that is not in the table and returns the one that it may stand for.
 func (d *decoder) unknown(k, v *node, what string, fields []field) (near string) {
-	if k.form != scalar || k.text == "<<" {
-		return "" // noted when the tree was made
+	if k.form != scalar || k.text == "<<" || k.comma {
+		return "" // noted already
 	}
 	keys := keysOf(fields)
-	near = nearest(k.text, keys)
 	hint := d.hint(k.text, keys)
-	if v.empty && v.text == "" && near == "" && strings.ContainsAny(k.src.line(k.at.Line), "{[") {
+	if len(keys) <= fewWords {
+		hint = oneOf(keys)
+	}
+	if v.empty && v.text == "" && strings.ContainsAny(k.src.line(k.at.Line), "{[") {
 		hint = "a comma ends a text inside braces: put the whole text in quotes, or write one key a line"
 	}
 	d.problem(k, fmt.Sprintf("%s has no key %s", what, quoted(k.text)), hint)
-	return near
+	if d.advice > enoughAdvice {
+		return ""
+	}
+	return nearest(k.text, keys)
+}
+
+// commaBetween notes a number with a decimal comma inside braces, which YAML reads as a value and a key: {bore: 82,5 mm}.
+func (d *decoder) commaBetween(v, next, of *node) bool {
+	if v.form != scalar || !v.plain || !next.plain || !of.empty || of.text != "" || !digits(v.text) || next.text == "" || !digits(next.text[:1]) {
+		return false
+	}
+	next.comma = true
+	whole := *v
+	whole.text = v.text + "," + next.text // as it stands in the line, when there is no blank
+	d.problem(&whole, v.key.text+": decimals are parted by a point", "write "+v.text+"."+next.text)
+	return true
+}
+
+func digits(s string) bool {
+	return s != "" && strings.Trim(strings.TrimPrefix(s, "-"), "0123456789") == ""
+}
+
+// where tells where a node stands, as seen from another.
+func where(n, from *node) string {
+	if n.at.Line == from.at.Line {
+		return fmt.Sprintf("in column %d", n.at.Column)
+	}
+	return fmt.Sprintf("in line %d", n.at.Line)
 }

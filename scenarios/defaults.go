@@ -1,6 +1,7 @@
 package scenarios
 
 import (
+	"fmt"
 	"math"
 
 	"headfall/elements"
@@ -11,6 +12,7 @@ const (
 	standardGravity    = 9.80665  // m/s²
 	standardAtmosphere = 101325.0 // Pa
 	mostSamples        = 5e6      // of the stored series
+	mostNumbers        = 5e7      // in all series together: 400 MB
 )
 
 // spacing fills in the spacing of the series and refuses one that would make it too long.
@@ -21,7 +23,21 @@ func (d *decoder) spacing(root *node) {
 		d.assumed("", "report_every", quantity.FormatDuration(p.ReportEvery))
 	}
 	if p.ReportEvery > 0 && p.RunFor/p.ReportEvery > mostSamples {
-		d.problem(first(root.get("report_every"), first(root.get("run_for"), root)), "report_every is too short for this run_for: the stored series would be too long", "")
+		d.problem(first(root.get("report_every"), first(root.get("run_for"), root)), "report_every is too short for this run_for: the stored series would be too long", "leave it out, or write e.g. report_every: "+quantity.FormatDuration(defaultSpacing(p.RunFor)))
+	}
+}
+
+// storable refuses a series that would not fit into memory.
+func (d *decoder) storable(root *node) {
+	p := d.plant
+	columns := 3*len(p.Vessels) + 2*len(p.Lines) + len(p.Tees)
+	for _, l := range p.Lines {
+		columns += len(l.Parts)
+	}
+	if rows := p.RunFor / p.ReportEvery; p.ReportEvery > 0 && rows <= mostSamples && rows*float64(columns) > mostNumbers {
+		d.problem(first(root.get("report_every"), first(root.get("run_for"), root)),
+			fmt.Sprintf("the stored series would hold %.0f million numbers, %.0f million are taken", rows*float64(columns)/1e6, mostNumbers/1e6),
+			"write a longer report_every, e.g. "+quantity.FormatDuration(defaultSpacing(p.RunFor)))
 	}
 }
 

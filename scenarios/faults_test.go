@@ -69,11 +69,11 @@ func TestFaults(t *testing.T) {
 		{"from: HDR, to: T-2", "from: V-1, to: T-2", "from: V-1 is a valve, not a vessel, tee or outside point | one of AIR, HDR, T-1, T-2"},
 		{"kv: 60", "kv: 0", "kv must be more than 0"},
 		{"kv: 60", "kv: 60 m3/h", "kv: kv is a bare number: by definition m3/h of water at 1 bar | write 60"},
-		{"length: 5 m, bore: 80 mm, roughness: 0.05 mm}}, {valve", "length: 0 m, bore: -80 mm, roughness: 0.05 mm}}, {valve", "length must be more than 0; bore must be more than 0"},
+		{"length: 5 m, bore: 80 mm, roughness: 0.05 mm}}, {valve", "length: 0 m, bore: -80 mm, roughness: 0.05 mm}}, {valve", "length must be more than 0 | e.g. 24 m; bore must be more than 0 | e.g. 82.5 mm"},
 		{"rate: 5 m3/h, starts: {level: T-2, above: 1.5 m}", "rate: 5 m3/h, starts: {level: T-2, above: 0.4 m}", "the start level must be above the stop level"},
 		{"V-1, kv: 60", "T-2, kv: 60", "T-2 is the tag of a vessel already | it stands in line 7; tags are unique over the whole file; valve: there is no valve \"V-1\""},
 		{"  HDR: {elevation: 4 m}", "  on: {elevation: 4 m}", "on cannot be a tag: readers of YAML make something else of it | add a number or a letter, e.g. on-1"},
-		{"  T-1: {", "  1T: {", `"1T" cannot be a tag: it begins with no letter | e.g. V-1T`},
+		{"  T-1: {", "  1T: {", `"1T" cannot be a tag: it begins with no letter | e.g. T-1T`},
 		{"id: s1, at: 5 min", "id: s1, after: s2", `after: there is no step or hold "s2" | did you mean s1?`},
 		{"id: s1, at: 5 min", "id: s1, after: s1", "after goes round in a circle: s1 waits for s1 | give one of them another trigger"},
 		{"id: s1, at: 5 min, ", "id: s1, ", `step s1 has no trigger | it needs at: "06:20" or 20 min, when: a condition, or after: another step`},
@@ -105,7 +105,7 @@ func TestFaults(t *testing.T) {
 		{"{water: 12 °C}", "{water: 12 °C, syrup: 3 m}", "liquid names one kind, not 2"},
 		{"{water: 12 °C}", "{water: 120 °C}", ""},
 		{"  T-2: {shape", "  T-2: {like: T-9, shape", `like: there is no vessel "T-9" | did you mean T-1?`},
-		{"  T-2: {shape: {box: {length: 2 m, width: 2 m, height: 3 m}}", "  T-2: {like: T-2", "vessel T-2 needs shape; like goes round in a circle at T-2"},
+		{"  T-2: {shape: {box: {length: 2 m, width: 2 m, height: 3 m}}", "  T-2: {like: T-2", "like goes round in a circle at T-2 | one of them must be written out"},
 		{"at: 5 min, valve", "when: {opening: V-1, above: 20 %}, valve", "step s1 waits for what cannot change: opening of V-1 | no other step moves it"},
 		{"at: 5 min, valve", "when: {level: T-2, above: 7 m}, valve", "step s1 waits for a level that T-2 never comes to: 7 m, its rim is at 3 m"},
 		{"at: 5 min, valve", "when: {level: T-2, below: -1 m}, valve", "step s1 waits for a level under the base of T-2"},
@@ -203,7 +203,7 @@ func TestProblemShowsItsPlace(t *testing.T) {
 	want := `dir/p.yaml:9:25: elevation: "of x" is not understood here
   9 |   HDR: {elevation: 4 mm of x}
     |                         ^^^^
-  hint: e.g. 4.2 m
+  hint: write 4 mm
 dir/p.yaml:13:58: pipe has no key "boer"
   13 |   L-1: {from: T-1, to: HDR, parts: [{pipe: {length: 5 m, boer: 80 mm, roughness: 0.05 mm}}, {valve: {tag: V-1, kv: 60}}]}
      |                                                          ^^^^
@@ -222,8 +222,8 @@ func TestFilesThatAreNoPlants(t *testing.T) {
 		"":                      "this file is empty | headfall new writes one to begin with",
 		"# nothing\n":           "this file is empty | headfall new writes one to begin with",
 		"- a\n- b\n":            "a plant file is written as keys with values | it begins with headfall: 1",
-		"headfall: 1\n\tx: 3\n": "this cannot be read as YAML: found a tab character that violates indentation | indent with blanks, not with tabs",
-		"headfall: [1\n":        "this cannot be read as YAML",
+		"headfall: 1\n\tx: 3\n": "this line is indented with a tab | indent with blanks",
+		"headfall: [1\n":        "this [ is never closed | write ] where it ends",
 		"a: \xff\n":             "this is not UTF-8 text | save the file as UTF-8",
 		"headfall: 1\nrun_for: 1 h\nx: " + strings.Repeat("[", 100) + strings.Repeat("]", 100): "this is nested too deeply",
 		"headfall: 1\na: &a [1,1,1,1,1,1,1,1,1,1]\nb: &b [*a,*a,*a,*a,*a,*a,*a,*a,*a,*a]\nc: &c [*b,*b,*b,*b,*b,*b,*b,*b,*b,*b]\n" +

@@ -1,7 +1,10 @@
 package scenarios
 
 import (
+	"fmt"
+	"slices"
 	"strings"
+	"unicode"
 
 	"headfall/elements"
 	"headfall/elements/quantity"
@@ -103,16 +106,22 @@ func keysOf(fields []field) []string {
 	return keys
 }
 
-// needs tells which keys must be written, as a hint.
-func needs(fields []field) string {
+// needs shows as a hint how a kind is written, or the keys that must be: those named, or all.
+func (d *decoder) needs(k *elements.Kind, fields []field, only ...string) string {
+	if k != nil && k.Sample != "" {
+		return sampleOf(k)
+	}
 	var must []string
 	for j := range fields {
-		if fields[j].need == elements.Required {
-			must = append(must, fields[j].key+": …")
+		if f := &fields[j]; f.need == elements.Required && (len(only) == 0 || slices.Contains(only, f.key)) {
+			must = append(must, d.sample(f))
 		}
 	}
-	if len(must) == 0 {
-		return ""
+	switch {
+	case len(must) == 0:
+		return "each key on a line of its own, with its value behind a colon"
+	case len(only) > 0:
+		return "e.g. " + strings.Join(must, ", ")
 	}
 	return "e.g. {" + strings.Join(must, ", ") + "}"
 }
@@ -139,12 +148,18 @@ func quoted(s string) string {
 	if len(runes) > 40 {
 		runes = append(runes[:39], '…')
 	}
-	return `"` + strings.Map(func(r rune) rune {
-		if r < ' ' || r == 0x7f || r >= 0x80 && r < 0xa0 {
-			return ' '
+	var b strings.Builder
+	for _, r := range runes {
+		switch {
+		case unicode.IsControl(r):
+			b.WriteByte(' ')
+		case unicode.Is(unicode.Cf, r): // blanks without width, turns of direction
+			fmt.Fprintf(&b, `\u%04x`, r)
+		default:
+			b.WriteRune(r)
 		}
-		return r
-	}, string(runes)) + `"`
+	}
+	return `"` + b.String() + `"`
 }
 
 // object makes a field that holds a mapping of its own; take gets the value when all was read.

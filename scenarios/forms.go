@@ -19,7 +19,7 @@ func (d *decoder) tableParam(q *elements.Param) field {
 func (d *decoder) nestedParam(q *elements.Param) field {
 	return d.kindField(q.Room, q.Key, q.Need, q.Help, func(c chosen, n *node) {
 		if err := q.Set(c.element, c.kind); err != nil {
-			d.problem(n, q.Key+": "+err.Error(), "")
+			d.problem(n, q.Key+": "+err.Error(), d.example(q.Room, q.Key))
 		}
 	})
 }
@@ -34,7 +34,7 @@ func (d *decoder) seriesParam(q *elements.Param) field {
 				return
 			}
 			if err := q.Add(c.element, c.kind); err != nil {
-				d.problem(entry, q.Key+": "+err.Error(), "")
+				d.problem(entry, q.Key+": "+err.Error(), d.example(q.Room, q.Key))
 			}
 		})
 	}}
@@ -89,7 +89,7 @@ func (d *decoder) counts(fields []field, q *elements.Param) []field {
 	for _, w := range q.Words {
 		fields = append(fields, field{key: w, help: q.Help, written: inUnits(quantity.Count), read: func(n *node, _ string) {
 			if v, ok := d.fixed(n, w, quantity.Count, elements.NotNegative); ok && v.SI > 1e6 {
-				d.problem(n, w+" is more than anyone has", "")
+				d.problem(n, w+" is more than anyone has", "it is a count of pieces")
 			} else if ok {
 				q.Count[w] = int(v.SI)
 				if q.Given != nil {

@@ -11,6 +11,11 @@ const (
 	maxNodes = 1_000_000 // that aliases may add
 )
 
+const (
+	tooDeepSays = "this is nested too deeply"
+	tooDeepHint = "is there a bracket or a brace that is never closed?"
+)
+
 // grower turns yaml nodes into ours.
 type grower struct {
 	d     *decoder
@@ -34,10 +39,11 @@ func (g *grower) grow(y *yaml.Node, depth int) (t grown) {
 	}
 	n := g.fresh(y)
 	if depth > maxDepth {
-		return g.refuse(n, "this is nested too deeply")
+		return g.refuse(n, tooDeepSays, tooDeepHint)
 	}
 	if y.Style&yaml.TaggedStyle != 0 {
-		g.d.problem(n, "YAML tags are not used here: "+y.Tag, "leave "+y.Tag+" out")
+		tag := &node{src: g.src, at: n.at, text: y.Tag, plain: true}
+		g.d.problem(tag, "YAML tags are not used here: "+y.Tag, "leave "+y.Tag+" out")
 	}
 	if y.Anchor != "" {
 		g.open[y] = true
@@ -74,6 +80,9 @@ func (g *grower) children(y *yaml.Node, depth int, t *grown) bool {
 		if child.n.empty && child.n.text == "" && n.form == mapping {
 			child.n.at = n.keys[len(n.keys)-1].at
 		}
+		if n.form == mapping && c.Kind != yaml.AliasNode {
+			child.n.key = n.keys[len(n.keys)-1]
+		}
 		n.items = append(n.items, child.n)
 	}
 	return true
@@ -83,7 +92,7 @@ func (g *grower) children(y *yaml.Node, depth int, t *grown) bool {
 func (g *grower) key(y *yaml.Node, k *node) {
 	switch {
 	case k.form != scalar:
-		g.d.problem(k, "a key must be one word", "")
+		g.d.problem(k, "a key must be one word", "write one key a line, each with its own value")
 	case y.Tag == "!!merge":
 		g.d.problem(k, "merge keys (<<) are not understood", "vessels can be copied with like: TAG")
 	}
@@ -91,24 +100,24 @@ func (g *grower) key(y *yaml.Node, k *node) {
 
 // alias returns what an alias stands for, within bounds.
 func (g *grower) alias(y *yaml.Node, depth int) grown {
-	here := &node{src: g.src, at: network.Place{Line: y.Line, Column: y.Column}}
+	here := &node{src: g.src, at: network.Place{Line: y.Line, Column: y.Column}, text: "*" + y.Value, plain: true}
 	t := g.done[y.Alias]
 	switch {
 	case g.open[y.Alias]:
-		return g.refuse(here, "*"+y.Value+" stands inside what it stands for")
+		return g.refuse(here, "*"+y.Value+" stands inside what it stands for", "write out what is meant here")
 	case t.n == nil:
-		return g.refuse(here, "*"+y.Value+" stands for nothing")
+		return g.refuse(here, "*"+y.Value+" stands for nothing", "write & and its name before what it stands for")
 	case depth+t.height > maxDepth:
-		return g.refuse(here, "with what *"+y.Value+" stands for this is nested too deeply")
+		return g.refuse(here, "with what *"+y.Value+" stands for this is nested too deeply", "write out what is meant here")
 	}
 	if g.added += t.size; g.added > maxNodes {
-		return g.refuse(here, "aliases make this file too large")
+		return g.refuse(here, "aliases make this file too large", "write out what is meant, or leave it away")
 	}
 	return t
 }
 
-func (g *grower) refuse(n *node, says string) grown {
-	g.d.problem(n, says, "")
+func (g *grower) refuse(n *node, says, hint string) grown {
+	g.d.problem(n, says, hint)
 	return grown{}
 }
 

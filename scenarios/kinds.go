@@ -2,6 +2,8 @@ package scenarios
 
 import (
 	"fmt"
+	"regexp"
+	"strconv"
 	"strings"
 
 	"headfall/elements"
@@ -17,7 +19,8 @@ var roomWords = map[elements.Room]string{
 type chosen struct {
 	element elements.Element
 	kind    string
-	body    *node // its parameters
+	is      *elements.Kind // nil for a trim of the file
+	body    *node          // its parameters
 }
 
 // element reads a kind: its bare word, or a mapping of one key. name is what its numbers begin with.
@@ -27,20 +30,34 @@ func (d *decoder) element(room elements.Room, n *node, what string, name func(ki
 		return c, false
 	}
 	kind := elements.Lookup(room, word.text)
+	if _, named := d.trims[word.text]; kind == nil && !(named && room == elements.Trims) {
+		kind = d.likeliest(room, word)
+	}
 	if kind == nil {
 		if _, named := d.trims[word.text]; named && room == elements.Trims {
 			return d.namedTrim(word)
 		}
-		d.problem(word, fmt.Sprintf("there is no %s %s", roomWords[room], quoted(word.text)), d.hint(word.text, d.kindNames(room)))
 		return c, false
 	}
-	c = chosen{element: kind.New(), kind: kind.Name, body: body}
+	c = chosen{element: kind.New(), kind: kind.Name, is: kind, body: body}
 	fields := d.params(c.element)
 	if body.form != mapping {
 		body = d.shorthand(body, fields)
 		c.body = body
 	}
+	d.kind = kind
 	return c, d.mapping(body, kind.Name, name(kind.Name, body), fields)
+}
+
+// likeliest notes a kind that there is not, and returns the one that is spelled most like it, so that what it holds is read all the same.
+func (d *decoder) likeliest(room elements.Room, word *node) *elements.Kind {
+	names := d.kindNames(room)
+	hint := d.hint(word.text, names)
+	if word.text == "" {
+		hint = oneOf(names)
+	}
+	d.problem(word, fmt.Sprintf("there is no %s %s", roomWords[room], quoted(word.text)), hint)
+	return elements.Lookup(room, nearest(word.text, names))
 }
 
 // kindOf returns the word of a kind and the node of its parameters.
@@ -74,6 +91,9 @@ func (d *decoder) example(room elements.Room, what string) string {
 	}
 	return "e.g. " + what + ": {" + k.Name + ": " + braced(k.Sample) + "}"
 }
+
+// sampleOf shows how a kind is written.
+func sampleOf(k *elements.Kind) string { return "e.g. " + k.Name + ": " + braced(k.Sample) }
 
 // braced puts braces around the parameters of a specimen that lacks them.
 func braced(sample string) string {
@@ -122,11 +142,63 @@ func (d *decoder) kindNames(room elements.Room) []string {
 func (d *decoder) ready(c chosen, n *node) bool {
 	if err := c.element.Ready(); err != nil {
 		for _, one := range split(err) {
-			d.problem(n, c.kind+": "+one.Error(), "")
+			d.unready(c, n, one.Error())
 		}
 		return false
 	}
 	return true
+}
+
+// unready notes what is wrong with the parameters of an element, at the one it speaks of.
+func (d *decoder) unready(c chosen, n *node, says string) {
+	hint := "headfall kinds " + c.kind + " tells what it takes"
+	if c.is != nil && c.is.Sample != "" {
+		hint = sampleOf(c.is)
+	}
+	if !strings.Contains(says, c.kind) {
+		says = c.kind + ": " + says
+	}
+	at := spokenOf(c.body, n, says)
+	if at.key != nil && (at.key.text == "starts" || at.key.text == "stops") {
+		hint = "e.g. starts: {level: SUMP, above: 1.2 m}, stops: {level: SUMP, below: 0.4 m}"
+	}
+	d.problem(at, says, hint)
+}
+
+var (
+	spoken    = regexp.MustCompile(`[a-z_]+`)
+	spokenRow = regexp.MustCompile(`row (\d+)`)
+)
+
+// spokenOf finds what a fault speaks of: a row of a table, or the first of the keys that it names; n when it names none.
+func spokenOf(body, n *node, says string) *node {
+	if m := spokenRow.FindStringSubmatch(says); m != nil {
+		i, _ := strconv.Atoi(m[1])
+		if rows := tableIn(body); rows != nil && i >= 1 && i <= len(rows.items) {
+			return rows.items[i-1]
+		}
+	}
+	for _, word := range spoken.FindAllString(says, -1) {
+		for _, key := range []string{word, word + "s"} {
+			if v := body.get(key); v != nil {
+				return v
+			}
+		}
+	}
+	return n
+}
+
+// tableIn is a table: the node itself, or the first of its values that is a list.
+func tableIn(n *node) *node {
+	if n.form == list {
+		return n
+	}
+	for _, v := range n.items {
+		if v.form == list {
+			return v
+		}
+	}
+	return nil
 }
 
 // split takes joined errors apart.

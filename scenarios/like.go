@@ -48,6 +48,7 @@ func (c *copier) written(key, n *node) *node {
 		return done
 	}
 	own := n.without("like")
+	own.lacks = true       // until the other's keys are there
 	c.done[key.text] = own // until it is known to be whole
 	if !c.d.text(like, "like") {
 		return own
@@ -58,14 +59,14 @@ func (c *copier) written(key, n *node) *node {
 		c.d.problem(like, fmt.Sprintf("like: there is no vessel %s", quoted(like.text)), c.d.hint(like.text, c.tags()))
 		return own
 	case c.open[key.text], like.text == key.text:
-		c.d.problem(like, fmt.Sprintf("like goes round in a circle at %s", key.text), "")
+		c.d.problem(like, fmt.Sprintf("like goes round in a circle at %s", key.text), "one of them must be written out")
 		return own
 	case model.form != mapping:
 		return own
 	}
 	c.open[key.text] = true
 	if c.open[like.text] {
-		c.d.problem(like, fmt.Sprintf("like goes round in a circle at %s", like.text), "")
+		c.d.problem(like, fmt.Sprintf("like goes round in a circle at %s", like.text), "one of them must be written out")
 		return own
 	}
 	whole := merged(renamed(c.written(&node{text: like.text}, model), key.text+"/"), own)
@@ -109,7 +110,7 @@ func merged(model, own *node) *node {
 		c := *model
 		whole = &c
 	}
-	whole.at, whole.src, whole.flow = own.at, own.src, own.flow
+	whole.at, whole.src, whole.flow, whole.key = own.at, own.src, own.flow, own.key
 	return whole
 }
 

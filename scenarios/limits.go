@@ -87,7 +87,7 @@ func (d *decoder) wholeLimit(l *limit, n *node) bool {
 		d.problem(n, "emptied needs within or by", `e.g. within: 4 h, or by: "10:00"`)
 		return false
 	case l.by != nil && l.within != nil:
-		d.problem(l.by, "limit has within and by: only one of them can hold", "")
+		d.problem(l.by, "limit has within and by: only one of them can hold", "leave one of them out")
 		return false
 	case !emptied && (l.by != nil || l.within != nil):
 		d.problem(first(l.by, l.within), "within and by go with emptied only", "until: ends a limit's time")
@@ -128,19 +128,19 @@ func (d *decoder) window(l *limit, n *node) bool {
 	volume, starts := slices.Contains(counted, l.Must.Subject), l.Must.Subject == network.Starts
 	switch {
 	case l.Since.Given && l.Until.Given && l.Since.At.Given && l.Until.At.Given && l.Until.At.S <= l.Since.At.S:
-		d.problem(n.get("until"), "until is not after since: the limit would never be judged", "")
+		d.problem(n.get("until"), "until is not after since: the limit would never be judged", "is it the other way round?")
 	case l.Since.At.Given && d.plant.RunFor > 0 && l.Since.At.S >= d.plant.RunFor:
-		d.problem(n.get("since"), "since is not before the end of the run: the limit would never be judged", "")
+		d.problem(n.get("since"), "since is not before the end of the run: the limit would never be judged", "run_for is "+quantity.FormatDuration(d.plant.RunFor))
 	case l.AveragedOver > 0 && !slices.Contains(averaged, l.Must.Subject):
-		d.problem(n.get("averaged_over"), "averaged_over does not go with "+l.must.kind.key, "")
+		d.problem(n.get("averaged_over"), "averaged_over does not go with "+l.must.kind.key, "leave it out")
 	case l.InAny > 0 && !volume:
-		d.problem(n.get("in_any"), "in_any goes with volumes only", "")
+		d.problem(n.get("in_any"), "in_any goes with volumes only", "e.g. {passed: AIR, below: 150 m3, in_any: 24 h}")
 	case l.InAny > 0 && l.each != "":
-		d.problem(n.get("in_any"), "limit has each and in_any: only one of them can hold", "")
+		d.problem(n.get("in_any"), "limit has each and in_any: only one of them can hold", "leave one of them out")
 	case l.each == "hour" && !starts:
 		d.problem(n.get("each"), "each: hour goes with starts only", "in_any: 1 h is a volume in any hour")
 	case l.each == "day" && !volume && !starts:
-		d.problem(n.get("each"), "each goes with volumes and starts only", "")
+		d.problem(n.get("each"), "each goes with volumes and starts only", "leave it out, or e.g. {passed: AIR, below: 150 m3, each: day}")
 	case l.each == "day" && d.plant.Start.IsZero():
 		d.problem(n.get("each"), "each: a calendar day needs the clock time of the start", `add start: "2027-10-09 06:00" to the file, or write in_any: 24 h`)
 	default:

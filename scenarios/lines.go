@@ -21,7 +21,7 @@ func (d *decoder) line(key, n *node) {
 	before := len(d.probs)
 	d.mapping(n, "line "+l.Tag, l.Tag, d.lineFields(l))
 	if to := n.get("to"); to != nil && l.From == l.To && l.From != "" {
-		d.problem(to, fmt.Sprintf("line %s runs from %s to itself", l.Tag, l.From), "")
+		d.problem(to, fmt.Sprintf("line %s runs from %s to itself", l.Tag, l.From), "to: names another vessel, tee or outside point")
 	}
 	d.lines = append(d.lines, l)
 	if len(d.probs) == before {

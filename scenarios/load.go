@@ -16,11 +16,11 @@ type Options struct {
 	Case string   // name of one of the file's cases, to be applied; "" for the plan itself
 }
 
-const maxSize = 64 << 20 // bytes of a file
+const maxSize = 8 << 20 // bytes of a file; ten thousand vessels take two million
 
 // Load reads a plant file; name is what messages call it. The error is a *Problems with every fault of the file, also of cases that are not asked for.
 func Load(name string, data []byte, opt Options) (*network.Plant, error) {
-	src := &source{name: name, text: string(data)}
+	src := newSource(name, data)
 	d, err := load(src, opt)
 	if err != nil {
 		return nil, err
@@ -39,6 +39,7 @@ func load(src *source, opt Options) (*decoder, error) {
 	if root == nil {
 		return nil, first.fail(nil)
 	}
+	root.respell(keysOf(first.planFields())) // a section is read, whatever its name looks like
 	root = first.copies(root)
 	cases := casesOf(root)
 	sets := first.arguments(opt.Set)
@@ -61,12 +62,19 @@ func load(src *source, opt Options) (*decoder, error) {
 		}
 	}
 	if opt.Case != "" && !slices.Contains(names(cases), opt.Case) {
-		first.probs = append(first.probs, Problem{File: src.name, Says: fmt.Sprintf("there is no case %s", quoted(opt.Case)), Hint: first.hint(opt.Case, names(cases))})
+		first.probs = append(first.probs, Problem{File: src.name, Says: fmt.Sprintf("there is no case %s", quoted(opt.Case)), Hint: caseHint(opt.Case, names(cases))})
 	}
 	if len(first.probs)+len(found) > 0 {
 		return nil, first.fail(found)
 	}
 	return chosen, nil
+}
+
+func caseHint(asked string, cases []string) string {
+	if len(cases) == 0 {
+		return "this file has no cases"
+	}
+	return didYouMean(asked, cases)
 }
 
 // fail joins the problems found.
@@ -108,6 +116,7 @@ func (d *decoder) decode(root *node) {
 	for _, check := range d.after {
 		check()
 	}
+	d.storable(root)
 	d.circles()
 	d.doubts()
 	d.whole(root)

@@ -1,8 +1,8 @@
 package scenarios
 
 import (
-	"errors"
 	"math"
+	"regexp"
 	"strings"
 	"time"
 
@@ -13,13 +13,16 @@ import (
 
 const day = 86400 // s
 
+// clockLike are times of day as they are not written here: 6 pm, 6h30.
+var clockLike = regexp.MustCompile(`(?i)^\s*\d{1,2}(\s*[ap]\.?m\.?|\s*h\s*\d{2})\s*$`)
+
 // moment reads a clock time, a date with time, or a duration from the start.
 func (d *decoder) moment(n *node, key string) (m network.Moment, ok bool) {
 	if !d.text(n, key) {
 		return m, false
 	}
 	m = network.Moment{Text: strings.TrimSpace(n.text), Given: true}
-	if !strings.ContainsRune(n.text, ':') {
+	if !strings.ContainsRune(n.text, ':') && !clockLike.MatchString(n.text) {
 		m.S, ok = d.elapsed(n, key)
 		return m, ok
 	}
@@ -46,18 +49,14 @@ func (d *decoder) moment(n *node, key string) (m network.Moment, ok bool) {
 func (d *decoder) elapsed(n *node, key string) (float64, bool) {
 	v, err := quantity.ParseTime(n.text)
 	if err != nil {
-		var q *quantity.Error
-		if errors.As(err, &q) && q.Hint == "" {
-			q.Hint = `a time is a clock, "06:20", or a duration from the start, 20 min`
-		}
-		d.badText(n, key, err)
+		d.badValue(n, key, quantity.Time, err)
 		return 0, false
 	}
 	switch {
 	case v.Doubt.Stated():
 		d.problem(n, key+": a moment carries no doubt", "write one time")
 	case !(v.SI >= 0) || math.IsInf(v.SI, 0):
-		d.problem(n, key+" lies before the start", "")
+		d.problem(n, key+" lies before the start", "times are counted from the start on, e.g. 20 min")
 	default:
 		n.echo = v.Echo()
 		return v.SI, true
@@ -118,7 +117,7 @@ func (d *decoder) hours(n *node, key string, m *[2]network.Moment) bool {
 		m[i] = v
 	}
 	if m[0].S == m[1].S {
-		d.problem(n, key+" begins and ends at one time", "")
+		d.problem(n, key+" begins and ends at one time", `e.g. ["06:00", "22:00"]`)
 		return false
 	}
 	return true

@@ -9,7 +9,7 @@ import (
 // Normalise writes a plant file in plain form: block style, every text in quotes, quantities in plain typography, aliases and copies written out. It
 // loads to the same plant. The error is a *Problems.
 func Normalise(name string, data []byte) ([]byte, error) {
-	src := &source{name: name, text: string(data)}
+	src := newSource(name, data)
 	if _, err := load(src, Options{}); err != nil {
 		return nil, err
 	}

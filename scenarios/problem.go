@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"slices"
 	"strings"
+	"unicode"
 	"unicode/utf8"
 
 	"headfall/network"
@@ -56,8 +57,11 @@ func window(line string, column, width int) (text string, at, wide int) {
 	}
 	cut := slices.Clone(runes[from:to])
 	for i, r := range cut {
-		if r < ' ' || r == 0x7f || r >= 0x80 && r < 0xa0 {
+		switch {
+		case unicode.IsControl(r):
 			cut[i] = ' '
+		case unicode.Is(unicode.Cf, r): // of no width, or turning the line round: shown, so that the caret stands right
+			cut[i] = '·'
 		}
 	}
 	at = column - from
@@ -73,7 +77,10 @@ func window(line string, column, width int) (text string, at, wide int) {
 // Problems is every fault of a file, in the order of their places.
 type Problems struct{ List []Problem }
 
-const mostShown = 100 // faults that are printed; who mends these sees the next
+const (
+	mostShown = 100  // faults that are printed; who mends these sees the next
+	mostNoted = 1000 // that are written out while a file is read; the rest are counted
+)
 
 // Error prints them all; where there are very many, the first of them and how many more there are.
 func (p *Problems) Error() string {

@@ -10,7 +10,7 @@ import (
 // table reads rows of quantities.
 func (d *decoder) table(n *node, key string, cols []quantity.Dim) ([][]float64, bool) {
 	shape := fmt.Sprintf("%s is rows of %d values", key, len(cols))
-	example := tableExample(cols)
+	example := "e.g. " + key + ": " + tableSample(cols)
 	if n.form != list || len(n.items) == 0 {
 		d.problem(n, shape, example)
 		return nil, false
@@ -35,37 +35,12 @@ func (d *decoder) table(n *node, key string, cols []quantity.Dim) ([][]float64, 
 	return rows, ok
 }
 
-func tableExample(cols []quantity.Dim) string {
-	row := ""
-	for i, c := range cols {
-		if i > 0 {
-			row += ", "
-		}
-		row += "1"
-		if u := exampleUnit(c); u != "" {
-			row += " " + u
-		}
-	}
-	return "e.g. [[" + row + "], …]"
-}
-
-// exampleUnit is the unit shown for a dimension.
-func exampleUnit(dim quantity.Dim) string {
-	if units := quantity.Units(dim); len(units) > 0 && !dim.Bare() {
-		return units[0]
-	}
-	if dim == quantity.Ratio {
-		return "%"
-	}
-	return ""
-}
-
 // increasing notes rows whose first column does not grow; two equal ones are a step where that is allowed.
 func (d *decoder) increasing(n *node, key string, rows [][]float64, steps bool) bool {
 	for i := 1; i < len(rows); i++ {
 		step := steps && rows[i][0] == rows[i-1][0] && (i < 2 || rows[i-2][0] < rows[i][0])
 		if !(rows[i][0] > rows[i-1][0]) && !step {
-			d.problem(n.items[i].items[0], key+": rows do not increase", "")
+			d.problem(n.items[i].items[0], key+": rows do not increase", fmt.Sprintf("it is %s in the row before", quoted(n.items[i-1].items[0].text)))
 			return false
 		}
 	}
@@ -83,13 +58,13 @@ func (d *decoder) course(n *node, owner, key string, dim quantity.Dim, to *[][]f
 		return
 	}
 	if n.form != list || len(n.items) == 0 {
-		d.problem(n, key+" is one value, or rows of time and value", tableExample([]quantity.Dim{quantity.Time, dim}))
+		d.problem(n, key+" is one value, or rows of time and value", "e.g. "+key+": "+tableSample([]quantity.Dim{quantity.Time, dim}))
 		return
 	}
 	rows, ok := make([][]float64, 0, len(n.items)), true
 	for _, r := range n.items {
 		if r.form != list || len(r.items) != 2 {
-			d.problem(r, key+" is rows of time and value", tableExample([]quantity.Dim{quantity.Time, dim}))
+			d.problem(r, key+" is rows of time and value", "e.g. "+key+": "+tableSample([]quantity.Dim{quantity.Time, dim}))
 			ok = false
 			continue
 		}

@@ -16,9 +16,9 @@ import (
 func (d *decoder) text(n *node, key string) bool {
 	switch {
 	case n.form != scalar:
-		d.problem(n, key+" is one value, not "+map[form]string{mapping: "keys with values", list: "a list"}[n.form], "")
+		d.problem(n, key+" is one value, not "+map[form]string{mapping: "keys with values", list: "a list"}[n.form], "write one value behind "+key+":")
 	case n.empty:
-		d.problem(n, key+" has no value", "")
+		d.problem(n, key+" has no value", "write one behind "+key+":, or leave "+key+" out")
 	default:
 		return true
 	}
@@ -36,7 +36,7 @@ func (d *decoder) quantity(n *node, key string, dim quantity.Dim) (quantity.Valu
 	}
 	v, err := quantity.Parse(n.text, dim)
 	if err != nil {
-		d.badText(n, key, err)
+		d.badValue(n, key, dim, err)
 		return v, false
 	}
 	n.echo = v.Echo()
@@ -51,7 +51,22 @@ func (d *decoder) badText(n *node, key string, err error) {
 		d.within(n, q.Offset, q.Length, key+": "+q.Msg, q.Hint)
 		return
 	}
-	d.problem(n, key+": "+err.Error(), "")
+	d.problem(n, key+": "+err.Error(), "write it anew")
+}
+
+// badValue notes what the reader of quantities found. Where it could only show any value of the dimension, what is usual for the key is shown.
+func (d *decoder) badValue(n *node, key string, dim quantity.Dim, err error) {
+	var q *quantity.Error
+	if errors.As(err, &q) {
+		u := d.usually(key, dim)
+		switch {
+		case q.Number != "":
+			q.Hint = "e.g. " + strings.TrimSpace(q.Number+" "+u.unit(q.Number, dim))
+		case q.Example:
+			q.Hint = "e.g. " + u.example
+		}
+	}
+	d.badText(n, key, err)
 }
 
 // fixed reads a number that can carry no doubt.
@@ -72,12 +87,12 @@ func (d *decoder) check(n *node, key string, v quantity.Value, checks []elements
 	}
 	for _, x := range values {
 		if math.IsNaN(x) || math.IsInf(x, 0) {
-			d.problem(n, key+" is beyond what can be reckoned with", "")
+			d.problem(n, key+" is beyond what can be reckoned with", "e.g. "+d.usually(key, v.Dim).example)
 			return false
 		}
 		for _, c := range checks {
 			if want := c(x); want != "" {
-				d.problem(n, fmt.Sprintf("%s must be %s", key, want), "")
+				d.problem(n, fmt.Sprintf("%s must be %s", key, want), "e.g. "+d.usually(key, v.Dim).example)
 				return false
 			}
 		}
@@ -123,7 +138,7 @@ const longestText = 10_000 // bytes of words that a person reads
 // readable refuses words that would upset a terminal or fill a page.
 func (d *decoder) readable(n *node, key string) bool {
 	if len(n.text) > longestText {
-		d.problem(n, fmt.Sprintf("%s is too long: %d characters, %d are taken", key, utf8.RuneCountInString(n.text), longestText), "")
+		d.problem(n, fmt.Sprintf("%s is too long: %d characters, %d are taken", key, utf8.RuneCountInString(n.text), longestText), "say it shorter")
 		return false
 	}
 	for _, r := range n.text {
@@ -153,7 +168,11 @@ func (d *decoder) oneOf(n *node, key string, words []string) (string, bool) {
 			return w, true
 		}
 	}
-	d.problem(n, fmt.Sprintf("%s: %s is not understood", key, quoted(n.text)), d.hint(n.text, words))
+	hint := oneOf(words)
+	if len(words) > fewWords {
+		hint = d.hint(n.text, words)
+	}
+	d.problem(n, fmt.Sprintf("%s: %s is not understood", key, quoted(n.text)), hint)
 	return "", false
 }
 

@@ -3,8 +3,8 @@ package scenarios
 import (
 	"bytes"
 	"encoding/json"
-	"fmt"
 	"sort"
+	"strings"
 
 	"headfall/elements"
 	"headfall/elements/quantity"
@@ -16,7 +16,7 @@ type jsonObject = map[string]any
 // Schema returns a JSON Schema (draft-07) of the file format, for editors. It is written from the tables that files are read along.
 func Schema() []byte {
 	d := newDecoder(&source{})
-	s := &schemaWriter{definitions: jsonObject{}}
+	s := &schemaWriter{d: d, definitions: jsonObject{}}
 	root := s.object(d.planFields())
 	root["$schema"] = "http://json-schema.org/draft-07/schema#"
 	root["title"] = "headfall plant file, version " + version
@@ -36,7 +36,10 @@ func Schema() []byte {
 }
 
 // schemaWriter turns fields into JSON Schema; things with a name are written once.
-type schemaWriter struct{ definitions jsonObject }
+type schemaWriter struct {
+	d           *decoder
+	definitions jsonObject
+}
 
 func (s *schemaWriter) object(fields []field) jsonObject {
 	properties := jsonObject{}
@@ -46,6 +49,9 @@ func (s *schemaWriter) object(fields []field) jsonObject {
 		p := s.written(f.written)
 		if f.help != "" {
 			p["description"] = f.help
+		}
+		if f.written.style == aQuantity {
+			p["examples"] = []string{s.d.usually(f.key, f.written.dim).example}
 		}
 		properties[f.key] = p
 		if f.need == elements.Required {
@@ -75,11 +81,13 @@ func (s *schemaWriter) written(w *writing) jsonObject {
 func (s *schemaWriter) one(w *writing) jsonObject {
 	switch w.style {
 	case aQuantity:
-		return quantitySchema(w.dim)
+		return s.quantity(w.dim)
 	case aMoment:
-		return jsonObject{"type": []string{"string", "integer"}, "examples": []string{"06:20", "+1d 06:30", "20 min"}}
+		return jsonObject{"type": []string{"string", "integer"}, "pattern": quantity.Pattern(quantity.Time) + "|[0-9]:[0-9]", "examples": []string{"06:20", "+1d 06:30", "20 min"},
+			"patternErrorMessage": `a time is a clock time, "06:20", or a duration from the start, 20 min`}
 	case aDate:
-		return jsonObject{"type": "string", "examples": []string{"2027-10-09 06:00"}}
+		return jsonObject{"type": "string", "pattern": `^\s*[0-9]{4}-[0-9]{2}-[0-9]{2}[ T][0-9]{2}:[0-9]{2}`, "examples": []string{"2027-10-09 06:00"},
+			"patternErrorMessage": "date and clock time, e.g. 2027-10-09 06:00"}
 	case aWord:
 		return jsonObject{"enum": wordValues(w.words)}
 	case aYesNo:
@@ -155,19 +163,24 @@ func ref(name string) jsonObject {
 
 func roomName(room elements.Room) string { return "any_" + string(room) }
 
-// quantitySchema is a number with its unit, or a bare one where the dimension has none.
-func quantitySchema(dim quantity.Dim) jsonObject {
-	if dim.Bare() {
-		return jsonObject{"type": []string{"number", "string"}}
+// quantity is a number with its unit, or a bare one where the dimension has none.
+func (s *schemaWriter) quantity(dim quantity.Dim) jsonObject {
+	name := "a_" + strings.ReplaceAll(dim.String(), " ", "_")
+	if s.definitions[name] == nil {
+		example := usualOf[dim].example
+		o := jsonObject{"type": "string", "pattern": quantity.Pattern(dim), "patternErrorMessage": "a number with its unit is wanted, e.g. " + example}
+		if dim.Bare() {
+			o["type"], o["patternErrorMessage"] = []string{"number", "string"}, "a number is wanted, e.g. "+example
+		}
+		s.definitions[name] = o
 	}
-	unit := exampleUnit(dim)
-	return jsonObject{"type": "string", "pattern": `[0-9].*[^0-9.,\s]`, "examples": []string{"1 " + unit, fmt.Sprintf("1 %s ± 10 %%", unit)}}
+	return ref(name)
 }
 
 func (s *schemaWriter) table(cols []quantity.Dim) jsonObject {
 	cells := make([]any, len(cols))
 	for i, c := range cols {
-		cells[i] = quantitySchema(c)
+		cells[i] = s.quantity(c)
 		if c == quantity.Time {
 			cells[i] = jsonObject{"type": []string{"string", "integer"}}
 		}
@@ -182,6 +195,7 @@ func (s *schemaWriter) room(d *decoder, room elements.Room) jsonObject {
 	var words []string
 	for _, k := range elements.Kinds(room) {
 		fields := d.params(k.New())
+		d.what = k.Name
 		p := s.object(fields)
 		body := jsonObject{"anyOf": s.bodies(p, fields), "description": k.Doc}
 		properties[k.Name] = body

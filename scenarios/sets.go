@@ -108,8 +108,13 @@ func (d *decoder) unknownName(n *node, l *nameList) {
 		if hint != "" && dot {
 			hint += "." + rest
 		}
-		if hint != "" {
+		switch {
+		case hint != "":
 			hint = "did you mean " + hint + "?"
+		case len(l.tags) <= shortList:
+			hint = oneOf(l.tags)
+		default:
+			hint = "headfall check lists every number by its name"
 		}
 		d.problem(n, fmt.Sprintf("there is nothing tagged %s to set", quoted(tag)), hint)
 	case !dot:

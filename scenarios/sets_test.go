@@ -97,7 +97,7 @@ func TestSetRefused(t *testing.T) {
 		}
 	}
 	_, err := Load("p.yaml", []byte(plan), Options{Set: []string{"V-1.kv=0"}})
-	want := "--set \"V-1.kv=0\":1:8: kv must be more than 0\n  1 | V-1.kv=0\n    |        ^"
+	want := "--set \"V-1.kv=0\":1:8: kv must be more than 0\n  1 | V-1.kv=0\n    |        ^\n  hint: e.g. 95"
 	if err == nil || err.Error() != want {
 		t.Errorf("%v", err)
 	}

@@ -1,6 +1,7 @@
 package scenarios
 
 import (
+	"slices"
 	"strings"
 	"unicode/utf8"
 
@@ -36,6 +37,20 @@ func nearest(w string, words []string) string {
 	return ""
 }
 
+// slipped reports whether a word is another with a letter missing, too many, wrong or in another's place; long ones may have two such slips.
+func slipped(w, word string) bool {
+	n := utf8.RuneCountInString(w)
+	d := levenshtein.ComputeDistance(strings.ToLower(w), strings.ToLower(word))
+	return d <= 1+n/8 || d == 2 && sameLetters(w, word)
+}
+
+func sameLetters(a, b string) bool {
+	x, y := []rune(strings.ToLower(a)), []rune(strings.ToLower(b))
+	slices.Sort(x)
+	slices.Sort(y)
+	return slices.Equal(x, y)
+}
+
 // didYouMean makes a hint of the nearest word, or of the whole list when it is short.
 func didYouMean(w string, words []string) string {
 	if near := nearest(w, words); near != "" {
@@ -44,7 +59,10 @@ func didYouMean(w string, words []string) string {
 	return oneOf(words)
 }
 
-const shortList = 24 // words that are still listed in a hint
+const (
+	fewWords  = 6  // words that are all listed, however near one of them is
+	shortList = 24 // words that are still listed in a hint
+)
 
 // oneOf lists the words to choose from.
 func oneOf(words []string) string {

@@ -54,11 +54,12 @@ var turned = []string{"yes", "no", "on", "off", "true", "false", "null"}
 
 // declare enters a tag; it returns nil when it cannot be one.
 func (d *decoder) declare(n *node, c class) *thing {
-	if !d.text(n, "tag") || !d.fit(n, c) {
+	if !d.text(n, "tag") || n.text == "" {
 		return nil
 	}
+	d.fit(n, c) // what has an unfit tag is known by it all the same, so that only the tag is a fault
 	if old := d.things[n.text]; old != nil {
-		d.problem(n, fmt.Sprintf("%s is the tag of a %s already", n.text, old.class), fmt.Sprintf("it stands in line %d; tags are unique over the whole file", old.at.at.Line))
+		d.problem(n, fmt.Sprintf("%s is the tag of a %s already", n.text, old.class), "it stands "+where(old.at, n)+"; tags are unique over the whole file")
 		return nil
 	}
 	t := &thing{class: c, tag: n.text, at: n}
@@ -66,35 +67,36 @@ func (d *decoder) declare(n *node, c class) *thing {
 	return t
 }
 
-// fit reports whether a text can be a tag.
-func (d *decoder) fit(n *node, c class) bool {
+// fit notes a text that cannot be a tag.
+func (d *decoder) fit(n *node, c class) {
 	if slices.Contains(turned, strings.ToLower(n.text)) {
 		d.problem(n, fmt.Sprintf("%s cannot be a tag: readers of YAML make something else of it", n.text), "add a number or a letter, e.g. "+n.text+"-1")
-		return false
+		return
 	}
 	for i, r := range n.text {
 		letter := unicode.IsLetter(r)
 		switch {
 		case i == 0 && !letter:
 			d.problem(n, fmt.Sprintf("%s cannot be a tag: it begins with no letter", quoted(n.text)), "e.g. "+tagOf(c, n.text))
-			return false
+			return
 		case !letter && !unicode.IsDigit(r) && !strings.ContainsRune("-_/", r):
 			d.within(n, len([]rune(n.text[:i])), 1, fmt.Sprintf("%s cannot be a tag", quoted(n.text)), "a tag has letters, digits, -, _ and /")
-			return false
+			return
 		}
 	}
-	return n.text != ""
 }
 
 // tagOf makes a tag of one that lacks its letter.
 func tagOf(c class, text string) string {
-	rest := strings.Map(func(r rune) rune {
-		if unicode.IsLetter(r) || unicode.IsDigit(r) {
-			return r
-		}
-		return '-'
-	}, text)
-	return strings.ToUpper(string(c[:1])) + "-" + strings.Trim(rest, "-")
+	rest := "1"
+	if !strings.ContainsFunc(text, func(r rune) bool { return !unicode.IsLetter(r) && !unicode.IsDigit(r) }) {
+		rest = text
+	}
+	letter := strings.ToUpper(string(c[:1]))
+	if c == aVessel {
+		letter = "T" // for a tank; V is a valve's
+	}
+	return letter + "-" + rest
 }
 
 // refer notes a tag to be looked up later and returns it.
@@ -103,7 +105,7 @@ func (d *decoder) refer(n *node, key string, then func(*thing), classes ...class
 		return ""
 	}
 	if strings.ContainsAny(n.text, "±") {
-		d.problem(n, key+": a tag carries no doubt", "")
+		d.problem(n, key+": a tag carries no doubt", "write "+strings.TrimSpace(n.text[:strings.Index(n.text, "±")]))
 		return ""
 	}
 	d.refs = append(d.refs, reference{n, key, classes, then})
@@ -123,13 +125,29 @@ func (d *decoder) resolve() {
 		t := d.things[r.n.text]
 		switch {
 		case t == nil:
-			d.problem(r.n, fmt.Sprintf("%s: there is no %s %s", r.key, classes(r.classes), quoted(r.n.text)), d.hint(r.n.text, d.tagsOf(r.classes)))
+			d.problem(r.n, fmt.Sprintf("%s: there is no %s %s", r.key, classes(r.classes), quoted(r.n.text)), d.tagHint(r.n.text, r.classes))
 		case !slices.Contains(r.classes, t.class):
-			d.problem(r.n, fmt.Sprintf("%s: %s is %s, not a %s", r.key, r.n.text, withArticle(t.class), classes(r.classes)), oneOf(d.tagsOf(r.classes)))
+			d.problem(r.n, fmt.Sprintf("%s: %s is %s, not a %s", r.key, r.n.text, withArticle(t.class), classes(r.classes)), d.tagHint("", r.classes))
 		case r.then != nil:
 			r.then(t)
 		}
 	}
+}
+
+// tagHint names the tag that is spelled most like a text, or what there is to choose from.
+func (d *decoder) tagHint(text string, of []class) string {
+	tags := d.tagsOf(of)
+	hint := oneOf(tags)
+	if text != "" {
+		hint = d.hint(text, tags)
+	}
+	switch {
+	case hint != "":
+		return hint
+	case len(tags) == 0 && d.advice <= enoughAdvice:
+		return "this file has no " + classes(of)
+	}
+	return "headfall check lists the tags of a file that reads"
 }
 
 func classes(all []class) string {

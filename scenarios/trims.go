@@ -20,7 +20,7 @@ func (d *decoder) trim(key, n *node) {
 	}
 	if _, err := elements.NewTableTrim(rows); err != nil {
 		for _, one := range split(err) {
-			d.problem(n, key.text+": "+one.Error(), "")
+			d.problem(spokenOf(n, n, one.Error()), key.text+": "+one.Error(), "e.g. "+key.text+": "+tableSample(trimColumns))
 		}
 		return
 	}

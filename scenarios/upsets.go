@@ -82,7 +82,8 @@ func (d *decoder) wholeUpset(u *upset, what string, n *node) bool {
 		u.Kind, u.Value, u.After = network.ExtraLoss, u.set["extra_k"], u.set["after_passing"]
 	}
 	if n.get(upsetForms[what][0]) == nil {
-		d.problem(n, "upset of a "+what+" needs "+upsetForms[what][0], "")
+		key := upsetForms[what][0]
+		d.problem(n, "upset of a "+what+" needs "+key, "e.g. "+key+": "+map[string]string{"fails_at": "20 min", "blocked": "100 %", "extra_k": "8"}[key])
 		return false
 	}
 	return true

@@ -119,7 +119,7 @@ func (d *decoder) internalFields(i *network.Internal) []field {
 func (d *decoder) internal(v *network.Vessel, i *network.Internal, n *node) {
 	_, ok := d.one(n, "internal", "voids", "displaces")
 	if i.To <= i.From {
-		d.problem(n, "internal: to must be above from", "")
+		d.problem(first(n.get("to"), n), "internal: to must be above from", "both are heights above the vessel's base, the lower one first")
 		ok = false
 	}
 	if math.IsNaN(i.Voids) {

@@ -14,9 +14,12 @@ func (d *decoder) one(n *node, what string, keys ...string) (key string, ok bool
 	case 1:
 		return found[0], true
 	case 0:
-		d.problem(n, what+" needs "+listed(keys, "or"), "")
+		if n.lacks {
+			break
+		}
+		d.problem(n, what+" needs "+listed(keys, "or"), "e.g. "+keys[0]+": "+sampleKey(keys[0]))
 	default:
-		d.problem(n, what+" has "+listed(found, "and")+": only one of them can hold", "")
+		d.problem(n.keyOf(found[1]), what+" has "+listed(found, "and")+": only one of them can hold", "leave all but one out")
 	}
 	return "", false
 }
@@ -41,7 +44,12 @@ func (d *decoder) entries(n *node, what string, read func(key, value *node)) {
 		return
 	}
 	if n.form != mapping {
-		d.problem(n, what+" is written as names with what belongs to them", "")
+		d.problem(n, what+" is written as names with what belongs to them", "write each name on a line of its own, a colon behind it, without a dash")
+		for _, item := range n.items { // what was meant is read all the same
+			if item.form == mapping {
+				d.entries(item, what, read)
+			}
+		}
 		return
 	}
 	seen := make(map[string]*node, len(n.keys))
@@ -50,10 +58,21 @@ func (d *decoder) entries(n *node, what string, read func(key, value *node)) {
 			continue
 		}
 		if old := seen[k.text]; old != nil {
-			d.problem(k, fmt.Sprintf("%s is given twice", k.text), fmt.Sprintf("it stands in line %d already", old.at.Line))
+			d.problem(k, fmt.Sprintf("%s is given twice", k.text), "it stands "+where(old, k)+" already")
 			continue
 		}
 		seen[k.text] = k
 		read(k, n.items[i])
 	}
+}
+
+// sampleKey is a likely value of a key of which one among several must stand.
+func sampleKey(key string) string {
+	if u, ok := usuals[key]; ok {
+		return u.example
+	}
+	if key == "valve" || key == "pump" || key == "line" {
+		return sampleTag(key)
+	}
+	return heights.example
 }

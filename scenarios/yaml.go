@@ -17,17 +17,26 @@ import (
 
 // tree reads the YAML; nil when it cannot be walked.
 func (d *decoder) tree() *node {
-	top := &node{src: d.src}
+	top := &node{src: d.src, at: network.Place{Line: 1, Column: 1}}
 	switch text := d.src.text; {
 	case len(text) > maxSize:
-		d.problem(top, fmt.Sprintf("this file is larger than %d MB", maxSize>>20), "")
+		d.problem(top, fmt.Sprintf("this file is larger than %d MB", maxSize>>20), "no plant takes so much: is it another file?")
 		return nil
 	case !utf8.ValidString(text):
-		d.problem(d.src.spot(invalidAt(text)), "this is not UTF-8 text", "save the file as UTF-8")
+		at := invalidAt(text)
+		hint := "save the file as UTF-8"
+		if strings.ContainsRune(text[:min(len(text), 512)], 0) {
+			hint = "is it a plant file at all, and saved as UTF-8?"
+		}
+		d.problem(d.src.spot(at), "this is not UTF-8 text", hint)
 		return nil
 	}
 	if at := strings.IndexFunc(d.src.text, unprintable); at >= 0 {
 		d.problem(d.src.spot(at), "there is a character here that does not print", "take it out; a plant file is plain text")
+		return nil
+	}
+	if at := tooDeep(d.src.text); at >= 0 {
+		d.problem(d.src.spot(at), tooDeepSays, tooDeepHint)
 		return nil
 	}
 	docs, err := parse(d.src.text)
@@ -35,12 +44,12 @@ func (d *decoder) tree() *node {
 		d.badYAML(err)
 		return nil
 	}
-	if len(docs) == 0 || len(docs[0].Content) == 0 {
+	if len(docs) == 0 || len(docs[0].Content) == 0 || nothing(docs[0].Content[0]) {
 		d.problem(top, "this file is empty", "headfall new writes one to begin with")
 		return nil
 	}
 	if len(docs) > 1 {
-		d.problem(&node{src: d.src, at: network.Place{Line: docs[1].Line, Column: docs[1].Column}}, "a second document begins here; a file has one", "")
+		d.problem(&node{src: d.src, at: network.Place{Line: docs[1].Line, Column: docs[1].Column}}, "a second document begins here; a file has one", "take the line --- out, or put what follows into a file of its own")
 	}
 	g := &grower{d: d, src: d.src, done: map[*yaml.Node]grown{}, open: map[*yaml.Node]bool{}}
 	t := g.grow(docs[0].Content[0], 0)
@@ -51,9 +60,35 @@ func (d *decoder) tree() *node {
 	return t.n
 }
 
+// nothing reports a document with nothing in it.
+func nothing(y *yaml.Node) bool { return y.Tag == "!!null" && y.Value == "" && y.Anchor == "" }
+
 // unprintable reports what readers of YAML refuse without telling where.
 func unprintable(r rune) bool {
 	return r < ' ' && r != '\t' && r != '\n' && r != '\r' || r == 0x7f || r >= 0x80 && r < 0xa0 && r != 0x85
+}
+
+const mostOpen = 500 // brackets; the reader of YAML takes the square of their number in time
+
+// tooDeep returns where more brackets are open than any file needs, or -1. It looks at brackets alone, from one line that begins in the first column
+// to the next.
+func tooDeep(text string) int {
+	open := 0
+	for i := 0; i < len(text); i++ {
+		switch text[i] {
+		case '{', '[':
+			if open++; open > mostOpen {
+				return i
+			}
+		case '}', ']':
+			open = max(open-1, 0)
+		case '\n':
+			if i+1 < len(text) && !strings.ContainsRune(" \t{[", rune(text[i+1])) {
+				open = 0
+			}
+		}
+	}
+	return -1
 }
 
 func invalidAt(s string) int {
@@ -96,15 +131,18 @@ func (d *decoder) badYAML(err error) {
 	line, _ := strconv.Atoi(m[1])
 	if name := yamlAnchor.FindStringSubmatch(m[2]); name != nil {
 		if i := strings.Index(d.src.text, "*"+name[1]); i >= 0 {
-			d.problem(d.src.spot(i), fmt.Sprintf("*%s stands for nothing: there is no &%s before it", name[1], name[1]), "put a text that begins with * in quotes")
+			n := d.src.spot(i)
+			n.text, n.plain = "*"+name[1], true
+			d.problem(n, fmt.Sprintf("*%s stands for nothing: there is no &%s before it", name[1], name[1]), "put a text that begins with * in quotes")
 			return
 		}
 	}
-	text := d.src.line(line)
-	at := network.Place{Line: line, Column: 1 + len(text) - len(strings.TrimLeft(text, " \t"))}
-	hint := "look at this line and the one before it: indentation, and text with a colon or a comma that stands without quotes"
-	if strings.Contains(text, "\t") || strings.Contains(m[2], "cannot start any token") {
-		hint = "indent with blanks, not with tabs"
+	if s, ok := slipOf(d.src); ok {
+		d.problem(&node{src: d.src, at: s.at, text: s.text, plain: true}, s.says, s.hint)
+		return
 	}
-	d.problem(&node{src: d.src, at: at}, "this cannot be read as YAML: "+m[2], hint)
+	text := d.src.line(line)
+	at := network.Place{Line: max(line, 1), Column: 1 + len(text) - len(strings.TrimLeft(text, " \t"))}
+	d.problem(&node{src: d.src, at: at}, "this cannot be read as YAML: "+m[2],
+		"look at this line and the ones before it: indentation, and text with a colon or a comma that stands without quotes")
 }

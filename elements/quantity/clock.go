@@ -92,10 +92,13 @@ func wholeNumber(s string, least, most int) (n int, ok bool) {
 func clockHint(t string) string {
 	low := strings.ToLower(t)
 	later := 0
-	if strings.HasSuffix(low, "pm") {
+	if low = strings.ReplaceAll(low, ".m.", "m"); strings.HasSuffix(low, "pm") {
 		later = 12
 	}
 	low = strings.TrimSpace(strings.TrimSuffix(strings.TrimSuffix(low, "am"), "pm"))
+	if _, whole := wholeNumber(low, 1, 2); whole {
+		low += ":00"
+	}
 	for _, sep := range []string{":", ".", "h"} {
 		hour, minute, ok := strings.Cut(low, sep)
 		h, okH := wholeNumber(hour, 1, 2)

@@ -83,7 +83,7 @@ var mistakes = []struct {
 	{"3 m + 4 m", Length, `sums are not read, write the result, or ± for a doubt`, 4, 5},
 	{"3 m 20 cm", Length, `only durations are written in parts, e.g. 4.2 m`, 4, 5},
 	{"20 min 1 h", Time, `a sum of times goes from large to small units, e.g. 1 h 20 min`, 7, 3},
-	{"4 m about", Length, `"about" is not understood here, e.g. 4.2 m`, 4, 5},
+	{"4 m about", Length, `"about" is not understood here, write 4 m`, 4, 5},
 	{"1 m to 2 m ± 1 cm", Length, `one doubt is enough, e.g. 0.62 ± 0.04, or 0.58 to 0.66`, 11, 6},
 	{"4 m ± -1 m", Length, `a doubt has no minus, leave the minus out`, 6, 4},
 	{"12 °C ± 5 %", Temperature, `per cent of a temperature is not clear, write the doubt in °C`, 8, 3},

@@ -60,18 +60,16 @@ func (p *parser) leftover(i int) *Error {
 		return nil
 	}
 	rest := p.s[i:]
-	msg, hint, example := quote(rest)+" is not understood here", "e.g. "+exampleOf(p.d), true
+	msg, hint := quote(rest)+" is not understood here", "write "+strings.TrimSpace(p.s[:i])
 	switch op, _ := scanOperator(p.s, i); {
 	case op != noOperator:
-		msg, hint, example = "one doubt is enough", "e.g. 0.62 ± 0.04, or 0.58 to 0.66", false
+		msg, hint = "one doubt is enough", "e.g. 0.62 ± 0.04, or 0.58 to 0.66"
 	case rest[0] == '-' || rest[0] == '+':
-		msg, hint, example = "sums are not read", "write the result, or ± for a doubt", false
+		msg, hint = "sums are not read", "write the result, or ± for a doubt"
 	case isDigit(rest[0]) && p.d != Time:
-		msg = "only durations are written in parts"
+		msg, hint = "only durations are written in parts", "e.g. "+exampleOf(p.d)
 	}
-	e := fault(p.s, i, len(p.s), msg, hint)
-	e.Example = example
-	return e
+	return fault(p.s, i, len(p.s), msg, hint)
 }
 
 // explainUnit says what is wrong with a unit's name and which one of d was meant

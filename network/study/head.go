@@ -26,6 +26,7 @@ type Asked struct {
 	Set       []string `json:"set"`
 	Method    string   `json:"method"`
 	Tolerance float64  `json:"tolerance"`
+	MaxSteps  int      `json:"max_steps"`
 	Samples   int      `json:"samples,omitempty"`
 	Seed      int64    `json:"seed,omitempty"`
 	Pairs     bool     `json:"pairs,omitempty"`
@@ -47,14 +48,15 @@ type Common struct {
 	Workers   int
 	Method    string
 	Tolerance float64
+	MaxSteps  int
 	Shard     Shard
 	Progress  func(share float64)
 }
 
 func (c *Common) runner(load Load) *Runner {
-	return &Runner{Load: load, Model: network.Options{Method: c.Method, Tolerance: c.Tolerance}, Workers: c.Workers}
+	return &Runner{Load: load, Model: network.Options{Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps}, Workers: c.Workers}
 }
 
 func (c *Common) asked() Asked {
-	return Asked{Set: c.Set, Method: c.Method, Tolerance: c.Tolerance}
+	return Asked{Set: c.Set, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps}
 }

@@ -14,6 +14,7 @@ type Options struct {
 	Workers   int
 	Method    string
 	Tolerance float64
+	MaxSteps  int // of one run; 0 takes the default
 	Progress  func(share float64)
 }
 
@@ -52,7 +53,7 @@ func Judge(ctx context.Context, load Load, opt Options) (*network.Result, error)
 	if j.say == nil {
 		j.say = func(float64) {}
 	}
-	j.run = &Runner{Load: load, Model: network.Options{Method: opt.Method, Tolerance: opt.Tolerance}, Workers: opt.Workers}
+	j.run = &Runner{Load: load, Model: network.Options{Method: opt.Method, Tolerance: opt.Tolerance, MaxSteps: opt.MaxSteps}, Workers: opt.Workers}
 	bench, err := j.run.Bench(ctx)
 	if err != nil {
 		return nil, err

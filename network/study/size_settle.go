@@ -163,5 +163,5 @@ func unitSI(n *network.Number) string {
 
 // model hands the method and the accuracy on.
 func (o *Options) model() network.Options {
-	return network.Options{Method: o.Method, Tolerance: o.Tolerance}
+	return network.Options{Method: o.Method, Tolerance: o.Tolerance, MaxSteps: o.MaxSteps}
 }

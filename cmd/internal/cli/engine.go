@@ -39,12 +39,12 @@ func load(src *source, o *options) (*network.Plant, error) {
 
 func judge(ctx context.Context, load func() (*network.Plant, error), o *options, progress func(float64)) (*network.Result, error) {
 	c := o.calculation()
-	return study.Judge(ctx, load, study.Options{Workers: o.workers, Method: c.Method, Tolerance: c.Tolerance, Progress: progress})
+	return study.Judge(ctx, load, study.Options{Workers: o.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps, Progress: progress})
 }
 
 // calculation hands the method and the accuracy on; the usual method goes unnamed.
 func (o *options) calculation() network.Options {
-	opt := network.Options{Method: o.method, Tolerance: o.tolerance}
+	opt := network.Options{Method: o.method, Tolerance: o.tolerance, MaxSteps: o.maxSteps}
 	if opt.Method == methods[0] {
 		opt.Method = ""
 	}

@@ -58,7 +58,7 @@ func (a *app) flows(ctx context.Context, path, valve string) error {
 	ctx, cancel := a.within(ctx)
 	defer cancel()
 	c := a.opt.calculation()
-	res, err = study.Flows(ctx, load, study.Options{Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance}, valve)
+	res, err = study.Flows(ctx, load, study.Options{Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps}, valve)
 	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
 		return err
 	}

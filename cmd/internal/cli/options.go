@@ -22,9 +22,12 @@ type options struct {
 	tolerance float64
 	workers   int
 	timeout   string
+	maxSteps  int
 
 	limit time.Duration // timeout, understood; 0 none
 }
+
+const mostWorkers = 1024 // each holds a plant of its own
 
 var (
 	methods = []string{"rodas5p", "rodas4p", "bdf"}
@@ -43,6 +46,7 @@ func (o *options) bind(root *cobra.Command) {
 	f.Float64Var(&o.tolerance, "tolerance", 0, "relative accuracy of the calculation, a `SHARE`; 0 takes the default")
 	f.IntVar(&o.workers, "workers", 0, "`COUNT` of calculations side by side; 0 takes one a processor")
 	f.StringVar(&o.timeout, "timeout", "", "give up after this `TIME`: 90s, 5 min")
+	f.IntVar(&o.maxSteps, "max-steps", 0, "end a calculation after this `COUNT` of steps; 0 takes a million")
 	root.PersistentPreRunE = func(*cobra.Command, []string) error { return o.check() }
 }
 
@@ -55,8 +59,10 @@ func (o *options) check() error {
 		return bad(among(o.color, colors), "--color %s is not known", o.color)
 	case !(o.tolerance == 0 || o.tolerance >= 1e-12 && o.tolerance <= 0.1):
 		return bad("as --tolerance 1e-6", "--tolerance must lie between 1e-12 and 0.1")
-	case o.workers < 0:
-		return bad("as --workers 2", "--workers must not be negative")
+	case o.maxSteps < 0:
+		return bad("as --max-steps 100000", "--max-steps must not be negative")
+	case o.workers < 0 || o.workers > mostWorkers:
+		return bad("as --workers 2", "--workers must lie between 0 and %d", mostWorkers)
 	}
 	if o.workers == 0 {
 		o.workers = runtime.GOMAXPROCS(0)

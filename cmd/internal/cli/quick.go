@@ -73,7 +73,7 @@ func (a *app) quick(ctx context.Context, o quickFlags) error {
 	ctx, cancel := a.within(ctx)
 	defer cancel()
 	c := a.opt.calculation()
-	run, err := study.Judge(ctx, load, study.Options{Samples: quickSamples, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance})
+	run, err := study.Judge(ctx, load, study.Options{Samples: quickSamples, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps})
 	if err != nil {
 		return a.unfinished(ctx, err)
 	}

@@ -20,7 +20,7 @@ func (m *many) bind(f *pflag.FlagSet) {
 // common are the options that such studies share.
 func (a *app) common(m many, bar *progress) (study.Common, error) {
 	c := a.opt.calculation()
-	common := study.Common{Set: a.opt.set, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, Progress: bar.done}
+	common := study.Common{Set: a.opt.set, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps, Progress: bar.done}
 	if m.shard == "" {
 		return common, nil
 	}

@@ -17,7 +17,7 @@ type source struct {
 	data []byte
 }
 
-const largest = 16 << 20 // bytes; no plant file is larger
+const largest = 8 << 20 // bytes; no plant file is larger
 
 // read reads FILE or standard input, until it ends or the program is interrupted.
 func (a *app) read(ctx context.Context, path string) (*source, error) {

@@ -26,7 +26,7 @@ func (d *doubtful) bind(f *pflag.FlagSet) {
 // weigh makes the options of a study.
 func (a *app) weigh(d doubtful, bar *progress) (study.Options, error) {
 	c := a.opt.calculation()
-	opt := study.Options{Samples: d.samples, Seed: d.seed, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, Progress: bar.done}
+	opt := study.Options{Samples: d.samples, Seed: d.seed, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps, Progress: bar.done}
 	switch {
 	case d.samples < 0 || d.samples > mostSamples:
 		return opt, bad("as --samples 200", "--samples must lie between 0 and %d", mostSamples)
