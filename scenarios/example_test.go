@@ -30,7 +30,7 @@ func ExampleProblems() {
 	// plant.yaml:2:10: run_for: "4" needs a unit
 	//   2 | run_for: 4
 	//     |          ^
-	//   hint: e.g. 4 min
+	//   hint: e.g. 4 h
 	// plant.yaml:3:10: there is no liquid "watre"
 	//   3 | liquid: {watre: 12 °C}
 	//     |          ^^^^^
