@@ -3,6 +3,7 @@ package network
 import (
 	"fmt"
 	"math"
+	"strings"
 	"time"
 
 	"headfall/elements/quantity"
@@ -27,6 +28,10 @@ const pressureSlack = 1e-6
 // addTrackers builds the limits, milestones, alarms and empty marks.
 func (o *observer) addTrackers() error {
 	p := o.sim.plan
+	pressure := p.Show.Pressure
+	if pressure == "" {
+		pressure = "mbar"
+	}
 	for _, l := range p.Limits {
 		if err := o.addLimit(&judged{plan: l, must: l.Must, of: l.Must.Of, subject: l.Must.Subject.String()}); err != nil {
 			return err
@@ -37,20 +42,20 @@ func (o *observer) addTrackers() error {
 		if st := &o.sim.sys.stations[o.sim.sys.vesselAt[v.Tag]]; st.closed && len(st.vents) == 0 {
 			rim, why = st.rim, "full and sealed"
 		}
-		top := Condition{Subject: Level, Of: []string{v.Tag}, Bound: rim, Text: quantity.Format(rim, quantity.Length, p.Show.Level, 4)}
+		top := Condition{Subject: Level, Of: []string{v.Tag}, Bound: rim, Text: own(rim, quantity.Length, p.Show.Level)}
 		if err := o.addLimit(implicitLimit(top, why)); err != nil {
 			return err
 		}
 		o.rims = append(o.rims, o.limits[len(o.limits)-1].track)
 		if c := v.Cover; c != nil {
 			if !math.IsNaN(c.Vacuum) {
-				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Above: true, Bound: -c.Vacuum, Gauge: true, Text: quantity.Format(-c.Vacuum, quantity.Pressure, p.Show.Pressure, 4)}
+				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Above: true, Bound: -c.Vacuum, Gauge: true, Text: own(-c.Vacuum, quantity.Pressure, pressure)}
 				if err := o.addLimit(implicitLimit(m, "vacuum it withstands")); err != nil {
 					return err
 				}
 			}
 			if !math.IsNaN(c.Overpress) {
-				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Bound: c.Overpress, Gauge: true, Text: quantity.Format(c.Overpress, quantity.Pressure, p.Show.Pressure, 4)}
+				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Bound: c.Overpress, Gauge: true, Text: own(c.Overpress, quantity.Pressure, pressure)}
 				if err := o.addLimit(implicitLimit(m, "pressure it withstands")); err != nil {
 					return err
 				}
@@ -58,6 +63,15 @@ func (o *observer) addTrackers() error {
 		}
 	}
 	return o.addMoments()
+}
+
+// own writes a bound that the vessel itself has, without figures that say nothing.
+func own(si float64, dim quantity.Dim, unit string) string {
+	number, name, _ := strings.Cut(quantity.Format(si, dim, unit, 4), " ")
+	if strings.Contains(number, ".") {
+		number = strings.TrimRight(strings.TrimRight(number, "0"), ".")
+	}
+	return number + " " + name
 }
 
 func implicitLimit(c Condition, why string) *judged {

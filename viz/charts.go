@@ -31,6 +31,7 @@ type curve struct {
 	peakT     float64
 	peakV     float64 // SI
 	peak      bool
+	peakPlace string             // of the peak's label; "" for none
 	toward    side               // to which its peak is rounded
 	bands     [][2][2]float64    // whiskers: two points each, s and SI
 	spread    *network.LevelBand // of the samples; nil when there were none
@@ -83,6 +84,7 @@ func (h *charter) build(id, unitKey, title string, u unit, curves []curve) chart
 	axis := u.Name
 	low, high := h.reach(unitKey, u, curves)
 	spreadLabels(curves, (high-low)/u.K)
+	placePeaks(curves, h.r.End, high/u.K, (high-low)/u.K)
 	line.SetGlobalOptions(
 		charts.WithAnimation(false),
 		charts.WithGridOpts(opts.Grid{Left: "76", Right: "104", Top: "46", Bottom: "34"}),
@@ -141,10 +143,9 @@ func (h *charter) addCurve(line *charts.Line, c curve, u unit, low, high float64
 		}
 	}
 	if c.peak && finite(c.peakV) && finite(c.peakT) && c.peakV != 0 {
-		tell := c.peakT > 0.04*h.r.End // one at the start is in the table, and its label would stand on the axis
 		options = append(options, charts.WithMarkPointNameCoordItemOpts(opts.MarkPointNameCoordItem{
 			Name: "peak", Coordinate: []any{h.x(c.peakT), round6(c.peakV * u.K)}, Value: u.Toward(c.peakV, c.toward), Symbol: "triangle", SymbolSize: 9,
-			Label: &opts.Label{Show: opts.Bool(tell), Position: "top", Formatter: "{c}", FontSize: 11},
+			Label: &opts.Label{Show: opts.Bool(c.peakPlace != ""), Position: c.peakPlace, Formatter: "{c}", FontSize: 11},
 		}))
 	}
 	line.AddSeries(clean(c.name), []opts.LineData{}, options...)

@@ -14,6 +14,7 @@ const (
 	footPx     = 46.0 // under the lowest
 	labelPx    = 34.0 // over a vessel, for its tag and its level
 	railPx     = 58.0 // on the left, for the elevations
+	leastScale = 0.62 // on a narrow window the drawing shrinks to this share; then it scrolls
 )
 
 // sheet of the drawing.
@@ -51,7 +52,7 @@ func elevation(plant *network.Plant, r *network.Result, u units, c clock) pictur
 	k.place()
 	k.connect()
 	var d drawing
-	d.open("svg", "viewBox", "0 0 "+px(k.width)+" "+px(k.height), "width", k.width, "height", k.height, "class", "plant", "id", "plant-svg",
+	d.open("svg", "viewBox", "0 0 "+px(k.width)+" "+px(k.height), "width", k.width, "height", k.height, "style", "max-width:"+px(k.width)+"px;min-width:"+px(leastScale*k.width)+"px", "class", "plant", "id", "plant-svg",
 		"role", "img", "aria-labelledby", "plant-title plant-desc")
 	d.open("title", "id", "plant-title")
 	d.WriteString("Plant in elevation")
@@ -67,7 +68,10 @@ func elevation(plant *network.Plant, r *network.Result, u units, c clock) pictur
 		}
 	}
 	for i, rt := range k.routes {
-		k.drawLine(&d, i, rt, &l)
+		k.drawWay(&d, i, rt)
+	}
+	for i, rt := range k.routes {
+		k.drawParts(&d, i, rt, &l)
 	}
 	for _, s := range k.spots {
 		switch {

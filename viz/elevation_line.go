@@ -16,8 +16,8 @@ type item struct {
 	tag  string
 }
 
-// drawLine draws a line on its way with the symbols of its parts.
-func (k *canvas) drawLine(d *drawing, n int, rt *route, l *live) {
+// drawWay draws a line on its way.
+func (k *canvas) drawWay(d *drawing, n int, rt *route) {
 	line := k.plant.Lines[rt.line]
 	id := fmt.Sprintf("l%d", n)
 	d.open("g", "class", "line", "id", id)
@@ -32,6 +32,13 @@ func (k *canvas) drawLine(d *drawing, n int, rt *route, l *live) {
 	if line.Leaves.Form == 3 && len(rt.points) > 0 {
 		d.el("circle", "cx", rt.points[0][0], "cy", rt.points[0][1], "r", 3, "class", "mouth")
 	}
+	d.end("g")
+}
+
+// drawParts draws the symbols of a line's parts, its tag and its arrow; all lines are there by then, so that none covers them.
+func (k *canvas) drawParts(d *drawing, n int, rt *route, l *live) {
+	line := k.plant.Lines[rt.line]
+	id := fmt.Sprintf("l%d", n)
 	peak := 0.0
 	if q := k.result.Lines[line.Tag]; q != nil {
 		peak = math.Max(math.Abs(q.PeakFlow), math.Abs(q.LowFlow))
@@ -44,7 +51,6 @@ func (k *canvas) drawLine(d *drawing, n int, rt *route, l *live) {
 		k.drawItem(d, id, it, slots[i], l, &live)
 	}
 	l.Lines = append(l.Lines, live)
-	d.end("g")
 }
 
 // plainPipe is the symbol of a part that looks like the line itself.

@@ -110,7 +110,16 @@ func vesselInputs(x *network.Vessel, u units) []string {
 	if x.SpillsTo != "" {
 		spills = x.SpillsTo
 	}
-	return []string{x.Tag, plainKind(x.Kind), digits(x.Base, 6) + " m", height, volume, start, u.Level.With(rimOf(x)), gas, spills}
+	return []string{x.Tag, plainKind(x.Kind), elevationText(x.Base), height, volume, start, u.Level.With(rimOf(x)), gas, spills}
+}
+
+// elevationText writes an elevation to 10 mm, finer where it is given finer.
+func elevationText(z float64) string {
+	s := strconv.FormatFloat(round6(z), 'f', -1, 64)
+	if _, decimals, _ := strings.Cut(s, "."); len(decimals) < 2 {
+		s = strconv.FormatFloat(z, 'f', 2, 64)
+	}
+	return minus(s) + "\u00a0m"
 }
 
 func lineInputs(l *network.Line, r *network.Result, u units) []string {

@@ -34,6 +34,7 @@ type sheetPage struct {
 	Title, Rev, Hash, Day    string
 	File, Case, VerdictWords string
 	Stop                     bool // the sequence is not to be run as written
+	Cautions                 []string
 }
 
 // sheetRows lists steps and holds in the order in which they are done; what was never reached comes last.
@@ -188,7 +189,13 @@ func sheetPages(p Page, rows []sheetRow, c clock, handovers []handoverView) []*s
 		last := pages[len(pages)-1]
 		last.Handover = append(last.Handover, h)
 	}
-	turn(22)
+	words := cautions(p.Plant, p.Result)
+	need := 24.0
+	for _, c := range words {
+		need += 3.8 * float64(len(wrap(c, 100)))
+	}
+	turn(need)
+	pages[len(pages)-1].Cautions = words
 	for i, s := range pages {
 		s.N, s.Of, s.First, s.Last = i+1, len(pages), i == 0, i == len(pages)-1
 	}

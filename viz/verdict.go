@@ -228,7 +228,11 @@ func lastEmpty(plant *network.Plant, r *network.Result, c clock) fact {
 		s += ", band " + c.At(*b.Low, earlier) + " to " + c.At(*b.High, later)
 	}
 	if n := len(plant.Vessels) - empties; n > 0 {
-		s += fmt.Sprintf("; %d of %d vessels do not empty", n, len(plant.Vessels))
+		verb := "do"
+		if n == 1 {
+			verb = "does"
+		}
+		s += fmt.Sprintf("; %d of %d vessels %s not empty", n, len(plant.Vessels), verb)
 	}
 	return fact{"Last vessel empty", s, false, &at}
 }

@@ -363,6 +363,17 @@
   }
   $("elevation").addEventListener("keydown", keys); $("playbar").addEventListener("keydown", keys);
 
-  strip(); draw();
+  // A drawing wider than the window opens where the vessels stand.
+  function showVessels() {
+    var e = $("elevation"), frame = e.getBoundingClientRect(), lo = Infinity, hi = -Infinity;
+    if (e.scrollWidth <= e.clientWidth) return;
+    L.vessels.forEach(function (v) {
+      var r = $(v.id).getBoundingClientRect();
+      lo = Math.min(lo, r.left - frame.left + e.scrollLeft); hi = Math.max(hi, r.right - frame.left + e.scrollLeft);
+    });
+    if (hi > lo) e.scrollLeft = hi - lo < e.clientWidth ? (lo + hi - e.clientWidth) / 2 : lo - 16;
+  }
+
+  strip(); draw(); showVessels();
   window.headfall = { go: go, value: value, zoom: function () { return zoom; }, charts: charts, csv: csv, json: json, now: function () { return now; }, all: function () { plots.forEach(chart); } };
 })();
