@@ -47,8 +47,12 @@ func (k *canvas) drawParts(d *drawing, n int, rt *route, l *live) {
 	items := k.items(rt.line)
 	slots := k.slots(rt)
 	items, slots = fit(items, slots)
-	for i, it := range items {
-		k.drawItem(d, id, it, slots[i], l, &live)
+	for _, arrows := range []bool{true, false} { // the words of a part stand over an arrow that is near
+		for i, it := range items {
+			if (it.kind == "arrow") == arrows {
+				k.drawItem(d, id, it, slots[i], l, &live)
+			}
+		}
 	}
 	l.Lines = append(l.Lines, live)
 }

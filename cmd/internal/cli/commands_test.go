@@ -60,3 +60,32 @@ func TestWordsOfTheTrade(t *testing.T) {
 		})
 	}
 }
+
+var (
+	called  = regexp.MustCompile(`headfall ([a-z]+)\b([^\n|'` + "`" + `]*)`)
+	flagged = regexp.MustCompile(`--([a-z-]+)`)
+)
+
+// Every flag that the README gives a command is one of that command's.
+func TestReadmeFlags(t *testing.T) {
+	readme, err := os.ReadFile("../../../README.md")
+	if err != nil {
+		t.Fatal(err)
+	}
+	root, checked := newFakeApp().root(), 0
+	for _, m := range called.FindAllStringSubmatch(string(readme), -1) {
+		c, _, err := root.Find(m[1:2])
+		if err != nil || c == root {
+			continue // a sentence
+		}
+		for _, f := range flagged.FindAllStringSubmatch(m[2], -1) {
+			checked++
+			if c.Flags().Lookup(f[1]) == nil && root.PersistentFlags().Lookup(f[1]) == nil {
+				t.Errorf("%s has no flag --%s: %s", m[1], f[1], m[0])
+			}
+		}
+	}
+	if checked < 20 {
+		t.Errorf("only %d flags were found", checked)
+	}
+}
