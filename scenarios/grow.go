@@ -1,7 +1,7 @@
 package scenarios
 
 import (
-	"gopkg.in/yaml.v3"
+	"go.yaml.in/yaml/v3"
 
 	"headfall/network"
 )

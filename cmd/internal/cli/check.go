@@ -49,7 +49,7 @@ func (a *app) check(ctx context.Context, path string, normalise bool) error {
 	}
 	var files outputs
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, understood(plant)) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	if err := files.save(a.Out); err != nil {

@@ -50,9 +50,16 @@ func Main(ctx context.Context, s *Streams, args []string) int {
 }
 
 func (a *app) main(ctx context.Context, args []string) int {
+	own := *a.Streams
+	out := &watched{Writer: own.Out}
+	own.Out, a.Streams = out, &own
 	root := a.root()
 	root.SetArgs(args)
-	return a.finish(root.ExecuteContext(ctx))
+	err := root.ExecuteContext(ctx)
+	if out.err != nil { // also where what printed did not tell
+		err = out.err
+	}
+	return a.finish(err)
 }
 
 func (a *app) root() *cobra.Command {

@@ -51,7 +51,7 @@ finish. 130: interrupted; what was judged is kept and marked.`,
 }
 
 func (a *app) compare(ctx context.Context, paths []string, o doubtful) error {
-	plans, first, err := a.contenders(ctx, paths)
+	plans, _, err := a.contenders(ctx, paths)
 	if err != nil {
 		return err
 	}
@@ -63,7 +63,7 @@ func (a *app) compare(ctx context.Context, paths []string, o doubtful) error {
 	var res *study.CompareResult
 	files := outputs{}
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(first); err != nil {
+	if err := files.check(paths...); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)

@@ -92,11 +92,14 @@ func (a *app) drill(ctx context.Context, path string, o drillOptions) error {
 	if opt.Shard.Of == 0 {
 		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
 	}
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)
 	defer cancel()
+	if err := rep.answer(ctx, a, src); err != nil { // first, so that it is there when the study is interrupted
+		return err
+	}
 	part, err := study.Drill(ctx, load, opt)
 	bar.end()
 	if part == nil {
@@ -111,9 +114,6 @@ func (a *app) drill(ctx context.Context, path string, o drillOptions) error {
 		res.Stopped, res.Trouble, res.ExitCode = halted(ctx, err)
 	}
 	if rep != nil {
-		if err := rep.answer(ctx, a, src); err != nil {
-			return err
-		}
 		rep.page.Drill = res
 	}
 	return a.tellDrill(files, res, o.all)

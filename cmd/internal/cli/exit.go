@@ -13,7 +13,7 @@ const (
 	ExitHolds       = 0   // finished, every limit holds
 	ExitFails       = 1   // a limit fails, a step was never reached, or too close to call
 	ExitBad         = 2   // bad usage or a bad file; nothing was written
-	ExitUnfinished  = 3   // the calculation could not finish, or ran out of its time
+	ExitUnfinished  = 3   // the calculation could not finish, ran out of its time, or its answer could not be printed
 	ExitInterrupted = 130 // interrupted; what was computed is kept and marked
 )
 

@@ -73,7 +73,7 @@ func (a *app) fit(ctx context.Context, path string, o fitOptions) error {
 	var res *study.FitResult
 	files := outputs{}
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path, o.readings); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)

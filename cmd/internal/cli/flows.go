@@ -52,7 +52,7 @@ func (a *app) flows(ctx context.Context, path, valve string) error {
 	var res *study.FlowsResult
 	files := outputs{}
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)

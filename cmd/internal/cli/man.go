@@ -49,7 +49,7 @@ func (a *app) man(root *cobra.Command, dir string) error {
 		name := strings.ReplaceAll(c.CommandPath(), " ", "-") + "." + section
 		files.add(filepath.Join(dir, name), func(w io.Writer) error { return manPage(w, c, section) })
 	}
-	if err := files.check(&source{}); err != nil {
+	if err := files.check(); err != nil {
 		return err
 	}
 	return files.save(a.Out)

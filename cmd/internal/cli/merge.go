@@ -76,11 +76,11 @@ func (a *app) merge(ctx context.Context, paths []string, o mergeOptions) error {
 	} else {
 		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, whole.Spread) })
 	}
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	for _, path := range paths {
-		if err := files.check(&source{path: path, name: path}); err != nil {
+		if err := files.check(path); err != nil {
 			return err
 		}
 	}

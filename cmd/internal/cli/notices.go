@@ -8,6 +8,8 @@ import (
 	"strings"
 
 	"github.com/spf13/cobra"
+
+	"headfall/viz"
 )
 
 // licences of what is linked into the program, a file a module: / in the module's path is written as _.
@@ -46,6 +48,7 @@ func writeNotices(w io.Writer) error {
 				return err
 			}
 		}
-		return nil
+		_, err := fmt.Fprintf(w, "\nIn every report\n===============\n\n%s\n", strings.TrimSpace(viz.Notices()))
+		return err
 	})
 }

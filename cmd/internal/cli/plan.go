@@ -64,7 +64,7 @@ func (a *app) plan(ctx context.Context, path string, o doubtful) error {
 	var res *study.FoundPlan
 	files := outputs{}
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)

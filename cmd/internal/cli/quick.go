@@ -67,7 +67,7 @@ func (a *app) quick(ctx context.Context, o quickFlags) error {
 	var res text.QuickResult
 	files := outputs{}
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, &res) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)

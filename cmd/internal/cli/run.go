@@ -72,7 +72,7 @@ func (a *app) run(ctx context.Context, path string, o runOptions) error {
 	}
 	var res *network.Result
 	files := o.files(a, plant, &res)
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	if res, err = a.answer(ctx, src); err != nil {

@@ -52,7 +52,7 @@ func (a *app) sheet(ctx context.Context, path, html string, plain bool) error {
 	var files outputs
 	files.add(html, func(w io.Writer) error { return viz.WriteSheet(w, viz.Page{Plant: plant, Result: res}) })
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	if res, err = a.answer(ctx, src); err != nil {

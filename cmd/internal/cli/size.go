@@ -84,7 +84,7 @@ func (a *app) size(ctx context.Context, path string, o sizeOptions) error {
 	var res *study.SizeResult
 	files := outputs{}
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)

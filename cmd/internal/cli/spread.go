@@ -85,11 +85,14 @@ func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 	if opt.Shard.Of == 0 {
 		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
 	}
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)
 	defer cancel()
+	if err := rep.answer(ctx, a, src); err != nil { // first, so that it is there when the study is interrupted
+		return err
+	}
 	part, err := study.Spread(ctx, load, opt)
 	bar.end()
 	switch {
@@ -106,9 +109,6 @@ func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 		res.Stopped, res.Trouble, res.ExitCode = halted(ctx, err)
 	}
 	if rep != nil {
-		if err := rep.answer(ctx, a, src); err != nil {
-			return err
-		}
 		rep.page.Spread = res
 	}
 	return a.tellSpread(files, res)

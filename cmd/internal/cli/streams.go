@@ -17,6 +17,30 @@ type Streams struct {
 	Env      func(string) string
 }
 
+// watched is an output that keeps the first fault of its writes.
+type watched struct {
+	io.Writer
+	err error
+}
+
+func (w *watched) Write(p []byte) (int, error) {
+	n, err := w.Writer.Write(p)
+	if err != nil && w.err == nil {
+		w.err = &unwritten{err}
+	}
+	return n, err
+}
+
+// unwritten tells that standard output took nothing more.
+type unwritten struct{ cause error }
+
+func (u *unwritten) Error() string {
+	return "cannot write to standard output: " + reason(u.cause).Error()
+}
+
+// Unwrap returns the cause.
+func (u *unwritten) Unwrap() error { return u.cause }
+
 // System returns the streams of the process.
 func System() *Streams {
 	s := &Streams{In: os.Stdin, Out: os.Stdout, Err: os.Stderr, Env: os.Getenv}

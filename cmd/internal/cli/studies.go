@@ -61,7 +61,7 @@ func (a *app) partPath() string {
 func (a *app) savePart(ctx context.Context, src *source, stopped error, write func(io.Writer) error) error {
 	var files outputs
 	files.add(a.partPath(), write)
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path); err != nil {
 		return err
 	}
 	if err := files.save(a.Out); err != nil {

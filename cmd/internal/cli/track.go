@@ -85,7 +85,7 @@ func (a *app) track(ctx context.Context, path string, o trackOptions) error {
 	var res *study.TrackResult
 	files := outputs{}
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src); err != nil {
+	if err := files.check(src.path, o.readings); err != nil {
 		return err
 	}
 	ctx, cancel := a.within(ctx)

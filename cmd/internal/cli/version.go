@@ -5,6 +5,7 @@ import (
 	"io"
 
 	"github.com/spf13/cobra"
+	"github.com/spf13/pflag"
 
 	"headfall/network"
 )
@@ -12,14 +13,14 @@ import (
 func init() { register(groupAbout, newVersion) }
 
 func newVersion(a *app) *cobra.Command {
-	notices := false
+	licences := false
 	c := &cobra.Command{
 		Use:     "version",
 		Short:   "Version of the program, and the notices of what it is built from",
-		Example: "  headfall version\n  headfall version --notices",
+		Example: "  headfall version\n  headfall version --licences",
 		Args:    none,
 		RunE: func(*cobra.Command, []string) error {
-			if notices {
+			if licences {
 				return writeNotices(a.Out)
 			}
 			if a.opt.json != "" {
@@ -32,6 +33,12 @@ func newVersion(a *app) *cobra.Command {
 			return err
 		},
 	}
-	c.Flags().BoolVar(&notices, "notices", false, "print the licences of the libraries that are part of the program")
+	c.Flags().BoolVar(&licences, "licences", false, "print the licences of all that is part of the program, as licences does")
+	c.Flags().SetNormalizeFunc(func(_ *pflag.FlagSet, name string) pflag.NormalizedName {
+		if name == "licenses" {
+			name = "licences"
+		}
+		return pflag.NormalizedName(name)
+	})
 	return c
 }
