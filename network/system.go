@@ -172,7 +172,8 @@ func (s *system) balanceTees(f []float64) {
 
 // Scale fills the error allowed in each unknown: of a level l, rtol·(0.1 m + |l|) up to 2·10⁻⁵ m, as a volume over the present surface.
 func (s *system) Scale(y []float64, rtol float64, scale []float64) {
-	tol := func(l float64) float64 { return min(rtol*(leastLevel+l), levelCap) }
+	most := max(levelCap, rtol*1) // m
+	tol := func(l float64) float64 { return min(rtol*(leastLevel+l), most) }
 	least := 1e-9 * math.Min(1, rtol*1e6)
 	for i := range s.stations {
 		if b := &s.basins[i]; b.holds(y[i]) {
@@ -193,7 +194,7 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 		}
 	}
 	for i := s.teeRow; i < s.teeRow+len(s.teeAt); i++ {
-		scale[i] = s.gamma * math.Max(tol(1), rtol*(math.Abs(y[i]-s.atmosphere)/s.gamma-plainHead))
+		scale[i] = s.gamma * math.Max(teeShare*tol(1), rtol*(math.Abs(y[i]-s.atmosphere)/s.gamma-plainHead))
 		if t := &s.tees[i-s.teeRow]; t.ease > 0 && !t.slow { // where next to nothing flows a pressure means little
 			scale[i] = math.Max(scale[i], 1e6*rtol*stillFlow/t.ease)
 		}
@@ -214,10 +215,14 @@ const gasCap = 1
 // plainHead is the head, m, beyond which the error allowed in the pressure of a tee grows with it: pumps of a steady rate against shut valves come there.
 const plainHead = 100
 
+// teeShare is the error allowed in the head at a tee over that in a level of a metre: it drives flows at the time, and is forgotten.
+const teeShare = 10
+
 // leastLevel is the level, m, under which the error allowed does not shrink with the level any more: the last of a heel needs no micrometres.
 const leastLevel = 0.1
 
-// levelCap bounds the error allowed in a level, m: a quarter of the head under which flows are made linear, so that an equilibrium is quiet.
+// levelCap bounds the error allowed in a level, m, where no more than a metre's share of the tolerance is asked for: a quarter of the head under which flows
+// are made linear, so that an equilibrium is quiet.
 const levelCap = 2e-5
 
 // Admit refuses a state with a volume well under nothing or gas that has gone.

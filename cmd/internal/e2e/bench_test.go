@@ -111,3 +111,23 @@ func BenchmarkRun(b *testing.B) {
 		})
 	}
 }
+
+// BenchmarkSample runs the demos as samples of their doubts are run.
+func BenchmarkSample(b *testing.B) {
+	for _, name := range scenarios.Demos() {
+		data, _ := scenarios.Demo(name)
+		b.Run(name, func(b *testing.B) {
+			m := compile(b, string(data), how{tolerance: 1e-4})
+			b.ReportAllocs()
+			var r *network.Result
+			for b.Loop() {
+				var err error
+				if r, err = m.Run(context.Background(), network.RunOptions{}); err != nil {
+					b.Fatal(err)
+				}
+			}
+			b.ReportMetric(float64(r.Work.Steps), "steps")
+			b.ReportMetric(float64(b.Elapsed().Microseconds())/float64(b.N)/float64(r.Work.Steps+r.Work.Rejected), "µs/step")
+		})
+	}
+}

@@ -15,7 +15,7 @@ var golden = map[string][2]int{
 	"cellar_free":    {213, 49},
 	"day_tank":       {103, 9},
 	"equalisation":   {73, 8},
-	"hillside":       {399, 69},
+	"hillside":       {262, 58},
 	"ten_vessels":    {908, 166},
 }
 
