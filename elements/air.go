@@ -20,26 +20,39 @@ const (
 //	G = p₁/√(R·T)·ψ(r),  ψ = √(2κ/(κ−1)·(r^(2/κ) − r^((κ+1)/κ))),  r = p₂/p₁,  choked below r = 0.528.
 //
 // Within 1 Pa of balance a cubic on either side with one slope at zero: C¹. Source: isentropic nozzle, compressible-flow textbooks.
-func airIn(p, p0, T float64) (g, byP float64) {
+func airIn(p, p0, T float64, near *AirBand) (g, byP float64) {
 	d := p0 - p
 	if math.Abs(d) >= airBand {
 		return airBeyond(d, p0, T)
 	}
+	if near.p0 != p0 || near.temp != T {
+		*near = newAirBand(p0, T)
+	}
+	u, c := math.Abs(d)/airBand, &near.inwards
+	if d < 0 {
+		c = &near.outwards
+	}
+	return math.Copysign(u*(near.slope+u*(c[0]+u*c[1])), d), -(near.slope + u*(2*c[0]+u*3*c[1])) / airBand
+}
+
+// AirBand is the flow of air within 1 Pa of balance, kept from call to call since what is outside hardly changes. The zero value is ready.
+type AirBand struct {
+	p0, temp          float64 // Pa, K, that it holds for
+	slope             float64 // kg/(s·m²), at balance, over the band
+	inwards, outwards [2]float64
+}
+
+// newAirBand works out the cubics of both sides in u = d/band: their slopes at zero differ by a part in 10⁵, and both take the mean.
+func newAirBand(p0, T float64) AirBand {
 	in, inBy := airBeyond(airBand, p0, T)
 	out, outBy := airBeyond(-airBand, p0, T)
-	// In u = d/band: the odd cubics of the two sides differ by a part in 10⁵ in their slope at zero; both take the mean.
 	s := (3*(in-out) + airBand*(inBy+outBy)) / 4
-	end, t := in, -inBy*airBand
-	u := math.Abs(d) / airBand
-	if d < 0 {
-		end, t = -out, -outBy*airBand
-	}
-	a, b := 3*end-t-2*s, t+s-2*end
-	return math.Copysign(u*(s+u*(a+u*b)), d), -(s + u*(2*a+u*3*b)) / airBand
+	side := func(end, t float64) [2]float64 { return [2]float64{3*end - t - 2*s, t + s - 2*end} }
+	return AirBand{p0: p0, temp: T, slope: s, inwards: side(in, -inBy*airBand), outwards: side(-out, -outBy*airBand)}
 }
 
 // AirIn returns the mass flow of air into a vessel per effective area Cd·A, kg/(s·m²), and its derivative by the inside pressure: see airIn.
-func AirIn(p, p0, T float64) (g, byP float64) { return airIn(p, p0, T) }
+func AirIn(p, p0, T float64, near *AirBand) (g, byP float64) { return airIn(p, p0, T, near) }
 
 // airBeyond is airIn at a difference d = p0 − p, Pa, outside the band.
 func airBeyond(d, p0, T float64) (g, byP float64) {

@@ -47,6 +47,17 @@ func (e *checkValve) Drop(q float64, at *Local) (dp, slope float64) {
 	return TwoWay(c, c/(leak*leak), q, at.Band)
 }
 
+// Square is for any flow beyond the band of either way.
+func (e *checkValve) Square(at *Local) (forward, back, from float64) {
+	c := e.square * at.Fluid.Density
+	forward, back = c, c
+	if leak := max(e.leak, at.Leak); leak > 0 {
+		back = c / (leak * leak)
+		forward = max(c, 1e-6*back)
+	}
+	return forward, back, beyondBand(c, at)
+}
+
 func (e *checkValve) Tag() string       { return e.tag }
 func (e *checkValve) Cracking() float64 { return e.crack }
 func (e *checkValve) Leak() float64     { return e.leak }

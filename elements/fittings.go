@@ -65,6 +65,12 @@ func (e *fittingSet) Drop(q float64, at *Local) (dp, slope float64) {
 // Even tells that counted fittings lose the same both ways.
 func (e *fittingSet) Even() bool { return true }
 
+// Square is for any flow beyond the band.
+func (e *fittingSet) Square(at *Local) (forward, back, from float64) {
+	c := e.square * at.Fluid.Density
+	return c, c, beyondBand(c, at)
+}
+
 // Bore returns the bore that was written; 0 when the fittings take that of their neighbour.
 func (e *fittingSet) Bore() float64 { return e.bore }
 

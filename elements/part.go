@@ -17,7 +17,8 @@ type Local struct {
 	Leak     float64 // share of Kv that a check valve passes in reverse, where it does not state more itself
 	Band     float64 // Pa: drop under which a quadratic loss is made linear through zero (see Quadratic)
 
-	opened memo // of a valve's opening: what its trim makes of it
+	opened memo    // of a valve's opening: what its trim makes of it
+	air    AirBand // of a vent
 }
 
 // memo keeps the last value of a function of the opening, which stands still most of the time.
@@ -137,6 +138,12 @@ type Throttles interface {
 // Reduces is a part that may contain a reducer or expander, so that the bores on its two sides may differ without further loss.
 type Reduces interface {
 	Reduces() bool
+}
+
+// Squares is a part whose drop, as it stands, is c·q·|q| at flows of from and more, m³/s, either way: Square returns c for q > 0 and for q < 0,
+// Pa·s²/m⁶. The sum of such parts costs no more than one.
+type Squares interface {
+	Square(at *Local) (forward, back, from float64)
 }
 
 // Runs is a pump with an end to its curve: Runout is the largest flow, m³/s, that it is made for.

@@ -17,6 +17,14 @@ func Quadratic(c, q, band float64) (dp, slope float64) {
 	return s / 2 * q * (1 + r*r), s / 2 * (1 + 3*r*r)
 }
 
+// beyondBand is the flow, m³/s, from which c·q|q| is out of the band; 0 where nothing is lost.
+func beyondBand(c float64, at *Local) float64 {
+	if c <= 0 {
+		return 0
+	}
+	return math.Sqrt(at.Band/c) * (1 + 1e-15)
+}
+
 // QuadraticByC returns the derivative of Quadratic by c.
 func QuadraticByC(c, q, band float64) float64 {
 	a := math.Abs(q)

@@ -40,6 +40,15 @@ func (e *valve) Drop(q float64, at *Local) (dp, slope float64) {
 	return dp, slope
 }
 
+// Square is for flows so turbulent that F_R is 1.
+func (e *valve) Square(at *Local) (forward, back, from float64) {
+	phi, _ := e.opened(at)
+	phi = max(phi, leastShare)
+	c := e.law.square * at.Fluid.Density / (phi * phi)
+	perFlow := e.law.thick.re * at.Fluid.Density / (at.Fluid.Dynamic * math.Sqrt(phi))
+	return c, c, max(beyondBand(c, at), e.law.thick.turbulent/perFlow*(1+1e-15))
+}
+
 // DropByOpening returns ∂Δp/∂x, Pa, at flow q. Δp depends on q/φ, and through F_R on Re_v ∝ q/√φ, which gives it from the slope by q.
 func (e *valve) DropByOpening(q float64, at *Local) float64 {
 	phi, byX := e.opened(at)

@@ -16,6 +16,7 @@ type airway struct {
 	far   *mouth
 	inlet bool  // air comes in in the line's direction
 	byFar int32 // slot of the far vessel's volume in the row of the gas mass; -1
+	near  elements.AirBand
 }
 
 // airwayCd is the discharge coefficient of an air path through a line; common practice, no source.
@@ -113,7 +114,7 @@ func (s *system) breathe(st *station, a *airway) (m, byP, byOwn, byFar float64) 
 	if own == 0 || far == 0 {
 		return 0, 0, 0, 0
 	}
-	g, byG := elements.AirIn(st.gas, s.atmosphere, st.temp)
+	g, byG := elements.AirIn(st.gas, s.atmosphere, st.temp, &a.near)
 	if l.oneWay && (g > 0) != a.inlet {
 		return 0, 0, 0, 0
 	}

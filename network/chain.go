@@ -15,7 +15,51 @@ type chain struct {
 	fwd    float64           // Pa/(m³/s)², for q > 0
 	rev    float64           // Pa/(m³/s)², for q < 0
 	band   float64           // Pa, of the quadratic term
+	near   float64           // share of the flow at which the last step is taken
 	back   bool              // seen from the other end: q counts against the parts' direction
+
+	merged     bool // what follows holds, as the parts stand: at flows of from and more all but the others lose ahead·q², astern·q² in reverse
+	from       float64
+	ahead      float64 // Pa·s²/m⁶
+	astern     float64
+	others     []elements.Part
+	otherPlace []*elements.Local
+}
+
+// merge sums up what is quadratic in the flow while the parts stand as they do.
+func (c *chain) merge() {
+	c.merged, c.from, c.ahead, c.astern = c.weight == nil && !c.back, 0, c.fwd, c.rev
+	switch least, most := math.Min(c.fwd, c.rev), math.Max(c.fwd, c.rev); {
+	case least < 1e-6*most: // see elements.TwoWay
+		c.merged = false
+	case least > 0:
+		c.from = math.Sqrt(c.band/least) * (1 + 1e-15)
+	}
+	c.others, c.otherPlace = c.others[:0], c.otherPlace[:0]
+	for i, p := range c.parts {
+		s, ok := p.(elements.Squares)
+		if !ok {
+			c.others, c.otherPlace = append(c.others, p), append(c.otherPlace, c.locals[i])
+			continue
+		}
+		forward, back, from := s.Square(c.locals[i])
+		c.ahead, c.astern, c.from = c.ahead+forward, c.astern+back, math.Max(c.from, from)
+	}
+}
+
+// dropMerged is drop at flows of from and more.
+func (c *chain) dropMerged(q float64) (dp, slope float64) {
+	k := c.ahead * q
+	if q < 0 {
+		k = -c.astern * q
+	}
+	dp, slope = k*q, 2*k
+	for i, p := range c.others {
+		d, s := p.Drop(q, c.otherPlace[i])
+		dp += d
+		slope += s
+	}
+	return dp, slope
 }
 
 // symmetric tells that the loss is the same both ways.
@@ -33,6 +77,9 @@ func (c *chain) symmetric() bool {
 
 // drop returns the pressure lost at flow q, Pa, and its slope, Pa·s/m³.
 func (c *chain) drop(q float64) (dp, slope float64) {
+	if c.merged && math.Abs(q) >= c.from {
+		return c.dropMerged(q)
+	}
 	if c.fwd > 0 || c.rev > 0 {
 		dp, slope = elements.TwoWay(c.fwd, c.rev, q, c.band)
 	}
@@ -52,10 +99,16 @@ func (c *chain) drop(q float64) (dp, slope float64) {
 	return dp, slope
 }
 
-const (
-	nearEnough = 1e-7 // share of the flow: Newton's next step would be of the order of its square
-	maxSolves  = 200
-)
+const maxSolves = 200
+
+// nearEnough returns the share of a flow at which a step of Newton's method is the last, its error being of the order of the square: what is left is rounding,
+// or in coarse runs, as those of samples are, a ten-thousandth of the tolerance.
+func nearEnough(rtol float64) float64 {
+	if rtol > coarse {
+		return math.Min(1e-4, 1e-2*math.Sqrt(rtol))
+	}
+	return 1e-7
+}
 
 // solve returns the flow that loses dp and ∂q/∂dp, starting from guess q. The loss is increasing, so that the root is unique: Newton's method,
 // kept within a bracket that grows from what was seen.
@@ -75,7 +128,7 @@ func (c *chain) solve(dp, q float64) (flow, slope float64) {
 		}
 		step := r / s
 		next := q + step
-		if math.Abs(step) <= nearEnough*math.Abs(next) {
+		if math.Abs(step) <= c.near*math.Abs(next) {
 			return next, 1 / s
 		}
 		// Newton on a function with |q|^p, p ≤ 2, halves its step at the very least; else the bracket is halved.

@@ -57,6 +57,29 @@ func (s *system) see(m *mouth) (e end) {
 	return e
 }
 
+// meet is see without the slopes.
+func (s *system) meet(m *mouth, e *end) {
+	switch m.kind {
+	case toVessel:
+		z := s.stations[m.at].surface
+		e.depth = z - m.invert
+		if m.width == 0 {
+			e.phi = s.floor[m.at]
+			return
+		}
+		z, _ = uncover(z, m.centre, m.width)
+		e.phi = s.stations[m.at].gas + s.gamma*z
+	case toTee:
+		e.phi, e.depth = s.y[s.teeRow+m.at], always
+	case toWater:
+		e.phi, e.depth = s.atmosphere+s.gamma*s.outside[m.at].surface, always
+	case toPressure:
+		e.phi, e.depth = s.outside[m.at].phi, always
+	default:
+		e.phi, e.depth = s.outside[m.at].phi, never
+	}
+}
+
 // uncover returns the elevation that drives a mouth of centre c as the surface z falls over it, and its slope: z above the crown, c below the
 // invert, once differentiable between.
 func uncover(z, c, width float64) (elev, slope float64) {

@@ -76,7 +76,7 @@ func (s *system) newCrown(c *line, plan *elements.Crown, i int) crown {
 // upstream builds the chain from one end of the line up to part i, with the velocity head there; with the part itself where it is a throat.
 func (s *system) upstream(c *line, i int, back, itself bool) floor {
 	f := floor{part: i, back: back}
-	f.up = chain{band: c.chain.band, back: back}
+	f.up = chain{band: c.chain.band, near: c.chain.near, back: back}
 	add := func(k int) {
 		if _, ok := c.plan.Parts[k].Part.(elements.Crest); ok {
 			return

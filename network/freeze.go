@@ -122,6 +122,10 @@ func (s *system) freezeLine(l *line, t float64) {
 			l.moving = append(l.moving, mover{part: l.inChain(a.part), local: a.part, actuator: int(k), rate: r})
 		}
 	}
+	l.chain.merged = false
+	if len(l.moving) == 0 {
+		l.chain.merge()
+	}
 	l.shut = false
 	for i, f := range l.plan.Parts {
 		if sh, ok := f.Part.(elements.Shuts); ok && sh.Shut(&l.locals[i]) && !l.moves(i) {

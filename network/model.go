@@ -16,6 +16,7 @@ type Options struct {
 type RunOptions struct {
 	Changes  Changes
 	Series   bool               // keep the series
+	Brief    bool               // what is judged alone: no extremes of flows, gas pressures and spills, and no flags of the lines' states
 	Grid     *Grid              // where the levels of a few moments go; nil when they are not wanted
 	Progress func(done float64) // called now and then with the share of run_for done; may be nil
 	Now      func() time.Time   // for the wall time; nil takes time.Now

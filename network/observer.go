@@ -34,6 +34,7 @@ type observer struct {
 	summed     bool   // integrals within steps are asked for
 	rz         []float64
 	keep       bool
+	brief      bool // extremes of flows and states of lines are not wanted
 	columns    []column
 	series     *Series
 	next       float64 // next sample
@@ -84,7 +85,7 @@ func newObserver(sim *simulation) (*observer, error) {
 	return o, nil
 }
 
-func (o *observer) begin(series bool) {
+func (o *observer) begin(series, brief bool) {
 	clean := extreme{low: math.Inf(1), high: math.Inf(-1)}
 	for _, list := range [][]extreme{o.level, o.gas, o.spill, o.flow, o.crest, o.inflow} {
 		for i := range list {
@@ -104,7 +105,7 @@ func (o *observer) begin(series bool) {
 	for _, h := range o.histories {
 		h.begin()
 	}
-	o.keep, o.series, o.next, o.index = series, nil, 0, 0
+	o.keep, o.brief, o.series, o.next, o.index = series, brief, nil, 0, 0
 	if series {
 		o.series = o.newSeries()
 	}
@@ -154,7 +155,9 @@ func (o *observer) step(out *integrate.Outcome) {
 	o.here(out.T)
 	o.note(&o.now)
 	o.look(&o.now, 2)
-	o.regime() // while the system stands at the end of the step: what follows looks about within it
+	if !o.brief {
+		o.regime() // while the system stands at the end of the step: what follows looks about within it
+	}
 	o.middle(out.T0 + (out.T-out.T0)/2)
 	o.samples(out)
 	for _, i := range o.turnedNow {
@@ -163,7 +166,9 @@ func (o *observer) step(out *integrate.Outcome) {
 	o.turnedNow = o.turnedNow[:0]
 	o.turns(&o.prev, &o.mid)
 	o.turns(&o.mid, &o.now)
-	o.peaks()
+	if !o.brief {
+		o.peaks()
+	}
 	for _, m := range o.followed {
 		m.step(o)
 	}

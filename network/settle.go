@@ -95,9 +95,11 @@ func (r *settler) balances(s *system, matrix bool) {
 	if matrix {
 		clear(r.values)
 	}
+	var a, b end
 	for k, i := range r.lines {
 		l := &s.lines[i]
-		a, b := s.see(&l.from), s.see(&l.to)
+		s.meet(&l.from, &a)
+		s.meet(&l.to, &b)
 		l.evaluate(&a, &b, s.gamma)
 		e, sl := r.ends[k], &r.slots[k]
 		if e[0] >= 0 {
@@ -208,24 +210,24 @@ func (s *system) Settle(t float64, y []float64) {
 	}
 }
 
-// settledFlow and settledShare are what is left out of balance where the descent ends, m³/s and of the flows through a tee: the solver's own Newton
-// steps do the rest.
+// settledFlow and settledShare are what is left out of balance where the descent ends, m³/s, and of the tolerance as a share of the flows through a tee: the
+// solver's own Newton steps do the rest.
 const (
 	settledFlow  = 1e-16
-	settledShare = 1e-9
+	settledShare = 1e-2
 )
 
 // balanced tells that what is out of balance is next to nothing.
 func (r *settler) balanced(s *system) bool {
 	for i, f := range r.f {
-		if math.Abs(f) > settledFlow+settledShare*r.through[i] {
+		if math.Abs(f) > settledFlow+settledShare*s.rtol*r.through[i] {
 			return false
 		}
 	}
 	return true
 }
 
-// search goes along d until f·d has fallen to a hundredth of what it was.
+// search goes along d until f·d has fallen to a tenth of what it was.
 func (r *settler) search(s *system, most float64) {
 	start := 0.0
 	for i, d := range r.d {
@@ -235,7 +237,7 @@ func (r *settler) search(s *system, most float64) {
 	flo, fhi := start, 0.0
 	for n := range 100 {
 		g := r.along(s, part)
-		if math.Abs(g) <= 0.01*start {
+		if math.Abs(g) <= 0.1*start {
 			return
 		}
 		if g > 0 {

@@ -131,7 +131,7 @@ func (sim *simulation) begin(opt *RunOptions) error {
 	sim.led.reset()
 	sim.solver.Reset()
 	sim.control.begin(sim)
-	sim.obs.begin(opt.Series)
+	sim.obs.begin(opt.Series, opt.Brief)
 	sim.grid = gridder{grid: opt.Grid}
 	return sim.watch.begin()
 }

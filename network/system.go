@@ -106,9 +106,11 @@ func (s *system) Rates(t float64, y, f, g []float64) {
 		}
 	}
 	s.plainRates(f, g)
+	var a, b end
 	for _, i := range s.rest {
 		l := &s.lines[i]
-		a, b := s.see(&l.from), s.see(&l.to)
+		s.meet(&l.from, &a)
+		s.meet(&l.to, &b)
 		l.evaluate(&a, &b, s.gamma)
 		sl := &s.slot[i]
 		if sl.from >= 0 {
@@ -173,7 +175,11 @@ func (s *system) balanceTees(f []float64) {
 // Scale fills the error allowed in each unknown: of a level l, rtol·(0.1 m + |l|) up to 2·10⁻⁵ m, as a volume over the present surface.
 func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 	most := max(levelCap, rtol*1) // m
-	tol := func(l float64) float64 { return min(rtol*(leastLevel+l), most) }
+	below := leastLevel
+	if rtol > coarse {
+		below = 1
+	}
+	tol := func(l float64) float64 { return min(rtol*(below+l), most) }
 	least := 1e-9 * math.Min(1, rtol*1e6)
 	for i := range s.stations {
 		if b := &s.basins[i]; b.holds(y[i]) {
@@ -217,6 +223,9 @@ const plainHead = 100
 
 // teeShare is the error allowed in the head at a tee over that in a level of a metre: it drives flows at the time, and is forgotten.
 const teeShare = 10
+
+// coarse is the tolerance from which on a run is one of many, as of samples, and the last of a heel is as good as a metre.
+const coarse = 5e-6
 
 // leastLevel is the level, m, under which the error allowed does not shrink with the level any more: the last of a heel needs no micrometres.
 const leastLevel = 0.1

@@ -47,6 +47,7 @@ func part(t *testing.T, e elements.Part) {
 		if !lifts && !crest && !humps {
 			passive(t, e, q, at)
 		}
+		claims(t, e, q, at)
 		if th, ok := e.(elements.Throttles); ok {
 			throttles(t, e, th, q, at)
 		}
@@ -62,6 +63,35 @@ func part(t *testing.T, e elements.Part) {
 			p.SetPlace(bore)
 			if err := e.Ready(); err == nil {
 				passive(t, e, flows(r), locals()[0])
+			}
+		}
+	}
+}
+
+// claims holds a part to what it says of itself: that it loses the same both ways, that its drop is a square beyond some flow.
+func claims(t *testing.T, e elements.Part, q []float64, at *elements.Local) {
+	t.Helper()
+	if even, ok := e.(elements.Even); ok && even.Even() {
+		for _, q := range q {
+			a, byA := e.Drop(q, at)
+			if b, byB := e.Drop(-q, at); a != -b || byA != byB {
+				t.Fatalf("Q %g: drop %g, slope %g; the other way %g, %g", q, a, byA, b, byB)
+			}
+		}
+	}
+	s, ok := e.(elements.Squares)
+	if !ok {
+		return
+	}
+	forward, back, from := s.Square(at)
+	for _, q := range append(q, from, -from, from*1.01) {
+		c := forward
+		if q < 0 {
+			c = back
+		}
+		if a := math.Abs(q); a >= from {
+			if dp, slope := e.Drop(q, at); !near(dp, c*a*q, 1e-13, 0) || !near(slope, 2*c*a, 1e-13, 0) {
+				t.Fatalf("Q %g, %s, band %g, opening %g: drop %g, slope %g, not the square %g, %g", q, at.Fluid.Name, at.Band, at.Opening, dp, slope, c*a*q, 2*c*a)
 			}
 		}
 	}

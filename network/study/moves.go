@@ -60,7 +60,7 @@ func (m *move) find(ctx context.Context, b *Bench) (*MovedStep, error) {
 // far returns how far the step can be moved one way, up to most, with every limit holding all the way, and whether that is all of it.
 func (m *move) far(ctx context.Context, b *Bench, most, way float64) (by float64, all bool, err error) {
 	ok := func(shift float64) (bool, error) {
-		r, err := b.Run(ctx, network.RunOptions{Changes: network.Changes{Shift: one(m.id, way*shift)}})
+		r, err := b.Run(ctx, network.RunOptions{Brief: true, Changes: network.Changes{Shift: one(m.id, way*shift)}})
 		if ctx.Err() != nil {
 			return false, context.Cause(ctx)
 		}

@@ -41,7 +41,7 @@ func takeSample(ctx context.Context, b *Bench, d *Draws, i int, holds bool, at [
 	if len(at) > 0 {
 		levels = network.NewGrid(at, len(b.Plant.Vessels))
 	}
-	r, err := b.Run(ctx, network.RunOptions{Grid: levels})
+	r, err := b.Run(ctx, network.RunOptions{Grid: levels, Brief: true})
 	if ctx.Err() != nil {
 		return sample{}, context.Cause(ctx)
 	}
@@ -53,7 +53,7 @@ func takeSample(ctx context.Context, b *Bench, d *Draws, i int, holds bool, at [
 	if !holds {
 		return s, nil
 	}
-	r, err = b.Run(ctx, network.RunOptions{Changes: network.Changes{HoldsUpTo: true}})
+	r, err = b.Run(ctx, network.RunOptions{Changes: network.Changes{HoldsUpTo: true}, Brief: true})
 	if ctx.Err() != nil {
 		return sample{}, context.Cause(ctx)
 	}

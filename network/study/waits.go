@@ -20,7 +20,7 @@ func (j *judgement) longestWaits() error {
 			continue
 		}
 		ok := func(ctx context.Context, b *Bench, wait float64) (bool, error) {
-			r, err := b.Run(ctx, network.RunOptions{Changes: network.Changes{Waits: map[string]float64{h.ID: wait}}})
+			r, err := b.Run(ctx, network.RunOptions{Brief: true, Changes: network.Changes{Waits: map[string]float64{h.ID: wait}}})
 			if err != nil && !calculable(err) || ctx.Err() != nil {
 				return false, err
 			}
