@@ -15,7 +15,6 @@ const (
 	growBy   = 6.0
 	shrinkBy = 0.2
 	least    = 1e-4 // error below which the memory does not look
-	quiet    = 0.03 // errors below which there is nothing to smooth
 )
 
 func (c *control) restart() { c.previous, c.rejected = 0, false }
@@ -24,7 +23,7 @@ func (c *control) restart() { c.previous, c.rejected = 0, false }
 func (c *control) accept(e float64) float64 {
 	e = max(e, 1e-10)
 	factor := safety * math.Pow(e, -1/c.q)
-	if c.previous > 0 && max(e, c.previous) > quiet {
+	if c.previous > 0 {
 		factor = safety * math.Pow(e, -0.7/c.q) * math.Pow(c.previous, 0.4/c.q)
 	}
 	factor = min(max(factor, shrinkBy), growBy)

@@ -21,6 +21,8 @@ type settler struct {
 	through []float64 // flows of the lines of each tee, without their signs, m³/s
 	sound   bool      // factor holds the slopes of the present state
 	x       []float64
+	share   float64
+	turn    float64
 }
 
 // deepest is how far under the lowest mouth of the plant the head at a tee may be, m: more than a vacuum could pull.
@@ -51,7 +53,11 @@ func newSettler(s *system) *settler {
 	if n == 0 {
 		return nil
 	}
-	r := &settler{f: make([]float64, n), through: make([]float64, n), d: make([]float64, n), x: make([]float64, n), diag: make([]int32, n)}
+	share, turn := settledShare, settledTurn
+	if s.rtol > coarse {
+		share, turn = coarseShare, coarseTurn
+	}
+	r := &settler{share: share, turn: turn, f: make([]float64, n), through: make([]float64, n), d: make([]float64, n), x: make([]float64, n), diag: make([]int32, n)}
 	b := &patternBuilder{n: n}
 	for i := range n {
 		b.add(int32(i), int32(i))
@@ -210,24 +216,27 @@ func (s *system) Settle(t float64, y []float64) {
 	}
 }
 
-// settledFlow and settledShare are what is left out of balance where the descent ends, m³/s, and of the tolerance as a share of the flows through a tee: the
-// solver's own Newton steps do the rest.
+// settledFlow and settledShare are what is left out of balance where the descent ends, m³/s and of the flows through a tee, and settledTurn the share of
+// the slope along a direction that is left where the search along it ends: the solver's own Newton steps do the rest. Coarse runs are content with more.
 const (
 	settledFlow  = 1e-16
-	settledShare = 1e-2
+	settledShare = 1e-9
+	settledTurn  = 0.01
+	coarseShare  = 1e-6
+	coarseTurn   = 0.1
 )
 
 // balanced tells that what is out of balance is next to nothing.
 func (r *settler) balanced(s *system) bool {
 	for i, f := range r.f {
-		if math.Abs(f) > settledFlow+settledShare*s.rtol*r.through[i] {
+		if math.Abs(f) > settledFlow+r.share*r.through[i] {
 			return false
 		}
 	}
 	return true
 }
 
-// search goes along d until f·d has fallen to a tenth of what it was.
+// search goes along d until f·d has fallen to a share of what it was.
 func (r *settler) search(s *system, most float64) {
 	start := 0.0
 	for i, d := range r.d {
@@ -237,7 +246,7 @@ func (r *settler) search(s *system, most float64) {
 	flo, fhi := start, 0.0
 	for n := range 100 {
 		g := r.along(s, part)
-		if math.Abs(g) <= 0.1*start {
+		if math.Abs(g) <= r.turn*start {
 			return
 		}
 		if g > 0 {

@@ -175,9 +175,9 @@ func (s *system) balanceTees(f []float64) {
 // Scale fills the error allowed in each unknown: of a level l, rtol·(0.1 m + |l|) up to 2·10⁻⁵ m, as a volume over the present surface.
 func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 	most := max(levelCap, rtol*1) // m
-	below := leastLevel
+	below, share := leastLevel, 1.0
 	if rtol > coarse {
-		below = 1
+		below, share = 1, coarseTee
 	}
 	tol := func(l float64) float64 { return min(rtol*(below+l), most) }
 	least := 1e-9 * math.Min(1, rtol*1e6)
@@ -200,7 +200,7 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 		}
 	}
 	for i := s.teeRow; i < s.teeRow+len(s.teeAt); i++ {
-		scale[i] = s.gamma * math.Max(teeShare*tol(1), rtol*(math.Abs(y[i]-s.atmosphere)/s.gamma-plainHead))
+		scale[i] = s.gamma * math.Max(share*tol(1), rtol*(math.Abs(y[i]-s.atmosphere)/s.gamma-plainHead))
 		if t := &s.tees[i-s.teeRow]; t.ease > 0 && !t.slow { // where next to nothing flows a pressure means little
 			scale[i] = math.Max(scale[i], 1e6*rtol*stillFlow/t.ease)
 		}
@@ -221,8 +221,8 @@ const gasCap = 1
 // plainHead is the head, m, beyond which the error allowed in the pressure of a tee grows with it: pumps of a steady rate against shut valves come there.
 const plainHead = 100
 
-// teeShare is the error allowed in the head at a tee over that in a level of a metre: it drives flows at the time, and is forgotten.
-const teeShare = 10
+// coarseTee is the error allowed in the head at a tee over that in a level of a metre in a coarse run: it drives flows at the time, and is forgotten.
+const coarseTee = 10
 
 // coarse is the tolerance from which on a run is one of many, as of samples, and the last of a heel is as good as a metre.
 const coarse = 5e-6

@@ -280,7 +280,11 @@ func TestDemosLedger(t *testing.T) {
 					t.Errorf("%s: a second run differs: %s", c, differ(first, second))
 				}
 				for _, method := range []string{"bdf", "rodas4p"} {
-					o := run(t, string(data), how{kase: c, method: method})
+					h := how{kase: c, method: method}
+					if method == "bdf" {
+						h.tolerance = 3e-7 // it errs by ten to a hundred times its tolerance
+					}
+					o := run(t, string(data), h)
 					for tag, v := range r.Vessels {
 						w := o.Vessels[tag]
 						near(t, fmt.Sprintf("%s %s: end of %s", c, method, tag), w.EndLevel, v.EndLevel, 1e-4)
