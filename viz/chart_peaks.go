@@ -45,7 +45,7 @@ func placePeaks(curves []curve, end, top, span float64) {
 			{"left", box{x - peakWide, x, y - high/2, y + high/2}},
 			{"bottom", box{x - peakWide/2, x + peakWide/2, y - high, y}},
 		} {
-			if try.at.high > top+high/4 || try.at.right > 1+peakWide/2 || try.at.left < 0 || hits(taken, try.at) {
+			if try.at.high > top+high/4 || try.at.right > 1.01 || try.at.left < 0 || hits(taken, try.at) {
 				continue
 			}
 			c.peakPlace = try.place

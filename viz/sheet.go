@@ -3,6 +3,7 @@ package viz
 import (
 	"fmt"
 	"math"
+	"regexp"
 	"sort"
 	"strconv"
 	"strings"
@@ -94,8 +95,11 @@ func order(at *float64) float64 {
 	return *at
 }
 
+// lastUnit is a number with its unit at the end of a text; they stay on one line.
+var lastUnit = regexp.MustCompile(`(\d) (\S+)$`)
+
 func stepRow(p Page, s *network.StepResult, u units, c clock) sheetRow {
-	row := sheetRow{at: s.Done, Who: s.Who, Action: s.Says, StopIf: stopWords(s.StopIf), Where: s.Where, Note: s.Note}
+	row := sheetRow{at: s.Done, Who: s.Who, Action: s.Says, StopIf: lastUnit.ReplaceAllString(stopWords(s.StopIf), "$1\u00a0$2"), Where: s.Where, Note: s.Note}
 	row.Verb, row.Rest, _ = strings.Cut(s.Says, " ")
 	if row.at == nil {
 		row.at = s.Due

@@ -225,7 +225,7 @@
       a.axisLabel = { formatter: label, color: SOFT, hideOverlap: true, showMinLabel: null, showMaxLabel: null }; a.splitLine = { show: false }; a.axisLine = { lineStyle: { color: SOFT }, onZero: false }; a.axisPointer = { label: { show: false }, lineStyle: { color: SOFT } };
     });
     o.yAxis.forEach(function (a) {
-      a.axisLabel = { formatter: function (v) { return v === 0 ? "0" : String(+v.toPrecision(6)).replace("-", "−"); }, color: SOFT, showMinLabel: null, showMaxLabel: null }; a.nameTextStyle = { color: SOFT, align: "right", padding: [0, 8, 0, 0] }; a.nameGap = 10;
+      a.axisLabel = { formatter: function (v) { return v === 0 ? "0" : String(+v.toPrecision(6)).replace("-", "−"); }, color: SOFT, showMinLabel: null, showMaxLabel: null }; a.nameTextStyle = { color: SOFT, align: "right", padding: [0, 8, 0, 0] }; a.nameGap = 18; // over the numbers of the steps
       a.splitLine = { lineStyle: { color: HAIR } };
     });
     o.dataZoom = [{ type: "inside", filterMode: "none", zoomOnMouseWheel: "ctrl", moveOnMouseWheel: false, moveOnMouseMove: true, preventDefaultMouseMove: false, start: 100 * zoom[0], end: 100 * zoom[1] }];
