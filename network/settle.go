@@ -21,8 +21,7 @@ type settler struct {
 	through []float64 // flows of the lines of each tee, without their signs, m³/s
 	sound   bool      // factor holds the slopes of the present state
 	x       []float64
-	share   float64
-	turn    float64
+	care
 }
 
 // deepest is how far under the lowest mouth of the plant the head at a tee may be, m: more than a vacuum could pull.
@@ -53,11 +52,11 @@ func newSettler(s *system) *settler {
 	if n == 0 {
 		return nil
 	}
-	share, turn := settledShare, settledTurn
+	c := withCare
 	if s.rtol > coarse {
-		share, turn = coarseShare, coarseTurn
+		c = coarseCare
 	}
-	r := &settler{share: share, turn: turn, f: make([]float64, n), through: make([]float64, n), d: make([]float64, n), x: make([]float64, n), diag: make([]int32, n)}
+	r := &settler{care: c, f: make([]float64, n), through: make([]float64, n), d: make([]float64, n), x: make([]float64, n), diag: make([]int32, n)}
 	b := &patternBuilder{n: n}
 	for i := range n {
 		b.add(int32(i), int32(i))
@@ -194,9 +193,9 @@ func (s *system) Settle(t float64, y []float64) {
 	}
 	s.look(t, y)
 	tol := 1e-7 * s.gamma * levelCap
-	for range 200 {
+	for range r.most {
 		r.balances(s, true)
-		if r.balanced(s) {
+		if r.balanced() {
 			return
 		}
 		copy(r.d, r.f)
@@ -205,36 +204,47 @@ func (s *system) Settle(t float64, y []float64) {
 			return
 		}
 		r.factor.Solve(r.d)
-		most := 0.0
-		for _, d := range r.d {
-			most = math.Max(most, math.Abs(d))
+		most, left := 0.0, 0.0
+		for i, d := range r.d {
+			d = math.Abs(d)
+			most = math.Max(most, d)
+			if !r.still(i) && d > tol+r.round*math.Abs(r.x[i]) {
+				left = math.Max(left, d)
+			}
 		}
-		if most <= tol || math.IsNaN(most) {
+		if left == 0 || math.IsNaN(most) {
 			return
 		}
 		r.search(s, most)
 	}
 }
 
-// settledFlow and settledShare are what is left out of balance where the descent ends, m³/s and of the flows through a tee, and settledTurn the share of
-// the slope along a direction that is left where the search along it ends: the solver's own Newton steps do the rest. Coarse runs are content with more.
-const (
-	settledFlow  = 1e-16
-	settledShare = 1e-9
-	settledTurn  = 0.01
-	coarseShare  = 1e-6
-	coarseTurn   = 0.1
+// care is how far the tees are brought to balance; the solver's own Newton steps do the rest.
+type care struct {
+	flow  float64 // m³/s, left out of balance
+	share float64 // the same, of the flows through a tee
+	turn  float64 // share of the slope along a direction that is left where the search along it ends
+	round float64 // share of a pressure under which its corrections do not count
+	most  int     // directions tried: where flows end in corners the descent is slow for next to nothing
+}
+
+var (
+	withCare   = care{flow: 1e-16, share: 1e-9, turn: 0.01, most: 200}
+	coarseCare = care{flow: 1e-10, share: 1e-6, turn: 0.1, round: 1e-14, most: 30}
 )
 
 // balanced tells that what is out of balance is next to nothing.
-func (r *settler) balanced(s *system) bool {
-	for i, f := range r.f {
-		if math.Abs(f) > settledFlow+r.share*r.through[i] {
+func (r *settler) balanced() bool {
+	for i := range r.f {
+		if !r.still(i) {
 			return false
 		}
 	}
 	return true
 }
+
+// still is balanced for one tee.
+func (r *settler) still(i int) bool { return math.Abs(r.f[i]) <= r.flow+r.share*r.through[i] }
 
 // search goes along d until f·d has fallen to a share of what it was.
 func (r *settler) search(s *system, most float64) {
