@@ -80,8 +80,15 @@ func (c *Condition) Says() string {
 	if c.Subject == Emptied {
 		return of + " emptied"
 	}
-	return fmt.Sprintf("%s of %s %s %s", c.Subject, of, side, c.Text)
+	what, own := spoken[c.Subject]
+	if !own {
+		what = c.Subject.String() + " of"
+	}
+	return fmt.Sprintf("%s %s %s %s", what, of, side, c.Text)
 }
+
+// spoken is how a subject is spoken of where its word in the file makes no sentence.
+var spoken = map[Subject]string{Passed: "volume through", Backflow: "backflow through", Spilled: "volume spilled from", CrestHead: "head at the high point of"}
 
 // Says writes a limit as what must hold.
 func (l *Limit) Says() string {
