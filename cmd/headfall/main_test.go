@@ -149,7 +149,7 @@ func TestInterruptedWhileCalculating(t *testing.T) {
 		t.Run(sig.String(), func(t *testing.T) {
 			plant(t, "day_tank")
 			for wait := time.Second; ; wait *= 2 { // until something was computed, however slow the machine
-				cmd := exec.Command(program, "spread", "plant.yaml", "--samples", "1000000", "--json", "a.json", "--html", "a.html")
+				cmd := exec.Command(program, "spread", "plant.yaml", "--workers", "1", "--samples", "200000", "--json", "a.json", "--html", "a.html")
 				if err := cmd.Start(); err != nil {
 					t.Fatal(err)
 				}
@@ -193,7 +193,7 @@ func TestInterruptedWhileCalculating(t *testing.T) {
 func TestTimeout(t *testing.T) {
 	plant(t, "day_tank")
 	for limit := 2; ; limit *= 2 {
-		said := ends(t, 3, io.Discard, "spread", "plant.yaml", "--samples", "1000000", "--json", "a.json", "--timeout", (time.Duration(limit) * time.Second).String())
+		said := ends(t, 3, io.Discard, "spread", "plant.yaml", "--workers", "1", "--samples", "200000", "--json", "a.json", "--timeout", (time.Duration(limit) * time.Second).String())
 		data, err := os.ReadFile("a.json")
 		if err != nil && limit < 60 {
 			if !strings.Contains(said, "--timeout") {

@@ -3,11 +3,13 @@ package cli
 import (
 	"context"
 	"errors"
+	"fmt"
 	"io"
 
 	"github.com/spf13/cobra"
 
 	"headfall/cmd/internal/text"
+	"headfall/network"
 	"headfall/network/study"
 	"headfall/viz/export"
 )
@@ -59,8 +61,28 @@ marked.`,
 	return c
 }
 
-// mostSamples are held in memory at once.
-const mostSamples = 10_000_000
+const (
+	mostSamples = 10_000_000 // of one study
+	mostMemory  = 2 << 30    // bytes that the samples of one part may take
+)
+
+// affordable refuses more samples than fit into memory; of are the parts that they are shared among.
+func affordable(p *network.Plant, samples, of int) error {
+	doubts := 0
+	for _, n := range p.Numbers {
+		if n.Value.Doubt.Stated() {
+			doubts++
+		}
+	}
+	limits := len(p.Limits) + len(p.Vessels)                                     // with the rims
+	each := 256 + 16*doubts + 16*len(p.Vessels) + 9*limits + 8*len(p.Milestones) // bytes: draws, levels and times of vessels, margins
+	part := samples / max(of, 1)
+	if part <= mostMemory/each {
+		return nil
+	}
+	return bad(fmt.Sprintf("as --samples %d, or in parts: --shard 1/%d", mostMemory/each, part/(mostMemory/each)+1),
+		"%d samples of this plant take about %.1f GB of memory, %d GB are taken", part, float64(part)*float64(each)/(1<<30), mostMemory>>30)
+}
 
 func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 	if o.samples < 1 || o.samples > mostSamples {
@@ -73,6 +95,13 @@ func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 	bar := a.progress("sampling")
 	opt := study.SpreadOptions{Samples: o.samples, Seed: o.seed}
 	if opt.Common, err = a.common(o.many, bar); err != nil {
+		return err
+	}
+	plant, err := load()
+	if err != nil {
+		return err
+	}
+	if err := affordable(plant, o.samples, opt.Shard.Of); err != nil {
 		return err
 	}
 	rep, err := a.report(o.many, load)
