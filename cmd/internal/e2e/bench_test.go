@@ -131,3 +131,20 @@ func BenchmarkSample(b *testing.B) {
 		})
 	}
 }
+
+// BenchmarkLoad reads, checks and readies plant files.
+func BenchmarkLoad(b *testing.B) {
+	for _, n := range []int{100, 1000, 10000} {
+		b.Run(fmt.Sprintf("chain_%d", n), func(b *testing.B) {
+			text := chainOf(n)
+			b.SetBytes(int64(len(text)))
+			b.ReportAllocs()
+			for b.Loop() {
+				p := load(b, text)
+				if faults, _ := p.Validate(); len(faults) > 0 {
+					b.Fatal(faults[0])
+				}
+			}
+		})
+	}
+}
