@@ -6,10 +6,12 @@ import "math"
 // taken from the bits of x, 2^k cells an octave with k chosen octave by octave so that the relative error is under tol. Read-only once built;
 // the grid depends on nothing but the law.
 type flowTable struct {
-	low, high float64 // Pa: outside of them the law itself is solved
-	within    float64 // m³/s: the greatest flow, either way, known to be within the ranges of the parts
-	octaves   [2][]octave
-	cells     []tableCell
+	low     float64       // Pa: below it the flow is a cubic in Δp
+	high    float64       // Pa: beyond it the law itself is solved
+	within  float64       // m³/s: the greatest flow, either way, known to be within the ranges of the parts
+	still   [2][2]float64 // of that cubic, by side: the flow is Δp·(a + b·Δp²)
+	octaves [2][]octave
+	cells   []tableCell
 }
 
 type tableCell [4]float64 // coefficients of the cubic in 0 ≤ u < 1
@@ -40,9 +42,12 @@ func newFlowTable(c *chain, most, tol, gamma float64) *flowTable {
 	}
 	for side, sign := range [2]float64{1, -1} {
 		if side == 1 && c.symmetric() {
-			t.octaves[1] = t.octaves[0]
+			t.octaves[1], t.still[1] = t.octaves[0], t.still[0]
 			break
 		}
+		q, slope := c.solve(sign*t.low, 0)
+		bend := (slope - sign*q/t.low) / 2
+		t.still[side] = [2]float64{slope - 3*bend, bend / (t.low * t.low)}
 		b := tableBuilder{chain: c, sign: sign}
 		for o := range n {
 			x0 := math.Ldexp(1, tableBase+o)
@@ -117,17 +122,22 @@ func (b *tableBuilder) halve(x0, w float64) (worst float64) {
 	return worst
 }
 
-// at returns the flow and ∂q/∂Δp; ok is false outside the table.
+// at returns the flow and ∂q/∂Δp; ok is false beyond the table.
 func (t *flowTable) at(dp float64) (q, slope float64, ok bool) {
-	side, a := t.octaves[0], dp
+	side, a := 0, dp
 	if dp < 0 {
-		side, a = t.octaves[1], -dp
+		side, a = 1, -dp
 	}
-	if !(a >= t.low && a < t.high) {
+	if a < t.low {
+		c := &t.still[side]
+		bend := c[1] * a * a
+		return dp * (c[0] + bend), c[0] + 3*bend, true
+	}
+	if !(a < t.high) {
 		return 0, 0, false
 	}
 	x := math.Sqrt(a)
-	o, u, i := findCell(side, x)
+	o, u, i := findCell(t.octaves[side], x)
 	c := &t.cells[i]
 	q = c[0] + u*(c[1]+u*(c[2]+u*c[3]))
 	slope = (c[1] + u*(2*c[2]+3*u*c[3])) * o.scale * 0.5 / x
@@ -139,14 +149,18 @@ func (t *flowTable) at(dp float64) (q, slope float64, ok bool) {
 
 // flow is at without the slope.
 func (t *flowTable) flow(dp float64) (q float64, ok bool) {
-	side, a := t.octaves[0], dp
+	side, a := 0, dp
 	if dp < 0 {
-		side, a = t.octaves[1], -dp
+		side, a = 1, -dp
 	}
-	if !(a >= t.low && a < t.high) {
+	if a < t.low {
+		c := &t.still[side]
+		return dp * (c[0] + c[1]*a*a), true
+	}
+	if !(a < t.high) {
 		return 0, false
 	}
-	_, u, i := findCell(side, math.Sqrt(a))
+	_, u, i := findCell(t.octaves[side], math.Sqrt(a))
 	c := &t.cells[i]
 	if q = c[0] + u*(c[1]+u*(c[2]+u*c[3])); dp < 0 {
 		q = -q
