@@ -1,7 +1,7 @@
 package scenarios
 
 import (
-	"go.yaml.in/yaml/v3"
+	"gopkg.in/yaml.v3"
 
 	"headfall/network"
 )
