@@ -92,6 +92,9 @@ func (s *system) freeze(sim *simulation) {
 	s.sortPlain()
 	s.sortStations()
 	s.lowest = s.lowestPressure()
+	for _, k := range s.inertial {
+		s.lines[k].whole = false
+	}
 	for i := range s.tees {
 		s.freezeTee(&s.tees[i])
 	}
@@ -226,6 +229,11 @@ func (s *system) freezeTee(t *teeSlots) {
 		open++
 	}
 	t.slow = open > 0
+	for _, k := range t.lines {
+		if l := &s.lines[k.line]; t.slow && !l.shut {
+			l.whole = true
+		}
+	}
 }
 
 // project makes the flows of inertial lines fit their shut valves and the balances of tees where they alone meet: the change is spread over the

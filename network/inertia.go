@@ -33,6 +33,7 @@ func (l *line) carry(a, b *end, gamma float64) {
 	}
 	own, byOwn := l.q, l.byQ
 	if own == 0 && byOwn == 0 {
+		l.keepWhole()
 		return
 	}
 	if own >= 0 {
@@ -46,6 +47,15 @@ func (l *line) carry(a, b *end, gamma float64) {
 		l.pushQ -= (byOwn - l.byQ) / settleTime
 		l.pushYa += l.byYa / settleTime
 		l.pushYb += l.byYb / settleTime
+	}
+	l.keepWhole()
+}
+
+// keepWhole makes a line at a tee whose balance is differentiated pass its unknown and nothing else: only then does the tee keep no volume. Where an end
+// admits less, or nothing may come back, the unknown is brought there within settleTime.
+func (l *line) keepWhole() {
+	if l.whole {
+		l.q, l.byQ, l.byYa, l.byYb = l.own, 1, 0, 0
 	}
 }
 

@@ -32,6 +32,7 @@ type line struct {
 	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
 	own      float64   // the flow itself where it is an unknown of the plant
 	parted   bool      // it is none for the moment: its column has parted
+	whole    bool      // it meets a tee where only such lines are open: what it passes is its unknown, to the bit
 	bore     float64   // m, the narrowest, for velocities; 0 for none
 	area     float64   // m², of it
 	row      int32     // unknown of an inertial flow; -1
@@ -77,6 +78,9 @@ const joinHead = 1e-4
 // evaluate works out the flow for ends a and b.
 func (l *line) evaluate(a, b *end, gamma float64) {
 	l.byA, l.byB, l.byYa, l.byYb, l.byT, l.byQ = 0, 0, 0, 0, 0, 0
+	for i := range l.floors {
+		l.floors[i].active = false
+	}
 	switch {
 	case l.carries():
 		l.carry(a, b, gamma)
@@ -89,7 +93,7 @@ func (l *line) evaluate(a, b *end, gamma float64) {
 	default:
 		l.pass(a, b, gamma)
 	}
-	if l.gmin > 0 {
+	if l.gmin > 0 && !l.whole {
 		l.weep(a, b)
 	}
 }
@@ -220,7 +224,6 @@ func (l *line) limit(a, b *end, gamma float64) {
 	}
 	for i := range l.floors {
 		f := &l.floors[i]
-		f.active = false
 		if !f.off && f.back == (l.q < 0) && l.q != 0 {
 			f.hold(l, a, b, gamma)
 		}

@@ -60,6 +60,7 @@ func (sim *simulation) reconsider() (changed bool) {
 		return false
 	}
 	s := sim.sys
+	s.look(sim.t, sim.solver.Y())
 	looked := false
 	for range 2 * len(sim.columns) {
 		best, lag := -1, math.Inf(1)
@@ -74,11 +75,10 @@ func (sim *simulation) reconsider() (changed bool) {
 			}
 			if !looked {
 				looked = true
-				s.look(sim.t, sim.solver.Y())
 				s.formBalances()
 			}
 			now := s.lag(l)
-			if l.floored(s) {
+			if l.floored(s) || l.stands(s) {
 				now = 0
 			} else {
 				now = math.Max(now, 1e-300)
@@ -96,7 +96,6 @@ func (sim *simulation) reconsider() (changed bool) {
 		}
 		changed = true
 		sim.turnColumn(&sim.columns[best], lag)
-		s.look(sim.t, sim.solver.Y())
 		s.formBalances()
 	}
 	return changed
@@ -128,7 +127,7 @@ func (sim *simulation) flagParting(c *liquidColumn, lag float64) {
 	}
 	tag := sim.sys.lines[c.line].plan.Tag
 	says := fmt.Sprintf("%s is fed no more than a trickle: its column parts and it runs part full", tag)
-	if lag == 0 {
+	if sim.sys.lines[c.line].floored(sim.sys) {
 		says = fmt.Sprintf("the column of %s parts at its high point or a choked valve: it runs part full beyond", tag)
 	}
 	n := len(sim.flags)
@@ -141,7 +140,7 @@ func (sim *simulation) flagParting(c *liquidColumn, lag float64) {
 // rescue parts the column at the tee, or the line, where the solver got no further, and tells whether there was one.
 func (sim *simulation) rescue(err error) bool {
 	var e *integrate.Error
-	if !errors.As(err, &e) || e.Unknown < 0 || sim.rescues >= mostRescues || e.Reason == integrate.TooManySteps {
+	if !errors.As(err, &e) || sim.rescues >= mostRescues || e.Reason == integrate.TooManySteps {
 		return false
 	}
 	s := sim.sys
@@ -152,7 +151,7 @@ func (sim *simulation) rescue(err error) bool {
 			continue
 		}
 		sl := &s.slot[sim.columns[i].line]
-		if u := int32(e.Unknown); sl.from != u && sl.to != u && l.row != u {
+		if u := int32(e.Unknown); u >= 0 && sl.from != u && sl.to != u && l.row != u {
 			continue
 		}
 		if best < 0 || l.inertia < s.lines[sim.columns[best].line].inertia {
@@ -175,7 +174,7 @@ func (sim *simulation) rescue(err error) bool {
 // easyColumn tells from the last linearisation, without solving anything, that a column has nothing to fear: the lines that lead from its tees to
 // vessels and the outside answer well enough by themselves, and it has no floors.
 func (s *system) easyColumn(l *line, least float64) bool {
-	if l.parted || len(l.floors) > 0 {
+	if l.parted || len(l.floors) > 0 || l.stands(s) {
 		return false
 	}
 	stiff := 0.0
@@ -234,6 +233,26 @@ func (s *system) lag(l *line) float64 {
 		own = (l.byA - l.byB) / 2
 	}
 	return l.inertia * math.Max(0, 1/give-own)
+}
+
+// stands tells that the line has no column that could move: the mouth that it would leave by does not admit its flow, or it has come to rest before an end
+// or a valve that lets nothing back. Where it is parted there is a margin.
+func (l *line) stands(s *system) bool {
+	a, b := s.see(&l.from), s.see(&l.to)
+	q, least := l.own, 0.0
+	if l.parted {
+		q, least = l.q/0.9, turnSpeed*math.Max(l.area, 1e-6)
+	}
+	if onlyOn := l.oneWay || b.depth == never; onlyOn && (q < 0 || l.parted && q <= least) {
+		return true
+	}
+	if onlyBack := a.depth == never; onlyBack && (q > 0 || l.parted && q >= -least) {
+		return true
+	}
+	if q < 0 || q == 0 && a.phi < b.phi {
+		return b.depth != never && !l.to.inlet.ample(b.depth, -q)
+	}
+	return a.depth != never && !l.from.inlet.ample(a.depth, q)
 }
 
 // floored tells that at the flow of the line a high point or a valve of it stands at its floor pressure: with a margin of a tenth of the flow where it
