@@ -92,9 +92,6 @@ func (s *system) freeze(sim *simulation) {
 	s.sortPlain()
 	s.sortStations()
 	s.lowest = s.lowestPressure()
-	for _, k := range s.inertial {
-		s.lines[k].whole = false
-	}
 	for i := range s.tees {
 		s.freezeTee(&s.tees[i])
 	}
@@ -182,7 +179,7 @@ func (s *system) freezeDriven() {
 	more := false
 	for i := range s.lines {
 		l := &s.lines[i]
-		l.stiff = 0
+		l.stiff, l.whole = 0, false
 		if l.gmin > 0 {
 			l.stiff = teeStiffness
 		}
@@ -230,8 +227,8 @@ func (s *system) freezeTee(t *teeSlots) {
 	}
 	t.slow = open > 0
 	for _, k := range t.lines {
-		if l := &s.lines[k.line]; t.slow && !l.shut {
-			l.whole = true
+		if l := &s.lines[k.line]; t.slow {
+			l.whole, l.stiff = true, 0
 		}
 	}
 }

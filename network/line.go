@@ -32,7 +32,7 @@ type line struct {
 	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
 	own      float64   // the flow itself where it is an unknown of the plant
 	parted   bool      // it is none for the moment: its column has parted
-	whole    bool      // it meets a tee where only such lines are open: what it passes is its unknown, to the bit
+	whole    bool      // it meets a tee whose balance is differentiated: what it passes is its unknown, to the bit, or nothing
 	bore     float64   // m, the narrowest, for velocities; 0 for none
 	area     float64   // m², of it
 	row      int32     // unknown of an inertial flow; -1

@@ -9,7 +9,7 @@ import (
 )
 
 // A line with a mass of liquid (inertia: yes) carries one column as long as it is full and the pressures at its ends answer to its flow. It does so
-// neither where its feed is down to a trickle that no pressure at the tee makes more of, nor where a high point or a valve of its own stands at its floor
+// neither where its feed is down to a trickle that no pressure at the tee makes more of, or to what comes at vapour pressure, nor where a high point or a valve of its own stands at its floor
 // pressure. Meanwhile it is parted: it runs part full, its flow is that of a line without mass, and its unknown stands still.
 //
 // The measure is the lag, s: inertance times the conductance by which the rest of the plant answers at its ends,
@@ -235,8 +235,8 @@ func (s *system) lag(l *line) float64 {
 	return l.inertia * math.Max(0, 1/give-own)
 }
 
-// stands tells that the line has no column that could move: the mouth that it would leave by does not admit its flow, or it has come to rest before an end
-// or a valve that lets nothing back. Where it is parted there is a margin.
+// stands tells that the line has no column that could move: the mouth that it would leave by does not admit its flow, the tee there is at vapour pressure, or it
+// has come to rest before an end or a valve that lets nothing back. Where it is parted there is a margin.
 func (l *line) stands(s *system) bool {
 	a, b := s.see(&l.from), s.see(&l.to)
 	q, least := l.own, 0.0
@@ -249,10 +249,24 @@ func (l *line) stands(s *system) bool {
 	if onlyBack := a.depth == never; onlyBack && (q > 0 || l.parted && q >= -least) {
 		return true
 	}
+	from, up := &l.from, &a
 	if q < 0 || q == 0 && a.phi < b.phi {
-		return b.depth != never && !l.to.inlet.ample(b.depth, -q)
+		from, up = &l.to, &b
 	}
-	return a.depth != never && !l.from.inlet.ample(a.depth, q)
+	if from.kind == toTee && up.phi < s.voidPressure(from.at) {
+		return true
+	}
+	return up.depth != never && !from.inlet.ample(up.depth, math.Abs(q))
+}
+
+// voidPressure is the total pressure, Pa, under which the liquid at a tee would boil; for a tee whose elevation is not known it is taken at the lowest mouth of
+// the plant.
+func (s *system) voidPressure(tee int) float64 {
+	z := s.plan.Tees[tee].Elevation
+	if math.IsNaN(z) {
+		return s.lowest + deepest*s.gamma - s.atmosphere + s.fluid.Vapour
+	}
+	return s.gamma*z + s.fluid.Vapour
 }
 
 // floored tells that at the flow of the line a high point or a valve of it stands at its floor pressure: with a margin of a tenth of the flow where it
