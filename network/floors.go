@@ -53,9 +53,10 @@ type crown struct {
 	part       int
 	vent       int // actuator of its vent; -1 for none
 	primed     bool
-	wasPrimed  bool // at the start
-	broken     bool // air stands in it throughout this run (Changes.Break)
-	fwd, back  int  // floors of the line
+	wasPrimed  bool    // at the start
+	rests      float64 // s, until when it stays broken
+	broken     bool    // air stands in it throughout this run (Changes.Break)
+	fwd, back  int     // floors of the line
 	bore       float64
 	low, lowAt float64 // m gauge head
 }

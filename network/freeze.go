@@ -39,6 +39,7 @@ func (s *system) begin(ch *Changes) {
 		l.breakLine(ch.Break[l.plan.Tag])
 		for k := range l.crowns {
 			c := &l.crowns[k]
+			c.rests = 0
 			c.primed = c.plan.Primed || !c.plan.PrimedSet && s.headAbove(l, c.plan.Elevation)
 		}
 	}

@@ -137,25 +137,22 @@ func (sim *simulation) flagParting(c *liquidColumn, lag float64) {
 	}
 }
 
-// rescue parts the column at the tee, or the line, where the solver got no further, and tells whether there was one.
+// rescue parts a column where the solver got no further, one at the tee, or of the line, that the error names if there is any, and tells whether there was one.
 func (sim *simulation) rescue(err error) bool {
 	var e *integrate.Error
 	if !errors.As(err, &e) || sim.rescues >= mostRescues || e.Reason == integrate.TooManySteps {
 		return false
 	}
 	s := sim.sys
-	best := -1
+	best, near := -1, false
 	for i := range sim.columns {
-		l := &s.lines[sim.columns[i].line]
+		l, sl, u := &s.lines[sim.columns[i].line], &s.slot[sim.columns[i].line], int32(e.Unknown)
 		if l.parted || l.shut {
 			continue
 		}
-		sl := &s.slot[sim.columns[i].line]
-		if u := int32(e.Unknown); u >= 0 && sl.from != u && sl.to != u && l.row != u {
-			continue
-		}
-		if best < 0 || l.inertia < s.lines[sim.columns[best].line].inertia {
-			best = i
+		at := u >= 0 && (sl.from == u || sl.to == u || l.row == u)
+		if best < 0 || at && !near || at == near && l.inertia < s.lines[sim.columns[best].line].inertia {
+			best, near = i, at
 		}
 	}
 	if best < 0 {

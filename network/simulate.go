@@ -140,6 +140,10 @@ func (sim *simulation) begin(opt *RunOptions) error {
 func (sim *simulation) run(ctx context.Context, opt *RunOptions) error {
 	end := sim.plan.RunFor
 	for {
+		if ctx.Err() != nil {
+			sim.stopped = "interrupted"
+			return context.Cause(ctx)
+		}
 		sim.settleActions()
 		stop := math.Min(end, sim.nextStop())
 		sim.sys.freeze(sim)

@@ -20,14 +20,15 @@ func (w *watcher) addCrowns() {
 					active: func() bool { return c.primed && !s.vented(c) },
 					dir:    -1, deep: true, jumps: true,
 					fire: func(t float64) {
-						c.primed = false
+						c.primed, c.rests = false, t+siphonRest
+						w.sim.control.schedule(c.rests, func(float64) {})
 						w.sim.flag("siphon_broken", l.plan.Tag, t, fmt.Sprintf("air reaches the high point of %s and breaks the siphon", l.plan.Tag),
 							"what stands under the crest upstream stays where it is")
 					},
 				},
 				trigger{
 					value:  func(*snapshot) float64 { return s.sweep(l, c) },
-					active: func() bool { return !c.primed && !s.vented(c) },
+					active: func() bool { return !c.primed && !s.vented(c) && w.sim.t >= c.rests },
 					dir:    1, deep: true, jumps: true,
 					fire: func(t float64) {
 						c.primed = true
@@ -38,6 +39,10 @@ func (w *watcher) addCrowns() {
 		}
 	}
 }
+
+// siphonRest is the time, s, that a siphon which broke stays broken at least: what breaks it takes about as long to come in, and as long to be swept out again.
+// Without it a siphon whose mouth uncovers at the flow that primes it would break and prime endlessly. Common practice, no source.
+const siphonRest = 5
 
 func (s *system) vented(c *crown) bool { return c.broken || c.vent >= 0 && s.actuators[c.vent].to > 0 }
 
