@@ -246,7 +246,11 @@ func (sim *simulation) finishFlags(r *Result) {
 				sim.flags = append(sim.flags, sim.breachFlag(v, x))
 				continue
 			}
-			sim.flags = append(sim.flags, &Flag{Kind: "overtopped", Where: v.Tag, From: *x.FirstSpill, To: *x.SpillEnds, Size: &vol,
+			from, until := x.PeakAt, x.PeakAt
+			if x.FirstSpill != nil && x.SpillEnds != nil { // not seen at the ends of steps where next to nothing spilled
+				from, until = *x.FirstSpill, *x.SpillEnds
+			}
+			sim.flags = append(sim.flags, &Flag{Kind: "overtopped", Where: v.Tag, From: from, To: until, Size: &vol,
 				Says: fmt.Sprintf("%s overtops: %s over the rim to %s", v.Tag, quantity.Format(vol, quantity.Volume, p.Show.Volume, 3), to), Do: "shut what fills it, or open what empties it, before then"})
 		}
 	}

@@ -60,6 +60,11 @@ func (l *line) overCrest(a, b *end, gamma float64) {
 	} else {
 		l.q, byHd, byH, byE = l.pressed(hd, h, -extra)
 		l.q, byH, byHd = -l.q, -byH, -byHd // −∂/∂(−extra) = +
+		if vessel { // a floor over the crest: its last liquid does not leave at once
+			w, dw := l.to.inlet.wet(b.depth)
+			byH, byHd, byE = byH*w, byHd*w+l.q*dw, byE*w
+			l.q *= w
+		}
 	}
 	// extra = (phi_a − phi_b)/γ − h + depth_b and constants, for a vessel; without phi_b and depth_b, for others.
 	l.byA, l.byYa = byE/gamma, byH-byE

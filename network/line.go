@@ -183,10 +183,16 @@ func (l *line) flowAt(dp float64) (q, slope float64) {
 	if (guess < 0) != (dp-l.zero < 0) {
 		guess = l.lastQ
 	}
+	if !(math.Abs(guess) < absurdFlow) { // a trial step went astray: what it left is no start for the next
+		guess = 0
+	}
 	q, slope = l.chain.solve(dp, guess)
 	l.lastDp, l.lastQ, l.lastS = dp, q, slope
 	return q, slope
 }
+
+// absurdFlow is a flow, m³/s, that no line passes.
+const absurdFlow = 1e6
 
 // openingRate returns ∂q/∂t at fixed pressures from the parts that move.
 func (l *line) openingRate(q, s float64) float64 {
