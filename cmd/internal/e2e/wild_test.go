@@ -19,10 +19,10 @@ import (
 // plants that bdf does not, and plants in which the two end apart, where a siphon or a vent acts at a moment that both see a little otherwise.
 const (
 	wildDraws      = 300
-	wildSteps      = 20000
-	wildUnfinished = 6
-	wildSecond     = 24
-	wildApart      = 4
+	wildSteps      = 8000
+	wildUnfinished = 7
+	wildSecond     = 20
+	wildApart      = 3
 )
 
 // TestWildPlants: whatever kinds are joined in whatever way, with whatever plan: the run finishes, the balance closes, levels stay between nothing and the rim
@@ -73,7 +73,7 @@ func TestWildPlants(t *testing.T) {
 					t.Fatalf("the clock runs back at %g s", r.Series.Time[k])
 				}
 			}
-			o, _, err := wildRun(text, "bdf", 3*wildSteps)
+			o, _, err := wildRun(text, "bdf", 2*wildSteps)
 			if err != nil {
 				second++
 				say("bdf: %.90v", err)
