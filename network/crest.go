@@ -60,7 +60,7 @@ func (l *line) overCrest(a, b *end, gamma float64) {
 	} else {
 		l.q, byHd, byH, byE = l.pressed(hd, h, -extra)
 		l.q, byH, byHd = -l.q, -byH, -byHd // −∂/∂(−extra) = +
-		if vessel { // a floor over the crest: its last liquid does not leave at once
+		if vessel {                        // a floor over the crest: its last liquid does not leave at once
 			w, dw := l.to.inlet.wet(b.depth)
 			byH, byHd, byE = byH*w, byHd*w+l.q*dw, byE*w
 			l.q *= w
