@@ -3,12 +3,14 @@ package e2e
 import (
 	"context"
 	"fmt"
+	"io"
 	"math"
 	"strings"
 	"testing"
 
 	"headfall/network"
 	"headfall/scenarios"
+	"headfall/viz"
 )
 
 // bench pipe: ten metres of rough pipe of 100 mm with two velocity heads more, ideal at its ends.
@@ -146,5 +148,22 @@ func BenchmarkLoad(b *testing.B) {
 				}
 			}
 		})
+	}
+}
+
+// BenchmarkReport writes the report of a day of forty vessels.
+func BenchmarkReport(b *testing.B) {
+	text := strings.Replace(chainOf(40), "run_for: 4 h", "run_for: 24 h", 1)
+	p := load(b, text)
+	m := compile(b, text, how{})
+	r, err := m.Run(context.Background(), network.RunOptions{Series: true})
+	if err != nil {
+		b.Fatal(err)
+	}
+	b.ReportAllocs()
+	for b.Loop() {
+		if err := viz.Write(io.Discard, viz.Page{Plant: p, Result: r}); err != nil {
+			b.Fatal(err)
+		}
 	}
 }
