@@ -44,7 +44,7 @@ var homes = map[string][]string{
 	"github.com/schollz/":      {"cmd"},
 	"github.com/jedib0t/":      {"cmd"},
 	"golang.org/x/term":        {"cmd"},
-	"gopkg.in/yaml.v3":       {"scenarios"},
+	"gopkg.in/yaml.v3":         {"scenarios"},
 	"github.com/go-echarts/":   {"viz"},
 	"github.com/xuri/excelize": {"viz"},
 	"gonum.org/":               {"network/study", "network"},
