@@ -11,7 +11,7 @@ import (
 // studied is the cascade with a drill and a spread.
 func studied(t testing.TB) Page {
 	p := cascade(t)
-	p.Drill = &study.DrillResult{Complete: true, Done: 4, Of: 4, Fails: 2, Cases: []*study.DrillRow{
+	p.Drill = &study.DrillResult{Outcome: study.Outcome{Complete: true}, Done: 4, Of: 4, Fails: 2, Cases: []*study.DrillRow{
 		{Case: "V-1 sticks at 50 % when it should shut", Verdict: network.Fails, FirstFail: ptr(9900), Limit: "level of SUMP below 1.9 m", TimeToAct: ptr(171), Since: "high-high",
 			Need: ptr(135), Answered: "holds", WorstVessel: "SUMP", Headroom: ptr(-0.02), Spilled: 0.4},
 		{Case: "P-1 fails at 06:00", Verdict: network.Fails, FirstFail: ptr(6000), Limit: "level of SUMP below 1.9 m", TimeToAct: ptr(3600), WorstVessel: "SUMP", Headroom: ptr(0.1)},

@@ -11,20 +11,17 @@ import (
 // DrillResult is what a drill gives back: every rehearsal, the one that leaves the least time to act first, and how far each step may be moved.
 type DrillResult struct {
 	DrillHead
-	ExitCode int          `json:"exit_code"`
-	Complete bool         `json:"complete"`
-	Stopped  string       `json:"stopped_because"` // done | interrupted | failed
-	Trouble  string       `json:"trouble,omitempty"`
-	Done     int          `json:"done"`
-	Of       int          `json:"of"`
-	Fails    int          `json:"fails"` // rehearsals that fail a limit which the plan holds, or earlier
-	Cases    []*DrillRow  `json:"cases"`
-	Steps    []*MovedStep `json:"steps"`
+	Outcome
+	Done  int          `json:"done"`
+	Of    int          `json:"of"`
+	Fails int          `json:"fails"` // rehearsals that fail a limit which the plan holds, or earlier
+	Cases []*DrillRow  `json:"cases"`
+	Steps []*MovedStep `json:"steps"`
 }
 
 // DrillOf puts the units of a whole drill together and ranks them.
 func DrillOf(p *DrillPart) *DrillResult {
-	d := &DrillResult{DrillHead: p.Head, Stopped: "done", Done: len(p.Units), Of: p.Shard.size(p.Count), Cases: []*DrillRow{}, Steps: []*MovedStep{}}
+	d := &DrillResult{DrillHead: p.Head, Outcome: outcomeOf(p.complete()), Done: len(p.Units), Of: p.Shard.size(p.Count), Cases: []*DrillRow{}, Steps: []*MovedStep{}}
 	for i := range p.Count {
 		u, ok := p.Units[i]
 		switch {
@@ -37,10 +34,6 @@ func DrillOf(p *DrillPart) *DrillResult {
 		case u.Move != nil:
 			d.Steps = append(d.Steps, u.Move)
 		}
-	}
-	d.Complete = d.Done == d.Of
-	if !d.Complete {
-		d.Stopped = "interrupted"
 	}
 	d.ExitCode = exitOf(d.Plan.Verdict)
 	slices.SortStableFunc(d.Cases, worseRow)

@@ -12,6 +12,30 @@ type Merged struct {
 	Spread *SpreadResult
 }
 
+// Answer is the one that is set.
+func (m *Merged) Answer() any {
+	if m.Drill != nil {
+		return m.Drill
+	}
+	return m.Spread
+}
+
+// Head is what the study says about itself.
+func (m *Merged) Head() *Head {
+	if m.Drill != nil {
+		return &m.Drill.Head
+	}
+	return &m.Spread.Head
+}
+
+// Outcome is how the study came to its end.
+func (m *Merged) Outcome() *Outcome {
+	if m.Drill != nil {
+		return &m.Drill.Outcome
+	}
+	return &m.Spread.Outcome
+}
+
 // Merge joins the parts of one study. The result is that of one run to the bit. It is an error when a part is missing, given twice, not finished, or of
 // another study.
 func Merge(parts []*PartFile) (*Merged, error) {

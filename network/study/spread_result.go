@@ -7,11 +7,8 @@ import (
 // SpreadResult is what a spread gives back.
 type SpreadResult struct {
 	Head
-	Verdict    network.Verdict                    `json:"verdict"`
-	ExitCode   int                                `json:"exit_code"`
-	Complete   bool                               `json:"complete"`
-	Stopped    string                             `json:"stopped_because"` // done | interrupted | failed
-	Trouble    string                             `json:"trouble,omitempty"`
+	Verdict network.Verdict `json:"verdict"`
+	Outcome
 	Samples    int                                `json:"samples"`         // calculated
 	NotDone    int                                `json:"not_calculated"`  // tried, but the calculation could not finish
 	AnyFails   Chance                             `json:"any_limit_fails"` // or some step is never reached
@@ -67,11 +64,8 @@ func chance(k, n int) Chance {
 // SpreadOf puts the samples of a whole spread together.
 func SpreadOf(p *SpreadPart) *SpreadResult {
 	h := &p.Head
-	s := &SpreadResult{Head: h.Head, Stopped: "done", Complete: p.complete(), Doubts: h.Doubts, Verdict: h.Verdict,
+	s := &SpreadResult{Head: h.Head, Outcome: outcomeOf(p.complete()), Doubts: h.Doubts, Verdict: h.Verdict,
 		Bands: map[string]map[string]network.Band{}, Limits: []*SpreadLimit{}, Influences: map[string][]Influence{}}
-	if !s.Complete {
-		s.Stopped = "interrupted"
-	}
 	c := &columns{doubts: h.Doubts}
 	for i := range p.Count {
 		if u, ok := p.Units[i]; ok && u.Failed == "" {

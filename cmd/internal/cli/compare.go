@@ -10,7 +10,6 @@ import (
 	"headfall/cmd/internal/text"
 	"headfall/network"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupWhat, newCompare) }
@@ -60,20 +59,9 @@ func (a *app) compare(ctx context.Context, paths []string, o doubtful) error {
 	if err != nil {
 		return err
 	}
-	var res *study.CompareResult
-	files := outputs{}
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(paths...); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
-	res, err = study.Compare(ctx, plans, opt)
-	bar.end()
-	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
-		return err
-	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Compare(w, res, opt) })
+	return conclude(ctx, a, bar, paths, func(ctx context.Context) (*study.CompareResult, error) {
+		return study.Compare(ctx, plans, opt)
+	}, func(w io.Writer, res *study.CompareResult, opt text.Options) error { return text.Compare(w, res, opt) })
 }
 
 // contenders reads the files and lists the plans: of one file the plan and its cases, of several the plan of each.

@@ -2,21 +2,18 @@ package cli
 
 import (
 	"context"
-	"io"
 
 	"github.com/spf13/cobra"
 
-	"headfall/cmd/internal/text"
 	"headfall/elements/quantity"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupWhat, newDrill) }
 
 type drillOptions struct {
 	many
-	pairs, all  bool
+	pairs       bool
 	late, early string
 }
 
@@ -74,7 +71,7 @@ func (a *app) drill(ctx context.Context, path string, o drillOptions) error {
 		}
 		*t.to = v.SI
 	}
-	src, load, err := a.open(ctx, path)
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
@@ -82,46 +79,8 @@ func (a *app) drill(ctx context.Context, path string, o drillOptions) error {
 	if opt.Common, err = a.common(o.many, bar); err != nil {
 		return err
 	}
-	rep, err := a.report(o.many, load)
-	if err != nil {
-		return err
-	}
-	var res *study.DrillResult
-	files := outputs{}
-	rep.add(&files)
-	if opt.Shard.Of == 0 {
-		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	}
-	if err := files.check(src.path); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
-	if err := rep.answer(ctx, a, src); err != nil { // first, so that it is there when the study is interrupted
-		return err
-	}
-	part, err := study.Drill(ctx, load, opt)
-	bar.end()
-	if part == nil {
-		return a.unfinished(ctx, err)
-	}
-	if opt.Shard.Of > 0 {
-		return a.savePart(ctx, src, err, func(w io.Writer) error { return study.WritePart(w, "drill", part) })
-	}
-	res = study.DrillOf(part)
-	if err != nil {
-		res.Complete = false
-		res.Stopped, res.Trouble, res.ExitCode = halted(ctx, err)
-	}
-	if rep != nil {
-		rep.page.Drill = res
-	}
-	return a.tellDrill(files, res, o.all)
-}
-
-func (a *app) tellDrill(files outputs, res *study.DrillResult, all bool) error {
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error {
-		opt.All = all
-		return text.Drill(w, res, opt)
-	})
+	s := cases[study.DrillHead, study.DrillUnit]{command: "drill", many: o.many, shard: opt.Shard, bar: bar}
+	s.calculate = func(ctx context.Context) (*study.DrillPart, error) { return study.Drill(ctx, p.load, opt) }
+	s.join = func(part *study.DrillPart) *study.Merged { return &study.Merged{Drill: study.DrillOf(part)} }
+	return s.conclude(ctx, a, p)
 }

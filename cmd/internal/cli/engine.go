@@ -38,8 +38,15 @@ func load(src *source, o *options) (*network.Plant, error) {
 }
 
 func judge(ctx context.Context, load func() (*network.Plant, error), o *options, progress func(float64)) (*network.Result, error) {
+	opt := o.study()
+	opt.Progress = progress
+	return study.Judge(ctx, load, opt)
+}
+
+// study makes the options of a study, without samples of its own.
+func (o *options) study() study.Options {
 	c := o.calculation()
-	return study.Judge(ctx, load, study.Options{Workers: o.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps, Progress: progress})
+	return study.Options{Workers: o.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps}
 }
 
 // calculation hands the method and the accuracy on; the usual method goes unnamed.

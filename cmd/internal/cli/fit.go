@@ -8,7 +8,6 @@ import (
 
 	"headfall/cmd/internal/text"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupWhat, newFit) }
@@ -58,39 +57,17 @@ func (a *app) fit(ctx context.Context, path string, o fitOptions) error {
 	if len(o.vary) == 0 {
 		return bad("as --vary V-1.kv", "fit needs --vary TAG.x: what is to be fitted")
 	}
-	src, load, err := a.open(ctx, path)
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
-	plant, err := load()
+	list, err := a.readings(ctx, o.readings, path, p.plant)
 	if err != nil {
 		return err
 	}
-	list, err := a.readings(ctx, o.readings, path, plant)
-	if err != nil {
-		return err
-	}
-	var res *study.FitResult
-	files := outputs{}
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src.path, o.readings); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
 	bar := a.progress("fitting")
-	res, err = study.Fit(ctx, load, study.FitOptions{Model: a.opt.calculation(), Workers: a.opt.workers, Vary: o.vary, Readings: list, Progress: bar.done})
-	bar.end()
-	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
-		return err
-	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Fit(w, plant, res, opt) })
-}
-
-// ending returns the ending of an answer, or nil where there is none.
-func ending[T any](res *T, of func() *study.Ending) *study.Ending {
-	if res == nil {
-		return nil
-	}
-	return of()
+	opt := study.FitOptions{Model: a.opt.calculation(), Workers: a.opt.workers, Vary: o.vary, Readings: list, Progress: bar.done}
+	return conclude(ctx, a, bar, []string{path, o.readings}, func(ctx context.Context) (*study.FitResult, error) {
+		return study.Fit(ctx, p.load, opt)
+	}, func(w io.Writer, res *study.FitResult, opt text.Options) error { return text.Fit(w, p.plant, res, opt) })
 }

@@ -8,7 +8,6 @@ import (
 
 	"headfall/cmd/internal/text"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupWhat, newFlows) }
@@ -41,26 +40,13 @@ func (a *app) flows(ctx context.Context, path, valve string) error {
 	if valve == "" {
 		return bad("as --valve V-1", "flows needs --valve TAG")
 	}
-	src, load, err := a.open(ctx, path)
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
-	plant, err := load()
-	if err != nil {
-		return err
-	}
-	var res *study.FlowsResult
-	files := outputs{}
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src.path); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
-	c := a.opt.calculation()
-	res, err = study.Flows(ctx, load, study.Options{Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps}, valve)
-	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
-		return err
-	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Flows(w, plant, res, opt) })
+	return conclude(ctx, a, a.progress("calculating"), []string{path}, func(ctx context.Context) (*study.FlowsResult, error) {
+		return study.Flows(ctx, p.load, a.opt.study(), valve)
+	}, func(w io.Writer, res *study.FlowsResult, opt text.Options) error {
+		return text.Flows(w, p.plant, res, opt)
+	})
 }

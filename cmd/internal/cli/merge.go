@@ -9,7 +9,6 @@ import (
 
 	"github.com/spf13/cobra"
 
-	"headfall/network"
 	"headfall/network/study"
 	"headfall/viz/export"
 )
@@ -45,8 +44,8 @@ takes the plant file that the parts are of with --plan.`,
 }
 
 type mergeOptions struct {
-	html, plan string
-	all        bool
+	many
+	plan string
 }
 
 func (a *app) merge(ctx context.Context, paths []string, o mergeOptions) error {
@@ -71,28 +70,14 @@ func (a *app) merge(ctx context.Context, paths []string, o mergeOptions) error {
 	}
 	var files outputs
 	rep.add(&files)
-	if whole.Drill != nil {
-		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, whole.Drill) })
-	} else {
-		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, whole.Spread) })
-	}
-	if err := files.check(src.path); err != nil {
+	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, whole.Answer()) })
+	if err := files.check(append([]string{src.path}, paths...)...); err != nil {
 		return err
 	}
-	for _, path := range paths {
-		if err := files.check(path); err != nil {
-			return err
-		}
+	if err := rep.answer(ctx, a, src); err != nil {
+		return err
 	}
-	if rep != nil {
-		if err := rep.answer(ctx, a, src); err != nil {
-			return err
-		}
-	}
-	if whole.Drill != nil {
-		return a.tellDrill(files, whole.Drill, o.all)
-	}
-	return a.tellSpread(files, whole.Spread)
+	return a.tellWhole(files, rep, whole, o.all)
 }
 
 // mergeReport makes ready to write the report that --html asks for, of the plant that the parts are of and no other.
@@ -104,30 +89,20 @@ func (a *app) mergeReport(ctx context.Context, o mergeOptions, whole *study.Merg
 	if err != nil {
 		return nil, nil, err
 	}
-	asked, of := headOf(whole)
+	asked := whole.Head()
 	if fmt.Sprintf("%x", sha256.Sum256(src.data)) != asked.Scenario.SHA256 {
 		return nil, nil, bad("give --plan the file that they were made of, as it was then", "%s is not the plant file of these parts", o.plan)
 	}
-	a.opt.set, a.opt.caseName = asked.Asked.Set, of // as they were
-	rep, err := a.report(many{html: o.html}, func() (*network.Plant, error) { return a.load(src, &a.opt) })
+	a.opt.set, a.opt.caseName = asked.Asked.Set, "" // as they were
+	if asked.Scenario.Case != nil {
+		a.opt.caseName = *asked.Scenario.Case
+	}
+	plant, err := a.load(src, &a.opt)
 	if err != nil {
 		return nil, nil, err
 	}
-	rep.page.Drill, rep.page.Spread = whole.Drill, whole.Spread
-	return rep, src, nil
-}
-
-// headOf is what the parts say about themselves, and the case that they are of.
-func headOf(whole *study.Merged) (h study.Head, of string) {
-	if whole.Drill != nil {
-		h = whole.Drill.Head
-	} else {
-		h = whole.Spread.Head
-	}
-	if h.Scenario.Case != nil {
-		of = *h.Scenario.Case
-	}
-	return h, of
+	rep, err := a.report(o.many, plant)
+	return rep, src, err
 }
 
 func readPart(path string) (*study.PartFile, error) {

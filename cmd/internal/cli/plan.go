@@ -8,7 +8,6 @@ import (
 
 	"headfall/cmd/internal/text"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupWhat, newPlan) }
@@ -48,11 +47,7 @@ interrupted; the best plan by then is kept and marked.`,
 }
 
 func (a *app) plan(ctx context.Context, path string, o doubtful) error {
-	src, load, err := a.open(ctx, path)
-	if err != nil {
-		return err
-	}
-	plant, err := load()
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
@@ -61,21 +56,9 @@ func (a *app) plan(ctx context.Context, path string, o doubtful) error {
 	if err != nil {
 		return err
 	}
-	var res *study.FoundPlan
-	files := outputs{}
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src.path); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
-	res, err = study.Plan(ctx, load, opt)
-	bar.end()
-	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
-		return err
-	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error {
-		opt.Set = a.opt.set
-		return text.Plan(w, plant, res, opt)
+	return conclude(ctx, a, bar, []string{path}, func(ctx context.Context) (*study.FoundPlan, error) {
+		return study.Plan(ctx, p.load, opt)
+	}, func(w io.Writer, res *study.FoundPlan, opt text.Options) error {
+		return text.Plan(w, p.plant, res, opt)
 	})
 }

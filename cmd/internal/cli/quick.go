@@ -72,8 +72,9 @@ func (a *app) quick(ctx context.Context, o quickFlags) error {
 	}
 	ctx, cancel := a.within(ctx)
 	defer cancel()
-	c := a.opt.calculation()
-	run, err := study.Judge(ctx, load, study.Options{Samples: quickSamples, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps})
+	opt := a.opt.study()
+	opt.Samples = quickSamples
+	run, err := study.Judge(ctx, load, opt)
 	if err != nil {
 		return a.unfinished(ctx, err)
 	}

@@ -10,7 +10,10 @@ import (
 )
 
 // many are the flags of studies made of many cases.
-type many struct{ shard, html string }
+type many struct {
+	shard, html string
+	all         bool // of a drill: print every rehearsal that fails
+}
 
 func (m *many) bind(f *pflag.FlagSet) {
 	f.StringVar(&m.html, "html", "", "also write the report of the plan, with this study in it, to `PATH`")

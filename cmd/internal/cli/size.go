@@ -9,7 +9,6 @@ import (
 	"headfall/cmd/internal/text"
 	"headfall/network"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupWhat, newSize) }
@@ -68,35 +67,19 @@ func (a *app) size(ctx context.Context, path string, o sizeOptions) error {
 	case o.largest && o.smallest:
 		return bad("leave one of them out", "--largest and --smallest do not go together")
 	}
-	src, load, err := a.open(ctx, path)
-	if err != nil {
-		return err
-	}
-	plant, err := load()
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
 	bar := a.progress("sizing")
-	opt, err := a.sizing(plant, o, bar)
+	opt, err := a.sizing(p.plant, o, bar)
 	if err != nil {
 		return err
 	}
-	var res *study.SizeResult
-	files := outputs{}
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src.path); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
-	res, err = study.Size(ctx, load, opt)
-	bar.end()
-	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
-		return err
-	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error {
-		opt.Set = a.opt.set
-		return text.Size(w, plant, res, opt)
+	return conclude(ctx, a, bar, []string{path}, func(ctx context.Context) (*study.SizeResult, error) {
+		return study.Size(ctx, p.load, opt)
+	}, func(w io.Writer, res *study.SizeResult, opt text.Options) error {
+		return text.Size(w, p.plant, res, opt)
 	})
 }
 

@@ -4,14 +4,11 @@ import (
 	"context"
 	"errors"
 	"fmt"
-	"io"
 
 	"github.com/spf13/cobra"
 
-	"headfall/cmd/internal/text"
 	"headfall/network"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupWhat, newSpread) }
@@ -88,7 +85,7 @@ func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 	if o.samples < 1 || o.samples > mostSamples {
 		return bad("as --samples 1000", "--samples must lie between 1 and %d", mostSamples)
 	}
-	src, load, err := a.open(ctx, path)
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
@@ -97,52 +94,17 @@ func (a *app) spread(ctx context.Context, path string, o spreadOptions) error {
 	if opt.Common, err = a.common(o.many, bar); err != nil {
 		return err
 	}
-	plant, err := load()
-	if err != nil {
+	if err := affordable(p.plant, o.samples, opt.Shard.Of); err != nil {
 		return err
 	}
-	if err := affordable(plant, o.samples, opt.Shard.Of); err != nil {
-		return err
+	s := cases[study.SpreadHead, study.SpreadUnit]{command: "spread", many: o.many, shard: opt.Shard, bar: bar}
+	s.calculate = func(ctx context.Context) (*study.SpreadPart, error) {
+		part, err := study.Spread(ctx, p.load, opt)
+		if errors.Is(err, study.ErrNoDoubts) {
+			err = bad("write ± behind a number, or assume: {doubts: default}", "%s: %w", p.src.name, err)
+		}
+		return part, err
 	}
-	rep, err := a.report(o.many, load)
-	if err != nil {
-		return err
-	}
-	var res *study.SpreadResult
-	files := outputs{}
-	rep.add(&files)
-	if opt.Shard.Of == 0 {
-		files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	}
-	if err := files.check(src.path); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
-	if err := rep.answer(ctx, a, src); err != nil { // first, so that it is there when the study is interrupted
-		return err
-	}
-	part, err := study.Spread(ctx, load, opt)
-	bar.end()
-	switch {
-	case errors.Is(err, study.ErrNoDoubts):
-		return bad("write ± behind a number, or assume: {doubts: default}", "%s: %w", src.name, err)
-	case part == nil:
-		return a.unfinished(ctx, err)
-	case opt.Shard.Of > 0:
-		return a.savePart(ctx, src, err, func(w io.Writer) error { return study.WritePart(w, "spread", part) })
-	}
-	res = study.SpreadOf(part)
-	if err != nil {
-		res.Complete = false
-		res.Stopped, res.Trouble, res.ExitCode = halted(ctx, err)
-	}
-	if rep != nil {
-		rep.page.Spread = res
-	}
-	return a.tellSpread(files, res)
-}
-
-func (a *app) tellSpread(files outputs, res *study.SpreadResult) error {
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Spread(w, res, opt) })
+	s.join = func(part *study.SpreadPart) *study.Merged { return &study.Merged{Spread: study.SpreadOf(part)} }
+	return s.conclude(ctx, a, p)
 }

@@ -7,17 +7,72 @@ import (
 
 	"headfall/cmd/internal/text"
 	"headfall/network"
+	"headfall/network/study"
+	"headfall/viz/export"
 )
 
-// open reads a plant file and gives what makes a plant of it for every worker; a fault of the file ends with code 2, before anything is computed.
-func (a *app) open(ctx context.Context, path string) (*source, func() (*network.Plant, error), error) {
+// opened is a plant file that was read.
+type opened struct {
+	src   *source
+	plant *network.Plant
+	load  func() (*network.Plant, error) // makes a plant for every worker
+}
+
+// open reads a plant file; a fault of the file ends with code 2, before anything is computed.
+func (a *app) open(ctx context.Context, path string) (*opened, error) {
 	src, err := a.read(ctx, path)
 	if err != nil {
-		return nil, nil, err
+		return nil, err
 	}
 	load := func() (*network.Plant, error) { return a.load(src, &a.opt) }
-	_, err = load()
-	return src, load, err
+	plant, err := load()
+	return &opened{src, plant, load}, err
+}
+
+// ending is an answer that says how it ended; a nil one is none.
+type ending interface {
+	comparable
+	End(exit int, why string)
+	Exit() int
+}
+
+// conclude calculates the answer of a study that reads the files named, writes it and prints its page.
+func conclude[R ending](ctx context.Context, a *app, bar *progress, read []string, calculate func(context.Context) (R, error), page func(io.Writer, R, text.Options) error) error {
+	var res R
+	var files outputs
+	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
+	if err := files.check(read...); err != nil {
+		return err
+	}
+	ctx, cancel := a.within(ctx)
+	defer cancel()
+	res, err := calculate(ctx)
+	bar.end()
+	if err = ended(ctx, a, err, res); err != nil {
+		return err
+	}
+	return a.tell(files, res.Exit(), func(w io.Writer, opt text.Options) error { return page(w, res, opt) })
+}
+
+// ended sorts out how a study ended. With an answer, whole or in part, it returns nil; the part is marked.
+func ended[R ending](ctx context.Context, a *app, err error, part R) error {
+	var misuse study.Misuse
+	var none R
+	switch {
+	case err == nil:
+		return nil
+	case errors.As(err, &misuse):
+		return &Exit{Code: ExitBad, Err: misuse.Err}
+	case part == none:
+		return a.unfinished(ctx, err)
+	}
+	var e *Exit
+	if errors.As(err, &e) {
+		return err
+	}
+	_, why, exit := halted(ctx, err)
+	part.End(exit, why)
+	return nil
 }
 
 // halted says how a study that did not come to its end stopped: the words, why, and the exit code.
@@ -37,7 +92,7 @@ func (a *app) tell(files outputs, exit int, page func(io.Writer, text.Options) e
 	if err := files.save(a.Out); err != nil {
 		return err
 	}
-	opt := text.Options{Width: a.Width, Colour: a.colour() && !files.toOut(), Quiet: a.opt.quiet}
+	opt := text.Options{Width: a.Width, Colour: a.colour() && !files.toOut(), Quiet: a.opt.quiet, Set: a.opt.set}
 	for _, f := range files {
 		if f.path != "-" {
 			opt.Saved = append(opt.Saved, f.path)

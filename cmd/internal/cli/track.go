@@ -10,7 +10,6 @@ import (
 	"headfall/cmd/internal/text"
 	"headfall/network"
 	"headfall/network/study"
-	"headfall/viz/export"
 )
 
 func init() { register(groupPlan, newTrack) }
@@ -63,39 +62,24 @@ usage or a bad file. 3: the calculation could not finish. 130: interrupted; what
 }
 
 func (a *app) track(ctx context.Context, path string, o trackOptions) error {
-	src, load, err := a.open(ctx, path)
-	if err != nil {
-		return err
-	}
-	plant, err := load()
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
 	opt := study.TrackOptions{}
-	if opt.Readings, err = a.readings(ctx, o.readings, path, plant); err != nil {
+	if opt.Readings, err = a.readings(ctx, o.readings, path, p.plant); err != nil {
 		return err
 	}
 	bar := a.progress("forecasting")
 	if opt.Options, err = a.weigh(o.doubtful, bar); err != nil {
 		return err
 	}
-	if err := o.steps(plant, &opt); err != nil {
+	if err := o.steps(p.plant, &opt); err != nil {
 		return err
 	}
-	var res *study.TrackResult
-	files := outputs{}
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src.path, o.readings); err != nil {
-		return err
-	}
-	ctx, cancel := a.within(ctx)
-	defer cancel()
-	res, err = study.Track(ctx, load, opt)
-	bar.end()
-	if err = a.ended(ctx, err, ending(res, func() *study.Ending { return &res.Ending })); err != nil {
-		return err
-	}
-	return a.tell(files, res.ExitCode, func(w io.Writer, opt text.Options) error { return text.Track(w, res, opt) })
+	return conclude(ctx, a, bar, []string{path, o.readings}, func(ctx context.Context) (*study.TrackResult, error) {
+		return study.Track(ctx, p.load, opt)
+	}, func(w io.Writer, res *study.TrackResult, opt text.Options) error { return text.Track(w, res, opt) })
 }
 
 // steps reads which steps were done and which are still to come.

@@ -2,7 +2,6 @@ package cli
 
 import (
 	"context"
-	"errors"
 	"fmt"
 	"strings"
 
@@ -25,8 +24,8 @@ func (d *doubtful) bind(f *pflag.FlagSet) {
 
 // weigh makes the options of a study.
 func (a *app) weigh(d doubtful, bar *progress) (study.Options, error) {
-	c := a.opt.calculation()
-	opt := study.Options{Samples: d.samples, Seed: d.seed, Workers: a.opt.workers, Method: c.Method, Tolerance: c.Tolerance, MaxSteps: c.MaxSteps, Progress: bar.done}
+	opt := a.opt.study()
+	opt.Samples, opt.Seed, opt.Progress = d.samples, d.seed, bar.done
 	switch {
 	case d.samples < 0 || d.samples > mostSamples:
 		return opt, bad("as --samples 200", "--samples must lie between 0 and %d", mostSamples)
@@ -34,26 +33,6 @@ func (a *app) weigh(d doubtful, bar *progress) (study.Options, error) {
 		opt.Samples = -1
 	}
 	return opt, nil
-}
-
-// ended sorts out how a study ended. With an answer, whole or in part, it returns nil; the part is marked.
-func (a *app) ended(ctx context.Context, err error, part *study.Ending) error {
-	var misuse study.Misuse
-	switch {
-	case err == nil:
-		return nil
-	case errors.As(err, &misuse):
-		return &Exit{Code: ExitBad, Err: misuse.Err}
-	case part == nil:
-		return a.unfinished(ctx, err)
-	}
-	var e *Exit
-	if errors.As(err, &e) {
-		return err
-	}
-	_, why, exit := halted(ctx, err)
-	part.End(exit, why)
-	return nil
 }
 
 // readings reads the levels of a CSV file.
