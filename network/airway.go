@@ -14,9 +14,8 @@ type airway struct {
 	area  float64 // m², with the discharge coefficient
 	own   *mouth  // in the covered vessel
 	far   *mouth
-	inlet bool    // air comes in in the line's direction
-	gap   float64 // m over the crest of a weir, up to where it is open to the air; 0 for other lines
-	byFar int32   // slot of the far vessel's volume in the row of the gas mass; -1
+	inlet bool  // air comes in in the line's direction
+	byFar int32 // slot of the far vessel's volume in the row of the gas mass; -1
 	near  elements.AirBand
 }
 
@@ -25,30 +24,6 @@ const airwayCd = 0.6
 
 // airwayShare is the share of the bore over the invert of a mouth in a floor within which air begins to pass it; of one in a wall it is all of it.
 const airwayShare = 0.25
-
-// weirGap returns the height, m, over the crest of a weir out of the covered vessel up to which it is open to the air, which is taken to be the rim, and the area
-// by which air passes there; 0 for other lines. Common practice, no source: the file does not give the height of an overflow.
-func (p *Plant) weirGap(l *Line, v *Vessel) (height, area float64) {
-	if l.From != v.Tag || len(l.Parts) == 0 {
-		return 0, 0
-	}
-	w, ok := l.Parts[0].Part.(elements.Gaps)
-	o := p.beyond(l.To)
-	if !ok || o == nil || !o.Element.Outside().FreeFall {
-		return 0, 0
-	}
-	height = v.RimLevel() - l.Leaves.Height
-	if height <= 0 {
-		return 0, 0
-	}
-	area = w.Gap(height)
-	for _, f := range l.Parts[1:] {
-		if d := boreOf(f.Part); d > 0 {
-			area = math.Min(area, math.Pi/4*d*d)
-		}
-	}
-	return height, area
-}
 
 // mayBreathe tells whether a line of the covered vessel could let air in: its other end is a free fall or an open vessel.
 func (p *Plant) mayBreathe(v *Vessel) bool {
@@ -64,9 +39,6 @@ func (p *Plant) breathes(l *Line, tag string) bool {
 	other := l.To
 	if l.To == tag {
 		other = l.From
-	}
-	if h, _ := p.weirGap(l, p.vessel(tag)); h > 0 {
-		return true
 	}
 	if l.endBore(false) == 0 {
 		return false
@@ -93,9 +65,6 @@ func (s *system) addAirways() {
 			k := s.lineAt[plan.Tag]
 			l := &s.lines[k]
 			a := airway{line: k, area: airwayCd * l.area, own: &l.from, far: &l.to, byFar: -1}
-			if h, area := s.plan.weirGap(plan, st.plan); h > 0 {
-				a.gap, a.area = h, airwayCd*area
-			}
 			if plan.To == st.plan.Tag {
 				a.own, a.far, a.inlet = &l.to, &l.from, true
 			}
@@ -137,14 +106,10 @@ func (s *system) clear(m *mouth) (share, byV float64) {
 // the vessel and of the one at the far end.
 func (s *system) breathe(st *station, a *airway) (m, byP, byOwn, byFar float64) {
 	l := &s.lines[a.line]
-	if l.shut || a.area == 0 {
+	if l.shut || l.area == 0 {
 		return 0, 0, 0, 0
 	}
 	own, dOwn := s.clear(a.own)
-	if a.gap > 0 {
-		v, d := elements.Step(1 - (st.surface-a.own.invert)/a.gap)
-		own, dOwn = v, -d/a.gap*st.slope
-	}
 	far, dFar := s.clear(a.far)
 	if own == 0 || far == 0 {
 		return 0, 0, 0, 0

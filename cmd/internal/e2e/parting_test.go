@@ -64,8 +64,7 @@ func TestWholeFileStarves(t *testing.T) {
 		"VN-2.cd=0.586295581976338,T-3.level=0.5942430912662877 m,T-3/VN-2.cd=0.6007313631180018,SUMP.level=0.3093333649223108 m,L-1.pipe.roughness=6.579914897438769e-05 m,"+
 		"L-1.fittings.k=0.4375017892303838,V-1.kv=95.05873202801918,L-2.orifice.cd=0.6108895423803549,L-3.pipe[1].roughness=6.579914897438769e-05 m,"+
 		"L-3.pipe[2].roughness=7.968979515155285e-05 m,NRV-1.kv=60.03709391243317,P-LINE.pipe.roughness=4.33699175026389e-05 m", ",")})
-	if r.Work.Steps > 6000 { // a step of a second is all that a tee with a mouth at its lip allows for an hour
-
+	if r.Work.Steps > 2000 {
 		t.Errorf("%d steps", r.Work.Steps)
 	}
 }
