@@ -27,7 +27,7 @@ func (d *decoder) gaugeFields(g *network.Gauge) []field {
 	}
 }
 
-func (d *decoder) gauge(v *network.Vessel, g *network.Gauge, n *node) {
+func (d *decoder) gauge(v *network.Vessel, g *network.Gauge) {
 	v.Gauge = g
 	if t := d.things[g.Tag]; t != nil && t.class == aGauge {
 		t.vessel = v

@@ -45,7 +45,7 @@ func (d *decoder) vesselFields(v *network.Vessel) []field {
 			}
 		}),
 		d.number(&v.Base, "base", quantity.Length, elements.Required, "elevation of the lowest inside point over the site datum"),
-		object(d, "gauge", elements.Optional, "what the panel shows of the level", "gauge", d.gaugeFields, func(g *network.Gauge, n *node) { d.gauge(v, g, n) }),
+		object(d, "gauge", elements.Optional, "what the panel shows of the level", "gauge", d.gaugeFields, func(g *network.Gauge, _ *node) { d.gauge(v, g) }),
 		level, contents,
 		d.number(&v.Rim, "rim", quantity.Length, elements.Optional, "height over base where an open vessel overtops; default the top of the shape", elements.Positive),
 		d.number(&v.RimLength, "rim_length", quantity.Length, elements.Optional, "length over which it overtops; default the perimeter of the shape there", elements.Positive),

@@ -48,18 +48,18 @@ func saysAnswer(a *network.AlarmResult, answered *network.Result) string {
 	if l := failsAfter(answered, "", after); l != nil {
 		return says + "; answered, " + a.Vessel + " is held, but " + l.Says + " fails"
 	}
-	if firstFailure(answered, "") != nil {
+	if firstFailure(answered) != nil {
 		return says + "; answered, nothing further fails"
 	}
 	return says + "; answered, every limit holds"
 }
 
-// firstFailure returns the limit about a vessel, or about anything, that fails first; nil when all hold.
-func firstFailure(r *network.Result, vessel string) *network.LimitResult {
-	return failsAfter(r, vessel, math.Inf(-1))
+// firstFailure returns the limit that fails first; nil when all hold.
+func firstFailure(r *network.Result) *network.LimitResult {
+	return failsAfter(r, "", math.Inf(-1))
 }
 
-// failsAfter is firstFailure among the limits that fail after a time.
+// failsAfter is firstFailure among the limits about a vessel, or about anything, that fail after a time.
 func failsAfter(r *network.Result, vessel string, after float64) *network.LimitResult {
 	var first *network.LimitResult
 	for _, l := range r.Limits {

@@ -36,19 +36,6 @@ func newBench(r *Runner) (*Bench, error) {
 	return b, nil
 }
 
-// Number returns the place of a number by its name, or -1.
-func (b *Bench) Number(name string) int {
-	for i, n := range b.Plant.Numbers {
-		if n.Name == name {
-			return i
-		}
-	}
-	return -1
-}
-
-// Base returns the plant's own value of number i, SI.
-func (b *Bench) Base(i int) float64 { return b.base[i] }
-
 // Put says which numbers the next runs take instead of the plant's own: number idx[k] is values[k], SI. What was put before no longer holds. The
 // slices are kept until the next Put.
 func (b *Bench) Put(idx []int, values []float64) { b.idx, b.values = idx, values }

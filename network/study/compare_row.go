@@ -23,7 +23,7 @@ func compareOne(ctx context.Context, c Contender, load Load, must []string, opt 
 		return row, nil
 	}
 	row.Result, row.Verdict, row.Why, row.Tightest = res, res.Verdict, whyNotRun(res), marginOf(res.Tightest())
-	if l := firstFailure(res, ""); l != nil {
+	if l := firstFailure(res); l != nil {
 		row.FailsAt = l.FirstFail
 	}
 	row.room(plant, res)

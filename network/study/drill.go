@@ -100,7 +100,7 @@ func lasts(p *network.Plant) bool {
 
 func sayPlan(r *network.Result) PlanItself {
 	p := PlanItself{Verdict: r.Verdict, Limits: len(r.Limits)}
-	if l := firstFailure(r, ""); l != nil {
+	if l := firstFailure(r); l != nil {
 		p.FirstFail, p.Limit = l.FirstFail, l.Says
 	}
 	return p

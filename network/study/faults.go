@@ -26,7 +26,7 @@ func (f *fault) latent() bool {
 func faultsOf(p *network.Plant, plan *network.Result, opt *DrillOptions) []*fault {
 	var all []*fault
 	for _, list := range [][]*fault{
-		stepFaults(p, plan, opt), holdFaults(p, plan), valveFaults(p), pumpFaults(p, plan), ventFaults(p), checkFaults(p), foulFaults(p, plan),
+		stepFaults(p, plan, opt), holdFaults(plan), valveFaults(p), pumpFaults(p, plan), ventFaults(p), checkFaults(p), foulFaults(p, plan),
 	} {
 		all = append(all, list...)
 	}

@@ -37,7 +37,7 @@ func room(s *network.Step) float64 {
 }
 
 // holdFaults: every hold that lasts its up_to, and one that is not signed.
-func holdFaults(p *network.Plant, plan *network.Result) (all []*fault) {
+func holdFaults(plan *network.Result) (all []*fault) {
 	for _, h := range plan.Holds {
 		if h.At == nil {
 			continue

@@ -81,19 +81,8 @@ func (m *move) far(ctx context.Context, b *Bench, most, way float64) (by float64
 	if lo == most || most <= 0 {
 		return math.Max(most, 0), true, nil
 	}
-	for hi-lo > finest {
-		x := lo + (hi-lo)/2
-		held, err := ok(x)
-		if err != nil {
-			return 0, false, err
-		}
-		if held {
-			lo = x
-		} else {
-			hi = x
-		}
-	}
-	return lo, false, nil
+	by, err = bisect(lo, hi, finest, ok)
+	return by, false, err
 }
 
 // ease spaces trials closely near no shift, where limits go first.

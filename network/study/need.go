@@ -77,13 +77,3 @@ func unmet(needs []Need, limits []*network.LimitResult) *network.LimitResult {
 	}
 	return nil
 }
-
-// matches tells whether a need finds a limit at all.
-func (n *Need) matches(limits []*network.LimitResult) bool {
-	for _, l := range limits {
-		if n.of(l) > 0 {
-			return true
-		}
-	}
-	return n.Share == 0 || n.Amount == 0 && math.IsNaN(n.Share)
-}

@@ -4,7 +4,7 @@ import "headfall/network"
 
 // broken returns the limit that fails first in time, or nil; where none fails, one that is too close or was not judged.
 func broken(r *network.Result) *network.LimitResult {
-	if l := firstFailure(r, ""); l != nil {
+	if l := firstFailure(r); l != nil {
 		return l
 	}
 	for _, l := range r.Limits {

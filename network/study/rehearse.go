@@ -84,7 +84,7 @@ func (row *DrillRow) tell(r, plan *network.Result, f *fault) {
 	l := firstNew(r, plan)
 	row.AsPlanned = l == nil && len(r.Unreached()) <= len(plan.Unreached())
 	if l == nil {
-		l = firstFailure(r, "")
+		l = firstFailure(r)
 	}
 	if l == nil {
 		return

@@ -97,7 +97,7 @@ func (s *sizing) rounded(e stretch) (values []float64) {
 	if s.opt.Smallest {
 		round, sign = math.Ceil, 1.0
 	}
-	offset := s.offset(step)
+	offset := s.offset()
 	n := round((edge-offset)/step - sign*1e-9)
 	for k := range mostSteps {
 		v := math.Round(((n+sign*float64(k))*step+offset)*1e12) / 1e12
@@ -110,7 +110,7 @@ func (s *sizing) rounded(e stretch) (values []float64) {
 }
 
 // offset makes clock times whole minutes of the clock, not of the time since the start.
-func (s *sizing) offset(step float64) float64 {
+func (s *sizing) offset() float64 {
 	if s.number.Dim != quantity.Time || s.plant.Start.IsZero() {
 		return 0
 	}

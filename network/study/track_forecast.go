@@ -23,7 +23,7 @@ func (t *tracking) forecast(ctx context.Context) error {
 	f := &t.res.Forecast
 	t.res.Result = res
 	f.Verdict, f.Why, f.Tightest = res.Verdict, whyNotRun(res), marginOf(res.Tightest())
-	if l := firstFailure(res, ""); l != nil {
+	if l := firstFailure(res); l != nil {
 		f.FailsAt = l.FirstFail
 	}
 	for _, l := range res.Limits {

@@ -65,17 +65,23 @@ func furthest(ctx context.Context, r *Runner, most float64, trials int, ok func(
 		return 0, false, err
 	}
 	lo, hi := at(n), at(n+1)
-	for hi-lo > math.Max(finest, 1e-4*most) {
-		m := lo + (hi-lo)/2
-		holds, err := ok(ctx, b, m)
+	x, err = bisect(lo, hi, math.Max(finest, 1e-4*most), func(x float64) (bool, error) { return ok(ctx, b, x) })
+	return x, err == nil, err
+}
+
+// bisect closes in on where ok ends, to a width: it is true at lo and not at hi. It returns the last x at which it was true.
+func bisect(lo, hi, width float64, ok func(float64) (bool, error)) (float64, error) {
+	for hi-lo > width {
+		x := lo + (hi-lo)/2
+		holds, err := ok(x)
 		if err != nil {
-			return 0, false, err
+			return 0, err
 		}
 		if holds {
-			lo = m
+			lo = x
 		} else {
-			hi = m
+			hi = x
 		}
 	}
-	return lo, true, nil
+	return lo, nil
 }

@@ -36,31 +36,27 @@ With --normalise it writes the file in plain block form, everything quoted that 
 }
 
 func (a *app) check(ctx context.Context, path string, normalise bool) error {
-	src, err := a.read(ctx, path)
-	if err != nil {
-		return err
-	}
-	plant, err := a.load(src, &a.opt)
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
 	if normalise {
-		return a.normalise(src)
+		return a.normalise(p.src)
 	}
 	var files outputs
-	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, understood(plant)) })
-	if err := files.check(src.path); err != nil {
+	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, understood(p.plant)) })
+	if err := files.check(p.src.path); err != nil {
 		return err
 	}
 	if err := files.save(a.Out); err != nil {
 		return err
 	}
 	out := a.words(files)
-	if err := text.Check(out, plant, text.Options{Width: a.Width, Quiet: a.opt.quiet}); err != nil {
+	if err := text.Check(out, p.plant, text.Options{Width: a.Width, Quiet: a.opt.quiet}); err != nil {
 		return err
 	}
-	if len(plant.Warnings) > 0 && !a.opt.quiet {
-		_, err = fmt.Fprintf(out, "\nWarnings\n%v\n", scenarios.Locate(plant, plant.Warnings))
+	if len(p.plant.Warnings) > 0 && !a.opt.quiet {
+		_, err = fmt.Fprintf(out, "\nWarnings\n%v\n", scenarios.Locate(p.plant, p.plant.Warnings))
 	}
 	return err
 }

@@ -37,25 +37,21 @@ func (a *app) sheet(ctx context.Context, path, html string, plain bool) error {
 	if html != "" && plain {
 		return bad("leave one of them out", "--html and --text do not go together")
 	}
-	src, err := a.read(ctx, path)
-	if err != nil {
-		return err
-	}
-	plant, err := a.load(src, &a.opt)
+	p, err := a.open(ctx, path)
 	if err != nil {
 		return err
 	}
 	if html == "" && !plain {
-		html = src.base() + "-sheet.html"
+		html = p.src.base() + "-sheet.html"
 	}
 	var res *network.Result
 	var files outputs
-	files.add(html, func(w io.Writer) error { return viz.WriteSheet(w, viz.Page{Plant: plant, Result: res}) })
+	files.add(html, func(w io.Writer) error { return viz.WriteSheet(w, viz.Page{Plant: p.plant, Result: res}) })
 	files.add(a.opt.json, func(w io.Writer) error { return export.JSON(w, res) })
-	if err := files.check(src.path); err != nil {
+	if err := files.check(p.src.path); err != nil {
 		return err
 	}
-	if res, err = a.answer(ctx, src); err != nil {
+	if res, err = a.answer(ctx, p.src); err != nil {
 		return err
 	}
 	a.settled = res.ExitCode
@@ -63,7 +59,7 @@ func (a *app) sheet(ctx context.Context, path, html string, plain bool) error {
 		return err
 	}
 	if plain {
-		err = buffered(a.words(files), func(w io.Writer) error { return viz.SheetText(w, viz.Page{Plant: plant, Result: res}) })
+		err = buffered(a.words(files), func(w io.Writer) error { return viz.SheetText(w, viz.Page{Plant: p.plant, Result: res}) })
 	} else if !a.opt.quiet {
 		_, err = fmt.Fprintln(a.words(files), "wrote", html)
 	}

@@ -17,15 +17,8 @@ func (p *page) backward() {
 				keep(p.units.VolumeOf(b.Volume, Up)), keep(p.units.FlowOf(b.Peak, Up))))
 		}
 	}
-	for i, s := range said {
-		if i == reversalsShown {
-			p.put("", "and %s", counted(len(said)-i, "more", "more"))
-			return
-		}
-		label := ""
-		if i == 0 {
-			label = "Runs back"
-		}
-		p.put(label, "%s", s)
+	if n := len(said) - reversalsShown; n > 0 {
+		said = append(said[:reversalsShown], "and "+counted(n, "more", "more"))
 	}
+	p.list("Runs back", said)
 }

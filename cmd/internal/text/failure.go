@@ -83,12 +83,17 @@ func (p *page) brokenLimits() []failure {
 	return list
 }
 
+// wanted tells that a step or hold should have come by the end of the calculation.
+func (p *page) wanted(id string) bool {
+	planned := p.steps[id]
+	return p.res.Complete && (planned == nil || !planned.Optional)
+}
+
 // missed returns the steps that were never reached and should have been.
 func (p *page) missed() []*network.StepResult {
 	var list []*network.StepResult
 	for _, s := range p.res.Steps {
-		planned := p.steps[s.ID]
-		if s.Done == nil && p.res.Complete && (planned == nil || !planned.Optional) {
+		if s.Done == nil && p.wanted(s.ID) {
 			list = append(list, s)
 		}
 	}
@@ -99,8 +104,7 @@ func (p *page) missed() []*network.StepResult {
 func (p *page) missedHolds() []*network.HoldResult {
 	var list []*network.HoldResult
 	for _, h := range p.res.Holds {
-		planned := p.steps[h.ID]
-		if h.At == nil && p.res.Complete && (planned == nil || !planned.Optional) {
+		if h.At == nil && p.wanted(h.ID) {
 			list = append(list, h)
 		}
 	}

@@ -45,13 +45,7 @@ func Fit(w io.Writer, plant *network.Plant, r *study.FitResult, opt Options) err
 		t := r.Range[tag]
 		p.put("Tested", "%s from %s down to %s, %s", tag, keep(fine3(t.High)), keep(fine3(t.Low)), p.exactly(t.From)+" to "+p.exactly(t.To))
 	}
-	for i, text := range r.Warnings {
-		label := "Mind"
-		if i > 0 {
-			label = ""
-		}
-		p.put(label, "%s", text)
-	}
+	p.list("Mind", r.Warnings)
 	p.residuals(r)
 	if r.Verdict == study.Fitted {
 		for _, x := range r.Values {

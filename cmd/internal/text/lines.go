@@ -29,6 +29,14 @@ func newSheet(w io.Writer, width int) *sheet {
 	return &sheet{w: w, width: max(width, narrowed)}
 }
 
+// list writes lines under one label.
+func (s *sheet) list(label string, said []string) {
+	for _, line := range said {
+		s.put(label, "%s", line)
+		label = ""
+	}
+}
+
 // put writes one labelled line; an empty label goes on under the last.
 func (s *sheet) put(label, format string, args ...any) {
 	body := format

@@ -33,13 +33,7 @@ func Track(w io.Writer, r *study.TrackResult, opt Options) error {
 	}
 	p.emptyNow(r)
 	p.hand("Least margin", f.Tightest)
-	for i, s := range r.Suspects {
-		label := "Looks like"
-		if i > 0 {
-			label = ""
-		}
-		p.put(label, "%s", s)
-	}
+	p.list("Looks like", r.Suspects)
 	p.tracked(r)
 	for _, o := range r.Fitted {
 		p.put("Forecast with", "%s at %s of its value, as the readings of %s have it", o.Name, keep(soft(percent(o.Factor, Near))), o.Vessel)
