@@ -5,6 +5,7 @@ import (
 	"strconv"
 
 	"headfall/network"
+	"headfall/viz/export"
 )
 
 // balanceRow is one vessel of the balance, in display units.
@@ -40,7 +41,7 @@ func balance(plant *network.Plant, r *network.Result, u units, c clock) balanceV
 				v.With(q.OverCapacity)})
 		}
 	}
-	for _, tag := range moverTags(plant) {
+	for _, tag := range export.Movers(plant) {
 		if q := r.Pumps[tag]; q != nil {
 			out.Pumps = append(out.Pumps, []string{tag, strconv.Itoa(q.Starts), c.Span(q.Ran, later), strconv.Itoa(q.MostInHour)})
 		}

@@ -9,6 +9,7 @@ import (
 	"strings"
 
 	"headfall/network"
+	"headfall/viz/export"
 )
 
 // sheetRow is one line of the sequence sheet: a step or a hold.
@@ -232,7 +233,7 @@ func handovers(p Page, u units, c clock) []handoverView {
 				v.Levels = append(v.Levels, s)
 			}
 		}
-		for _, tag := range moverTags(p.Plant) {
+		for _, tag := range export.Movers(p.Plant) {
 			if x, ok := h.Valves[tag]; ok {
 				v.Valves = append(v.Valves, tag+" "+position(x))
 			}

@@ -5,13 +5,7 @@ import (
 	"fmt"
 	"io"
 	"strings"
-
-	"headfall/viz/export"
-
-	"headfall/network"
 )
-
-func moverTags(plant *network.Plant) []string { return export.Movers(plant) }
 
 // textWidth is the width of a sheet in plain text.
 const textWidth = 118
@@ -19,54 +13,59 @@ const textWidth = 118
 // SheetText writes the sequence sheet as plain text.
 func SheetText(w io.Writer, p Page) error {
 	u, c := newUnits(p.Plant.Show), newClock(p)
-	rows := sheetRows(p, u, c)
-	out := bufio.NewWriter(w)
-	say := func(format string, args ...any) {
-		fmt.Fprintln(out, strings.TrimRight(strings.ReplaceAll(clean(fmt.Sprintf(format, args...)), "\u00a0", " "), " "))
-	}
+	s := plainSheet{bufio.NewWriter(w)}
+	s.head(p, c)
+	s.steps(sheetRows(p, u, c))
+	s.foot(p, u, c)
+	return s.out.Flush()
+}
+
+// plainSheet is a sheet being written as plain text.
+type plainSheet struct{ out *bufio.Writer }
+
+func (s plainSheet) say(format string, args ...any) {
+	fmt.Fprintln(s.out, strings.TrimRight(strings.ReplaceAll(clean(fmt.Sprintf(format, args...)), "\u00a0", " "), " "))
+}
+
+// rule draws a line across.
+func (s plainSheet) rule(of string) { s.say("%s", strings.Repeat(of, textWidth)) }
+
+// head says which plan this is, and what is to be lined up before it.
+func (s plainSheet) head(p Page, c clock) {
 	rev := p.Plant.Revision
 	if rev == "" {
 		rev = "not stated"
 	}
-	say("%s   rev %s   %s", oneLine(p.Plant.Title), rev, c.Day(0))
-	say("from %s  sha256 %s", p.Plant.File, p.Plant.SHA256)
-	say("verdict: %s (%s)", newVerdictWord(p.Result), limitCount(p.Result))
-	say("%s", strings.Repeat("=", textWidth))
+	s.say("%s   rev %s   %s", oneLine(p.Plant.Title), rev, c.Day(0))
+	s.say("from %s  sha256 %s", p.Plant.File, p.Plant.SHA256)
+	s.say("verdict: %s (%s)", newVerdictWord(p.Result), limitCount(p.Result))
+	s.rule("=")
 	if len(p.Result.LineUp) > 0 {
-		say("LINE-UP BEFORE STEP 1")
+		s.say("LINE-UP BEFORE STEP 1")
 		for _, l := range p.Result.LineUp {
-			say("  [ ] %-14s %-10s %s", l.Valve, l.Position, strings.TrimSpace(l.Where+opensWords(l.Opens)))
+			s.say("  [ ] %-14s %-10s %s", l.Valve, l.Position, strings.TrimSpace(l.Where+opensWords(l.Opens)))
 		}
-		say("      checked by ____________________")
-		say("%s", strings.Repeat("-", textWidth))
+		s.say("      checked by ____________________")
+		s.rule("-")
 	}
-	widths := []int{4, 12, 10, 36, 26, 18}
-	say("%s", strings.Join(cells(widths, [][]string{{"#"}, {"Clock"}, {"Who"}, {"Action"}, {"Expect"}, {"Stop if"}}, 0), " ")+" Done")
+}
+
+// stepWidths are the columns of a step.
+var stepWidths = []int{4, 12, 10, 36, 26, 18}
+
+// steps lists the steps and holds.
+func (s plainSheet) steps(rows []sheetRow) {
+	s.say("%s", strings.Join(cells(stepWidths, [][]string{{"#"}, {"Clock"}, {"Who"}, {"Action"}, {"Expect"}, {"Stop if"}}, 0), " ")+" Done")
 	for _, r := range rows {
-		say("%s", strings.Repeat("-", textWidth))
+		s.rule("-")
 		if r.Hold {
-			say("HOLD %-11s %s", r.Clock, strings.TrimSpace(oneLine(r.Rest)+"   signed ______________"))
+			s.say("HOLD %-11s %s", r.Clock, strings.TrimSpace(oneLine(r.Rest)+"   signed ______________"))
 			if r.Longest != "" {
-				say("%17s%s", "", r.Longest)
+				s.say("%17s%s", "", r.Longest)
 			}
 			continue
 		}
-		action := wrap(oneLine(r.Action), widths[3])
-		for _, extra := range []string{r.Where, r.Note, r.Pending, togetherWords(r.Together)} {
-			if extra != "" {
-				action = append(action, wrap(oneLine(extra), widths[3])...)
-			}
-		}
-		expect := wrap(r.Expect, widths[4])
-		if r.Range != "" {
-			expect = append(expect, wrap("("+r.Range+")", widths[4])...)
-		}
-		when := []string{r.Clock}
-		if r.Elapsed != "" {
-			when = append(when, "("+r.Elapsed+")")
-		}
-		cols := [][]string{{r.N}, when, wrap(r.Who, widths[2]), action, expect, wrap(r.StopIf, widths[5])}
-		most := 0
+		cols, most := stepColumns(r), 0
 		for _, col := range cols {
 			most = max(most, len(col))
 		}
@@ -75,27 +74,47 @@ func SheetText(w io.Writer, p Page) error {
 			if i == 0 {
 				done = " ____"
 			}
-			say("%s", strings.Join(cells(widths, cols, i), " ")+done)
+			s.say("%s", strings.Join(cells(stepWidths, cols, i), " ")+done)
 		}
 	}
-	say("%s", strings.Repeat("=", textWidth))
-	for _, h := range handovers(p, u, c) {
-		say("HANDOVER %s", h.When)
-		say("  levels    %s", strings.Join(h.Levels, "; "))
-		say("  positions %s", strings.Join(h.Valves, "; "))
-		say("  next step  %s", orNone(h.NextStep))
-		say("  next limit %s", orNone(h.NextLimit))
+	s.rule("=")
+}
+
+// stepColumns wraps what a step says into its columns.
+func stepColumns(r sheetRow) [][]string {
+	when := []string{r.Clock}
+	if r.Elapsed != "" {
+		when = append(when, "("+r.Elapsed+")")
 	}
-	for _, s := range cautions(p.Plant, p.Result) {
-		for i, line := range wrap(oneLine(s), textWidth-4) {
+	action := wrap(oneLine(r.Action), stepWidths[3])
+	for _, extra := range []string{r.Where, r.Note, r.Pending, togetherWords(r.Together)} {
+		action = append(action, wrap(oneLine(extra), stepWidths[3])...)
+	}
+	expect := wrap(r.Expect, stepWidths[4])
+	if r.Range != "" {
+		expect = append(expect, wrap("("+r.Range+")", stepWidths[4])...)
+	}
+	return [][]string{{r.N}, when, wrap(r.Who, stepWidths[2]), action, expect, wrap(r.StopIf, stepWidths[5])}
+}
+
+// foot writes what the next shift is told, and the cautions.
+func (s plainSheet) foot(p Page, u units, c clock) {
+	for _, h := range handovers(p, u, c) {
+		s.say("HANDOVER %s", h.When)
+		s.say("  levels    %s", strings.Join(h.Levels, "; "))
+		s.say("  positions %s", strings.Join(h.Valves, "; "))
+		s.say("  next step  %s", orNone(h.NextStep))
+		s.say("  next limit %s", orNone(h.NextLimit))
+	}
+	for _, caution := range cautions(p.Plant, p.Result) {
+		for i, line := range wrap(oneLine(caution), textWidth-4) {
 			lead := "!   "
 			if i > 0 {
 				lead = "    "
 			}
-			say("%s%s", lead, line)
+			s.say("%s%s", lead, line)
 		}
 	}
-	return out.Flush()
 }
 
 func opensWords(s string) string {
