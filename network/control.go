@@ -2,7 +2,6 @@ package network
 
 import (
 	"math"
-	"sort"
 
 	"headfall/elements"
 )
@@ -231,16 +230,4 @@ func (c *control) do(st *stepState, t float64) {
 	case CancelBatch:
 		c.gone[p.Target] = true
 	}
-}
-
-// due lists the steps in the order in which they acted.
-func (c *control) acted() []*stepState {
-	var all []*stepState
-	for i := range c.steps {
-		if !math.IsNaN(c.steps[i].done) {
-			all = append(all, &c.steps[i])
-		}
-	}
-	sort.SliceStable(all, func(i, j int) bool { return all[i].done < all[j].done })
-	return all
 }

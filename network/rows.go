@@ -2,12 +2,6 @@ package network
 
 import "math"
 
-// at returns the value just after time t.
-func (r Rows) at(t float64) float64 {
-	v, _ := r.piece(t)
-	return v
-}
-
 // piece returns the value just after time t and the slope of the straight piece that begins there.
 func (r Rows) piece(t float64) (value, slope float64) {
 	if len(r) == 0 {
@@ -38,16 +32,4 @@ func (r Rows) next(t float64) float64 {
 		}
 	}
 	return math.Inf(1)
-}
-
-// integral returns ∫ r dt from a to b.
-func (r Rows) integral(a, b float64) float64 {
-	var sum float64
-	for a < b {
-		c := math.Min(b, r.next(a))
-		v, m := r.piece(a)
-		sum += (v + m*(c-a)/2) * (c - a)
-		a = c
-	}
-	return sum
 }
