@@ -5,8 +5,8 @@ package network
 // no more at most times.
 type basin struct {
 	lo, hi       float64 // m³: the span in which the following holds; empty where the section changes
-	level, slope float64 // level = level + slope·V, m above base
-	press, byV   float64 // total pressure at the floor = press + byV·V, Pa
+	level, slope float64 // the liquid stands level + slope·V above base, m
+	press, byV   float64 // and the total pressure at the floor is press + byV·V, Pa
 	full         float64 // m³, under the top of the shape
 }
 

@@ -17,7 +17,7 @@ import (
 //	lag = ρL/A / (bᵀK⁻¹b),
 //
 // K the slopes of the balances of the tees without the line, m³/(s·Pa), b = +1 and −1 at the tees at its ends. Within that time the flow of the line
-// falls in with what the plant gives it; at nothing, the balance of the tee has no solution but by chance.
+// falls in with what the plant gives it; at nothing, the balance of the tee has no solution but by chance. The times below are our choice, without a source.
 const (
 	shortestLag = 1e-3 // s: under that a column parts
 	rejoinedLag = 10   // times that, and it carries again

@@ -45,7 +45,7 @@ func TestNearest(t *testing.T) {
 		text := rapid.StringMatching(`-?(0|[1-9][0-9]{0,17})(\.[0-9]{1,18})?(e-?[0-9]{1,2})?`).Draw(t, "number")
 		r, ok := new(big.Rat).SetString(text)
 		if !ok {
-			t.Skip()
+			t.Fatalf("%q is no number", text)
 		}
 		if u.offset != nil {
 			r.Add(r, u.offset)

@@ -21,14 +21,14 @@ type sample struct {
 	levels   *network.Grid // nil where they are not wanted
 }
 
-// sampleTolerance is the relative accuracy of samples where none is asked for: a tenth of a millimetre in a metre, far within any doubt, at half the
+// SampleTolerance is the relative accuracy of samples where none is asked for: a tenth of a millimetre in a metre, far within any doubt, at half the
 // work of the usual one.
-const sampleTolerance = 1e-4
+const SampleTolerance = 1e-4
 
 // sampled are the options of a model that samples are run on.
 func sampled(opt network.Options) network.Options {
 	if opt.Tolerance == 0 {
-		opt.Tolerance = sampleTolerance
+		opt.Tolerance = SampleTolerance
 	}
 	return opt
 }

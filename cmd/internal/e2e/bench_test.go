@@ -9,6 +9,7 @@ import (
 	"testing"
 
 	"headfall/network"
+	"headfall/network/study"
 	"headfall/scenarios"
 	"headfall/viz"
 )
@@ -98,19 +99,7 @@ func BenchmarkCompile(b *testing.B) {
 
 func BenchmarkRun(b *testing.B) {
 	for name, text := range benchmarks(b) {
-		b.Run(name, func(b *testing.B) {
-			m := compile(b, text, how{})
-			b.ReportAllocs()
-			var r *network.Result
-			for b.Loop() {
-				var err error
-				if r, err = m.Run(context.Background(), network.RunOptions{}); err != nil {
-					b.Fatal(err)
-				}
-			}
-			b.ReportMetric(float64(r.Work.Steps), "steps")
-			b.ReportMetric(float64(b.Elapsed().Microseconds())/float64(b.N)/float64(r.Work.Steps+r.Work.Rejected), "µs/step")
-		})
+		b.Run(name, func(b *testing.B) { runs(b, text, how{}, network.RunOptions{}) })
 	}
 }
 
@@ -119,19 +108,24 @@ func BenchmarkSample(b *testing.B) {
 	for _, name := range scenarios.Demos() {
 		data, _ := scenarios.Demo(name)
 		b.Run(name, func(b *testing.B) {
-			m := compile(b, string(data), how{tolerance: 1e-4})
-			b.ReportAllocs()
-			var r *network.Result
-			for b.Loop() {
-				var err error
-				if r, err = m.Run(context.Background(), network.RunOptions{}); err != nil {
-					b.Fatal(err)
-				}
-			}
-			b.ReportMetric(float64(r.Work.Steps), "steps")
-			b.ReportMetric(float64(b.Elapsed().Microseconds())/float64(b.N)/float64(r.Work.Steps+r.Work.Rejected), "µs/step")
+			runs(b, string(data), how{tolerance: study.SampleTolerance}, network.RunOptions{Brief: true})
 		})
 	}
+}
+
+// runs runs a compiled plant again and again.
+func runs(b *testing.B, text string, h how, opt network.RunOptions) {
+	m := compile(b, text, h)
+	b.ReportAllocs()
+	var r *network.Result
+	for b.Loop() {
+		var err error
+		if r, err = m.Run(context.Background(), opt); err != nil {
+			b.Fatal(err)
+		}
+	}
+	b.ReportMetric(float64(r.Work.Steps), "steps")
+	b.ReportMetric(float64(b.Elapsed().Microseconds())/float64(b.N)/float64(r.Work.Steps+r.Work.Rejected), "µs/step")
 }
 
 // BenchmarkLoad reads, checks and readies plant files.
