@@ -75,6 +75,8 @@ type (
 		// Spill returns the flow, m³/s, for a surface h over the crest on the side it comes from and hd on the other, both m, and its partials.
 		Spill(h, hd float64, at *Local) (q, byH, byHd float64)
 	}
+	// Gaps is a weir as an opening for air: the clear area, m², above its crest up to h, m, over it.
+	Gaps interface{ Gap(h float64) float64 }
 	// Pumps is a source of head: starts and stops, modes. Drop is negative where it lifts. Opening in Local is 1 running, 0 stopped.
 	Pumps interface{ Drive() *Drive }
 	// Humps is a high point: an elevation in the line at which a pressure is looked at.

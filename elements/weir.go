@@ -1,5 +1,7 @@
 package elements
 
+import "math"
+
 func init() {
 	Register(Kind{
 		Name: "weir", Room: Parts,
@@ -86,6 +88,14 @@ func (e *weir) Shut(*Local) bool { return e.blocked >= 1 }
 
 // CrestWidth returns the clear width at the crest, m; 0 of a notch that comes to a point.
 func (e *weir) CrestWidth() float64 { return e.law.mouthed * e.law.clear }
+
+// Gap returns the clear area, m², of the opening above the crest up to h, m, over it, as air passes it.
+func (e *weir) Gap(h float64) float64 {
+	if e.isVee {
+		return math.Tan(e.vee.angle/2) * h * h * e.law.clear
+	}
+	return e.CrestWidth() * h
+}
 
 // Outside tells that the head passes 2.5 times the height of the crest, up to which Kindsvater and Carter measured.
 func (e *weir) Outside(_, h float64, _ *Local) string {

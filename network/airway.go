@@ -14,8 +14,9 @@ type airway struct {
 	area  float64 // m², with the discharge coefficient
 	own   *mouth  // in the covered vessel
 	far   *mouth
-	inlet bool  // air comes in in the line's direction
-	byFar int32 // slot of the far vessel's volume in the row of the gas mass; -1
+	inlet bool    // air comes in in the line's direction
+	gap   float64 // m over the crest of a weir up to which it is open to the air; 0 for other lines
+	byFar int32   // slot of the far vessel's volume in the row of the gas mass; -1
 	near  elements.AirBand
 }
 
@@ -24,6 +25,27 @@ const airwayCd = 0.6
 
 // airwayShare is the share of the bore over the invert of a mouth in a floor within which air begins to pass it; of one in a wall it is all of it.
 const airwayShare = 0.25
+
+// weirGap returns the height, m, over the crest of a line's weir up to which it is open to the air, which is taken to be the rim of the vessel it leaves, and the
+// area by which air passes there; 0 for other lines. Common practice, no source: the file does not give the height of an overflow.
+func (p *Plant) weirGap(l *Line) (height, area float64) {
+	v := p.vessel(l.From)
+	if v == nil || len(l.Parts) == 0 {
+		return 0, 0
+	}
+	w, ok := l.Parts[0].Part.(elements.Gaps)
+	if !ok {
+		return 0, 0
+	}
+	height = math.Max(0, v.RimLevel()-l.Leaves.Height)
+	area = w.Gap(height)
+	for _, f := range l.Parts[1:] {
+		if d := boreOf(f.Part); d > 0 {
+			area = math.Min(area, math.Pi/4*d*d)
+		}
+	}
+	return height, area
+}
 
 // mayBreathe tells whether a line of the covered vessel could let air in: its other end is a free fall or an open vessel.
 func (p *Plant) mayBreathe(v *Vessel) bool {
@@ -40,7 +62,7 @@ func (p *Plant) breathes(l *Line, tag string) bool {
 	if l.To == tag {
 		other = l.From
 	}
-	if l.endBore(false) == 0 {
+	if gap, _ := p.weirGap(l); gap == 0 && l.endBore(false) == 0 {
 		return false
 	}
 	if o := p.beyond(other); o != nil {
@@ -65,6 +87,9 @@ func (s *system) addAirways() {
 			k := s.lineAt[plan.Tag]
 			l := &s.lines[k]
 			a := airway{line: k, area: airwayCd * l.area, own: &l.from, far: &l.to, byFar: -1}
+			if h, area := s.plan.weirGap(plan); h > 0 {
+				a.gap, a.area = h, airwayCd*area
+			}
 			if plan.To == st.plan.Tag {
 				a.own, a.far, a.inlet = &l.to, &l.from, true
 			}
@@ -84,21 +109,23 @@ func (s *system) linkAirways() {
 	}
 }
 
-// clear returns the share of a mouth that is clear of liquid, and its slope by the volume of its vessel.
-func (s *system) clear(m *mouth) (share, byV float64) {
-	if m.kind == toAir {
+// clear returns the share of one end of an air path that is clear of liquid, and its slope by the volume of its vessel. A weir is clear over its crest, from both
+// sides where no pipe follows it.
+func (s *system) clear(a *airway, m *mouth) (share, byV float64) {
+	if m.kind != toVessel {
 		return 1, 0
 	}
-	st := &s.stations[m.at]
-	w := m.width
+	st, z, w := &s.stations[m.at], m.invert, m.width
 	if w == 0 {
 		w = airwayShare * m.inlet.bore
+	}
+	if l := &s.lines[a.line]; a.gap > 0 && (m == &l.from || l.bore == 0) {
+		z, w = l.crestZ, a.gap
 	}
 	if w == 0 {
 		return 0, 0
 	}
-	u := 1 - (st.surface-m.invert)/w
-	v, d := elements.Step(u)
+	v, d := elements.Step(1 - (st.surface-z)/w)
 	return v, -d / w * st.slope
 }
 
@@ -106,16 +133,16 @@ func (s *system) clear(m *mouth) (share, byV float64) {
 // the vessel and of the one at the far end.
 func (s *system) breathe(st *station, a *airway) (m, byP, byOwn, byFar float64) {
 	l := &s.lines[a.line]
-	if l.shut || l.area == 0 {
+	if l.shut || a.area == 0 {
 		return 0, 0, 0, 0
 	}
-	own, dOwn := s.clear(a.own)
-	far, dFar := s.clear(a.far)
+	own, dOwn := s.clear(a, a.own)
+	far, dFar := s.clear(a, a.far)
 	if own == 0 || far == 0 {
 		return 0, 0, 0, 0
 	}
 	g, byG := elements.AirIn(st.gas, s.atmosphere, st.temp, &a.near)
-	if l.oneWay && (g > 0) != a.inlet {
+	if l.oneWay && g != 0 && (g > 0) != a.inlet {
 		return 0, 0, 0, 0
 	}
 	return a.area * own * far * g, a.area * own * far * byG, a.area * dOwn * far * g, a.area * own * dFar * g
@@ -128,7 +155,7 @@ func (s *system) addAir(i int, f []float64, lin *integrate.Linear) {
 		a := &st.airways[k]
 		m, byP, byOwn, byFar := s.breathe(st, a)
 		f[st.massRow] += m
-		if lin == nil || m == 0 {
+		if lin == nil {
 			continue
 		}
 		lin.DfDy[s.gasS[i].byV] += byP*st.gasV + byOwn

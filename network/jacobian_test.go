@@ -376,6 +376,18 @@ func benches() []bench {
 			}
 			s.line("A", "B", "weir {rectangular: {width: 0.5 m, c: 1.7}}").Leaves = Port{Form: Crest, Height: 1.8, Given: true}
 		}, sets: []func(*simulation, []float64){level(0, 2.99), level(1, 2.9)}},
+		{name: "air paths at balance", liquid: water, build: func(s *sketch) {
+			s.cover(s.vessel("A", box, 1, 0.5), 0)
+			s.cover(s.vessel("B", box, 1, 0.001), 0)
+			s.cover(s.vessel("C", box, 1, 0.001), 0)
+			s.vessel("D", box, 1.2, 0.5)
+			s.line("A", "D", "weir {rectangular: {width: 0.2 m, c: 1.7}}").Leaves = Port{Form: Crest, Height: 1.6, Given: true}
+			s.line("D", "B", "weir {rectangular: {width: 0.2 m, c: 1.7}}", "pipe {length: 3 m, bore: 60 mm, roughness: 0.05 mm}").Leaves = Port{Form: Crest, Height: 0.9, Given: true}
+			s.outside("X", "free_fall {elevation: 0 m}")
+			s.line("A", "X", "weir {rectangular: {width: 0.3 m, c: 1.7}}").Leaves = Port{Form: Crest, Height: 1.2, Given: true}
+			s.line("B", "X", "pipe {length: 3 m, bore: 60 mm, roughness: 0.05 mm}")
+			s.line("C", "X", "weir {v_notch: {angle: 90 deg}}", "pipe {length: 3 m, bore: 60 mm, roughness: 0.05 mm}").Leaves = Port{Form: Crest, Height: 1.4, Given: true}
+		}, sets: []func(*simulation, []float64){level(0, 1.3), level(2, 1.5), level(1, 0.02), level(3, 1.5), level(3, 1.3)}},
 		{name: "weirs under gas, and full vessels", liquid: water, build: func(s *sketch) {
 			s.cover(s.vessel("A", box, 0, 2), 800)
 			s.cover(s.vessel("B", box, 0.1, 1), -300, "hole {bore: 20 mm}")
