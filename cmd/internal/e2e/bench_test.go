@@ -69,7 +69,8 @@ func benchmarks(b *testing.B) map[string]string {
 		b.Fatal("no such demo")
 	}
 	return map[string]string{"chain_10": chainOf(10), "chain_100": chainOf(100), "chain_1000": chainOf(1000), "grid_9": gridOf(3), "grid_100": gridOf(10),
-		"grid_1024": gridOf(32), "grid_10000": gridOf(100), "chain_10000": chainOf(10000), "ten_vessels": string(demo)}
+		"grid_1024": gridOf(32), "grid_10000": gridOf(100), "chain_10000": chainOf(10000), "ten_vessels": string(demo),
+		"mixed_10": mixedOf(10), "mixed_100": mixedOf(100), "mixed_1000": mixedOf(1000)}
 }
 
 func load(b *testing.B, text string) *network.Plant {
