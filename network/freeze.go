@@ -96,6 +96,11 @@ func (s *system) freeze(sim *simulation) {
 	for i := range s.tees {
 		s.freezeTee(&s.tees[i])
 	}
+	if s.settler != nil {
+		for i := range s.settler.manifolds {
+			s.settler.manifolds[i].divide(s)
+		}
+	}
 }
 
 // inflowOf returns the inflow of a vessel just after t and its slope: its own course, or what a step set it to, and its batches.

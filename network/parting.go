@@ -193,36 +193,39 @@ func (s *system) formBalances() {
 		}
 		return
 	}
-	s.settler.balances(s, true)
-	s.settler.sound = s.settler.factor.Refactor(s.settler.values) == nil
+	for i := range s.settler.manifolds {
+		c := &s.settler.manifolds[i]
+		c.balances(s, every, true)
+		c.factorise()
+	}
 }
 
 // lag returns inertance times the conductance of the plant at the ends of the line, s; infinite where an end is held.
 func (s *system) lag(l *line) float64 {
-	r := s.settler
-	ends := [2]int{-1, -1}
+	ends, c := [2]int32{-1, -1}, (*manifold)(nil)
 	for k, m := range [2]*mouth{&l.from, &l.to} {
 		if m.kind == toTee && !s.tees[m.at].slow {
-			ends[k] = m.at
+			at := s.settler.of[m.at]
+			c, ends[k] = &s.settler.manifolds[at[0]], at[1]
 		}
 	}
-	if ends[0] < 0 && ends[1] < 0 || r == nil {
+	if c == nil {
 		return math.Inf(1)
 	}
-	if !r.sound {
+	if !c.sound {
 		return 0
 	}
-	clear(r.d)
+	clear(c.d)
 	for k, i := range ends {
 		if i >= 0 {
-			r.d[i] = float64(1 - 2*k)
+			c.d[i] = float64(1 - 2*k)
 		}
 	}
-	r.factor.Solve(r.d)
+	c.factor.Solve(c.d)
 	give := 0.0
 	for k, i := range ends {
 		if i >= 0 {
-			give += float64(1-2*k) * r.d[i]
+			give += float64(1-2*k) * c.d[i]
 		}
 	}
 	own := 0.0
