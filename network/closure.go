@@ -37,10 +37,13 @@ func (sim *simulation) screenClosure(k int, t float64) {
 	if took := a.t1 - a.t0; took >= back || length == 0 {
 		return
 	}
-	says := fmt.Sprintf("%s shuts in %s, faster than a pressure wave runs through %s and back (%s): it needs a surge study", a.tag,
-		quantity.FormatDuration(a.t1-a.t0), l.plan.Tag, quantity.FormatDuration(back))
-	if a.valve.Stroke == 0 {
-		says = fmt.Sprintf("%s has no stroke time and shuts at once against a flow in %s: state its stroke; a quick closure needs a surge study", a.tag, l.plan.Tag)
+	f := sim.flag("fast_closure", a.tag, t, "close slowly, the last fifth slowest")
+	switch {
+	case f == nil:
+	case a.valve.Stroke == 0:
+		f.Says = fmt.Sprintf("%s has no stroke time and shuts at once against a flow in %s: state its stroke; a quick closure needs a surge study", a.tag, l.plan.Tag)
+	default:
+		f.Says = fmt.Sprintf("%s shuts in %s, faster than a pressure wave runs through %s and back (%s): it needs a surge study", a.tag,
+			quantity.FormatDuration(a.t1-a.t0), l.plan.Tag, quantity.FormatDuration(back))
 	}
-	sim.flag("fast_closure", a.tag, t, says, "close slowly, the last fifth slowest")
 }

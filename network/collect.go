@@ -2,6 +2,7 @@ package network
 
 import (
 	"math"
+	"slices"
 	"time"
 
 	"headfall/elements"
@@ -11,7 +12,7 @@ import (
 func (sim *simulation) result() *Result {
 	p := sim.plan
 	r := &Result{Schema: 1, Command: "run", Program: Program{"headfall", Version()}, End: sim.t, Stopped: sim.stopped,
-		Complete: sim.stopped == "time" || sim.stopped == "at_rest", Series: sim.obs.series,
+		Complete: sim.complete(), unreached: slices.Clone(sim.weigh().Unreached), Series: sim.obs.series,
 		Bands: map[string]map[string]Band{}, Assumptions: []Assumption{}, Cautions: []string{}, Handover: []*HandoverBlock{},
 		Allowance: Allowance{Doubts: "none"}}
 	if sim.trouble != nil {
@@ -67,16 +68,14 @@ func (sim *simulation) vesselResults(r *Result) {
 		vol := sim.y[i]
 		level, _ := st.shape.Level(vol)
 		e, why := sim.plan.EmptyLevel(v)
+		b := &sim.brief.Vessels[i]
 		x := &VesselResult{StartLevel: v.StartLevel(), EndLevel: level, StartVolume: v.StartVolume(), EndVolume: vol, Left: math.Max(0, vol), LeftWhy: why,
 			PeakLevel: o.level[i].high, PeakAt: o.level[i].highAt, LowLevel: o.level[i].low, LowAt: o.level[i].lowAt,
-			EmptyAtLevel: opt(e), Spilled: sim.solver.Z()[len(s.lines)+i], PeakSpill: math.Max(0, o.spill[i].high)}
+			EmptyAtLevel: opt(e), EmptiedAt: opt(b.Emptied), Spilled: b.Spilled, PeakSpill: math.Max(0, o.spill[i].high)}
 		if x.PeakLevel-x.StartLevel < standing {
 			x.PeakAt = 0 // it stood still: what rounding adds is no peak
 		}
-		if t := o.emptied[i].first; v.StartLevel() > e {
-			x.EmptiedAt = opt(t)
-		}
-		x.HeadroomTo.Rim = opt(v.RimLevel() - x.PeakLevel)
+		x.HeadroomTo.Rim = opt(b.ToRim)
 		if sill := sim.plan.Sill(v); !math.IsNaN(sill) {
 			x.HeadroomTo.Sill = opt(sill - x.PeakLevel)
 		}

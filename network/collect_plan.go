@@ -12,7 +12,8 @@ import (
 type record struct {
 	levels, flows map[string]float64
 	from          float64 // travel before
-	read          float64 // level at its check; NaN
+	vessel        int     // that is read
+	read          float64 // its level at the check; NaN
 	readAt        float64
 }
 
@@ -29,11 +30,15 @@ func (c *control) noteStep(i int, t float64) {
 		if math.IsNaN(after) {
 			after = 0
 		}
-		st.seen.readAt = t + after
-		c.schedule(t+after, func(float64) {
-			st.seen.read, _ = sim.sys.stations[v].shape.Level(sim.y[v])
-		})
+		st.seen.readAt, st.seen.vessel = t+after, v
+		c.schedule(timed{at: t + after, what: readLevel, k: i})
 	}
+}
+
+// readLevel takes the reading of step i.
+func (c *control) readLevel(i int) {
+	seen := &c.steps[i].seen
+	seen.read, _ = c.sim.sys.stations[seen.vessel].shape.Level(c.sim.y[seen.vessel])
 }
 
 func (sim *simulation) levelsNow() map[string]float64 {
@@ -65,11 +70,10 @@ func (sim *simulation) stepResults(r *Result) {
 		p := st.plan
 		if p.Action == HoldPoint {
 			h := &HoldResult{ID: p.ID, Says: p.Says(0), Who: p.Who, UpTo: p.UpTo}
-			if at := st.due - sim.changes.wait(p); at <= sim.t { // people wait at it, be it signed within the run or not
-				h.At = opt(at)
-			} else {
-				sim.unreached(r, p, h.Says)
+			if sim.came(st) {
+				h.At = opt(st.due - sim.changes.wait(p))
 			}
+			sim.flagUnreached(st, h.Says)
 			r.Holds = append(r.Holds, h)
 			continue
 		}
@@ -99,20 +103,32 @@ func (sim *simulation) stepResults(r *Result) {
 				x.Turns = opt(p.To * v.Turns)
 			}
 		}
-		if x.Done == nil {
-			sim.unreached(r, p, x.Says)
-		}
+		sim.flagUnreached(st, x.Says)
 		r.Steps = append(r.Steps, x)
 	}
 }
 
-// unreached notes that a step or hold did not come, where that is a failure.
-func (sim *simulation) unreached(r *Result, p *Step, says string) {
-	if p.Optional || sim.changes.Missed[p.ID] || !r.Complete {
+// came tells that a step was done; people wait at a hold, be it signed within the run or not.
+func (sim *simulation) came(st *stepState) bool {
+	if st.plan.Action == HoldPoint {
+		return st.due-sim.changes.wait(st.plan) <= sim.t
+	}
+	return !math.IsNaN(st.done)
+}
+
+// unreached tells that a step or hold did not come, where that is a failure.
+func (sim *simulation) unreached(st *stepState) bool {
+	return !sim.came(st) && !st.plan.Optional && !sim.changes.Missed[st.plan.ID] && sim.complete()
+}
+
+// flagUnreached flags a step that did not come.
+func (sim *simulation) flagUnreached(st *stepState, says string) {
+	if !sim.unreached(st) {
 		return
 	}
-	sim.flag("step_never_reached", p.ID, sim.t, fmt.Sprintf("step %s (%s) was never reached: %s", p.ID, says, p.waitsFor()), "give it a time, or mark it optional")
-	r.unreached = append(r.unreached, p.ID)
+	if f := sim.flag("step_never_reached", st.plan.ID, sim.t, "give it a time, or mark it optional"); f != nil {
+		f.Says = fmt.Sprintf("step %s (%s) was never reached: %s", st.plan.ID, says, st.plan.waitsFor())
+	}
 }
 
 // waitsFor says what a step waits for.
@@ -129,10 +145,10 @@ func (st *Step) waitsFor() string {
 func (sim *simulation) limitResults(r *Result) {
 	r.Limits, r.Milestones = []*LimitResult{}, []*MilestoneResult{}
 	for i, j := range sim.obs.limits {
-		v := j.judge(sim.obs)
+		v := &sim.brief.Limits[i]
 		x := &LimitResult{ID: i + 1, Subject: j.subject, Of: j.of, Bound: "below", BoundSI: opt(j.must.Bound), UnitSI: j.plan.Must.Subject.Unit(),
-			AsWritten: j.must.Text, Says: j.plan.Says(), Worst: opt(v.worst), WorstAt: opt(v.at), Margin: opt(v.margin), FirstFail: opt(v.first),
-			Implicit: j.implicit, Why: j.plan.Why}
+			AsWritten: j.must.Text, Says: j.plan.Says(), Worst: opt(v.Worst), WorstAt: opt(v.WorstAt), Margin: opt(v.Margin), FirstFail: opt(v.FirstFail),
+			Verdict: v.Verdict, Implicit: j.implicit, Why: j.plan.Why}
 		if j.must.Above {
 			x.Bound = "above"
 		}
@@ -150,18 +166,10 @@ func (sim *simulation) limitResults(r *Result) {
 		if x.FirstFail != nil {
 			x.FailsShare = 1
 		}
-		switch {
-		case x.FirstFail != nil:
-			x.Verdict = Fails
-		case !v.judged || !r.Complete:
-			x.Verdict = NotJudged
-		default:
-			x.Verdict = Holds
-		}
 		r.Limits = append(r.Limits, x)
 	}
-	for _, m := range sim.obs.milestones {
-		r.Milestones = append(r.Milestones, &MilestoneResult{Name: m.name, At: opt(m.first)})
+	for i, m := range sim.obs.milestones {
+		r.Milestones = append(r.Milestones, &MilestoneResult{Name: m.name, At: opt(sim.brief.Milestones[i])})
 	}
 }
 
@@ -181,18 +189,9 @@ func (sim *simulation) windowOf(l *Limit) [2]*float64 {
 // and what their response needs.
 func (sim *simulation) alarmResults(r *Result) {
 	r.Alarms = []*AlarmResult{}
-	for _, m := range sim.obs.alarms {
-		v := sim.plan.Vessels[m.vessel]
-		x := &AlarmResult{Vessel: v.Tag, Name: m.name, At: opt(m.first)}
-		if a := m.alarm.Response; a != nil {
-			need := a.Detect + a.Walk
-			if done := sim.answers[m.alarm]; done != nil {
-				need += done.stem
-			} else if k, ok := sim.sys.actuatorAt[a.Valve]; ok {
-				need += math.Abs(sim.sys.actuators[k].at(sim.t)-a.To) * sim.sys.actuators[k].valve.Stroke
-			}
-			x.Need = opt(need)
-		}
+	for i, m := range sim.obs.alarms {
+		v, b := sim.plan.Vessels[m.vessel], &sim.brief.Alarms[i]
+		x := &AlarmResult{Vessel: v.Tag, Name: m.name, At: opt(b.At), Need: opt(b.Need)}
 		for i, j := range sim.obs.limits {
 			l := r.Limits[i]
 			if j.plan.Must.Subject != Level || j.must.Above == m.alarm.When.Above || j.of[0] != v.Tag || l.FirstFail == nil {
@@ -283,11 +282,17 @@ func (sim *simulation) ratingFlags(r *Result) {
 		}
 		switch {
 		case j.implicit && j.plan.Must.Subject == Pressure && j.must.Above:
-			sim.flag("vacuum_rating", j.of[0], *x.FirstFail, fmt.Sprintf("%s passes the vacuum that it withstands", j.of[0]), "prove the vent open by sight before its drain is opened")
+			sim.flagRating("vacuum_rating", j.of[0], *x.FirstFail, "%s passes the vacuum that it withstands", "prove the vent open by sight before its drain is opened")
 		case j.implicit && j.plan.Must.Subject == Pressure:
-			sim.flag("pressure_rating", j.of[0], *x.FirstFail, fmt.Sprintf("%s passes the pressure that it withstands", j.of[0]), "prove the vent open by sight before it is filled")
+			sim.flagRating("pressure_rating", j.of[0], *x.FirstFail, "%s passes the pressure that it withstands", "prove the vent open by sight before it is filled")
 		case j.plan.Must.Subject == Velocity:
-			sim.flag("velocity", j.of[0], *x.FirstFail, fmt.Sprintf("the velocity in %s passes its limit", j.of[0]), "throttle it")
+			sim.flagRating("velocity", j.of[0], *x.FirstFail, "the velocity in %s passes its limit", "throttle it")
 		}
+	}
+}
+
+func (sim *simulation) flagRating(kind, where string, t float64, says, do string) {
+	if f := sim.flag(kind, where, t, do); f != nil {
+		f.Says = fmt.Sprintf(says, where)
 	}
 }

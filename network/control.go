@@ -22,7 +22,6 @@ type control struct {
 	sim     *simulation
 	steps   []stepState
 	byID    map[string]int
-	order   []int // steps by due time, then by place in the file
 	timed   []timed
 	inflows map[string]override
 	gone    map[string]bool // batches cancelled
@@ -34,21 +33,56 @@ type control struct {
 // override is an inflow set by a step.
 type override struct{ value, since float64 }
 
-// timed is an action at a known time that is not a step.
+// timed is something at a known time that is not a step.
 type timed struct {
-	at   float64
-	do   func(t float64)
-	done bool
+	at    float64
+	what  happening
+	k     int    // the pump, or the step
+	alarm *Alarm // that is answered
+	done  bool
+}
+
+type happening int8
+
+const (
+	lookAgain happening = iota // nothing but that conditions are looked at anew
+	failPump
+	readLevel
+	handOver
+	answerAlarm
+)
+
+// happens carries out what is due.
+func (c *control) happens(a timed, t float64) {
+	switch a.what {
+	case failPump:
+		c.failPump(a.k, t)
+	case readLevel:
+		c.readLevel(a.k)
+	case handOver:
+		if c.sim.obs.keep {
+			c.handover = append(c.handover, c.sim.handoverAt(t))
+		}
+	case answerAlarm:
+		c.answer(a.alarm, t)
+	}
 }
 
 // begin puts everything at its start.
 func (c *control) begin(sim *simulation) {
-	p := sim.plan
-	*c = control{sim: sim, byID: map[string]int{}, inflows: map[string]override{}, gone: map[string]bool{}}
-	ch := &sim.changes
-	for i, st := range p.Steps {
-		c.byID[st.ID] = i
-		c.steps = append(c.steps, stepState{plan: st, due: math.Inf(1), done: math.NaN(), movedBy: math.NaN()})
+	p, ch := sim.plan, &sim.changes
+	if c.sim == nil {
+		*c = control{sim: sim, byID: make(map[string]int, len(p.Steps)), inflows: map[string]override{}, gone: map[string]bool{}}
+		for i, st := range p.Steps {
+			c.byID[st.ID] = i
+		}
+	}
+	clear(c.inflows)
+	clear(c.gone)
+	c.steps, c.timed, c.upsets, c.handover = c.steps[:0], c.timed[:0], c.upsets[:0], nil
+	for _, st := range p.Steps {
+		c.steps = append(c.steps, stepState{plan: st, due: math.Inf(1), done: math.NaN(), movedBy: math.NaN(),
+			seen: record{from: math.NaN(), read: math.NaN()}})
 	}
 	c.upsets = append(append(c.upsets, p.Upsets...), ch.Upsets...)
 	c.startActuators(ch)
@@ -96,7 +130,7 @@ func (c *control) startUpset(u *Upset) {
 	switch u.Kind {
 	case PumpFails:
 		if ok {
-			c.schedule(u.At.S, func(t float64) { c.failPump(k, t) })
+			c.schedule(timed{at: u.At.S, what: failPump, k: k})
 		}
 	case ValveSticks:
 		if ok {
@@ -112,9 +146,7 @@ func (c *control) startUpset(u *Upset) {
 	}
 }
 
-func (c *control) schedule(at float64, do func(t float64)) {
-	c.timed = append(c.timed, timed{at: at, do: do})
-}
+func (c *control) schedule(a timed) { c.timed = append(c.timed, a) }
 
 // arm works out when step i acts, as far as that is known at time t: its `at` and its `after` arm it; then its condition, if it has one; then its wait.
 func (c *control) arm(i int, t float64) {
@@ -177,7 +209,7 @@ func (c *control) act(t float64) (acted bool) {
 	for i := range c.timed {
 		if a := &c.timed[i]; !a.done && a.at <= t {
 			a.done, acted = true, true
-			a.do(t)
+			c.happens(*a, t)
 		}
 	}
 	for i := range c.steps {

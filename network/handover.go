@@ -10,16 +10,13 @@ import (
 func (c *control) addHandovers() {
 	for _, m := range c.sim.plan.Handover {
 		if m.S >= 0 && m.S <= c.sim.plan.RunFor {
-			c.schedule(m.S, func(t float64) { c.handover = append(c.handover, c.sim.handoverAt(t)) })
+			c.schedule(timed{at: m.S, what: handOver})
 		}
 	}
 }
 
 // handoverAt takes down how the plant stands, before what is due at that time is done.
 func (sim *simulation) handoverAt(t float64) *HandoverBlock {
-	if !sim.obs.keep {
-		return nil
-	}
 	s := sim.sys
 	h := &HandoverBlock{At: t, Clock: sim.plan.clock(t), Levels: sim.levelsNow(), Rates: map[string]float64{}, Valves: map[string]float64{}, Pumps: map[string]string{}}
 	for i, v := range sim.plan.Vessels {
@@ -57,9 +54,6 @@ func (a *actuator) stands() string {
 func (sim *simulation) handoverResults(r *Result) {
 	r.Handover = []*HandoverBlock{}
 	for _, h := range sim.control.handover {
-		if h == nil {
-			continue
-		}
 		h.NextStep, h.NextLimit = r.nextStep(h.At), r.nextLimit(h.At)
 		r.Handover = append(r.Handover, h)
 	}

@@ -12,6 +12,7 @@ type history struct {
 	probe   *probe
 	kind    historyKind
 	t, v, d []float64
+	corners []float64 // room
 }
 
 type historyKind int8
@@ -123,20 +124,23 @@ func (h *history) value(t float64) float64 {
 	return h.v[a] + u*w*h.d[a] + u*u*(3*e-w*(2*h.d[a]+h.d[b])) + u*u*u*(w*(h.d[a]+h.d[b])-2*e)
 }
 
-// most returns the greatest of f over [from, to], f being smooth between the given times, and when; and when f first passes bound (NaN if never).
-func most(f func(float64) float64, times []float64, from, to, bound float64) (top, at, first float64) {
+// most returns the greatest over [from, to] of f, which looks at the history at t and at t − w, and when; and when f first passes bound (NaN if never).
+func (h *history) most(f func(float64) float64, w, from, to, bound float64) (top, at, first float64) {
 	top, at, first = math.Inf(-1), math.NaN(), math.NaN()
 	if to < from {
 		return top, at, first
 	}
-	knots := []float64{from}
-	for _, t := range times {
-		if t > from && t < to {
-			knots = append(knots, t)
+	knots := append(h.corners[:0], from)
+	for _, by := range [2]float64{0, w} {
+		for _, t := range h.t {
+			if t+by > from && t+by < to {
+				knots = append(knots, t+by)
+			}
 		}
 	}
 	knots = append(knots, to)
 	sort.Float64s(knots)
+	h.corners = knots
 	last := f(from)
 	see := func(v, t float64) {
 		if v > top {
@@ -172,13 +176,4 @@ func most(f func(float64) float64, times []float64, from, to, bound float64) (to
 		last = vb
 	}
 	return top, at, first
-}
-
-// shifted returns the knots and the knots moved by w, at which a difference over w has its corners.
-func (h *history) shifted(w float64) []float64 {
-	all := append([]float64(nil), h.t...)
-	for _, t := range h.t {
-		all = append(all, t+w)
-	}
-	return all
 }

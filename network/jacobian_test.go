@@ -89,7 +89,7 @@ func (s *sketch) ready(method string) (*Model, *simulation) {
 	if err != nil {
 		s.t.Fatal(err)
 	}
-	if err := sim.begin(&RunOptions{}); err != nil {
+	if err := sim.begin(&RunOptions{}, false); err != nil {
 		s.t.Fatal(err)
 	}
 	sim.sys.freeze(sim)

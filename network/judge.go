@@ -80,7 +80,7 @@ func (j *judged) judgeSpan(o *observer) judgement {
 			begin = from
 		}
 		f := func(t float64) float64 { return sign * share * (h.value(t) - h.value(math.Max(from, t-w))) }
-		top, at, first = most(f, h.shifted(w), begin, to, sign*bound)
+		top, at, first = h.most(f, w, begin, to, sign*bound)
 	}
 	if math.IsInf(top, -1) { // no full window
 		return judgement{worst: math.NaN(), at: math.NaN(), first: math.NaN(), margin: math.NaN(), judged: true}
@@ -91,14 +91,9 @@ func (j *judged) judgeSpan(o *observer) judgement {
 // days is the largest volume of a calendar day.
 func (j *judged) days(o *observer, bound float64) (top, at, first float64) {
 	h := j.hist
-	days := dayStart(o.sim.plan)
 	top, at, first = math.Inf(-1), math.NaN(), math.NaN()
-	for i, a := range days {
-		a = math.Max(a, 0)
-		b := o.sim.t
-		if i+1 < len(days) {
-			b = math.Min(b, days[i+1])
-		}
+	for begins := dayStart(o.sim.plan); begins < o.sim.plan.RunFor; begins += day {
+		a, b := math.Max(begins, 0), math.Min(begins+day, o.sim.t)
 		if b < a {
 			break
 		}
@@ -118,7 +113,7 @@ func (j *judged) starts(o *observer, bound float64) (top, at, first float64) {
 	times := o.sim.sys.actuators[j.hist.probe.at[0]].starts
 	span := 3600.0
 	if j.plan.EachDay {
-		span = 86400
+		span = day
 	}
 	if j.plan.InAny > 0 {
 		span = j.plan.InAny

@@ -21,7 +21,7 @@ func (b *ledger) reset() {
 	clear(b.z)
 	clear(b.open)
 	for i := range b.reversals {
-		b.reversals[i] = nil
+		b.reversals[i] = b.reversals[i][:0]
 	}
 }
 

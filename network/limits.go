@@ -127,7 +127,6 @@ const permitSlack = 1e-7
 // permitted returns the spans of the run within which flow is permitted, day by day.
 func permitted(p *Plant, l *Limit) (spans [][2]float64) {
 	a, b := l.OnlyBetween[0].S, l.OnlyBetween[1].S
-	const day = 86400
 	for b <= a {
 		b += day
 	}
@@ -182,16 +181,14 @@ func (o *observer) addMoments() error {
 	return nil
 }
 
-// dayStart returns the times, s from the start, at which calendar days begin within the run, the first at or before 0.
-func dayStart(p *Plant) []float64 {
-	first := 0.0
-	if !p.Start.IsZero() {
-		midnight := time.Date(p.Start.Year(), p.Start.Month(), p.Start.Day(), 0, 0, 0, 0, p.Start.Location())
-		first = -p.Start.Sub(midnight).Seconds()
+// day is a calendar day, s.
+const day = 86400
+
+// dayStart returns when, s from the start, the calendar day of the start began: at or before 0.
+func dayStart(p *Plant) float64 {
+	if p.Start.IsZero() {
+		return 0
 	}
-	var all []float64
-	for t := first; t < p.RunFor; t += 86400 {
-		all = append(all, t)
-	}
-	return all
+	midnight := time.Date(p.Start.Year(), p.Start.Month(), p.Start.Day(), 0, 0, 0, 0, p.Start.Location())
+	return -p.Start.Sub(midnight).Seconds()
 }

@@ -16,7 +16,6 @@ type Options struct {
 type RunOptions struct {
 	Changes  Changes
 	Series   bool               // keep the series
-	Brief    bool               // what is judged alone: no extremes of flows, gas pressures and spills, and no flags of the lines' states
 	Grid     *Grid              // where the levels of a few moments go; nil when they are not wanted
 	Progress func(done float64) // called now and then with the share of run_for done; may be nil
 	Now      func() time.Time   // for the wall time; nil takes time.Now
@@ -28,6 +27,7 @@ type RunOptions struct {
 //	probs := plant.Validate()                   // every problem of the whole plant; fatal ones and warnings
 //	model, err := Compile(plant, Options{})     // once
 //	res, err   := model.Run(ctx, RunOptions{})  // often; err is a *Failure when the calculation could not finish (res then holds what was computed)
+//	b, err     := model.Brief(ctx, RunOptions{}) // as often, for the numbers that are judged alone
 //
 // Judge (in package study) runs a model at zero wait and at up_to, samples the doubts and gives the verdict.
 var _ = context.Background

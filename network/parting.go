@@ -126,14 +126,14 @@ func (sim *simulation) flagParting(c *liquidColumn, lag float64) {
 		return
 	}
 	tag := sim.sys.lines[c.line].plan.Tag
-	says := fmt.Sprintf("%s is fed no more than a trickle: its column parts and it runs part full", tag)
-	if sim.sys.lines[c.line].floored(sim.sys) {
-		says = fmt.Sprintf("the column of %s parts at its high point or a choked valve: it runs part full beyond", tag)
+	f := sim.flag("column_parted", tag, sim.t, "expect air in it, and a knock when it fills again; meanwhile its flow is reckoned without the mass of its liquid")
+	if f == nil {
+		return
 	}
-	n := len(sim.flags)
-	sim.flag("column_parted", tag, sim.t, says, "expect air in it, and a knock when it fills again; meanwhile its flow is reckoned without the mass of its liquid")
-	if len(sim.flags) > n {
-		c.flag = sim.flags[n]
+	c.flag = f
+	f.Says = fmt.Sprintf("%s is fed no more than a trickle: its column parts and it runs part full", tag)
+	if sim.sys.lines[c.line].floored(sim.sys) {
+		f.Says = fmt.Sprintf("the column of %s parts at its high point or a choked valve: it runs part full beyond", tag)
 	}
 }
 

@@ -261,15 +261,22 @@ func (o *observer) raise(i, kind int) {
 	o.sim.flags = append(o.sim.flags, f)
 }
 
-// flag notes something that happens at one time; repeated ones at one place are counted as one until mostFlags.
-func (sim *simulation) flag(kind, where string, t float64, says, do string) {
+// flag notes something that happens at one time, to be put into words by the caller; nil where none is wanted: in a brief run, and after mostFlags of a kind
+// at one place.
+func (sim *simulation) flag(kind, where string, t float64, do string) *Flag {
+	if sim.obs.brief {
+		return nil
+	}
 	n := 0
 	for _, f := range sim.flags {
 		if f.Kind == kind && f.Where == where {
 			n++
 		}
 	}
-	if n < mostFlags {
-		sim.flags = append(sim.flags, &Flag{Kind: kind, Where: where, From: t, To: t, Says: says, Do: do})
+	if n >= mostFlags {
+		return nil
 	}
+	f := &Flag{Kind: kind, Where: where, From: t, To: t, Do: do}
+	sim.flags = append(sim.flags, f)
+	return f
 }

@@ -13,7 +13,7 @@ type answer struct {
 // stays as it was left: the plan for it ends there.
 func (w *watcher) addResponses() error {
 	sim := w.sim
-	sim.answers = map[*Alarm]*answer{}
+	clear(sim.answers)
 	if !sim.changes.Respond {
 		return nil
 	}
@@ -29,7 +29,7 @@ func (w *watcher) addResponses() error {
 			heard := false
 			hear := func(t float64) {
 				heard = true
-				sim.control.schedule(t+a.Response.Detect+a.Response.Walk, func(t float64) { sim.control.answer(a, t) })
+				sim.control.schedule(timed{at: t + a.Response.Detect + a.Response.Walk, what: answerAlarm, alarm: a})
 			}
 			dir := -1
 			if p.above {

@@ -30,6 +30,7 @@ type simulation struct {
 	stopped string
 	trouble error
 	flags   []*Flag
+	brief   Brief
 	edges   map[*Edge]float64  // when conditional edges of windows came
 	answers map[*Alarm]*answer // of the alarms that were answered
 	columns []liquidColumn     // lines with a mass that may part
@@ -55,7 +56,7 @@ func (m *Model) simulation() (*simulation, error) {
 			return nil, err
 		}
 		s := m.sys
-		sim := &simulation{plan: m.plan, sys: s, led: newLedger(s), y: make([]float64, s.n)}
+		sim := &simulation{plan: m.plan, sys: s, led: newLedger(s), y: make([]float64, s.n), edges: map[*Edge]float64{}, answers: map[*Alarm]*answer{}}
 		sim.method = strings.ToLower(integrate.Rodas5P.Name())
 		if method != nil {
 			sim.method = strings.ToLower(method.Name())
@@ -94,26 +95,46 @@ func (m *Model) Run(ctx context.Context, opt RunOptions) (*Result, error) {
 		now = time.Now
 	}
 	began := now()
-	sim, err := m.simulation()
-	if err != nil {
+	sim, err := m.carryOut(ctx, &opt, false)
+	if sim == nil {
 		return nil, err
 	}
-	if err := sim.begin(&opt); err != nil {
-		return nil, err
-	}
-	err = sim.run(ctx, &opt)
-	sim.obs.finish()
-	sim.grid.finish(sim)
 	r := sim.result()
 	r.Work.Wall = now().Sub(began).Seconds()
 	return r, err
 }
 
+// Brief runs the plant once for what is judged alone; it keeps no series, no extremes of flows, gas pressures and spills, and no flags. What is given back is
+// the model's own and good until its next run. Errors are those of Run.
+func (m *Model) Brief(ctx context.Context, opt RunOptions) (*Brief, error) {
+	opt.Series = false
+	sim, err := m.carryOut(ctx, &opt, true)
+	if sim == nil {
+		return nil, err
+	}
+	return sim.weigh(), err
+}
+
+// carryOut runs the plant from its start to its end; the simulation is nil where it could not begin.
+func (m *Model) carryOut(ctx context.Context, opt *RunOptions, brief bool) (*simulation, error) {
+	sim, err := m.simulation()
+	if err != nil {
+		return nil, err
+	}
+	if err := sim.begin(opt, brief); err != nil {
+		return nil, err
+	}
+	err = sim.run(ctx, opt)
+	sim.obs.finish()
+	sim.grid.finish(sim)
+	return sim, err
+}
+
 // begin puts the plant at its start.
-func (sim *simulation) begin(opt *RunOptions) error {
+func (sim *simulation) begin(opt *RunOptions, brief bool) error {
 	sim.changes = opt.Changes
 	sim.t, sim.stopped, sim.trouble, sim.flags = 0, "", nil, nil
-	sim.edges = map[*Edge]float64{}
+	clear(sim.edges)
 	s := sim.sys
 	s.begin(&sim.changes)
 	for i := range s.stations {
@@ -131,7 +152,7 @@ func (sim *simulation) begin(opt *RunOptions) error {
 	sim.led.reset()
 	sim.solver.Reset()
 	sim.control.begin(sim)
-	sim.obs.begin(opt.Series, opt.Brief)
+	sim.obs.begin(opt.Series, brief)
 	sim.grid = gridder{grid: opt.Grid}
 	return sim.watch.begin()
 }

@@ -21,9 +21,10 @@ func (w *watcher) addCrowns() {
 					dir:    -1, deep: true, jumps: true,
 					fire: func(t float64) {
 						c.primed, c.rests = false, t+siphonRest
-						w.sim.control.schedule(c.rests, func(float64) {})
-						w.sim.flag("siphon_broken", l.plan.Tag, t, fmt.Sprintf("air reaches the high point of %s and breaks the siphon", l.plan.Tag),
-							"what stands under the crest upstream stays where it is")
+						w.sim.control.schedule(timed{at: c.rests})
+						if f := w.sim.flag("siphon_broken", l.plan.Tag, t, "what stands under the crest upstream stays where it is"); f != nil {
+							f.Says = fmt.Sprintf("air reaches the high point of %s and breaks the siphon", l.plan.Tag)
+						}
 					},
 				},
 				trigger{
@@ -32,8 +33,9 @@ func (w *watcher) addCrowns() {
 					dir:    1, deep: true, jumps: true,
 					fire: func(t float64) {
 						c.primed = true
-						w.sim.flag("siphon_primed", l.plan.Tag, t, fmt.Sprintf("%s runs full over its high point and draws as a siphon", l.plan.Tag),
-							"if that is not wanted, open a vent at the high point")
+						if f := w.sim.flag("siphon_primed", l.plan.Tag, t, "if that is not wanted, open a vent at the high point"); f != nil {
+							f.Says = fmt.Sprintf("%s runs full over its high point and draws as a siphon", l.plan.Tag)
+						}
 					},
 				})
 		}

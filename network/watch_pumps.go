@@ -51,9 +51,10 @@ func (w *watcher) addSwitch(a *actuator, sw elements.LevelSwitch, start bool) {
 func (w *watcher) turn(c *control, a *actuator, on bool, t float64) {
 	c.run(a, on, t)
 	if a.chatters(t) {
-		c.schedule(t+1, func(float64) {})
-		w.sim.flag("chatter", a.tag, t, fmt.Sprintf("%s starts and stops many times a second; it is held as it is for a second at a time", a.tag),
-			"set its start and stop levels further apart")
+		c.schedule(timed{at: t + 1})
+		if f := w.sim.flag("chatter", a.tag, t, "set its start and stop levels further apart"); f != nil {
+			f.Says = fmt.Sprintf("%s starts and stops many times a second; it is held as it is for a second at a time", a.tag)
+		}
 	}
 }
 
@@ -74,8 +75,9 @@ func (w *watcher) addSuction(a *actuator) {
 			fire: func(t float64) {
 				c.run(a, false, t)
 				a.dry = true
-				w.sim.flag("pump_dry", a.tag, t, fmt.Sprintf("%s loses its suction: %s is down to the suction of %s", a.tag, w.sim.plan.Vessels[v].Tag, l.plan.Tag),
-					"stop it before; running dry can wreck a pump")
+				if f := w.sim.flag("pump_dry", a.tag, t, "stop it before; running dry can wreck a pump"); f != nil {
+					f.Says = fmt.Sprintf("%s loses its suction: %s is down to the suction of %s", a.tag, w.sim.plan.Vessels[v].Tag, l.plan.Tag)
+				}
 			},
 		},
 		trigger{

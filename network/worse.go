@@ -1,5 +1,7 @@
 package network
 
+import "math"
+
 // Worse makes r the worse of itself, a run with holds at zero wait, and other, the run with every hold at its up_to: limit by limit, and for steps
 // that were never reached. Series and all else stay those of r.
 func (r *Result) Worse(other *Result) {
@@ -23,17 +25,28 @@ func (r *Result) Worse(other *Result) {
 
 // WorseThan ranks what became of the same limit in two runs: a failure before what was not judged before what holds; the earlier failure, else the
 // smaller margin.
-func (l *LimitResult) WorseThan(o *LimitResult) bool {
+func (l *LimitResult) WorseThan(o *LimitResult) bool { return l.brief().WorseThan(o.brief()) }
+
+func (l *LimitResult) brief() LimitBrief {
+	return LimitBrief{Verdict: l.Verdict, Margin: orNaN(l.Margin), FirstFail: orNaN(l.FirstFail)}
+}
+
+// WorseThan is that of LimitResult.
+func (l LimitBrief) WorseThan(o LimitBrief) bool {
 	if a, b := rank(l.Verdict), rank(o.Verdict); a != b {
 		return a < b
 	}
-	switch {
-	case l.FirstFail != nil && o.FirstFail != nil:
-		return *l.FirstFail < *o.FirstFail
-	case l.Margin != nil && o.Margin != nil:
-		return *l.Margin < *o.Margin
+	if !math.IsNaN(l.FirstFail) && !math.IsNaN(o.FirstFail) {
+		return l.FirstFail < o.FirstFail
 	}
-	return false
+	return l.Margin < o.Margin
+}
+
+func orNaN(v *float64) float64 {
+	if v == nil {
+		return math.NaN()
+	}
+	return *v
 }
 
 func rank(v Verdict) int {

@@ -48,7 +48,15 @@ func (b *Bench) Run(ctx context.Context, opt network.RunOptions) (*network.Resul
 	return b.Model.Run(ctx, opt)
 }
 
-// Settle makes plant and model ready for the numbers put; Run does it by itself.
+// Brief is Run for the numbers that are judged alone; they are good until the next run.
+func (b *Bench) Brief(ctx context.Context, opt network.RunOptions) (*network.Brief, error) {
+	if err := b.Settle(); err != nil {
+		return nil, err
+	}
+	return b.Model.Brief(ctx, opt)
+}
+
+// Settle makes plant and model ready for the numbers put; Run and Brief do it by themselves.
 func (b *Bench) Settle() error {
 	changed := b.write()
 	if len(changed) == 0 && !b.stale {

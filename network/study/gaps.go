@@ -27,7 +27,9 @@ func (g *gaps) UnmarshalJSON(data []byte) error {
 	}
 	*g = make(gaps, len(list))
 	for i, v := range list {
-		(*g)[i] = orNaN(v)
+		if (*g)[i] = math.NaN(); v != nil {
+			(*g)[i] = *v
+		}
 	}
 	return nil
 }

@@ -102,10 +102,7 @@ func (j *judgement) single(ch network.Changes) (*network.Result, error) {
 
 // atUpTo runs the plan with every hold at its up_to; limits and verdict are the worse of both.
 func (j *judgement) atUpTo() error {
-	for _, s := range j.plant.Steps {
-		j.holds = j.holds || s.Action == network.HoldPoint && s.UpTo > 0
-	}
-	if !j.holds {
+	if j.holds = lasts(j.plant); !j.holds {
 		return nil
 	}
 	other, err := j.single(network.Changes{HoldsUpTo: true})
@@ -114,19 +111,6 @@ func (j *judgement) atUpTo() error {
 	}
 	j.res.Worse(other)
 	return nil
-}
-
-// fine tells that every limit holds and every step was reached.
-func fine(r *network.Result) bool {
-	if len(r.Unreached()) > 0 {
-		return false
-	}
-	for _, l := range r.Limits {
-		if l.Verdict != network.Holds {
-			return false
-		}
-	}
-	return true
 }
 
 // calculable tells that an error is of one case, so that the others still count.

@@ -60,11 +60,11 @@ func (m *move) find(ctx context.Context, b *Bench) (*MovedStep, error) {
 // far returns how far the step can be moved one way, up to most, with every limit holding all the way, and whether that is all of it.
 func (m *move) far(ctx context.Context, b *Bench, most, way float64) (by float64, all bool, err error) {
 	ok := func(shift float64) (bool, error) {
-		r, err := b.Run(ctx, network.RunOptions{Brief: true, Changes: network.Changes{Shift: one(m.id, way*shift)}})
+		r, err := b.Brief(ctx, network.RunOptions{Changes: network.Changes{Shift: one(m.id, way*shift)}})
 		if ctx.Err() != nil {
 			return false, context.Cause(ctx)
 		}
-		return err == nil && fine(r), nil
+		return err == nil && r.Holds(), nil
 	}
 	lo, hi := 0.0, 0.0
 	for i := 1; i <= moveTrials; i++ {

@@ -19,7 +19,7 @@ func plainRun(ctx context.Context, b *Bench) (*network.Result, error) {
 		}
 		return nil, err
 	}
-	if !waits(b.Plant) {
+	if !lasts(b.Plant) {
 		return res, nil
 	}
 	other, err := b.Run(ctx, network.RunOptions{Changes: network.Changes{HoldsUpTo: true}})
@@ -33,14 +33,4 @@ func plainRun(ctx context.Context, b *Bench) (*network.Result, error) {
 	}
 	res.Worse(other)
 	return res, nil
-}
-
-// waits tells whether some hold of the plan may last.
-func waits(p *network.Plant) bool {
-	for _, s := range p.Steps {
-		if s.Action == network.HoldPoint && s.UpTo > 0 {
-			return true
-		}
-	}
-	return false
 }

@@ -4,6 +4,7 @@ import (
 	"context"
 	"errors"
 	"fmt"
+	"slices"
 
 	"headfall/network"
 )
@@ -53,7 +54,9 @@ type planning struct {
 	runner  *Runner
 	plant   *network.Plant
 	vars    []freedom
-	must    []string // vessels to be emptied
+	must    []string               // vessels to be emptied
+	empties []int                  // their places
+	limits  []*network.LimitResult // as the plan of the file has them
 	backoff []float64
 	seen    map[string]*trial
 	res     *FoundPlan
@@ -83,6 +86,9 @@ func newPlanning(load Load, opt Options) (*planning, error) {
 	if p.must = mustEmpty(p.plant); len(p.must) == 0 {
 		return nil, Misuse{errors.New("it is not known what the plan is to empty: state a limit, as {emptied: T-1, within: 4 h}")}
 	}
+	for _, tag := range p.must {
+		p.empties = append(p.empties, slices.IndexFunc(p.plant.Vessels, func(v *network.Vessel) bool { return v.Tag == tag }))
+	}
 	p.res = &FoundPlan{Schema: 1, Command: "plan", Scenario: scenarioOf(p.plant), Ending: Ending{ExitCode: 3}, Verdict: network.NotJudged, Empties: p.must,
 		Steps: []PlannedStep{}, Binds: []Bind{}, Fails: []string{}, Set: []string{}, Promising: []string{}}
 	return p, nil
@@ -104,7 +110,7 @@ func (p *planning) written(ctx context.Context) error {
 	if f, ok := finishOf(res, p.must); ok {
 		p.res.Written.Finish = &f
 	}
-	p.backoff = make([]float64, len(res.Limits))
+	p.limits, p.backoff = res.Limits, make([]float64, len(res.Limits))
 	p.measure(res, 1)
 	return nil
 }

@@ -4,6 +4,7 @@ import (
 	"context"
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"headfall/network"
@@ -11,13 +12,12 @@ import (
 
 // trial is one plan that was tried without doubts. What is kept does not depend on the back-offs.
 type trial struct {
-	k       []int
-	known   bool // it could be calculated
-	finish  float64
-	left    float64 // of the vessels to be emptied, the share that is left
-	missed  []string
-	margins []float64 // of the limits; NaN where there is none
-	limits  []*network.LimitResult
+	k      []int
+	known  bool // it could be calculated
+	finish float64
+	left   float64 // of the vessels to be emptied, the share that is left
+	missed []string
+	limits []network.LimitBrief
 
 	bad   float64 // by how much limits and back-offs are missed; 0: the plan will do
 	room  float64 // the smallest margin over its back-off, as a share
@@ -66,27 +66,58 @@ func (p *planning) run(ctx context.Context, b *Bench, k []int) (*trial, error) {
 		idx[i], values[i] = p.vars[i].at, p.vars[i].value(k[i])
 	}
 	b.Put(idx, values)
-	res, err := plainRun(ctx, b)
-	if err != nil {
-		return nil, err
-	}
 	t := &trial{k: append([]int(nil), k...), finish: 2 * p.plant.RunFor}
-	if res == nil {
-		return t, nil
+	changes := []network.Changes{{}}
+	if lasts(b.Plant) {
+		changes = append(changes, network.Changes{HoldsUpTo: true})
 	}
-	t.known, t.limits, t.missed = true, res.Limits, res.Unreached()
-	if f, ok := finishOf(res, p.must); ok {
-		t.finish = f
-	}
-	for _, tag := range p.must {
-		if v := res.Vessels[tag]; v.EmptiedAt == nil {
-			t.left += v.EndVolume / math.Max(v.StartVolume, 1e-9)
+	for i, ch := range changes {
+		r, err := b.Brief(ctx, network.RunOptions{Changes: ch})
+		switch {
+		case ctx.Err() != nil:
+			return nil, context.Cause(ctx)
+		case err != nil && calculable(err):
+			return &trial{k: t.k, finish: t.finish}, nil
+		case err != nil:
+			return nil, err
+		case i == 0:
+			t.take(p, r)
+		default:
+			t.worse(r)
 		}
 	}
-	for _, l := range res.Limits {
-		t.margins = append(t.margins, orNaN(l.Margin))
-	}
+	t.known = true
 	return t, nil
+}
+
+// take keeps what counts of a run with holds at zero wait.
+func (t *trial) take(p *planning, r *network.Brief) {
+	t.limits, t.missed = slices.Clone(r.Limits), slices.Clone(r.Unreached)
+	end := 0.0
+	for _, i := range p.empties {
+		v := &r.Vessels[i]
+		if math.IsNaN(v.Emptied) {
+			t.left += v.End / math.Max(p.plant.Vessels[i].StartVolume(), 1e-9)
+		}
+		end = math.Max(end, v.Emptied) // NaN when one is not emptied
+	}
+	if !math.IsNaN(end) {
+		t.finish = end
+	}
+}
+
+// worse takes over what is worse with holds at their up_to.
+func (t *trial) worse(r *network.Brief) {
+	for i, l := range r.Limits {
+		if l.WorseThan(t.limits[i]) {
+			t.limits[i] = l
+		}
+	}
+	for _, id := range r.Unreached {
+		if !slices.Contains(t.missed, id) {
+			t.missed = append(t.missed, id)
+		}
+	}
 }
 
 // weigh works out by how much a trial misses the limits with the back-offs of now.
@@ -100,17 +131,17 @@ func (p *planning) weigh(t *trial) {
 		miss(100, "the plan can be calculated")
 		return
 	}
-	for i, m := range t.margins {
-		l := t.limits[i]
+	for i := range t.limits {
+		l, m, fails := p.limits[i], t.limits[i].Margin, t.limits[i].Verdict == network.Fails
 		scale := 1.0
 		if l.BoundSI != nil && *l.BoundSI != 0 {
 			scale = math.Abs(*l.BoundSI)
 		}
 		switch need := p.backoff[i]; {
-		case math.IsNaN(m) && l.Verdict == network.Fails:
+		case math.IsNaN(m) && fails:
 			miss(1, l.Says)
 		case math.IsNaN(m):
-		case m < need || l.Verdict == network.Fails:
+		case m < need || fails:
 			miss(math.Max(1e-6, (need-m)/scale), l.Says)
 		default:
 			t.room = math.Min(t.room, (m-need)/scale)

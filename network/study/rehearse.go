@@ -29,12 +29,13 @@ type DrillRow struct {
 	Trouble     string          `json:"trouble,omitempty"`
 
 	protects int // place of act_before among the limits; -1
+	warning  int // place of the alarm of since among the alarms; -1
 }
 
 // rehearse runs the plan with a fault; where a limit fails and an alarm with a response comes, once more with alarms answered.
 func rehearse(ctx context.Context, b *Bench, f *fault, plan *network.Result) (*DrillRow, error) {
-	row := &DrillRow{Case: f.says, Kind: f.kind, Target: f.target, NotReached: []string{}, protects: -1}
-	r, err := b.Run(ctx, network.RunOptions{Changes: f.ch})
+	row := &DrillRow{Case: f.says, Kind: f.kind, Target: f.target, NotReached: []string{}, protects: -1, warning: -1}
+	r, err := b.Brief(ctx, network.RunOptions{Changes: f.ch})
 	switch {
 	case ctx.Err() != nil:
 		return nil, context.Cause(ctx)
@@ -44,13 +45,13 @@ func rehearse(ctx context.Context, b *Bench, f *fault, plan *network.Result) (*D
 		row.Verdict, row.Trouble = network.NotJudged, err.Error()
 		return row, nil
 	}
-	row.tell(r, plan, f)
+	row.tell(b.Plant, r, plan, f)
 	if row.Verdict != network.Fails || !answerable(r) {
 		return row, nil
 	}
 	ch := f.ch
 	ch.Respond = true
-	answered, err := b.Run(ctx, network.RunOptions{Changes: ch})
+	answered, err := b.Brief(ctx, network.RunOptions{Changes: ch})
 	switch {
 	case ctx.Err() != nil:
 		return nil, context.Cause(ctx)
@@ -61,87 +62,89 @@ func rehearse(ctx context.Context, b *Bench, f *fault, plan *network.Result) (*D
 	if row.protects >= 0 && answered.Limits[row.protects].Verdict == network.Fails {
 		row.Answered = "fails"
 	}
-	row.needs(answered)
+	if k := row.warning; k >= 0 {
+		if need := known(answered.Alarms[k].Need); need != nil {
+			row.Need = need // what the answer took
+		}
+	}
 	return row, nil
 }
 
 // tell fills the row from a run.
-func (row *DrillRow) tell(r, plan *network.Result, f *fault) {
+func (row *DrillRow) tell(p *network.Plant, r *network.Brief, plan *network.Result, f *fault) {
 	row.Verdict = network.Holds
-	row.NotReached = append(row.NotReached, r.Unreached()...)
+	row.NotReached = append(row.NotReached, r.Unreached...)
 	for _, l := range r.Limits {
 		if l.Verdict == network.Fails {
 			row.Fails++
 		}
 	}
-	if row.Fails > 0 || len(r.Unreached()) > 0 {
+	if row.Fails > 0 || len(r.Unreached) > 0 {
 		row.Verdict = network.Fails
 	}
-	for _, v := range r.Vessels {
-		row.Spilled += v.Spilled
-	}
-	row.headroom(r)
+	row.vessels(p, r)
 	l := firstNew(r, plan)
-	row.AsPlanned = l == nil && len(r.Unreached()) <= len(plan.Unreached())
-	if l == nil {
-		l = firstFailure(r)
+	row.AsPlanned = l < 0 && len(r.Unreached) <= len(plan.Unreached())
+	if l < 0 {
+		l = firstFailing(r)
 	}
-	if l == nil {
+	if l < 0 {
 		return
 	}
-	row.FirstFail, row.Limit = l.FirstFail, l.Says
+	at := r.Limits[l].FirstFail
+	row.FirstFail, row.Limit = &at, plan.Limits[l].Says
 	row.act(r, plan, f, l)
 }
 
 // act works out how long there is to act, from the first alarm that comes before some limit fails, else from the fault; one that stands unseen from the
 // start counts from the last step before the failure. An alarm at the very level of a limit warns of what fails next.
-func (row *DrillRow) act(r, plan *network.Result, f *fault, first *network.LimitResult) {
+func (row *DrillRow) act(r *network.Brief, plan *network.Result, f *fault, first int) {
 	since, until := f.at, first
 	row.Since = "the fault"
 	if f.latent() {
-		since, row.Since = shows(r, since, *first.FirstFail, row.Since)
+		since, row.Since = shows(r, plan, since, *row.FirstFail, row.Since)
 	}
-	if a := warned(r, f.at, *first.FirstFail); a != nil {
-		if next := firstAfter(r, plan, *a.At+finest); next != nil {
-			since, until = *a.At, next
-			row.Since, row.Need = "alarm "+a.Name+" of "+a.Vessel, a.Need
+	if k := warned(r, f.at, *row.FirstFail); k >= 0 {
+		a, says := r.Alarms[k], plan.Alarms[k]
+		if next := firstAfter(r, plan, a.At+finest); next >= 0 {
+			since, until = a.At, next
+			row.Since, row.Need, row.warning = "alarm "+says.Name+" of "+says.Vessel, known(a.Need), k
 		}
 	}
-	if t := *until.FirstFail - since; t >= 0 {
-		row.TimeToAct, row.ActBefore, row.protects = &t, until.Says, until.ID-1
+	if t := r.Limits[until].FirstFail - since; t >= 0 {
+		row.TimeToAct, row.ActBefore, row.protects = &t, plan.Limits[until].Says, until
 	} else {
-		row.Since = ""
+		row.Since, row.warning = "", -1
 	}
 }
 
+// known is nil for what never came.
+func known(v float64) *float64 {
+	if math.IsNaN(v) {
+		return nil
+	}
+	return &v
+}
+
 // shows returns the last step done before a time: what stood unseen until then shows when something is moved.
-func shows(r *network.Result, from, before float64, fault string) (since float64, what string) {
+func shows(r *network.Brief, plan *network.Result, from, before float64, fault string) (since float64, what string) {
 	since, what = from, fault
-	for _, s := range r.Steps {
-		if s.Done != nil && *s.Done > since && *s.Done < before {
-			since, what = *s.Done, "step "+s.ID
+	for i, s := range r.Steps {
+		if s.Done > since && s.Done < before {
+			since, what = s.Done, "step "+plan.Steps[i].ID
 		}
 	}
 	return since, what
 }
 
-// headroom finds the vessel with the least room to its rim.
-func (row *DrillRow) headroom(r *network.Result) {
+// vessels sums what is spilled, and finds the vessel with the least room to its rim.
+func (row *DrillRow) vessels(p *network.Plant, r *network.Brief) {
 	least := math.Inf(1)
-	for tag, v := range r.Vessels {
-		h := v.HeadroomTo.Rim
-		if h != nil && (*h < least || *h == least && tag < row.WorstVessel) {
-			least = *h
-			row.WorstVessel, row.Headroom = tag, h
-		}
-	}
-}
-
-// needs takes what the answer to the first alarm took.
-func (row *DrillRow) needs(answered *network.Result) {
-	for _, a := range answered.Alarms {
-		if row.Since == "alarm "+a.Name+" of "+a.Vessel && a.Need != nil {
-			row.Need = a.Need
+	for i, v := range r.Vessels {
+		row.Spilled += v.Spilled
+		if tag := p.Vessels[i].Tag; v.ToRim < least || v.ToRim == least && tag < row.WorstVessel {
+			least = v.ToRim
+			row.WorstVessel, row.Headroom = tag, known(v.ToRim)
 		}
 	}
 }

@@ -41,66 +41,60 @@ func takeSample(ctx context.Context, b *Bench, d *Draws, i int, holds bool, at [
 	if len(at) > 0 {
 		levels = network.NewGrid(at, len(b.Plant.Vessels))
 	}
-	r, err := b.Run(ctx, network.RunOptions{Grid: levels, Brief: true})
+	r, err := b.Brief(ctx, network.RunOptions{Grid: levels})
 	if ctx.Err() != nil {
 		return sample{}, context.Cause(ctx)
 	}
 	if err != nil {
 		return sample{failed: err.Error()}, nil
 	}
-	s := sampleOf(b.Plant, r)
+	s := sampleOf(r)
 	s.levels = levels
 	if !holds {
 		return s, nil
 	}
-	r, err = b.Run(ctx, network.RunOptions{Changes: network.Changes{HoldsUpTo: true}, Brief: true})
+	r, err = b.Brief(ctx, network.RunOptions{Changes: network.Changes{HoldsUpTo: true}})
 	if ctx.Err() != nil {
 		return sample{}, context.Cause(ctx)
 	}
 	if err != nil {
 		return sample{failed: err.Error()}, nil
 	}
-	s.worse(sampleOf(b.Plant, r))
+	s.worse(r)
 	return s, nil
 }
 
-func sampleOf(p *network.Plant, r *network.Result) sample {
-	s := sample{whole: fine(r), stalls: len(r.Unreached()) > 0}
-	for _, v := range p.Vessels {
-		x := r.Vessels[v.Tag]
-		s.emptied, s.peak = append(s.emptied, orNaN(x.EmptiedAt)), append(s.peak, x.PeakLevel)
+// sampleOf keeps the numbers of a run, all in one block.
+func sampleOf(r *network.Brief) sample {
+	block := make([]float64, 2*len(r.Vessels)+len(r.Steps)+len(r.Limits)+len(r.Milestones))
+	cut := func(n int) []float64 {
+		piece := block[:n:n]
+		block = block[n:]
+		return piece
 	}
-	for _, st := range r.Steps {
-		e := math.NaN()
-		if st.Expect != nil {
-			e = st.Expect.Mid
-		}
-		s.expect = append(s.expect, e)
+	s := sample{whole: r.Holds(), stalls: len(r.Unreached) > 0, emptied: cut(len(r.Vessels)), peak: cut(len(r.Vessels)), expect: cut(len(r.Steps)),
+		margin: cut(len(r.Limits)), reported: cut(len(r.Milestones)), fails: make([]bool, len(r.Limits))}
+	for i, v := range r.Vessels {
+		s.emptied[i], s.peak[i] = v.Emptied, v.Peak
 	}
-	for _, l := range r.Limits {
-		s.margin, s.fails = append(s.margin, orNaN(l.Margin)), append(s.fails, l.Verdict == network.Fails)
+	for i, st := range r.Steps {
+		s.expect[i] = st.Read
 	}
-	for _, m := range r.Milestones {
-		s.reported = append(s.reported, orNaN(m.At))
+	for i, l := range r.Limits {
+		s.margin[i], s.fails[i] = l.Margin, l.Verdict == network.Fails
 	}
+	copy(s.reported, r.Milestones)
 	return s
 }
 
 // worse takes over what is worse in another run with the same numbers.
-func (s *sample) worse(o sample) {
-	for i := range s.margin {
-		if !(s.margin[i] <= o.margin[i]) && !math.IsNaN(o.margin[i]) {
-			s.margin[i] = o.margin[i]
+func (s *sample) worse(o *network.Brief) {
+	for i, l := range o.Limits {
+		if !(s.margin[i] <= l.Margin) && !math.IsNaN(l.Margin) {
+			s.margin[i] = l.Margin
 		}
-		s.fails[i] = s.fails[i] || o.fails[i]
+		s.fails[i] = s.fails[i] || l.Verdict == network.Fails
 	}
-	s.whole = s.whole && o.whole
-	s.stalls = s.stalls || o.stalls
-}
-
-func orNaN(v *float64) float64 {
-	if v == nil {
-		return math.NaN()
-	}
-	return *v
+	s.whole = s.whole && o.Holds()
+	s.stalls = s.stalls || len(o.Unreached) > 0
 }

@@ -20,11 +20,11 @@ func (j *judgement) longestWaits() error {
 			continue
 		}
 		ok := func(ctx context.Context, b *Bench, wait float64) (bool, error) {
-			r, err := b.Run(ctx, network.RunOptions{Brief: true, Changes: network.Changes{Waits: map[string]float64{h.ID: wait}}})
+			r, err := b.Brief(ctx, network.RunOptions{Changes: network.Changes{Waits: map[string]float64{h.ID: wait}}})
 			if err != nil && !calculable(err) || ctx.Err() != nil {
 				return false, err
 			}
-			return err == nil && fine(r), nil
+			return err == nil && r.Holds(), nil
 		}
 		longest, found, err := furthest(j.ctx, j.run, h.UpTo, waitTrials, ok)
 		if err != nil {

@@ -109,7 +109,13 @@ func BenchmarkSample(b *testing.B) {
 	for _, name := range scenarios.Demos() {
 		data, _ := scenarios.Demo(name)
 		b.Run(name, func(b *testing.B) {
-			runs(b, string(data), how{tolerance: study.SampleTolerance}, network.RunOptions{Brief: true})
+			m := compile(b, string(data), how{tolerance: study.SampleTolerance})
+			b.ReportAllocs()
+			for b.Loop() {
+				if _, err := m.Brief(context.Background(), network.RunOptions{}); err != nil {
+					b.Fatal(err)
+				}
+			}
 		})
 	}
 }
