@@ -51,8 +51,9 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 		near, far, byY = -l.byB, -l.byA, -l.byYb
 	}
 	c, slope := 0.0, 0.0
-	if dp, turn := elements.Join(dp, joinHead*gamma); dp > 0 {
-		c, slope = f.up.solve(dp, q)
+	lift := f.lift(l)
+	if drive, turn := elements.Join(dp-lift, joinHead*gamma); drive > 0 {
+		c, slope = f.up.solve(drive+lift, q)
 		slope *= turn * share
 	}
 	v, byQ, byC := elements.Min(q, c)
@@ -70,6 +71,15 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	} else {
 		l.q, l.byA, l.byB, l.byYa = v, near, far, byY
 	}
+}
+
+// lift is the pressure, Pa, that the parts upstream lose at no flow: less than 0 with a running pump.
+func (f *floor) lift(l *line) float64 {
+	if !l.sources {
+		return 0
+	}
+	d, _ := f.up.drop(0)
+	return d
 }
 
 // openingRate returns ∂c/∂t, m³/s², of the flow c > 0 that the floor admits, by the parts that move upstream of it and its throat.
