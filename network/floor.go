@@ -52,9 +52,16 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	}
 	c, slope := 0.0, 0.0
 	lift := f.lift(l)
-	if drive, turn := elements.Join(dp-lift, joinHead*gamma); drive > 0 {
+	band := joinHead * gamma
+	drive, turn := elements.Join(dp-lift, band)
+	turn = l.roundCorner(turn, (dp-lift)/band)
+	switch {
+	case drive > 0:
 		c, slope = f.up.solve(drive+lift, q)
 		slope *= turn * share
+	case turn > 0:
+		_, d := f.up.drop(0)
+		slope = turn * share / d
 	}
 	v, byQ, byC := elements.Min(q, c)
 	near, far, byY = near*byQ+byC*slope, far*byQ, byY*byQ
