@@ -6,8 +6,8 @@ type Method interface {
 	stepper(s *Solver) stepper
 }
 
-// Methods returns the methods that there are, the default first.
-func Methods() []Method { return []Method{Rodas5P, Rodas4P, Rodas4P2, BDF} }
+// Methods returns the methods that there are.
+func Methods() []Method { return []Method{Rodas5P, Rodas4P2, Rodas4P, BDF} }
 
 // stepper is what a method does for the Solver, which owns the state, the linearisation, the factor and the step loop.
 type stepper interface {

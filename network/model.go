@@ -7,7 +7,7 @@ import (
 
 // Options are what a compiled plant keeps for its life.
 type Options struct {
-	Method    string  // rodas5p (default), rodas4p, bdf
+	Method    string  // auto (default), rodas4p2, rodas5p, rodas4p, bdf
 	Tolerance float64 // relative; 0 takes the default
 	MaxSteps  int     // of one run; 0 takes a million
 }

@@ -51,16 +51,13 @@ func (f *Failure) Unwrap() error { return f.Err }
 
 func (m *Model) simulation() (*simulation, error) {
 	if m.sim == nil {
-		method, err := methodNamed(m.opt.Method)
+		method, err := m.sys.methodNamed(m.opt.Method)
 		if err != nil {
 			return nil, err
 		}
 		s := m.sys
 		sim := &simulation{plan: m.plan, sys: s, led: newLedger(s), y: make([]float64, s.n), edges: map[*Edge]float64{}, answers: map[*Alarm]*answer{}}
-		sim.method = strings.ToLower(integrate.Rodas5P.Name())
-		if method != nil {
-			sim.method = strings.ToLower(method.Name())
-		}
+		sim.method = strings.ToLower(method.Name())
 		sim.solver = integrate.NewSolver(s, integrate.Options{RTol: m.opt.Tolerance, Method: method, MaxSteps: m.opt.MaxSteps})
 		if sim.watch, err = newWatcher(sim); err != nil {
 			return nil, err
@@ -71,20 +68,6 @@ func (m *Model) simulation() (*simulation, error) {
 		m.sim = sim
 	}
 	return m.sim, nil
-}
-
-func methodNamed(name string) (integrate.Method, error) {
-	if name == "" {
-		return nil, nil
-	}
-	var names []string
-	for _, m := range integrate.Methods() {
-		if strings.EqualFold(m.Name(), name) {
-			return m, nil
-		}
-		names = append(names, strings.ToLower(m.Name()))
-	}
-	return nil, fmt.Errorf("there is no method %q; there are %s", name, strings.Join(names, ", "))
 }
 
 // Run runs the plant once. The error is a *Failure when the calculation could not finish, or ctx's cause when it was interrupted; the result

@@ -30,7 +30,7 @@ type options struct {
 const mostWorkers = 1024 // each holds a plant of its own
 
 var (
-	methods = []string{"rodas5p", "rodas4p", "bdf"}
+	methods = []string{"auto", "rodas4p2", "rodas5p", "rodas4p", "bdf"}
 	colors  = []string{"auto", "always", "never"}
 )
 
@@ -42,7 +42,7 @@ func (o *options) bind(root *cobra.Command) {
 	f.StringVar(&o.caseName, "case", "", "apply the case `NAME` of the file")
 	f.BoolVarP(&o.quiet, "quiet", "q", false, "the first line only, no progress")
 	f.StringVar(&o.color, "color", "auto", "`WHEN` to paint: auto, always or never; NO_COLOR is honoured")
-	f.StringVar(&o.method, "method", methods[0], "`WAY` of calculating: "+strings.Join(methods, ", "))
+	f.StringVar(&o.method, "method", methods[0], "`WAY` of calculating, auto as it suits the plant: "+strings.Join(methods, ", "))
 	f.Float64Var(&o.tolerance, "tolerance", 0, "relative accuracy of the calculation, a `SHARE`; 0 takes the default")
 	f.IntVar(&o.workers, "workers", 0, "`COUNT` of calculations side by side; 0 takes one a processor")
 	f.StringVar(&o.timeout, "timeout", "", "give up after this `TIME`: 90s, 5 min")
