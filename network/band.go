@@ -20,7 +20,7 @@ func (s *system) setBand(c *line) {
 	c.join = band
 	if s.laminarUpTo(c) >= laminarHead {
 		band *= narrowBand
-		if c.gmin == 0 {
+		if c.gmin == 0 && c.crack == 0 { // a valve that cracks open lets the whole flow begin there
 			c.join = band
 		}
 	}
