@@ -40,9 +40,11 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 		}
 		f.share(l)
 	}
-	dp := share * (up.phi - gamma*f.z - f.pressure)
+	band, lift := joinHead*gamma, f.lift(l)
+	over := share*(up.phi-gamma*f.z-f.pressure) - lift
+	drive, turn := elements.Join(over, band)
 	q := math.Abs(l.q)
-	if d, _ := f.up.drop(q / 0.9); d <= dp {
+	if d, _ := f.up.drop(q / 0.9); d <= drive+lift {
 		return
 	}
 	f.active = true
@@ -51,10 +53,7 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 		near, far, byY = -l.byB, -l.byA, -l.byYb
 	}
 	c, slope := 0.0, 0.0
-	lift := f.lift(l)
-	band := joinHead * gamma
-	drive, turn := elements.Join(dp-lift, band)
-	turn = l.roundCorner(turn, (dp-lift)/band)
+	turn = l.roundCorner(turn, over/band)
 	switch {
 	case drive > 0:
 		c, slope = f.up.solve(drive+lift, q)
