@@ -13,6 +13,10 @@ func (c *checker) uphill(l *Line) {
 			return
 		}
 	}
+	if w := c.p.vessel(l.To); w != nil && l.Leaves.Form == Crest && w.Base > v.Base+l.Leaves.Height {
+		c.warn(l.Place, "are both heights over one datum?", "%s cannot spill from %s to %s: its crest is at elevation %.4g m, the base of %s at %.4g m", l.Tag, l.From, w.Tag, v.Base+l.Leaves.Height, w.Tag, w.Base)
+		return
+	}
 	end, to := 0.0, ""
 	if w := c.p.vessel(l.To); w != nil && l.Enters.Form != Bottom {
 		end, to = w.Base+l.Enters.centre(l.endBore(true)), w.Tag
@@ -24,5 +28,12 @@ func (c *checker) uphill(l *Line) {
 	}
 	if top := v.Base + v.RimLevel(); end > top {
 		c.warn(l.Place, "are both heights over one datum?", "%s cannot run from %s to %s: it ends at elevation %.4g m, above the rim of %s at %.4g m", l.Tag, l.From, to, end, v.Tag, top)
+	}
+}
+
+// spillsUp warns of a rim under the base of the vessel that it spills to.
+func (c *checker) spillsUp(v *Vessel) {
+	if w := c.p.vessel(v.SpillsTo); w != nil && w.Base > v.Base+v.RimLevel() {
+		c.warn(v.Place, "are both heights over one datum?", "%s cannot spill to %s: its rim is at elevation %.4g m, the base of %s at %.4g m", v.Tag, w.Tag, v.Base+v.RimLevel(), w.Tag, w.Base)
 	}
 }

@@ -50,6 +50,7 @@ func (c *checker) vessel(v *Vessel) {
 	if s := c.p.Sill(v); s > v.RimLevel() {
 		c.warn(v.Place, "", "the overflow of %s, at %.4g m, is above its rim at %.4g m: it overtops first", v.Tag, s, v.RimLevel())
 	}
+	c.spillsUp(v)
 	if v.Cover != nil && v.StartLevel() > top-1e-9 && len(v.Cover.Vents) == 0 {
 		c.fault(v.Place, "leave some gas, or give it a vent", "%s starts full and sealed", v.Tag)
 	}
