@@ -207,7 +207,7 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 	}
 	for _, k := range s.inertial {
 		l := &s.lines[k]
-		scale[l.row] = rtol * (math.Abs(y[l.row]) + 1e-3*math.Max(l.area, 1e-6))
+		scale[l.row] = rtol * math.Max(math.Abs(y[l.row])+1e-3*l.area, 1e5*stillFlow)
 	}
 }
 
