@@ -29,6 +29,7 @@ type liquidColumn struct {
 	line    int32
 	least   float64 // s, lag under which it parts; more where the solver could not cope
 	changed float64 // s, when it parted or joined last
+	flow    float64 // m³/s, when it was looked at last
 	flag    *Flag   // of the last parting that was told
 }
 
@@ -49,7 +50,7 @@ func (sim *simulation) beginColumns() {
 		l := &s.lines[k]
 		l.parted = false
 		if l.from.kind == toTee || l.to.kind == toTee || len(l.floors) > 0 {
-			sim.columns = append(sim.columns, liquidColumn{k, shortestLag, math.Inf(-1), nil})
+			sim.columns = append(sim.columns, liquidColumn{line: k, least: shortestLag, changed: math.Inf(-1)})
 		}
 	}
 }
@@ -62,6 +63,12 @@ func (sim *simulation) reconsider() (changed bool) {
 	s := sim.sys
 	s.look(sim.t, sim.solver.Y())
 	looked := false
+	for i := range sim.columns {
+		if c := &sim.columns[i]; sim.rests(c) {
+			sim.turnColumn(c, shortestLag)
+			changed = true
+		}
+	}
 	for range 2 * len(sim.columns) {
 		best, lag := -1, math.Inf(1)
 		for i := range sim.columns {
@@ -99,6 +106,26 @@ func (sim *simulation) reconsider() (changed bool) {
 		s.formBalances()
 	}
 	return changed
+}
+
+// rests tells that the flow of a column has just turned at a tee where, once it stands, nothing else moves: check valves and mouths that only receive then hold
+// the pressure between two bounds, and with a mass it would swing for ever between the one and the other.
+func (sim *simulation) rests(c *liquidColumn) bool {
+	s := sim.sys
+	l := &s.lines[c.line]
+	turned := c.flow*l.own < 0
+	c.flow = l.own
+	if !turned || !l.carries() || l.shut || s.settler == nil || math.IsInf(s.lag(l), 1) {
+		return false
+	}
+	l.part()
+	s.Settle(sim.t, sim.y)
+	s.formBalances()
+	still := math.Abs(l.q) < turnSpeed*l.area && s.lag(l) < c.least
+	l.parted = false
+	copy(sim.y, sim.solver.Y())
+	s.look(sim.t, sim.y)
+	return still
 }
 
 // turnColumn parts a column, or joins one that is parted.

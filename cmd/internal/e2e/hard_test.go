@@ -19,7 +19,7 @@ func TestHardPlants(t *testing.T) {
 			if err != nil {
 				t.Fatal(err)
 			}
-			if r := run(t, string(text), how{}); r.Work.Steps > 8000 {
+			if r := run(t, string(text), how{}); r.Work.Steps > 6000 {
 				t.Errorf("%d steps", r.Work.Steps)
 			}
 		})
