@@ -63,6 +63,13 @@ func (s *system) lookAtVessels(y []float64) {
 	}
 	s.odd = s.odd[:0]
 	floor, basins := s.floor, s.basins
+	deep, isBare, bare := s.deep[:len(floor)], s.isBare[:len(floor)], false
+	for i, d := range deep {
+		shallow := y[i] < d
+		isBare[i] = shallow
+		bare = bare || shallow
+	}
+	s.bare = bare
 	for _, i := range s.narrow {
 		b, v := &basins[i], y[i]
 		if b.holds(v) {

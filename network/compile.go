@@ -45,6 +45,7 @@ func (s *system) number() {
 		s.stations[i] = newStation(v, p)
 	}
 	s.basins, s.floor, s.isWide = make([]basin, len(p.Vessels)), make([]float64, len(p.Vessels)), make([]bool, len(p.Vessels))
+	s.deep, s.isBare = make([]float64, len(p.Vessels)), make([]bool, len(p.Vessels))
 	s.wide, s.narrow, s.odd = make([]int32, 0, len(p.Vessels)), make([]int32, 0, len(p.Vessels)), make([]int32, 0, len(p.Vessels))
 	n := int32(len(p.Vessels))
 	for i := range s.stations {

@@ -8,6 +8,7 @@ import "math"
 type flowTable struct {
 	low     float64       // Pa: below it the flow is a cubic in Δp
 	high    float64       // Pa: beyond it the law itself is solved
+	most    float64       // m³/s: the greatest flow in it, either way
 	within  float64       // m³/s: the greatest flow, either way, known to be within the ranges of the parts
 	still   [2][2]float64 // of that cubic, by side: the flow is Δp·(a + b·Δp²)
 	octaves [2][]octave
@@ -54,6 +55,10 @@ func newFlowTable(c *chain, most, tol, gamma float64) *flowTable {
 			t.octaves[side] = append(t.octaves[side], b.octave(t, x0, tol*math.Max(1, easeBelow*gamma/(4*x0*x0))))
 		}
 	}
+	last := math.Nextafter(t.high, 0)
+	forward, _ := t.flow(last)
+	back, _ := t.flow(-last)
+	t.most = math.Max(forward, -back)
 	return t
 }
 
@@ -149,23 +154,40 @@ func (t *flowTable) at(dp float64) (q, slope float64, ok bool) {
 
 // flow is at without the slope.
 func (t *flowTable) flow(dp float64) (q float64, ok bool) {
-	side, a := 0, dp
-	if dp < 0 {
-		side, a = 1, -dp
+	q, _, ok = t.at(dp)
+	return q, ok
+}
+
+// flows puts the flow at each of dp into q, not a number beyond the table.
+func (t *flowTable) flows(dp, q []float64) {
+	low, high, cells := t.low, t.high, t.cells
+	q = q[:len(dp)]
+	for k, d := range dp {
+		a, side := math.Abs(d), math.Float64bits(d)>>63
+		switch {
+		case a < low:
+			c := &t.still[side]
+			q[k] = d * (c[0] + c[1]*a*a)
+		case a < high:
+			_, u, i := findCell(t.octaves[side], math.Sqrt(a))
+			c := &cells[i]
+			q[k] = math.Copysign(c[0]+u*(c[1]+u*(c[2]+u*c[3])), d)
+		default:
+			q[k] = math.NaN()
+		}
 	}
-	if a < t.low {
-		c := &t.still[side]
-		return dp * (c[0] + c[1]*a*a), true
+}
+
+// slopes is flows with the slopes ∂q/∂Δp.
+func (t *flowTable) slopes(dp, q, slope []float64) {
+	q, slope = q[:len(dp)], slope[:len(dp)]
+	for k, d := range dp {
+		v, s, ok := t.at(d)
+		if !ok {
+			v = math.NaN()
+		}
+		q[k], slope[k] = v, s
 	}
-	if !(a < t.high) {
-		return 0, false
-	}
-	_, u, i := findCell(t.octaves[side], math.Sqrt(a))
-	c := &t.cells[i]
-	if q = c[0] + u*(c[1]+u*(c[2]+u*c[3])); dp < 0 {
-		q = -q
-	}
-	return q, true
 }
 
 // findCell returns the octave of x, its cell and the place in it, 0 ≤ u < 1, from the bits of x.

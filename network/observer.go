@@ -294,19 +294,27 @@ type turn struct{ at, level float64 }
 
 // turns finds the extremes of level where a volume turns between two snapshots.
 func (o *observer) turns(a, b *snapshot) {
-	s, d := o.sim.sys, o.sim.solver.Dense()
-	for i := range o.level {
-		if !(a.dv[i]*b.dv[i] < 0) {
+	s, d, h := o.sim.sys, o.sim.solver.Dense(), b.t-a.t
+	least := turnLeast * s.rtol
+	da, db := a.dv[:len(o.level)], b.dv[:len(o.level)]
+	for i := range da {
+		if !(da[i]*db[i] < 0) {
 			continue
 		}
+
 		if e := &o.level[i]; !o.watched[i] {
 			slope := s.slopeOf(i)
+			over := 4. / 27 * h * slope * math.Abs(da[i]-db[i]) // a cubic is no further beyond its ends
+			if over < least || da[i] > 0 && math.Max(a.level[i], b.level[i])+over <= e.high || da[i] < 0 && math.Min(a.level[i], b.level[i])-over >= e.low {
+				continue
+			}
 			top := hermiteTurn(a.level[i], b.level[i], a.dv[i]*slope, b.dv[i]*slope, b.t-a.t)
 			slack := turnSlack * math.Abs(top-a.level[i])
 			if a.dv[i] > 0 && top+slack <= e.high || a.dv[i] < 0 && top-slack >= e.low {
 				continue
 			}
 		}
+
 		t := d.Turn(i, a.t, b.t)
 		h, _ := s.stations[i].shape.Level(d.One(i, t))
 		o.level[i].see(h, t)
@@ -314,6 +322,9 @@ func (o *observer) turns(a, b *snapshot) {
 		o.turnedNow = append(o.turnedNow, int32(i))
 	}
 }
+
+// turnLeast is the rise of a level between two looks, m over the tolerance, under which its extreme is not looked for: a hundredth of the error allowed.
+const turnLeast = 1e-3
 
 // turnSlack is the share of its rise by which the estimate of a turn may be off.
 const turnSlack = 0.05

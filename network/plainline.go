@@ -8,12 +8,18 @@ import (
 
 // plainLine is a line between the floors of two open vessels that needs nothing but its flow table: no end that uncovers in a wall, no limit but its inlets,
 // nothing that moves. Most lines of large plants are; they are kept apart, small and in a row, since the law is where the time goes.
-type plainLine struct {
-	line     int32
-	from, to int32 // vessels
-	table    *flowTable
-	in, out  gate
-	bySlot   plainSlots
+type plainLine struct{ line, from, to int32 } // and vessels
+
+// plainRun is a stretch of plain lines that share a table; it ends before line `to` of them.
+type plainRun struct {
+	table *flowTable
+	to    int
+}
+
+// plainRest is what a plain line needs now and then.
+type plainRest struct {
+	in, out gate
+	bySlot  plainSlots
 }
 
 // plainSlots are the slots of a plain line: in the rows of the vessels it leaves and enters and in its integral, each by the volumes of both.
@@ -49,14 +55,13 @@ func (g *gate) passes(phi, q, perGamma float64) bool {
 	return y >= g.least && g.lip*y*y*y >= q*q
 }
 
-// turns tells that the flow between total pressures a and b is within a band of its turn while there is next to no liquid over a mouth. See line.shoal.
-func (p *plainLine) turns(a, b, band float64) bool {
-	return a-b < band && b-a < band && (a < p.in.wet || b < p.out.wet)
-}
+// depth returns the depth, m, from which on the mouth passes any flow up to most, and that does not turn next to no liquid.
+func (g *gate) depth(most float64) float64 { return math.Max(g.least, math.Cbrt(most*most/g.lip)) }
 
 // sortPlain separates the plain lines from the rest, as they stand in this segment.
 func (s *system) sortPlain() {
-	s.plain, s.rest = s.plain[:0], s.rest[:0]
+	s.plain, s.plainRest, s.runs, s.rest = s.plain[:0], s.plainRest[:0], s.runs[:0], s.rest[:0]
+	clear(s.deep)
 	for i := range s.lines {
 		l := &s.lines[i]
 		if !s.isPlain(l) {
@@ -64,9 +69,22 @@ func (s *system) sortPlain() {
 			continue
 		}
 		sl := &s.slot[i]
-		s.plain = append(s.plain, plainLine{line: int32(i), from: int32(l.from.at), to: int32(l.to.at), table: l.table, in: s.gateOf(&l.from), out: s.gateOf(&l.to),
-			bySlot: plainSlots{sl.inFrom[0], sl.inFrom[2], sl.inTo[0], sl.inTo[2], sl.inZ[0], sl.inZ[2]}})
+		r := plainRest{s.gateOf(&l.from), s.gateOf(&l.to), plainSlots{sl.inFrom[0], sl.inFrom[2], sl.inTo[0], sl.inTo[2], sl.inZ[0], sl.inZ[2]}}
+		s.deepen(&l.from, &r.in, l.table)
+		s.deepen(&l.to, &r.out, l.table)
+		if n := len(s.runs); n == 0 || s.runs[n-1].table != l.table {
+			s.runs = append(s.runs, plainRun{table: l.table})
+		}
+		s.plain, s.plainRest = append(s.plain, plainLine{int32(i), int32(l.from.at), int32(l.to.at)}), append(s.plainRest, r)
+		s.runs[len(s.runs)-1].to = len(s.plain)
 	}
+}
+
+// deepen raises the volume from which on a vessel leaves its plain lines to their tables to what this mouth needs.
+func (s *system) deepen(m *mouth, g *gate, t *flowTable) {
+	st := &s.stations[m.at]
+	v, _ := st.shape.Volume(m.invert - st.base + g.depth(t.most))
+	s.deep[m.at] = math.Max(s.deep[m.at], v)
 }
 
 func (s *system) isPlain(l *line) bool {
@@ -76,20 +94,62 @@ func (s *system) isPlain(l *line) bool {
 	return l.table != nil && !l.shut && len(l.moving) == 0 && len(l.floors) == 0 && !l.oneWay && l.zero == 0 && floor(&l.from) && floor(&l.to)
 }
 
+// plainLots is the room for the flows of a lot of plain lines.
+type plainLots struct{ dp, q, slope [lot]float64 }
+
+// lot is the number of plain lines whose flows are worked out in one go.
+const lot = 64
+
 // plainRates adds the flows of the plain lines.
 func (s *system) plainRates(f, g []float64) {
-	floor, per, band := s.floor, 1/s.gamma, joinHead*s.gamma
-	for k := range s.plain {
-		p := &s.plain[k]
-		a, b := floor[p.from], floor[p.to]
-		q, ok := p.table.flow(a - b)
-		if !ok || p.turns(a, b, band) || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
-			q = s.evaluate(int(p.line)).q
+	at := 0
+	for _, r := range s.runs {
+		for at < r.to {
+			n := min(at+lot, r.to)
+			lines := s.plain[at:n]
+			q := s.lots.q[:len(lines)]
+			r.table.flows(s.drops(lines), q)
+			for k := range lines {
+				p := &lines[k]
+				v := q[k]
+				if v != v || s.bare && !s.admits(at+k, v) {
+					v = s.evaluate(int(p.line)).q
+				}
+				f[p.from] -= v
+				f[p.to] += v
+				g[p.line] = v
+			}
+			at = n
 		}
-		f[p.from] -= q
-		f[p.to] += q
-		g[p.line] = q
 	}
+}
+
+// drops returns the pressures between the ends of a lot of plain lines.
+func (s *system) drops(lines []plainLine) []float64 {
+	floor, dp := s.floor, s.lots.dp[:len(lines)]
+	for k := range lines {
+		dp[k] = floor[lines[k].from] - floor[lines[k].to]
+	}
+	return dp
+}
+
+// admits tells that plain line k carries flow q by its table alone: both vessels are deep, or the mouth that it draws from lets it in, and it is no band from
+// its turn while there is next to no liquid over a mouth. See line.shoal.
+func (s *system) admits(k int, q float64) bool {
+	p := &s.plain[k]
+	if !s.isBare[p.from] && !s.isBare[p.to] {
+		return true
+	}
+	r, a, b, band := &s.plainRest[k], s.floor[p.from], s.floor[p.to], joinHead*s.gamma
+	switch {
+	case a-b < band && b-a < band && (a < r.in.wet || b < r.out.wet):
+		return false
+	case q > 0:
+		return r.in.passes(a, q, 1/s.gamma)
+	case q < 0:
+		return r.out.passes(b, q, 1/s.gamma)
+	}
+	return true
 }
 
 // evaluate works out a line by the full law, its vessels being looked into first.
@@ -104,25 +164,34 @@ func (s *system) evaluate(i int) *line {
 
 // linearisePlain adds the flows of the plain lines and their partials.
 func (s *system) linearisePlain(f, g []float64, lin *integrate.Linear) {
-	floor, per, band := s.floor, 1/s.gamma, joinHead*s.gamma
-	for k := range s.plain {
-		p := &s.plain[k]
-		a, b := floor[p.from], floor[p.to]
-		q, slope, ok := p.table.at(a - b)
-		if !ok || p.turns(a, b, band) || q > 0 && !p.in.passes(a, q, per) || q < 0 && !p.out.passes(b, q, per) {
-			s.lookInto(int(p.from), s.y)
-			s.lookInto(int(p.to), s.y)
-			s.lineariseLine(int(p.line), f, g, lin)
-			continue
+	at := 0
+	for _, r := range s.runs {
+		for at < r.to {
+			n := min(at+lot, r.to)
+			lines := s.plain[at:n]
+			q, slope := s.lots.q[:len(lines)], s.lots.slope[:len(lines)]
+			r.table.slopes(s.drops(lines), q, slope)
+			for k := range lines {
+				p := &lines[k]
+				v := q[k]
+				if v != v || s.bare && !s.admits(at+k, v) {
+					s.lookInto(int(p.from), s.y)
+					s.lookInto(int(p.to), s.y)
+					s.lineariseLine(int(p.line), f, g, lin)
+					continue
+				}
+				f[p.from] -= v
+				f[p.to] += v
+				g[p.line] = v
+				d, to := slope[k]*s.gamma, &s.plainRest[at+k].bySlot
+				byA, byB := d*s.slopeOf(int(p.from)), -d*s.slopeOf(int(p.to))
+				lin.DgDy[to.zA], lin.DgDy[to.zB] = byA, byB
+				lin.DfDy[to.fromA] -= byA
+				lin.DfDy[to.fromB] -= byB
+				lin.DfDy[to.toA] += byA
+				lin.DfDy[to.toB] += byB
+			}
+			at = n
 		}
-		f[p.from] -= q
-		f[p.to] += q
-		g[p.line] = q
-		byA, byB, at := slope*s.gamma*s.slopeOf(int(p.from)), -slope*s.gamma*s.slopeOf(int(p.to)), &p.bySlot
-		lin.DgDy[at.zA], lin.DgDy[at.zB] = byA, byB
-		lin.DfDy[at.fromA] -= byA
-		lin.DfDy[at.fromB] -= byB
-		lin.DfDy[at.toA] += byA
-		lin.DfDy[at.toB] += byB
 	}
 }

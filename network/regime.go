@@ -44,7 +44,7 @@ func (o *observer) regime() {
 	s := o.sim.sys
 	for k := range s.plain {
 		p := &s.plain[k]
-		if q := o.now.q[p.line]; q == o.prev.q[p.line] || o.noted[p.line] == 0 && s.calm(p, q) {
+		if q := o.now.q[p.line]; q == o.prev.q[p.line] || o.noted[p.line] == 0 && s.calm(k, q) {
 			continue
 		}
 		s.evaluate(int(p.line))
@@ -57,12 +57,13 @@ func (o *observer) regime() {
 
 // calm tells that a plain line is in no state worth a flag: it stands, or the mouth that it draws from lies deeper than where vortices may begin, which is
 // deeper than where air is drawn, and its flow is within the ranges of its parts.
-func (s *system) calm(p *plainLine, q float64) bool {
-	in, phi, a := &p.in, s.floor[p.from], q
+func (s *system) calm(k int, q float64) bool {
+	p, r := &s.plain[k], &s.plainRest[k]
+	in, phi, a := &r.in, s.floor[p.from], q
 	if q < 0 {
-		in, phi, a = &p.out, s.floor[p.to], -q
+		in, phi, a = &r.out, s.floor[p.to], -q
 	}
-	return a <= flowing || a <= p.table.within && phi-in.zero > in.bore+in.swirl*a
+	return a <= flowing || a <= s.lines[p.line].table.within && phi-in.zero > in.bore+in.swirl*a
 }
 
 // regimeOf looks at line i.

@@ -38,8 +38,14 @@ type system struct {
 	actuators []actuator
 	inertial  []int32
 	plain     []plainLine
-	rest      []int32 // the other lines
-	crowned   []int32 // lines with high points
+	plainRest []plainRest
+	runs      []plainRun
+	lots      plainLots
+	rest      []int32   // the other lines
+	deep      []float64 // m³, of the vessels: from there on their plain lines go by their tables
+	isBare    []bool    // vessels that are not deep
+	bare      bool      // some vessel is bare
+	crowned   []int32   // lines with high points
 
 	vesselAt, teeAt, outsideAt, lineAt, actuatorAt map[string]int
 
