@@ -157,16 +157,37 @@ func (b *bdf) reject(e float64) float64 {
 
 // polynomial writes the polynomial through the last values, y(θ) = y₁ + Σⱼ ∇ʲ Π_{m<j} (θ−1+m)/j!, in the form of Dense: of each ∇ʲ from the second
 // on, the part −θ(1−θ) is taken out and what is left sorted by powers of θ.
-func (b *bdf) polynomial(k, kz [][]float64) {
+func (b *bdf) polynomial(k [][]float64) {
 	b.move()
-	inner(k, b.moved[:b.k+1])
-	inner(kz, b.movedZ[:b.k+1])
+	fillInner(k, b.moved[:b.k+1])
+}
+
+func (b *bdf) polynomialZ(kz [][]float64) {
+	b.move()
+	fillInner(kz, b.movedZ[:b.k+1])
+}
+
+func (b *bdf) row(i int) inner {
+	b.move()
+	return innerOf(i, b.moved[:b.k+1])
+}
+
+func (b *bdf) rowZ(i int) inner {
+	b.move()
+	return innerOf(i, b.movedZ[:b.k+1])
+}
+
+func (b *bdf) half(y, rate []float64) {
+	for i := range y {
+		c := b.row(i)
+		y[i], rate[i] = c.value(0.5, 0, 0), c.slope(0.5, 0, 0)
+	}
 }
 
 // parts are the coefficients of Π_{m=1..j−2} (θ+m)/j! by powers of θ, for j = 2 to 5.
 var parts = [][]float64{{1.0 / 2}, {1.0 / 6, 1.0 / 6}, {2.0 / 24, 3.0 / 24, 1.0 / 24}, {6.0 / 120, 11.0 / 120, 6.0 / 120, 1.0 / 120}}
 
-func inner(k, d [][]float64) {
+func fillInner(k, d [][]float64) {
 	for p := range k {
 		clear(k[p])
 	}
@@ -177,4 +198,14 @@ func inner(k, d [][]float64) {
 			}
 		}
 	}
+}
+
+// innerOf is fillInner for unknown i.
+func innerOf(i int, d [][]float64) (c inner) {
+	for j := 2; j < len(d); j++ {
+		for p, f := range parts[j-2] {
+			c[p] -= f * d[j][i]
+		}
+	}
+	return c
 }

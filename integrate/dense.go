@@ -4,31 +4,35 @@ import "math"
 
 // Dense is the dense output of one step, a polynomial for each unknown and integral:
 //
-//	y(T0+θH) = (1−θ) Y0 + θ (Y1 + (1−θ) (K[0] + θ (K[1] + θ (K[2] + …)))),   0 ≤ θ ≤ 1
+//	y(T0+θH) = (1−θ) Y0 + θ (Y1 + (1−θ) (k₀ + θ (k₁ + θ (k₂ + …)))),   0 ≤ θ ≤ 1
 //
-// and likewise z with Z0, Z1, KZ. The slices belong to the Solver and hold until its next Step, Restart or Reset.
+// and likewise z with Z0, Z1. The slices belong to the Solver and hold until its next Step, Restart or Reset. The inner coefficients k are worked out when
+// they are asked for: of one unknown, or of all.
 type Dense struct {
 	T0, H  float64
 	Y0, Y1 []float64
-	K      [][]float64
 	Z0, Z1 []float64
-	KZ     [][]float64
 
-	ready bool // K and KZ are those of the step
+	step        stepper
+	k, kz       [][]float64 // once full, fullZ
+	full, fullZ bool
 }
 
-func newDense(s *Solver, degree int) Dense {
-	d := Dense{Y0: s.y0, Y1: s.y1, Z0: s.z0, Z1: s.z1}
-	for range degree {
-		d.K = append(d.K, make([]float64, s.n))
-		d.KZ = append(d.KZ, make([]float64, s.m))
+// inner are the inner coefficients of one unknown.
+type inner [highest - 1]float64
+
+func newDense(s *Solver, step stepper) Dense {
+	d := Dense{Y0: s.y0, Y1: s.y1, Z0: s.z0, Z1: s.z1, step: step}
+	for range step.degree() {
+		d.k = append(d.k, make([]float64, s.n))
+		d.kz = append(d.kz, make([]float64, s.m))
 	}
 	return d
 }
 
 // begin opens a step of h at t.
 func (d *Dense) begin(t, h float64, s *Solver) {
-	d.T0, d.H, d.ready = t, h, false
+	d.T0, d.H, d.full, d.fullZ = t, h, false, false
 	copy(d.Y0, s.y)
 	copy(d.Z0, s.z)
 }
@@ -37,57 +41,100 @@ func (d *Dense) begin(t, h float64, s *Solver) {
 func (d *Dense) end(y, z []float64) {
 	copy(d.Y1, y)
 	copy(d.Z1, z)
-	for k := range d.K {
-		clear(d.K[k])
-		clear(d.KZ[k])
+	for k := range d.k {
+		clear(d.k[k])
+		clear(d.kz[k])
 	}
-	d.ready = true
+	d.full, d.fullZ = true, true
+}
+
+// fill works out the coefficients of all unknowns.
+func (d *Dense) fill() {
+	if !d.full {
+		d.step.polynomial(d.k)
+		d.full = true
+	}
+}
+
+// fillZ is fill for the integrals.
+func (d *Dense) fillZ() {
+	if !d.fullZ {
+		d.step.polynomialZ(d.kz)
+		d.fullZ = true
+	}
+}
+
+// row returns the coefficients of unknown i.
+func (d *Dense) row(i int) (c inner) {
+	if !d.full {
+		return d.step.row(i)
+	}
+	for j, k := range d.k {
+		c[j] = k[i]
+	}
+	return c
+}
+
+// rowZ returns the coefficients of integral i.
+func (d *Dense) rowZ(i int) (c inner) {
+	if !d.fullZ {
+		return d.step.rowZ(i)
+	}
+	for j, k := range d.kz {
+		c[j] = k[i]
+	}
+	return c
+}
+
+// value returns the polynomial between v0 and v1 at θ = x.
+func (c *inner) value(x, v0, v1 float64) float64 {
+	in := 0.0
+	for k := len(c) - 1; k >= 0; k-- {
+		in = in*x + c[k]
+	}
+	return (1-x)*v0 + x*(v1+(1-x)*in)
+}
+
+// slope returns its derivative by θ.
+func (c *inner) slope(x, v0, v1 float64) float64 {
+	in, by := 0.0, 0.0
+	for k := len(c) - 1; k >= 0; k-- {
+		by = by*x + in
+		in = in*x + c[k]
+	}
+	return v1 - v0 + (1-2*x)*in + x*(1-x)*by
 }
 
 // Dense returns the polynomials of the last step.
-func (s *Solver) Dense() *Dense {
-	if d := &s.poly; !d.ready {
-		s.step.polynomial(d.K, d.KZ)
-		d.ready = true
-	}
-	return &s.poly
-}
+func (s *Solver) Dense() *Dense { return &s.poly }
 
 // Eval sets y to the unknowns at time t within the last step.
 func (s *Solver) Eval(t float64, y []float64) {
-	d := s.Dense()
-	evaluate(d.place(t), d.Y0, d.Y1, d.K, y)
+	d := &s.poly
+	d.fill()
+	evaluate(d.place(t), d.Y0, d.Y1, d.k, y)
 }
 
 // EvalZ sets z to the integrals at time t within the last step.
 func (s *Solver) EvalZ(t float64, z []float64) {
-	d := s.Dense()
-	evaluate(d.place(t), d.Z0, d.Z1, d.KZ, z)
+	d := &s.poly
+	d.fillZ()
+	evaluate(d.place(t), d.Z0, d.Z1, d.kz, z)
 }
 
 // EvalOne returns unknown i at time t within the last step.
-func (s *Solver) EvalOne(i int, t float64) float64 {
-	return s.Dense().One(i, t)
-}
+func (s *Solver) EvalOne(i int, t float64) float64 { return s.poly.One(i, t) }
 
 // One returns unknown i at time t.
 func (d *Dense) One(i int, t float64) float64 {
-	x := d.place(t)
-	inner := 0.0
-	for k := len(d.K) - 1; k >= 0; k-- {
-		inner = inner*x + d.K[k][i]
-	}
-	return (1-x)*d.Y0[i] + x*(d.Y1[i]+(1-x)*inner)
+	c := d.row(i)
+	return c.value(d.place(t), d.Y0[i], d.Y1[i])
 }
 
 // OneZ returns integral i at time t.
 func (d *Dense) OneZ(i int, t float64) float64 {
-	x := d.place(t)
-	inner := 0.0
-	for k := len(d.KZ) - 1; k >= 0; k-- {
-		inner = inner*x + d.KZ[k][i]
-	}
-	return (1-x)*d.Z0[i] + x*(d.Z1[i]+(1-x)*inner)
+	c := d.rowZ(i)
+	return c.value(d.place(t), d.Z0[i], d.Z1[i])
 }
 
 // Rate returns the time derivative of unknown i at time t.
@@ -95,13 +142,8 @@ func (d *Dense) Rate(i int, t float64) float64 {
 	if d.H == 0 {
 		return 0
 	}
-	x := d.place(t)
-	inner, slope := 0.0, 0.0
-	for k := len(d.K) - 1; k >= 0; k-- {
-		slope = slope*x + inner
-		inner = inner*x + d.K[k][i]
-	}
-	return (d.Y1[i] - d.Y0[i] + (1-2*x)*inner + x*(1-x)*slope) / d.H
+	c := d.row(i)
+	return c.slope(d.place(t), d.Y0[i], d.Y1[i]) / d.H
 }
 
 // RateZ returns the time derivative of integral i at time t.
@@ -109,30 +151,45 @@ func (d *Dense) RateZ(i int, t float64) float64 {
 	if d.H == 0 {
 		return 0
 	}
-	x := d.place(t)
-	inner, slope := 0.0, 0.0
-	for k := len(d.KZ) - 1; k >= 0; k-- {
-		slope = slope*x + inner
-		inner = inner*x + d.KZ[k][i]
+	c := d.rowZ(i)
+	return c.slope(d.place(t), d.Z0[i], d.Z1[i]) / d.H
+}
+
+// Half sets y to the unknowns half-way through the step and rate to their derivatives by time, which is cheaper than both at any other time.
+func (d *Dense) Half(y, rate []float64) {
+	if d.H == 0 {
+		copy(y, d.Y1)
+		clear(rate)
+		return
 	}
-	return (d.Z1[i] - d.Z0[i] + (1-2*x)*inner + x*(1-x)*slope) / d.H
+	d.step.half(y, rate)
+	by := 1 / d.H
+	y0, y1 := d.Y0[:len(y)], d.Y1[:len(y)]
+	rate = rate[:len(y)]
+	for i, a := range y0 {
+		b := y1[i]
+		y[i] += (a + b) / 2
+		rate[i] = (rate[i] + (b - a)) * by
+	}
 }
 
 // Turn returns the time between t0 and t1 at which the rate of unknown i, of opposite signs there, is zero.
-func (d *Dense) Turn(i int, t0, t1 float64) float64 { return d.turn(i, t0, t1, d.Y0, d.Y1, d.K) }
+func (d *Dense) Turn(i int, t0, t1 float64) float64 { return d.turn(t0, t1, d.Y1[i]-d.Y0[i], d.row(i)) }
 
 // TurnZ is Turn for integral i.
-func (d *Dense) TurnZ(i int, t0, t1 float64) float64 { return d.turn(i, t0, t1, d.Z0, d.Z1, d.KZ) }
+func (d *Dense) TurnZ(i int, t0, t1 float64) float64 {
+	return d.turn(t0, t1, d.Z1[i]-d.Z0[i], d.rowZ(i))
+}
 
-func (d *Dense) turn(i int, t0, t1 float64, v0, v1 []float64, k [][]float64) float64 {
+func (d *Dense) turn(t0, t1, change float64, k inner) float64 {
 	if d.H == 0 {
 		return t0
 	}
 	var c [6]float64 // of the rate as a polynomial in θ: that of θ(1−θ)θʲ is (j+1)θʲ − (j+2)θʲ⁺¹
-	c[0] = v1[i] - v0[i]
-	for j, kj := range k {
-		c[j] += float64(j+1) * kj[i]
-		c[j+1] -= float64(j+2) * kj[i]
+	c[0] = change
+	for j, v := range k {
+		c[j] += float64(j+1) * v
+		c[j+1] -= float64(j+2) * v
 	}
 	rate := func(x float64) (r, slope float64) {
 		for j := len(k); j >= 0; j-- {
@@ -161,35 +218,6 @@ func (d *Dense) turn(i int, t0, t1 float64, v0, v1 []float64, k [][]float64) flo
 		x = next
 	}
 	return d.T0 + x*d.H
-}
-
-// Rates sets r to the time derivatives of all unknowns at time t.
-func (d *Dense) Rates(t float64, r []float64) { d.rates(t, d.Y0, d.Y1, d.K, r) }
-
-// RatesZ sets r to the time derivatives of all integrals at time t.
-func (d *Dense) RatesZ(t float64, r []float64) { d.rates(t, d.Z0, d.Z1, d.KZ, r) }
-
-func (d *Dense) rates(t float64, v0, v1 []float64, k [][]float64, r []float64) {
-	if d.H == 0 {
-		clear(r)
-		return
-	}
-	x := d.place(t)
-	v0, v1 = v0[:len(r)], v1[:len(r)]
-	by := 1 / d.H
-	// d/dθ of θ(1−θ)θʲ is (j+1)θʲ − (j+2)θʲ⁺¹
-	for i := range r {
-		r[i] = (v1[i] - v0[i]) * by
-	}
-	p := by
-	for j, kj := range k {
-		w := p * (float64(j+1) - float64(j+2)*x)
-		p *= x
-		kj = kj[:len(r)]
-		for i := range r {
-			r[i] += w * kj[i]
-		}
-	}
 }
 
 // place returns θ of a time; exactly 1 at the end of the step.

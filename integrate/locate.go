@@ -58,9 +58,8 @@ func (s *Solver) findEvent(ev Events, t1 float64) (t float64, hit bool) {
 func (s *Solver) eventsAt(ev Events, t float64, v []float64) {
 	y := s.watch.y
 	if r, some := ev.(Reader); some {
-		d := s.Dense()
 		for _, i := range r.Reads() {
-			y[i] = d.One(int(i), t)
+			y[i] = s.poly.One(int(i), t)
 		}
 	} else {
 		s.Eval(t, y)

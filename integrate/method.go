@@ -21,8 +21,13 @@ type stepper interface {
 	accept(norm float64) float64
 	// reject returns the step to try instead of the last attempt of norm, which is infinite when the result was refused.
 	reject(norm float64) float64
-	// polynomial fills the inner coefficients of the dense output of the last attempt, for the unknowns and the integrals.
-	polynomial(k, kz [][]float64)
+	// polynomial and polynomialZ fill the inner coefficients of the dense output of the last attempt, of all unknowns or integrals; row and rowZ of one.
+	polynomial(k [][]float64)
+	polynomialZ(kz [][]float64)
+	row(i int) inner
+	rowZ(i int) inner
+	// half sets y and rate to what the inner coefficients add, half-way through the step, to the mean of the unknowns at its ends and to their difference.
+	half(y, rate []float64)
 	// implicit tells that the algebraic equations are solved at the end of every step.
 	implicit() bool
 	// degree returns how many inner coefficients there may be.

@@ -12,14 +12,16 @@ type rosenbrock struct {
 	point   []float64   // where the stage's rates are taken
 	sum     []float64   // Σ Cᵢⱼ/h Uⱼ
 	rate    []float64
-	mean    []float64   // Σ of stages by which the integrals move with the unknowns
-	byStage []float64   // weights of the integrals' rates; see weights
-	along   [][]float64 // the same for their polynomial
-	c       []float64   // a row of C divided by h
-	extends []bool      // by stage
+	mean    []float64    // Σ of stages by which the integrals move with the unknowns
+	byStage []float64    // weights of the integrals' rates; see weights
+	along   [][]float64  // the same for their polynomial
+	midway  [2][]float64 // what stages add half-way to the unknowns and to their rates; see half
+	byY     []float64    // ∂g/∂y and ∂g/∂t where the step begins
+	byT     []float64
+	c       []float64 // a row of C divided by h
+	extends []bool    // by stage
 	stiffly bool
 	busy    int // integrals that moved in the last attempt
-	used    int // those that have a polynomial
 }
 
 func (m *Tableau) stepper(s *Solver) stepper {
@@ -33,8 +35,15 @@ func (m *Tableau) stepper(s *Solver) stepper {
 	r.point, r.sum, r.rate = make([]float64, s.n), make([]float64, s.n), make([]float64, s.n)
 	r.mean, r.c = make([]float64, s.n), make([]float64, k)
 	r.byStage = m.weights(m.M)
-	for _, h := range m.H {
+	r.midway = [2][]float64{make([]float64, k), make([]float64, k)}
+	part := 0.25 // θ(1−θ)θʲ at θ = ½; its derivative there is j times that
+	for j, h := range m.H {
 		r.along = append(r.along, m.weights(h))
+		for i, v := range h {
+			r.midway[0][i] += part * v
+			r.midway[1][i] += part * 2 * float64(j) * v
+		}
+		part /= 2
 	}
 	return r
 }
@@ -44,6 +53,7 @@ func (r *rosenbrock) degree() int { return len(r.tab.H) }
 
 func (r *rosenbrock) attempt(h float64) (float64, error) {
 	s, m := r.s, r.tab
+	r.byY, r.byT = s.lin.DgDy, s.lin.DgDt
 	if err := s.factorise(1 / (h * m.Gamma)); err != nil {
 		return 0, err
 	}
@@ -181,7 +191,7 @@ func (r *rosenbrock) integrals(z []float64, h float64, weight []float64) {
 		d += w * h * r.tab.D[i]
 	}
 	ptr, u := s.iptr[:len(z)+1], r.mean
-	byT, by, col := s.lin.DgDt[:len(z)], s.lin.DgDy, s.icol
+	byT, by, col := r.byT[:len(z)], r.byY, s.icol
 	l := ptr[0]
 	for k := range z {
 		sum, end := z[k]+d*byT[k], ptr[k+1]
@@ -196,23 +206,48 @@ func (r *rosenbrock) integrals(z []float64, h float64, weight []float64) {
 	}
 }
 
-func (r *rosenbrock) polynomial(k, kz [][]float64) {
-	h := r.tab.H
-	for i := range kz {
-		if r.busy < r.used {
-			clear(kz[i][r.busy:r.used])
-		}
-		r.integrals(kz[i][:r.busy], r.s.poly.H, r.along[i])
-	}
-	r.used = r.busy
-	if len(r.u) == 8 && len(h) == 3 {
-		combine3(k[0], k[1], k[2], h[0], h[1], h[2], r.u)
-		return
-	}
+func (r *rosenbrock) polynomial(k [][]float64) {
 	for i := range k {
-		combine(k[i], h[i], r.u)
+		combine(k[i], r.tab.H[i], r.u)
 	}
 }
+
+func (r *rosenbrock) polynomialZ(kz [][]float64) {
+	for i := range kz {
+		clear(kz[i][r.busy:])
+		r.integrals(kz[i][:r.busy], r.s.poly.H, r.along[i])
+	}
+}
+
+func (r *rosenbrock) row(i int) (k inner) {
+	for j, h := range r.tab.H {
+		for l, u := range r.u {
+			k[j] += h[l] * u[i]
+		}
+	}
+	return k
+}
+
+func (r *rosenbrock) rowZ(i int) (k inner) {
+	if i >= r.busy {
+		return k
+	}
+	s, h := r.s, r.s.poly.H
+	for j, weight := range r.along {
+		sum := 0.0
+		for l, w := range weight {
+			in := r.g[l][i] + h*r.tab.D[l]*r.byT[i]
+			for p := s.iptr[i]; p < s.iptr[i+1]; p++ {
+				in += r.byY[p] * r.u[l][s.icol[p]]
+			}
+			sum += w * in
+		}
+		k[j] = h * sum
+	}
+	return k
+}
+
+func (r *rosenbrock) half(y, rate []float64) { combine2(y, rate, r.midway[0], r.midway[1], r.u) }
 
 func (r *rosenbrock) restart()                    { r.control.restart() }
 func (r *rosenbrock) accept(norm float64) float64 { return r.s.poly.H * r.control.accept(norm) }

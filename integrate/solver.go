@@ -37,6 +37,7 @@ type Solver struct {
 	y, z  []float64 // at t
 	f, g  []float64 // rates at t, once linear
 	lin   Linear
+	was   Linear    // the integrals' part of the linearisation of the last step
 	scale []float64 // at t, once linear
 
 	linear bool // f, g, lin and scale belong to (t, y)
@@ -76,6 +77,7 @@ func NewSolver(sys System, opt Options) *Solver {
 	s.factor = sparse.Analyse(s.pat)
 	s.matrix = make([]float64, len(s.pat.Row))
 	s.lin = Linear{DfDy: make([]float64, len(s.pat.Row)), DgDy: make([]float64, len(s.icol)), DfDt: make([]float64, n), DgDt: make([]float64, m)}
+	s.was = Linear{DgDy: make([]float64, len(s.icol)), DgDt: make([]float64, m)}
 	for _, v := range []*[]float64{&s.y, &s.f, &s.scale, &s.y0, &s.y1, &s.err, &s.best, &s.slope} {
 		*v = make([]float64, n)
 	}
@@ -84,7 +86,7 @@ func NewSolver(sys System, opt Options) *Solver {
 	}
 	s.watch.forget()
 	s.step = s.opt.Method.stepper(s)
-	s.poly = newDense(s, s.step.degree())
+	s.poly = newDense(s, s.step)
 	return s
 }
 

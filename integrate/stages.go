@@ -118,18 +118,21 @@ func combine(sum, c []float64, u [][]float64) {
 	}
 }
 
-// combine3 sets x, y and z to Σ aⱼuⱼ, Σ bⱼuⱼ and Σ cⱼuⱼ for eight uⱼ in one pass.
-func combine3(x, y, z, a, b, c []float64, u [][]float64) {
+// combine2 sets x and y to Σ aⱼuⱼ and Σ bⱼuⱼ.
+func combine2(x, y, a, b []float64, u [][]float64) {
+	if len(u) != 6 {
+		combine(x, a, u)
+		combine(y, b, u)
+		return
+	}
 	n := len(x)
-	y, z = y[:n], z[:n]
-	u0, u1, u2, u3, u4, u5, u6, u7 := u[0][:n], u[1][:n], u[2][:n], u[3][:n], u[4][:n], u[5][:n], u[6][:n], u[7][:n]
-	a0, a1, a2, a3, a4, a5, a6, a7 := a[0], a[1], a[2], a[3], a[4], a[5], a[6], a[7]
-	b0, b1, b2, b3, b4, b5, b6, b7 := b[0], b[1], b[2], b[3], b[4], b[5], b[6], b[7]
-	c0, c1, c2, c3, c4, c5, c6, c7 := c[0], c[1], c[2], c[3], c[4], c[5], c[6], c[7]
+	y = y[:n]
+	u0, u1, u2, u3, u4, u5 := u[0][:n], u[1][:n], u[2][:n], u[3][:n], u[4][:n], u[5][:n]
+	a0, a1, a2, a3, a4, a5 := a[0], a[1], a[2], a[3], a[4], a[5]
+	b0, b1, b2, b3, b4, b5 := b[0], b[1], b[2], b[3], b[4], b[5]
 	for k := range x {
-		v0, v1, v2, v3, v4, v5, v6, v7 := u0[k], u1[k], u2[k], u3[k], u4[k], u5[k], u6[k], u7[k]
-		x[k] = (a0*v0 + a1*v1 + a2*v2 + a3*v3) + (a4*v4 + a5*v5 + a6*v6 + a7*v7)
-		y[k] = (b0*v0 + b1*v1 + b2*v2 + b3*v3) + (b4*v4 + b5*v5 + b6*v6 + b7*v7)
-		z[k] = (c0*v0 + c1*v1 + c2*v2 + c3*v3) + (c4*v4 + c5*v5 + c6*v6 + c7*v7)
+		v0, v1, v2, v3, v4, v5 := u0[k], u1[k], u2[k], u3[k], u4[k], u5[k]
+		x[k] = (a0*v0 + a1*v1 + a2*v2) + (a3*v3 + a4*v4 + a5*v5)
+		y[k] = (b0*v0 + b1*v1 + b2*v2) + (b3*v3 + b4*v4 + b5*v5)
 	}
 }

@@ -119,5 +119,7 @@ func (s *Solver) commit(t1 float64) {
 	copy(s.z, s.z1)
 	s.t = t1
 	s.linear = false
+	s.lin.DgDy, s.was.DgDy = s.was.DgDy, s.lin.DgDy // the polynomials of the integrals need what the step began with
+	s.lin.DgDt, s.was.DgDt = s.was.DgDt, s.lin.DgDt
 	s.stats.Steps++
 }

@@ -32,7 +32,6 @@ type observer struct {
 	turnedNow  []int32
 	watched    []bool // vessels whose level is followed in a window of time
 	summed     bool   // integrals within steps are asked for
-	rz         []float64
 	keep       bool
 	brief      bool // extremes of flows and states of lines are not wanted
 	columns    []column
@@ -68,7 +67,7 @@ func newObserver(sim *simulation) (*observer, error) {
 	o.flow, o.crest, o.over = make([]extreme, len(s.lines)), make([]extreme, len(s.lines)), make([]float64, len(s.outside))
 	o.inflow, o.spilled = make([]extreme, len(s.outside)), make([]float64, len(s.stations))
 	o.regimes, o.noted = make([]regime, len(s.lines)), make([]int8, len(s.lines))
-	o.turned, o.watched, o.rz = make([]turn, len(s.stations)), make([]bool, len(s.stations)), make([]float64, s.m)
+	o.turned, o.watched = make([]turn, len(s.stations)), make([]bool, len(s.stations))
 	o.turnedNow = make([]int32, 0, 2*len(s.stations))
 	for i := range o.turned {
 		o.turned[i].at = math.NaN()
@@ -206,7 +205,9 @@ func (o *observer) at(w *snapshot, t float64) {
 	sim := o.sim
 	sim.solver.Eval(t, o.y)
 	sim.fill(w, t, o.y, o.f)
-	sim.solver.EvalZ(t, w.z)
+	if o.summed {
+		sim.solver.EvalZ(t, w.z)
+	}
 }
 
 // here fills o.now with the end of the step. The solver's own rates there serve: its next step begins with them.
@@ -231,18 +232,17 @@ func (o *observer) here(t float64) {
 func (o *observer) middle(t float64) {
 	sim, s, d, w := o.sim, o.sim.sys, o.sim.solver.Dense(), &o.mid
 	w.t = t
-	sim.solver.Eval(t, o.y)
+	d.Half(o.y, w.dv)
 	if o.summed {
 		sim.solver.EvalZ(t, w.z)
 	}
-	d.Rates(t, w.dv)
-	d.RatesZ(t, o.rz)
-	copy(w.q, o.rz)
-	for i, q := range w.q {
-		a, b := o.prev.q[i], o.now.q[i]
+	s.plainFlows(o.y, w.q)
+	for _, i := range s.rest {
+		q, a, b := d.RateZ(int(i), t), o.prev.q[i], o.now.q[i]
 		if q < 0 && a >= 0 && b >= 0 || q > 0 && a <= 0 && b <= 0 {
-			w.q[i] = sim.flowAt(i, t) // a turn and back within the step, if it is no rounding of the polynomial
+			q = sim.flowAt(int(i), t) // a turn and back within the step, if it is no rounding of the polynomial
 		}
+		w.q[i] = q
 	}
 	for _, i := range s.crowned {
 		w.q[i] = sim.flowAt(int(i), t)
