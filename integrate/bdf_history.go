@@ -184,6 +184,13 @@ func (b *bdf) half(y, rate []float64) {
 	}
 }
 
+func (b *bdf) halfZ(rate []float64) {
+	for i := range rate {
+		c := b.rowZ(i)
+		rate[i] = c.slope(0.5, 0, 0)
+	}
+}
+
 // parts are the coefficients of Π_{m=1..j−2} (θ+m)/j! by powers of θ, for j = 2 to 5.
 var parts = [][]float64{{1.0 / 2}, {1.0 / 6, 1.0 / 6}, {2.0 / 24, 3.0 / 24, 1.0 / 24}, {6.0 / 120, 11.0 / 120, 6.0 / 120, 1.0 / 120}}
 

@@ -173,6 +173,20 @@ func (d *Dense) Half(y, rate []float64) {
 	}
 }
 
+// HalfZ sets rate to the derivatives of the integrals by time half-way through the step.
+func (d *Dense) HalfZ(rate []float64) {
+	if d.H == 0 {
+		clear(rate)
+		return
+	}
+	d.step.halfZ(rate)
+	by := 1 / d.H
+	z0, z1 := d.Z0[:len(rate)], d.Z1[:len(rate)]
+	for i, r := range rate {
+		rate[i] = (r + (z1[i] - z0[i])) * by
+	}
+}
+
 // Turn returns the time between t0 and t1 at which the rate of unknown i, of opposite signs there, is zero.
 func (d *Dense) Turn(i int, t0, t1 float64) float64 { return d.turn(t0, t1, d.Y1[i]-d.Y0[i], d.row(i)) }
 

@@ -28,6 +28,8 @@ type stepper interface {
 	rowZ(i int) inner
 	// half sets y and rate to what the inner coefficients add, half-way through the step, to the mean of the unknowns at its ends and to their difference.
 	half(y, rate []float64)
+	// halfZ is half for the rates of the first integrals.
+	halfZ(rate []float64)
 	// implicit tells that the algebraic equations are solved at the end of every step.
 	implicit() bool
 	// degree returns how many inner coefficients there may be.

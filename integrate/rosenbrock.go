@@ -16,6 +16,7 @@ type rosenbrock struct {
 	byStage []float64    // weights of the integrals' rates; see weights
 	along   [][]float64  // the same for their polynomial
 	midway  [2][]float64 // what stages add half-way to the unknowns and to their rates; see half
+	midwayZ []float64    // weights of the integrals' rates in their rates half-way
 	byY     []float64    // ∂g/∂y and ∂g/∂t where the step begins
 	byT     []float64
 	c       []float64 // a row of C divided by h
@@ -36,9 +37,13 @@ func (m *Tableau) stepper(s *Solver) stepper {
 	r.mean, r.c = make([]float64, s.n), make([]float64, k)
 	r.byStage = m.weights(m.M)
 	r.midway = [2][]float64{make([]float64, k), make([]float64, k)}
+	r.midwayZ = make([]float64, k)
 	part := 0.25 // θ(1−θ)θʲ at θ = ½; its derivative there is j times that
 	for j, h := range m.H {
 		r.along = append(r.along, m.weights(h))
+		for i, w := range r.along[j] {
+			r.midwayZ[i] += part * 2 * float64(j) * w
+		}
 		for i, v := range h {
 			r.midway[0][i] += part * v
 			r.midway[1][i] += part * 2 * float64(j) * v
@@ -248,6 +253,12 @@ func (r *rosenbrock) rowZ(i int) (k inner) {
 }
 
 func (r *rosenbrock) half(y, rate []float64) { combine2(y, rate, r.midway[0], r.midway[1], r.u) }
+
+func (r *rosenbrock) halfZ(rate []float64) {
+	n := min(len(rate), r.busy)
+	r.integrals(rate[:n], r.s.poly.H, r.midwayZ)
+	clear(rate[n:])
+}
 
 func (r *rosenbrock) restart()                    { r.control.restart() }
 func (r *rosenbrock) accept(norm float64) float64 { return r.s.poly.H * r.control.accept(norm) }

@@ -1,5 +1,7 @@
 package network
 
+import "math"
+
 // The functions below look at one line or vessel at a time within the last step, without the rest of the plant.
 
 // lookAt sets vessel i as at time t.
@@ -43,11 +45,33 @@ func (sim *simulation) flowAt(i int, t float64) float64 {
 	return l.q
 }
 
+// floorAt returns the total pressure at the floor of open vessel i at time t within the last step.
+func (sim *simulation) floorAt(i int, t float64) float64 {
+	v := sim.solver.EvalOne(i, t)
+	if b := &sim.sys.basins[i]; b.holds(v) {
+		return b.press + b.byV*v
+	}
+	st := sim.lookAt(i, t)
+	return st.gas + sim.sys.gamma*st.surface
+}
+
 // turn returns when the flow of line i changes its sign between t0 and t1: by the polynomial of its integral, whose error does not move what passed each
-// way, or by the law where that has no turn there.
+// way, or by the law where that has no turn there. Where next to nothing passes meanwhile, as if the flow changed steadily.
 func (sim *simulation) turn(i int, t0, t1, q0, q1 float64) float64 {
+	if q := math.Max(math.Abs(q0), math.Abs(q1)); q < restFlow || q*(t1-t0) < littlePassed {
+		return t0 + (t1-t0)*(q0/(q0-q1))
+	}
 	if d := sim.solver.Dense(); (d.RateZ(i, t0) < 0) == (q0 < 0) && (d.RateZ(i, t1) < 0) == (q1 < 0) {
 		return d.TurnZ(i, t0, t1)
 	}
+	if l := &sim.sys.lines[i]; sim.sys.isPlain(l) { // it turns with the pressure between its ends, which is smoother
+		drop := func(t float64) float64 { return sim.floorAt(l.from.at, t) - sim.floorAt(l.to.at, t) }
+		if a, b := drop(t0), drop(t1); a*b < 0 {
+			return turning(t0, t1, a, b, 1e-9, drop)
+		}
+	}
 	return turning(t0, t1, q0, q1, 1e-9, func(t float64) float64 { return sim.flowAt(i, t) })
 }
+
+// littlePassed is a volume, m³, that is no matter for the books: ten microlitres.
+const littlePassed = 1e-8

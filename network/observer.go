@@ -236,13 +236,12 @@ func (o *observer) middle(t float64) {
 	if o.summed {
 		sim.solver.EvalZ(t, w.z)
 	}
-	s.plainFlows(o.y, w.q)
-	for _, i := range s.rest {
-		q, a, b := d.RateZ(int(i), t), o.prev.q[i], o.now.q[i]
+	d.HalfZ(w.q)
+	for i, q := range w.q {
+		a, b := o.prev.q[i], o.now.q[i]
 		if q < 0 && a >= 0 && b >= 0 || q > 0 && a <= 0 && b <= 0 {
-			q = sim.flowAt(int(i), t) // a turn and back within the step, if it is no rounding of the polynomial
+			w.q[i] = sim.flowAt(i, t) // a turn and back within the step, if it is no rounding of the polynomial
 		}
-		w.q[i] = q
 	}
 	for _, i := range s.crowned {
 		w.q[i] = sim.flowAt(int(i), t)

@@ -124,28 +124,6 @@ func (s *system) plainRates(f, g []float64) {
 	}
 }
 
-// plainFlows puts the flows of the plain lines at y into q.
-func (s *system) plainFlows(y, q []float64) {
-	s.y = y
-	s.lookAtVessels(y)
-	at := 0
-	for _, r := range s.runs {
-		for at < r.to {
-			n := min(at+lot, r.to)
-			lines := s.plain[at:n]
-			r.table.flows(s.drops(lines), s.lots.q[:len(lines)])
-			for k := range lines {
-				v := s.lots.q[k]
-				if v != v || s.bare && !s.admits(at+k, v) {
-					v = s.evaluate(int(lines[k].line)).q
-				}
-				q[lines[k].line] = v
-			}
-			at = n
-		}
-	}
-}
-
 // drops returns the pressures between the ends of a lot of plain lines.
 func (s *system) drops(lines []plainLine) []float64 {
 	floor, dp := s.floor, s.lots.dp[:len(lines)]
