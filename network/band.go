@@ -32,12 +32,12 @@ func (s *system) setBand(c *line) {
 
 // laminarUpTo returns the head, m, that the pipes of a line lose at a Reynolds number of 2000 by the slope of their law at rest.
 func (s *system) laminarUpTo(c *line) (head float64) {
-	at := elements.Local{Fluid: s.fluid, Gravity: s.plan.Gravity, Band: 1e-9 * s.gamma, Opening: 1, Strength: 1}
-	for _, f := range c.plan.Parts {
+	for i, f := range c.plan.Parts {
 		if _, long := f.Part.(elements.Long); !long {
 			continue
 		}
-		_, slope := f.Part.Drop(0, &at)
+		c.locals[i].Band = 1e-9 * s.gamma // till setBand has chosen
+		_, slope := f.Part.Drop(0, &c.locals[i])
 		q := 2000 * math.Pi / 4 * boreOf(f.Part) * s.fluid.Dynamic / s.fluid.Density
 		head += slope * q / s.gamma
 	}

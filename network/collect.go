@@ -61,7 +61,7 @@ func opt(v float64) *float64 {
 }
 
 func (sim *simulation) vesselResults(r *Result) {
-	r.Vessels = map[string]*VesselResult{}
+	r.Vessels = make(map[string]*VesselResult, len(sim.plan.Vessels))
 	o, s := sim.obs, sim.sys
 	for i, v := range sim.plan.Vessels {
 		st := &s.stations[i]
@@ -155,7 +155,7 @@ func (sim *simulation) gasResult(i int) *GasResult {
 }
 
 func (sim *simulation) lineResults(r *Result) {
-	r.Lines = map[string]*LineResult{}
+	r.Lines = make(map[string]*LineResult, len(sim.plan.Lines))
 	o, s := sim.obs, sim.sys
 	for i, l := range sim.plan.Lines {
 		c := &s.lines[i]

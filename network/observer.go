@@ -43,8 +43,8 @@ type observer struct {
 	emptied    []*moment
 	alarms     []*moment
 	histories  []*history
-	regimes    []regime
-	noted      []int8 // by line, the regimes that last
+	regimes    []*regime // by line; nil while there was none
+	noted      []int8    // by line, the regimes that last
 }
 
 // extreme is the least and the most of a number, and when.
@@ -66,7 +66,7 @@ func newObserver(sim *simulation) (*observer, error) {
 	o.level, o.gas, o.spill = make([]extreme, len(s.stations)), make([]extreme, len(s.stations)), make([]extreme, len(s.stations))
 	o.flow, o.crest, o.over = make([]extreme, len(s.lines)), make([]extreme, len(s.lines)), make([]float64, len(s.outside))
 	o.inflow, o.spilled = make([]extreme, len(s.outside)), make([]float64, len(s.stations))
-	o.regimes, o.noted = make([]regime, len(s.lines)), make([]int8, len(s.lines))
+	o.regimes, o.noted = make([]*regime, len(s.lines)), make([]int8, len(s.lines))
 	o.turned, o.watched = make([]turn, len(s.stations)), make([]bool, len(s.stations))
 	o.turnedNow = make([]int32, 0, 2*len(s.stations))
 	for i := range o.turned {
@@ -95,7 +95,11 @@ func (o *observer) begin(series, brief bool) {
 	clear(o.spilled)
 	clear(o.now.q)
 	clear(o.now.dv)
-	clear(o.regimes)
+	for _, r := range o.regimes {
+		if r != nil {
+			*r = regime{}
+		}
+	}
 	clear(o.noted)
 	for _, m := range o.trackers {
 		m.begin()

@@ -62,6 +62,15 @@ func (g *gate) depth(most float64) float64 { return math.Max(g.least, math.Cbrt(
 func (s *system) sortPlain() {
 	s.plain, s.plainRest, s.runs, s.rest = s.plain[:0], s.plainRest[:0], s.runs[:0], s.rest[:0]
 	clear(s.deep)
+	if s.plain == nil {
+		n := 0
+		for i := range s.lines {
+			if s.lines[i].table != nil {
+				n++
+			}
+		}
+		s.plain, s.plainRest, s.rest = make([]plainLine, 0, n), make([]plainRest, 0, n), make([]int32, 0, len(s.lines))
+	}
 	for i := range s.lines {
 		l := &s.lines[i]
 		if !s.isPlain(l) {

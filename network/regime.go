@@ -188,6 +188,12 @@ func (l *line) beyondCurve() bool {
 
 // mark opens, extends or closes a span.
 func (o *observer) mark(i, kind int, t float64, on bool, size float64) {
+	if o.regimes[i] == nil {
+		if !on {
+			return
+		}
+		o.regimes[i] = new(regime)
+	}
 	r := &o.regimes[i][kind]
 	switch {
 	case on && !r.open:
@@ -205,10 +211,10 @@ func (o *observer) mark(i, kind int, t float64, on bool, size float64) {
 
 // closeRegimes raises the flags of the spans that are still open.
 func (o *observer) closeRegimes() {
-	for i := range o.regimes {
-		for k := range o.regimes[i] {
-			if o.regimes[i][k].open {
-				o.regimes[i][k].open = false
+	for i, r := range o.regimes {
+		for k := 0; r != nil && k < len(r); k++ {
+			if r[k].open {
+				r[k].open = false
 				o.raise(i, k)
 			}
 		}

@@ -2,6 +2,7 @@ package network
 
 import (
 	"math"
+	"slices"
 
 	"headfall/integrate"
 )
@@ -9,12 +10,12 @@ import (
 // newSeries makes an empty series with a column for everything that the plant has.
 func (o *observer) newSeries() *Series {
 	s := o.sim.sys
-	r := &Series{Level: map[string][]float64{}, Volume: map[string][]float64{}, Gas: map[string][]float64{}, Flow: map[string][]float64{},
-		Opening: map[string][]float64{}, Running: map[string][]float64{}, TeeHead: map[string][]*float64{}, Crest: map[string][]float64{}, Time: []float64{}}
-	guess := int(o.sim.plan.RunFor/o.sim.plan.ReportEvery) + 32
-	o.columns = o.columns[:0]
+	nv, nl := len(s.stations), len(s.lines)
+	r := &Series{Level: make(map[string][]float64, nv), Volume: make(map[string][]float64, nv), Gas: map[string][]float64{}, Flow: make(map[string][]float64, nl),
+		Opening: map[string][]float64{}, Running: map[string][]float64{}, TeeHead: map[string][]*float64{}, Crest: map[string][]float64{}}
+	o.columns = slices.Grow(o.columns[:0], 2*nv+nl)
 	add := func(into map[string][]float64, tag string, value func(w *snapshot) float64) {
-		o.columns = append(o.columns, column{into, tag, make([]float64, 0, guess), value})
+		o.columns = append(o.columns, column{into, tag, nil, value})
 	}
 	for i, v := range o.sim.plan.Vessels {
 		add(r.Level, v.Tag, func(w *snapshot) float64 { return w.level[i] })
@@ -36,6 +37,12 @@ func (o *observer) newSeries() *Series {
 			into = r.Running
 		}
 		add(into, a.tag, func(w *snapshot) float64 { return a.at(w.t) })
+	}
+	guess := int(o.sim.plan.RunFor/o.sim.plan.ReportEvery) + 4 + 4*len(o.sim.plan.Steps)
+	room := make([]float64, guess*len(o.columns))
+	r.Time = make([]float64, 0, guess)
+	for i := range o.columns {
+		o.columns[i].data, room = room[:0:guess], room[guess:]
 	}
 	return r
 }
