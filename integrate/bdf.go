@@ -117,6 +117,7 @@ func (b *bdf) balance() {
 
 func (b *bdf) attempt(h float64) (float64, error) {
 	s := b.s
+	s.linearise()
 	b.rescale(h)
 	b.ready = false
 	alpha := (1 - kappa[b.k]) * b.gamma[b.k]
@@ -163,7 +164,8 @@ func (b *bdf) newton(h, shift float64) (ok bool, err error) {
 	s := b.s
 	clear(b.change)
 	before, rate := 0.0, 0.0
-	for b.rounds = 1; b.rounds <= maxRounds; b.rounds++ {
+	renewed := 0 // rounds until the slopes were worked out anew
+	for b.rounds = 1; b.rounds <= maxRounds+renewed; b.rounds++ {
 		s.rates(s.t+h, s.y1, b.rate, b.rateZ)
 		if s.settler != nil && !s.settler.Settled(b.rate, false) {
 			b.settle(s.t + h)
@@ -186,14 +188,23 @@ func (b *bdf) newton(h, shift float64) (ok bool, err error) {
 			s.y1[i] += v
 		}
 		size := norm(b.delta, s.scale)
-		if b.rounds > 1 {
+		rate = 0
+		if before > 0 {
 			rate = size / before
 		}
-		left := maxRounds - b.rounds
+		left := maxRounds + renewed - b.rounds
 		switch {
 		case b.rounds > 2 && rate >= 0.5 && size <= stirring: // to and fro over a corner of the law, within the tolerance
 			return b.integrals(shift), nil
 		case !(rate < 1) || size != size, rate > 0 && size*math.Pow(rate, float64(left))/(1-rate) > converged:
+			if renewed == 0 && size == size && s.settler != nil { // the slopes of the step's start mislead: once more with those of here
+				renewed = b.rounds
+				if err := b.renew(h, shift); err != nil {
+					return false, err
+				}
+				size = 0
+				break
+			}
 			copy(s.err, b.delta)
 			return false, nil
 		case size <= converged/100 || rate > 0 && size*rate/(1-rate) <= converged:
@@ -203,6 +214,15 @@ func (b *bdf) newton(h, shift float64) (ok bool, err error) {
 	}
 	copy(s.err, b.delta)
 	return false, nil
+}
+
+// renew factorises the linearisation where Newton's method has got to, which is then no longer that of the step's start.
+func (b *bdf) renew(h, shift float64) error {
+	s := b.s
+	s.sys.Linearise(s.t+h, s.y1, b.rate, b.rateZ, &s.lin)
+	s.stats.Linearisations++
+	s.linear = false
+	return s.factorise(shift)
 }
 
 // settle lets the System balance its algebraic unknowns where Newton's method has got to: on the linearisation of the step's start alone it may not.

@@ -19,10 +19,10 @@ import (
 // plants that bdf does not, and plants in which the two end apart, where a siphon or a vent acts at a moment that both see a little otherwise.
 const (
 	wildDraws      = 300
-	wildSteps      = 8000
-	wildUnfinished = 7
-	wildSecond     = 20
-	wildApart      = 3
+	wildSteps      = 20000
+	wildUnfinished = 0
+	wildSecond     = 8
+	wildApart      = 2
 )
 
 // TestWildPlants: whatever kinds are joined in whatever way, with whatever plan: the run finishes, the balance closes, levels stay between nothing and the rim
