@@ -21,9 +21,17 @@ type floor struct {
 	throat   elements.Chokes
 	vapour   bool    // the floor is vapour pressure: holding there is marked unreliable
 	base     float64 // fwd coefficient of up without share
+	blend    float64 // share of the flow within which the limit sets in
 	active   bool
 	off      bool // not in this run
 }
+
+// blend and steadyBlend are the shares of the flow within which a floor's limit sets in: as every limit, and behind a pump of a steady rate, which gives a
+// ten-thousandth less at ten metres more, within next to nothing.
+const (
+	blend       = 0.1
+	steadyBlend = 1e-6
+)
 
 // hold applies the floor to the line's flow.
 func (f *floor) hold(l *line, a, b *end, gamma float64) {
@@ -44,7 +52,7 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	over := share*(up.phi-gamma*f.z-f.pressure) - lift
 	drive, turn := elements.Join(over, band)
 	q := math.Abs(l.q)
-	if d, _ := f.up.drop(q / 0.9); d <= drive+lift {
+	if d, _ := f.up.drop(q / (1 - f.blend)); d <= drive+lift {
 		return
 	}
 	f.active = true
@@ -62,7 +70,7 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 		_, d := f.up.drop(0)
 		slope = turn * share / d
 	}
-	v, byQ, byC := elements.Min(q, c)
+	v, byQ, byC := elements.MinWithin(q, c, f.blend)
 	near, far, byY = near*byQ+byC*slope, far*byQ, byY*byQ
 	l.byT *= byQ
 	if c > 0 && len(l.moving) > 0 {

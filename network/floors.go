@@ -76,11 +76,14 @@ func (s *system) newCrown(c *line, plan *elements.Crown, i int) crown {
 
 // upstream builds the chain from one end of the line up to part i, with the velocity head there; with the part itself where it is a throat.
 func (s *system) upstream(c *line, i int, back, itself bool) floor {
-	f := floor{part: i, back: back}
+	f := floor{part: i, back: back, blend: blend}
 	f.up = chain{band: c.chain.band, near: c.chain.near, back: back}
 	add := func(k int) {
 		if _, ok := c.plan.Parts[k].Part.(elements.Crest); ok {
 			return
+		}
+		if p, ok := c.plan.Parts[k].Part.(elements.Pumps); ok && !p.Drive().Curved {
+			f.blend = steadyBlend
 		}
 		f.up.parts = append(f.up.parts, c.plan.Parts[k].Part)
 		f.up.locals = append(f.up.locals, &c.locals[k])
