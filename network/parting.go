@@ -21,6 +21,7 @@ import (
 const (
 	shortestLag = 1e-3 // s: under that a column parts
 	rejoinedLag = 10   // times that, and it carries again
+	shortWhole  = 1    // s: one that parts sooner after it joined waits, each time twice as long
 	mostRescues = 40   // columns parted because the solver got no further, in one run
 )
 
@@ -30,6 +31,7 @@ type liquidColumn struct {
 	least   float64 // s, lag under which it parts; more where the solver could not cope
 	changed float64 // s, when it parted or joined last
 	flow    float64 // m³/s, when it was looked at last
+	wait    float64 // s that it stays parted at least
 	flag    *Flag   // of the last parting that was told
 }
 
@@ -91,7 +93,7 @@ func (sim *simulation) reconsider() (changed bool) {
 				now = math.Max(now, 1e-300)
 			}
 			if l.parted {
-				if now >= rejoinedLag*c.least && best < 0 {
+				if now >= rejoinedLag*c.least && best < 0 && sim.t >= c.changed+c.wait {
 					best, lag = i, math.Inf(1)
 				}
 			} else if now < c.least && (best < 0 || s.lines[sim.columns[best].line].parted || l.inertia < s.lines[sim.columns[best].line].inertia) {
@@ -131,6 +133,7 @@ func (sim *simulation) rests(c *liquidColumn) bool {
 // turnColumn parts a column, or joins one that is parted.
 func (sim *simulation) turnColumn(c *liquidColumn, lag float64) {
 	l := &sim.sys.lines[c.line]
+	whole := sim.t - c.changed
 	c.changed = sim.t
 	if l.parted {
 		l.parted = false
@@ -144,6 +147,11 @@ func (sim *simulation) turnColumn(c *liquidColumn, lag float64) {
 		sim.flagParting(c, lag)
 	}
 	l.part()
+	if whole < math.Max(shortWhole, c.wait) {
+		c.wait = math.Max(shortWhole, 2*c.wait)
+	} else {
+		c.wait = 0
+	}
 }
 
 // flagParting tells that a column with some flow parts; partings that follow soon are one.
