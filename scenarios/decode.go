@@ -173,6 +173,10 @@ func (d *decoder) unknown(k, v *node, what string, fields []field) (near string)
 	if k.form != scalar || k.text == "<<" || k.comma {
 		return "" // noted already
 	}
+	if len(d.probs) >= mostNoted {
+		d.problem(k, "", "") // counted
+		return ""
+	}
 	keys := keysOf(fields)
 	hint := d.hint(k.text, keys)
 	if len(keys) <= fewWords {

@@ -32,7 +32,7 @@ type grown struct {
 	size, height int
 }
 
-// grow returns the tree of a yaml node.
+// grow returns the tree of a yaml node, which lets go of its children on the way: there is no room for two trees of a large file.
 func (g *grower) grow(y *yaml.Node, depth int) (t grown) {
 	if y.Kind == yaml.AliasNode {
 		return g.alias(y, depth)
@@ -67,6 +67,7 @@ func (g *grower) children(y *yaml.Node, depth int, t *grown) bool {
 	}
 	for i, c := range y.Content {
 		child := g.grow(c, depth+1)
+		y.Content[i] = nil
 		if child.n == nil {
 			return false
 		}

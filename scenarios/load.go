@@ -16,7 +16,8 @@ type Options struct {
 	Case string   // name of one of the file's cases, to be applied; "" for the plan itself
 }
 
-const maxSize = 8 << 20 // bytes of a file; ten thousand vessels take two million
+// MaxSize is the largest file that is read, bytes: a hundred thousand vessels take a third of it.
+const MaxSize = 64 << 20
 
 // Load reads a plant file; name is what messages call it. The error is a *Problems with every fault of the file, also of cases that are not asked for.
 func Load(name string, data []byte, opt Options) (*network.Plant, error) {

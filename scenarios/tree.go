@@ -8,7 +8,7 @@ import (
 )
 
 // form is how a node is written.
-type form int
+type form int8
 
 const (
 	scalar form = iota
@@ -19,18 +19,18 @@ const (
 // node is one value of a file with its place. Aliases share their node.
 type node struct {
 	form  form
-	text  string // of a scalar, as it was written between its quotes
 	plain bool   // a scalar without quotes
 	empty bool   // nothing, ~ or null
 	flow  bool   // in braces or brackets
+	comma bool   // of a key that is the second half of a number with a decimal comma
+	lacks bool   // of a mapping that is not whole because of a fault that is noted
+	text  string // of a scalar, as it was written between its quotes
 	src   *source
 	at    network.Place
 	keys  []*node // of a mapping
 	items []*node // values of a mapping, or entries of a list
 	key   *node   // that it is the value of; nil for an entry of a list
 	was   string  // of a key that was misspelt: how
-	comma bool    // of a key that is the second half of a number with a decimal comma
-	lacks bool    // of a mapping that is not whole because of a fault that is noted
 	echo  string  // of a scalar read as a quantity: the same in plain typography
 }
 

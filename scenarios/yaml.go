@@ -6,8 +6,10 @@ import (
 	"fmt"
 	"io"
 	"regexp"
+	"slices"
 	"strconv"
 	"strings"
+	"unicode"
 	"unicode/utf8"
 
 	"gopkg.in/yaml.v3"
@@ -19,8 +21,8 @@ import (
 func (d *decoder) tree() *node {
 	top := &node{src: d.src, at: network.Place{Line: 1, Column: 1}}
 	switch text := d.src.text; {
-	case len(text) > maxSize:
-		d.problem(top, fmt.Sprintf("this file is larger than %d MB", maxSize>>20), "no plant takes so much: is it another file?")
+	case len(text) > MaxSize:
+		d.problem(top, fmt.Sprintf("this file is larger than %d MB", MaxSize>>20), "no plant takes so much: is it another file?")
 		return nil
 	case !utf8.ValidString(text):
 		at := invalidAt(text)
@@ -37,6 +39,10 @@ func (d *decoder) tree() *node {
 	}
 	if at := tooDeep(d.src.text); at >= 0 {
 		d.problem(d.src.spot(at), tooDeepSays, tooDeepHint)
+		return nil
+	}
+	if at, n := strangeKeys(d.src.text, keysOf(d.planFields())); n > mostStrange {
+		d.problem(d.src.spot(at), fmt.Sprintf("this file has more than %d keys in its first column that no plant file has", mostStrange), "this is the first; is it another file?")
 		return nil
 	}
 	docs, err := parse(d.src.text)
@@ -89,6 +95,34 @@ func tooDeep(text string) int {
 		}
 	}
 	return -1
+}
+
+const mostStrange = 1000 // keys; a file of which not even the sections are known is not read to its end
+
+// strangeKeys returns where the first key stands that begins in the first column and is not among the words, and how many there are.
+func strangeKeys(text string, words []string) (first, n int) {
+	for at, rest := 0, text; rest != "" && n <= mostStrange; {
+		line, more, _ := strings.Cut(rest, "\n")
+		key, _, found := strings.Cut(line, ":")
+		if found && wordLike(key) && !slices.Contains(words, key) {
+			if n++; n == 1 {
+				first = at
+			}
+		}
+		at += len(line) + 1
+		rest = more
+	}
+	return first, n
+}
+
+// wordLike tells that a text has letters, digits and lines under and between them only.
+func wordLike(s string) bool {
+	for _, r := range s {
+		if !unicode.IsLetter(r) && !unicode.IsDigit(r) && r != '_' && r != '-' {
+			return false
+		}
+	}
+	return s != ""
 }
 
 func invalidAt(s string) int {

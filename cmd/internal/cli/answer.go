@@ -3,17 +3,18 @@ package cli
 import (
 	"context"
 	"errors"
+	"sync/atomic"
 
 	"headfall/network"
 )
 
-// answer computes the verdict. What an interruption, the end of the time allowed or a calculation that could not go on left is given back as
+// answer computes the verdict of a plan that was read; its first calculation, which leaves the plant as it is, is made on that. What an interruption, the end of the time allowed or a calculation that could not go on left is given back as
 // an incomplete result.
-func (a *app) answer(ctx context.Context, src *source) (*network.Result, error) {
+func (a *app) answer(ctx context.Context, src *source, plant *network.Plant) (*network.Result, error) {
 	ctx, cancel := a.within(ctx)
 	defer cancel()
 	bar := a.progress("calculating")
-	res, err := a.judge(ctx, func() (*network.Plant, error) { return a.load(src, &a.opt) }, &a.opt, bar.done)
+	res, err := a.judge(ctx, first(plant, func() (*network.Plant, error) { return a.load(src, &a.opt) }), &a.opt, bar.done)
 	bar.end()
 	if err == nil {
 		res.ExitCode = exitOf(res.Verdict)
@@ -32,6 +33,17 @@ func (a *app) answer(ctx context.Context, src *source) (*network.Result, error) 
 		res.Stopped, res.Trouble = "failed", err.Error()
 	}
 	return res, nil
+}
+
+// first hands out what there is, and from then on what is made.
+func first[T any](there T, made func() (T, error)) func() (T, error) {
+	var gone atomic.Bool
+	return func() (T, error) {
+		if gone.Swap(true) {
+			return made()
+		}
+		return there, nil
+	}
 }
 
 // exitOf is the exit code of a calculation that was finished.

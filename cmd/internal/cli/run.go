@@ -75,7 +75,7 @@ func (a *app) run(ctx context.Context, path string, o runOptions) error {
 	if err := files.check(src.path); err != nil {
 		return err
 	}
-	if res, err = a.answer(ctx, src); err != nil {
+	if res, err = a.answer(ctx, src, plant); err != nil {
 		return err
 	}
 	a.settled = res.ExitCode

@@ -51,7 +51,7 @@ func (a *app) sheet(ctx context.Context, path, html string, plain bool) error {
 	if err := files.check(p.src.path); err != nil {
 		return err
 	}
-	if res, err = a.answer(ctx, p.src); err != nil {
+	if res, err = a.answer(ctx, p.src, p.plant); err != nil {
 		return err
 	}
 	a.settled = res.ExitCode

@@ -8,6 +8,8 @@ import (
 	"os"
 	"path/filepath"
 	"strings"
+
+	"headfall/scenarios"
 )
 
 // source is a plant file as it was read.
@@ -16,8 +18,6 @@ type source struct {
 	name string // for messages and the report
 	data []byte
 }
-
-const largest = 8 << 20 // bytes; no plant file is larger
 
 // read reads FILE or standard input, until it ends or the program is interrupted.
 func (a *app) read(ctx context.Context, path string) (*source, error) {
@@ -39,8 +39,8 @@ func (a *app) read(ctx context.Context, path string) (*source, error) {
 		return nil, &Exit{Code: ExitInterrupted, Err: errInterrupted}
 	case err != nil:
 		return nil, bad("", "cannot read %s: %w", s.name, reason(err))
-	case len(data) > largest:
-		return nil, bad("", "%s is larger than %d MB", s.name, largest>>20)
+	case len(data) > scenarios.MaxSize:
+		return nil, bad("", "%s is larger than %d MB", s.name, scenarios.MaxSize>>20)
 	}
 	s.data = data
 	return s, nil
@@ -51,7 +51,7 @@ func readAll(ctx context.Context, from io.Reader) (data []byte, err error) {
 	done := make(chan struct{})
 	go func() {
 		defer close(done)
-		data, err = io.ReadAll(io.LimitReader(from, largest+1))
+		data, err = io.ReadAll(io.LimitReader(from, scenarios.MaxSize+1))
 	}()
 	select {
 	case <-done:

@@ -97,7 +97,7 @@ func (s *studied) add(files *outputs) {
 // answer judges the plan itself, as run does, for the page about it.
 func (s *studied) answer(ctx context.Context, a *app, src *source) (err error) {
 	if s != nil {
-		s.page.Result, err = a.answer(ctx, src)
+		s.page.Result, err = a.answer(ctx, src, s.page.Plant)
 	}
 	return err
 }
