@@ -15,7 +15,7 @@ func ExamplePart() {
 		return
 	}
 	valve := e.(elements.Part)
-	at := &elements.Local{Fluid: elements.Fluid{Density: 1000, Dynamic: 1e-3}, Opening: 0.5, Gravity: 9.80665, Band: 1}
+	at := &elements.Local{Fluid: &elements.Fluid{Density: 1000, Dynamic: 1e-3}, Opening: 0.5, Gravity: 9.80665, Band: 1}
 	dp, slope := valve.Drop(0.005, at) // 18 m³/h through a linear valve that is half open
 	fmt.Printf("%.0f Pa, %.3g Pa·s/m³\n", dp, slope)
 	// Output: 100000 Pa, 4e+07 Pa·s/m³

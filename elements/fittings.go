@@ -25,9 +25,11 @@ type fittingSet struct {
 	total   float64 // ΣK
 }
 
+var fittingNames = friction.FittingNames()
+
 func (e *fittingSet) Bind(p *Params) {
 	p.Length(&e.bore, "bore", Optional, "bore that the coefficients refer to; default that of the part before it, else after it", Positive).Was(&e.hasBore)
-	p.Counts(e.counts, "how many of each", friction.FittingNames()...)
+	p.Counts(e.counts, "how many of each", fittingNames...)
 	p.bare(&e.k, "k", Optional, "further loss coefficient", NotNegative).Or("0")
 }
 
@@ -44,11 +46,14 @@ func (e *fittingSet) Ready() error {
 		return f.err()
 	}
 	e.total = e.k
-	for _, name := range friction.FittingNames() { // in one order, so that sums are the same bits every time
-		n := e.counts[name]
-		f.when(n < 0, name+": a count is 0 or more")
-		k, _ := friction.FittingK(name, bore)
-		e.total += float64(n) * k
+	for _, name := range fittingNames { // in one order, so that sums are the same bits every time
+		switch n := e.counts[name]; {
+		case n < 0:
+			f = append(f, name+": a count is 0 or more")
+		case n > 0:
+			k, _ := friction.FittingK(name, bore)
+			e.total += float64(n) * k
+		}
 	}
 	a := circle(bore)
 	e.square = e.total / (2 * a * a)

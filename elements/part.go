@@ -10,15 +10,26 @@ type Part interface {
 
 // Local is all a law may read besides its own parameters.
 type Local struct {
-	Fluid    Fluid
+	Fluid    *Fluid
 	Opening  float64 // of this part's actuator: travel of a valve 0..1, running state of a pump 0..1
 	Gravity  float64 // m/s²
 	Strength float64 // share of head or rate that a pump has left; 0 is taken as all
 	Leak     float64 // share of Kv that a check valve passes in reverse, where it does not state more itself
 	Band     float64 // Pa: drop under which a quadratic loss is made linear through zero (see Quadratic)
 
+	kept *kept // what its part remembers from call to call; nil while it has nothing to
+}
+
+type kept struct {
 	opened memo    // of a valve's opening: what its trim makes of it
 	air    AirBand // of a vent
+}
+
+func (at *Local) keep() *kept {
+	if at.kept == nil {
+		at.kept = &kept{}
+	}
+	return at.kept
 }
 
 // memo keeps the last value of a function of the opening, which stands still most of the time.

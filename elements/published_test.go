@@ -13,7 +13,7 @@ const g = 9.80665
 
 // water1000 is a liquid of 1000 kg/m³ with next to no viscosity, for closed forms.
 func water1000() *elements.Local {
-	return &elements.Local{Fluid: elements.Fluid{Density: 1000, Dynamic: 1e-6}, Opening: 1, Gravity: g, Band: 1e-6}
+	return &elements.Local{Fluid: &elements.Fluid{Density: 1000, Dynamic: 1e-6}, Opening: 1, Gravity: g, Band: 1e-6}
 }
 
 func build[T any](t *testing.T, room elements.Room, kind, sample string) T {
@@ -66,7 +66,7 @@ func TestPublishedOpenings(t *testing.T) {
 	b.Hold(t, "O15", flowAt(1000*g*0.75, water1000(), plate))
 
 	for i, cd := range []float64{0.46, 0.45, 0.60} {
-		at := &elements.Local{Fluid: elements.Fluid{Density: 998, Dynamic: 1e-3}, Gravity: 9.81, Band: 1e-3}
+		at := &elements.Local{Fluid: &elements.Fluid{Density: 998, Dynamic: 1e-3}, Gravity: 9.81, Band: 1e-3}
 		hole := build[elements.Part](t, elements.Parts, "orifice", fmt.Sprintf("{area: 0.5 cm2, cd: %g}", cd))
 		b.HoldOne(t, "X07", i, 1e6*flowAt(998*9.81*0.15, at, hole))
 	}
@@ -87,7 +87,7 @@ func TestPublishedOutlets(t *testing.T) {
 func TestPublishedPipeDrains(t *testing.T) {
 	b := elementtest.Load(t, "friction")
 	pipe := build[elements.Part](t, elements.Parts, "pipe", "{length: 3 m, bore: 25 mm, roughness: 0.05 mm}")
-	syrup := &elements.Local{Fluid: elements.Fluid{Density: 1200, Dynamic: 0.5}, Gravity: g, Band: 1}
+	syrup := &elements.Local{Fluid: &elements.Fluid{Density: 1200, Dynamic: 0.5}, Gravity: g, Band: 1}
 	_, slope := pipe.Drop(0, syrup)
 	tau := math.Pi / 4 * 0.6 * 0.6 * slope / (1200 * g)
 	b.Hold(t, "D21", tau, tau*math.Log(5))

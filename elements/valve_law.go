@@ -24,11 +24,12 @@ func (e *valve) Opens(x float64) (phi, slope float64) {
 
 // opened is Opens at the present travel, worked out once for each.
 func (e *valve) opened(at *Local) (phi, slope float64) {
-	if m := &at.opened; !m.known || m.at != at.Opening {
+	m := &at.keep().opened
+	if !m.known || m.at != at.Opening {
 		m.phi, m.slope = e.Opens(at.Opening)
 		m.known, m.at = true, at.Opening
 	}
-	return at.opened.phi, at.opened.slope
+	return m.phi, m.slope
 }
 
 // leastShare is the share of Kv below which a valve counts as shut.

@@ -48,7 +48,7 @@ func (e *breather) Flow(p, p0, T float64, at *Local) (m, byP float64) {
 	if lift == 0 {
 		return 0, 0
 	}
-	g, byG := airIn(p, p0, T, &at.air)
+	g, byG := airIn(p, p0, T, &at.keep().air)
 	a := e.area * at.Opening
 	return a * lift * g, a * (lift*byG + sign*byU/(0.1*set)*g)
 }

@@ -30,7 +30,7 @@ func (e *hole) Ready() error {
 }
 
 func (e *hole) Flow(p, p0, T float64, at *Local) (m, byP float64) {
-	m, byP = airIn(p, p0, T, &at.air)
+	m, byP = airIn(p, p0, T, &at.keep().air)
 	return e.area * at.Opening * m, e.area * at.Opening * byP
 }
 

@@ -146,10 +146,10 @@ func (sim *simulation) limitResults(r *Result) {
 	r.Limits, r.Milestones = []*LimitResult{}, []*MilestoneResult{}
 	for i, j := range sim.obs.limits {
 		v := &sim.brief.Limits[i]
-		x := &LimitResult{ID: i + 1, Subject: j.subject, Of: j.of, Bound: "below", BoundSI: opt(j.must.Bound), UnitSI: j.plan.Must.Subject.Unit(),
-			AsWritten: j.must.Text, Says: j.plan.Says(), Worst: opt(v.Worst), WorstAt: opt(v.WorstAt), Margin: opt(v.Margin), FirstFail: opt(v.FirstFail),
+		x := &LimitResult{ID: i + 1, Subject: j.plan.Must.Subject.String(), Of: j.plan.Must.Of, Bound: "below", BoundSI: opt(j.plan.Must.Bound), UnitSI: j.plan.Must.Subject.Unit(),
+			AsWritten: j.plan.Must.Text, Says: j.plan.Says(), Worst: opt(v.Worst), WorstAt: opt(v.WorstAt), Margin: opt(v.Margin), FirstFail: opt(v.FirstFail),
 			Verdict: v.Verdict, Implicit: j.implicit, Why: j.plan.Why}
-		if j.must.Above {
+		if j.plan.Must.Above {
 			x.Bound = "above"
 		}
 		if j.plan.Must.Subject == Emptied {
@@ -194,10 +194,10 @@ func (sim *simulation) alarmResults(r *Result) {
 		x := &AlarmResult{Vessel: v.Tag, Name: m.name, At: opt(b.At), Need: opt(b.Need)}
 		for i, j := range sim.obs.limits {
 			l := r.Limits[i]
-			if j.plan.Must.Subject != Level || j.must.Above == m.alarm.When.Above || j.of[0] != v.Tag || l.FirstFail == nil {
+			if j.plan.Must.Subject != Level || j.plan.Must.Above == m.alarm.When.Above || j.plan.Must.Of[0] != v.Tag || l.FirstFail == nil {
 				continue
 			}
-			if beyond := j.must.Bound - m.alarm.When.Bound; m.alarm.When.Above && beyond < alarmGap || !m.alarm.When.Above && beyond > -alarmGap {
+			if beyond := j.plan.Must.Bound - m.alarm.When.Bound; m.alarm.When.Above && beyond < alarmGap || !m.alarm.When.Above && beyond > -alarmGap {
 				continue // the alarm itself written as a limit: what it protects lies beyond
 			}
 			if x.LimitAt == nil || *l.FirstFail < *x.LimitAt {
@@ -281,12 +281,12 @@ func (sim *simulation) ratingFlags(r *Result) {
 			continue
 		}
 		switch {
-		case j.implicit && j.plan.Must.Subject == Pressure && j.must.Above:
-			sim.flagRating("vacuum_rating", j.of[0], *x.FirstFail, "%s passes the vacuum that it withstands", "prove the vent open by sight before its drain is opened")
+		case j.implicit && j.plan.Must.Subject == Pressure && j.plan.Must.Above:
+			sim.flagRating("vacuum_rating", j.plan.Must.Of[0], *x.FirstFail, "%s passes the vacuum that it withstands", "prove the vent open by sight before its drain is opened")
 		case j.implicit && j.plan.Must.Subject == Pressure:
-			sim.flagRating("pressure_rating", j.of[0], *x.FirstFail, "%s passes the pressure that it withstands", "prove the vent open by sight before it is filled")
+			sim.flagRating("pressure_rating", j.plan.Must.Of[0], *x.FirstFail, "%s passes the pressure that it withstands", "prove the vent open by sight before it is filled")
 		case j.plan.Must.Subject == Velocity:
-			sim.flagRating("velocity", j.of[0], *x.FirstFail, "the velocity in %s passes its limit", "throttle it")
+			sim.flagRating("velocity", j.plan.Must.Of[0], *x.FirstFail, "the velocity in %s passes its limit", "throttle it")
 		}
 	}
 }

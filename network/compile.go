@@ -172,7 +172,7 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 	c.from, c.to = s.mouthOf(l, false), s.mouthOf(l, true)
 	c.locals = make([]elements.Local, len(l.Parts))
 	for i, f := range l.Parts {
-		c.locals[i] = elements.Local{Fluid: s.fluid, Gravity: s.plan.Gravity, Opening: 1, Strength: 1}
+		c.locals[i] = elements.Local{Fluid: &s.fluid, Gravity: s.plan.Gravity, Opening: 1, Strength: 1}
 		if _, ok := f.Part.(elements.Ranged); ok {
 			c.ranged = append(c.ranged, i)
 		}

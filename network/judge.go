@@ -43,8 +43,8 @@ func (j *judged) judgeEmptied(o *observer) judgement {
 // judgeSpan judges a limit about a span of time on its history.
 func (j *judged) judgeSpan(o *observer) judgement {
 	h, l := j.hist, j.plan
-	bound, sign := j.must.Bound, 1.0
-	if j.must.Above {
+	bound, sign := j.plan.Must.Bound, 1.0
+	if j.plan.Must.Above {
 		sign = -1
 	}
 	from, to := 0.0, o.sim.t
@@ -72,7 +72,7 @@ func (j *judged) judgeSpan(o *observer) judgement {
 		if l.EachHour {
 			w, share = 3600, 1
 		}
-		if j.must.Subject == Falling {
+		if j.plan.Must.Subject == Falling {
 			share = -share
 		}
 		begin := from + w

@@ -13,9 +13,6 @@ import (
 type judged struct {
 	plan     *Limit
 	implicit bool
-	subject  string
-	of       []string
-	must     Condition
 	track    *tracker
 	hist     *history
 	vessel   int // of an emptied limit
@@ -33,7 +30,7 @@ func (o *observer) addTrackers() error {
 		pressure = "mbar"
 	}
 	for _, l := range p.Limits {
-		if err := o.addLimit(&judged{plan: l, must: l.Must, of: l.Must.Of, subject: l.Must.Subject.String()}); err != nil {
+		if err := o.addLimit(&judged{plan: l}); err != nil {
 			return err
 		}
 	}
@@ -75,14 +72,14 @@ func own(si float64, dim quantity.Dim, unit string) string {
 }
 
 func implicitLimit(c Condition, why string) *judged {
-	return &judged{plan: &Limit{Must: c, Why: why}, must: c, of: c.Of, subject: c.Subject.String(), implicit: true}
+	return &judged{plan: &Limit{Must: c, Why: why}, implicit: true}
 }
 
 // addLimit makes a limit ready.
 func (o *observer) addLimit(j *judged) error {
 	sim, l := o.sim, j.plan
 	o.limits = append(o.limits, j)
-	p, err := sim.sys.newProbe(&j.must)
+	p, err := sim.sys.newProbe(&l.Must)
 	if err != nil {
 		return fmt.Errorf("limit %d: %w", len(o.limits), err)
 	}
@@ -97,7 +94,7 @@ func (o *observer) addLimit(j *judged) error {
 		}
 		return nil
 	}
-	j.track = newTracker(p, !j.must.Above) // what breaks "below" is being above
+	j.track = newTracker(p, !j.plan.Must.Above) // what breaks "below" is being above
 	switch l.Must.Subject {
 	case Pressure:
 		j.track.slack = pressureSlack

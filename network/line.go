@@ -15,9 +15,7 @@ type line struct {
 	table    *flowTable
 	locals   []elements.Local
 	moving   []mover // parts whose opening changes in time in this segment
-	oneWay   bool    // a check valve lets nothing back
 	crack    float64 // Pa, of the check valves
-	shut     bool    // nothing passes, as the parts stand
 	zero     float64 // Pa lost at no flow: less than 0 with a running pump
 	losses   []directed
 	floors   []floor
@@ -31,18 +29,11 @@ type line struct {
 	stiff    float64   // m³/(s·Pa), added to its slopes when it is linearised
 	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
 	own      float64   // the flow itself where it is an unknown of the plant
-	parted   bool      // it is none for the moment: its column has parted
-	whole    bool      // it meets a tee whose balance is differentiated: what it passes is its unknown, to the bit, or nothing
 	bore     float64   // m, the narrowest, for velocities; 0 for none
 	area     float64   // m², of it
-	row      int32     // unknown of an inertial flow; -1
 	acts     []int32   // its actuators
-	sources  bool      // it has a pump
-	steady   bool      // of a steady rate
-	long     bool      // it has a pipe
 	clean    *unfouled // what it was before an upset fouled it; nil while it is clean
 	ranged   []int     // parts whose laws have a range
-	checks   bool      // it has a check valve
 	join     float64   // Pa over which a one-way end takes up flow
 	reach    float64   // pressure that drives the flow, in bands
 	turn     float64   // its slope by the pressure between the ends
@@ -62,6 +53,16 @@ type line struct {
 	pushYa     float64
 	pushYb     float64
 	pushT      float64
+
+	row     int32 // unknown of an inertial flow; -1
+	oneWay  bool  // a check valve lets nothing back
+	shut    bool  // nothing passes, as the parts stand
+	parted  bool  // its flow is no unknown for the moment: its column has parted
+	whole   bool  // it meets a tee whose balance is differentiated: what it passes is its unknown, to the bit, or nothing
+	sources bool  // it has a pump
+	steady  bool  // of a steady rate
+	long    bool  // it has a pipe
+	checks  bool  // it has a check valve
 }
 
 // mover is a part whose opening moves at a steady rate.

@@ -38,17 +38,20 @@ func (p *Plant) Refresh() error {
 
 // refresh tells the parts their places and makes them ready.
 func (l *Line) refresh(p *Plant) error {
+	var room [16]elements.Place
+	told := room[:0]
 	for i, f := range l.Parts {
+		told = append(told, l.place(p, i))
 		if w, ok := f.Part.(elements.Placed); ok {
-			w.SetPlace(l.place(p, i))
+			w.SetPlace(told[i])
 		}
 		if err := f.Part.Ready(); err != nil {
 			return fmt.Errorf("%s: %w", f.Name, err)
 		}
 	}
-	// Fittings before the first bore take it from behind; a second pass lets them see it.
+	// Fittings before the first bore take it from behind; a second pass lets them see what was not ready in the first.
 	for i, f := range l.Parts {
-		if w, ok := f.Part.(elements.Placed); ok {
+		if w, ok := f.Part.(elements.Placed); ok && l.place(p, i) != told[i] {
 			w.SetPlace(l.place(p, i))
 			if err := f.Part.Ready(); err != nil {
 				return fmt.Errorf("%s: %w", f.Name, err)

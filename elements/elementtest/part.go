@@ -18,7 +18,7 @@ func locals() []*elements.Local {
 	for _, f := range []elements.Fluid{water, thick, thin} {
 		for _, band := range []float64{1, 0.01} {
 			for _, opening := range []float64{1, 0.3, 0.04} {
-				all = append(all, &elements.Local{Fluid: f, Opening: opening, Gravity: 9.80665, Band: band})
+				all = append(all, &elements.Local{Fluid: &f, Opening: opening, Gravity: 9.80665, Band: band})
 			}
 		}
 	}

@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"runtime"
 	"strings"
 	"testing"
 
@@ -147,6 +148,36 @@ func BenchmarkLoad(b *testing.B) {
 				if faults, _ := p.Validate(); len(faults) > 0 {
 					b.Fatal(faults[0])
 				}
+			}
+		})
+	}
+}
+
+// BenchmarkMemory tells what a compiled plant holds on to besides the plant itself, in bytes a line: as compiled, and after a run, without results.
+func BenchmarkMemory(b *testing.B) {
+	held := func() float64 {
+		runtime.GC()
+		var m runtime.MemStats
+		runtime.ReadMemStats(&m)
+		return float64(m.HeapAlloc)
+	}
+	for name, text := range map[string]string{"chain_10000": chainOf(10000), "chain_100000": chainOf(100000), "grid_10000": gridOf(100)} {
+		b.Run(name, func(b *testing.B) {
+			p := load(b, text)
+			for b.Loop() {
+				before := held()
+				m, err := network.Compile(p, network.Options{})
+				if err != nil {
+					b.Fatal(err)
+				}
+				compiled := held()
+				if _, err := m.Brief(context.Background(), network.RunOptions{}); err != nil {
+					b.Fatal(err)
+				}
+				run := held()
+				runtime.KeepAlive(m)
+				b.ReportMetric((compiled-before)/float64(len(p.Lines)), "B/line")
+				b.ReportMetric((run-before)/float64(len(p.Lines)), "B/line-run")
 			}
 		})
 	}
