@@ -146,6 +146,7 @@ func (sim *simulation) limitResults(r *Result) {
 	r.Limits, r.Milestones = []*LimitResult{}, []*MilestoneResult{}
 	for i, j := range sim.obs.limits {
 		v := &sim.brief.Limits[i]
+		j.write(&sim.plan.Show)
 		x := &LimitResult{ID: i + 1, Subject: j.plan.Must.Subject.String(), Of: j.plan.Must.Of, Bound: "below", BoundSI: opt(j.plan.Must.Bound), UnitSI: j.plan.Must.Subject.Unit(),
 			AsWritten: j.plan.Must.Text, Says: j.plan.Says(), Worst: opt(v.Worst), WorstAt: opt(v.WorstAt), Margin: opt(v.Margin), FirstFail: opt(v.FirstFail),
 			Verdict: v.Verdict, Implicit: j.implicit, Why: j.plan.Why}
@@ -153,7 +154,7 @@ func (sim *simulation) limitResults(r *Result) {
 			x.Bound = "above"
 		}
 		if j.plan.Must.Subject == Emptied {
-			x.Bound, x.BoundSI, x.AsWritten = "within", opt(j.deadline), j.plan.Within.Text
+			x.Bound, x.BoundSI, x.AsWritten = "within", opt(j.plan.Within.S), j.plan.Within.Text
 			if j.plan.Within.Clock {
 				x.Bound = "by"
 			}

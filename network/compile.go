@@ -3,6 +3,7 @@ package network
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"headfall/elements"
 )
@@ -170,7 +171,7 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 	c.plan = l
 	c.row = -1
 	c.from, c.to = s.mouthOf(l, false), s.mouthOf(l, true)
-	c.locals = make([]elements.Local, len(l.Parts))
+	c.locals = slices.Grow(c.locals, len(l.Parts))[:len(l.Parts)]
 	for i, f := range l.Parts {
 		c.locals[i] = elements.Local{Fluid: &s.fluid, Gravity: s.plan.Gravity, Opening: 1, Strength: 1}
 		if _, ok := f.Part.(elements.Ranged); ok {

@@ -77,7 +77,8 @@ func (s *system) newCrown(c *line, plan *elements.Crown, i int) crown {
 // upstream builds the chain from one end of the line up to part i, with the velocity head there; with the part itself where it is a throat.
 func (s *system) upstream(c *line, i int, back, itself bool) floor {
 	f := floor{part: i, back: back, blend: blend}
-	f.up = chain{band: c.chain.band, near: c.chain.near, back: back}
+	n := len(c.plan.Parts)
+	f.up = chain{band: c.chain.band, near: c.chain.near, back: back, parts: make([]elements.Part, 0, n), locals: make([]*elements.Local, 0, n)}
 	add := func(k int) {
 		if _, ok := c.plan.Parts[k].Part.(elements.Crest); ok {
 			return

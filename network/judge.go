@@ -32,10 +32,10 @@ func (j *judged) judgeEmptied(o *observer) judgement {
 	if e, _ := o.sim.plan.EmptyLevel(o.sim.plan.Vessels[j.vessel]); o.sim.plan.Vessels[j.vessel].StartLevel() <= e {
 		at = 0
 	}
-	r := judgement{worst: at, at: at, first: math.NaN(), margin: j.deadline - at, judged: true}
-	if !(at <= j.deadline) {
-		r.first = j.deadline
-		r.judged = o.sim.t >= j.deadline || o.sim.stopped == "at_rest" || !math.IsNaN(at)
+	r := judgement{worst: at, at: at, first: math.NaN(), margin: j.plan.Within.S - at, judged: true}
+	if !(at <= j.plan.Within.S) {
+		r.first = j.plan.Within.S
+		r.judged = o.sim.t >= j.plan.Within.S || o.sim.stopped == "at_rest" || !math.IsNaN(at)
 	}
 	return r
 }

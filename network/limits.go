@@ -1,6 +1,7 @@
 package network
 
 import (
+	"cmp"
 	"fmt"
 	"math"
 	"strings"
@@ -12,11 +13,10 @@ import (
 // judged is a limit made ready: followed by a tracker where it counts at every instant, judged on a history where it is about a span of time.
 type judged struct {
 	plan     *Limit
-	implicit bool
+	implicit bool // a rim or a rating of a cover
 	track    *tracker
 	hist     *history
-	vessel   int // of an emptied limit
-	deadline float64
+	vessel   int // of an emptied or an implicit limit
 }
 
 // pressureSlack is the pressure, Pa, within which a rating is met: rounding is not a failure.
@@ -25,41 +25,96 @@ const pressureSlack = 1e-6
 // addTrackers builds the limits, milestones, alarms and empty marks.
 func (o *observer) addTrackers() error {
 	p := o.sim.plan
-	pressure := p.Show.Pressure
-	if pressure == "" {
-		pressure = "mbar"
-	}
 	for _, l := range p.Limits {
 		if err := o.addLimit(&judged{plan: l}); err != nil {
 			return err
 		}
 	}
-	for _, v := range p.Vessels {
-		rim, why := v.RimLevel(), "its rim"
-		if st := &o.sim.sys.stations[o.sim.sys.vesselAt[v.Tag]]; st.closed && len(st.vents) == 0 {
-			rim, why = st.rim, "full and sealed"
+	for i, v := range p.Vessels {
+		why := "its rim"
+		if st := &o.sim.sys.stations[i]; st.closed && len(st.vents) == 0 {
+			why = "full and sealed"
 		}
-		top := Condition{Subject: Level, Of: []string{v.Tag}, Bound: rim, Text: own(rim, quantity.Length, p.Show.Level)}
-		if err := o.addLimit(implicitLimit(top, why)); err != nil {
+		top := Condition{Subject: Level, Of: []string{v.Tag}}
+		if err := o.addLimit(implicitLimit(i, top, why)); err != nil {
 			return err
 		}
 		o.rims = append(o.rims, o.limits[len(o.limits)-1].track)
 		if c := v.Cover; c != nil {
+			rating := Condition{Subject: Pressure, Of: []string{v.Tag}, Gauge: true}
 			if !math.IsNaN(c.Vacuum) {
-				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Above: true, Bound: -c.Vacuum, Gauge: true, Text: own(-c.Vacuum, quantity.Pressure, pressure)}
-				if err := o.addLimit(implicitLimit(m, "vacuum it withstands")); err != nil {
+				low := rating
+				low.Above = true
+				if err := o.addLimit(implicitLimit(i, low, "vacuum it withstands")); err != nil {
 					return err
 				}
 			}
 			if !math.IsNaN(c.Overpress) {
-				m := Condition{Subject: Pressure, Of: []string{v.Tag}, Bound: c.Overpress, Gauge: true, Text: own(c.Overpress, quantity.Pressure, pressure)}
-				if err := o.addLimit(implicitLimit(m, "pressure it withstands")); err != nil {
+				if err := o.addLimit(implicitLimit(i, rating, "pressure it withstands")); err != nil {
 					return err
 				}
 			}
 		}
 	}
-	return o.addMoments()
+	if err := o.addMoments(); err != nil {
+		return err
+	}
+	o.readNumbers()
+	return nil
+}
+
+// readNumbers takes over the plan's numbers as they are now.
+func (o *observer) readNumbers() {
+	s := o.sim.sys
+	for _, w := range []*snapshot{&o.prev, &o.mid, &o.now, &o.sample} {
+		for i := range w.gas {
+			w.gas[i] = s.atmosphere
+		}
+	}
+	for _, j := range o.limits {
+		if j.implicit {
+			j.plan.Must.Bound = o.ownBound(j)
+		}
+		switch {
+		case j.hist != nil:
+			j.hist.probe.readBound(s)
+		case j.track != nil && j.plan.Permitted:
+			j.track.window.allowed = permitted(o.sim.plan, j.plan)
+		case j.track != nil:
+			j.track.probe.readBound(s)
+		}
+	}
+	for _, list := range [][]*moment{o.milestones, o.emptied, o.alarms} {
+		for _, m := range list {
+			m.probe.readBound(s)
+		}
+	}
+}
+
+// ownBound returns the bound that a vessel itself has.
+func (o *observer) ownBound(j *judged) float64 {
+	v, st := o.sim.plan.Vessels[j.vessel], &o.sim.sys.stations[j.vessel]
+	switch must := &j.plan.Must; {
+	case must.Subject == Pressure && must.Above:
+		return -v.Cover.Vacuum
+	case must.Subject == Pressure:
+		return v.Cover.Overpress
+	case st.closed && len(st.vents) == 0:
+		return st.rim
+	}
+	return v.RimLevel()
+}
+
+// write puts the bound of an implicit limit into words.
+func (j *judged) write(show *Show) {
+	must := &j.plan.Must
+	switch {
+	case !j.implicit:
+	case must.Subject == Level:
+		must.Text = own(must.Bound, quantity.Length, show.Level)
+	default:
+		must.Text = own(must.Bound, quantity.Pressure, cmp.Or(show.Pressure, "mbar"))
+	}
 }
 
 // own writes a bound that the vessel itself has, without figures that say nothing.
@@ -71,8 +126,8 @@ func own(si float64, dim quantity.Dim, unit string) string {
 	return number + " " + name
 }
 
-func implicitLimit(c Condition, why string) *judged {
-	return &judged{plan: &Limit{Must: c, Why: why}, implicit: true}
+func implicitLimit(vessel int, c Condition, why string) *judged {
+	return &judged{plan: &Limit{Must: c, Why: why}, implicit: true, vessel: vessel}
 }
 
 // addLimit makes a limit ready.
@@ -84,7 +139,7 @@ func (o *observer) addLimit(j *judged) error {
 		return fmt.Errorf("limit %d: %w", len(o.limits), err)
 	}
 	if l.Must.Subject == Emptied {
-		j.vessel, j.deadline = p.at[0], l.Within.S
+		j.vessel = p.at[0]
 		return nil
 	}
 	if l.AveragedOver > 0 || l.EachDay || l.EachHour || l.InAny > 0 {
@@ -110,7 +165,7 @@ func (o *observer) addLimit(j *judged) error {
 		p.bound = 0
 		j.track.sign = 1
 		j.track.slack = permitSlack
-		j.track.window = &window{allowed: permitted(sim.plan, l), inverse: true}
+		j.track.window = &window{inverse: true}
 	} else if l.Since.Given || l.Until.Given {
 		j.track.window = &window{since: &l.Since, until: &l.Until}
 	}

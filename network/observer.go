@@ -72,11 +72,6 @@ func newObserver(sim *simulation) (*observer, error) {
 	for i := range o.turned {
 		o.turned[i].at = math.NaN()
 	}
-	for _, w := range []*snapshot{&o.prev, &o.mid, &o.now, &o.sample} {
-		for i := range w.gas {
-			w.gas[i] = s.atmosphere
-		}
-	}
 	if err := o.addTrackers(); err != nil {
 		return nil, err
 	}

@@ -19,20 +19,25 @@ type probe struct {
 
 // newProbe resolves the tags of a condition.
 func (s *system) newProbe(c *Condition) (*probe, error) {
-	p := &probe{plan: c, subject: c.Subject, bound: c.Bound, above: c.Above}
-	if c.Subject == Pressure && c.Gauge {
-		p.bound += s.atmosphere
-	}
+	p := &probe{plan: c, subject: c.Subject, above: c.Above && c.Subject != Emptied}
 	for _, tag := range c.Of {
 		if !s.resolve1(p, tag) {
 			return nil, fmt.Errorf("%s has no such number to look at", tag)
 		}
 	}
-	if c.Subject == Emptied {
-		e, _ := s.plan.EmptyLevel(s.plan.Vessels[p.at[0]])
-		p.bound, p.above = e, false
-	}
+	p.readBound(s)
 	return p, nil
+}
+
+// readBound takes the bound from the plan as its numbers are now.
+func (p *probe) readBound(s *system) {
+	p.bound = p.plan.Bound
+	switch {
+	case p.subject == Pressure && p.plan.Gauge:
+		p.bound += s.atmosphere
+	case p.subject == Emptied:
+		p.bound, _ = s.plan.EmptyLevel(s.plan.Vessels[p.at[0]])
+	}
 }
 
 func (s *system) resolve1(p *probe, tag string) bool {

@@ -35,25 +35,24 @@ func (m *Model) Reload() error {
 	return m.lookAnew()
 }
 
-// recompile compiles line i again where it stands.
+// recompile compiles line i again where it stands, in the room that it had.
 func (s *system) recompile(i int) error {
 	l := &s.lines[i]
-	plan, row := l.plan, l.row
-	*l = line{}
+	plan, row, c := l.plan, l.row, &l.chain
+	*l = line{locals: l.locals[:0], acts: l.acts[:0], ranged: l.ranged[:0],
+		chain: chain{parts: c.parts[:0], locals: c.locals[:0], others: c.others[:0], otherPlace: c.otherPlace[:0]}}
 	err := s.compileLine(l, plan, i)
 	l.row = row
 	return err
 }
 
-// lookAnew makes again what watches and observes runs: bounds that follow from numbers are in there.
+// lookAnew makes what watches runs again, and gives what observes them the bounds that follow from numbers.
 func (m *Model) lookAnew() (err error) {
 	if m.sim == nil {
 		return nil
 	}
-	if m.sim.watch, err = newWatcher(m.sim); err != nil {
-		return err
-	}
-	m.sim.obs, err = newObserver(m.sim)
+	m.sim.obs.readNumbers()
+	m.sim.watch, err = newWatcher(m.sim)
 	return err
 }
 

@@ -10,7 +10,7 @@ import (
 )
 
 // samplesAllocate is how often a sample of a demo may allocate, its numbers being put into the plant and the model.
-const samplesAllocate = 750
+const samplesAllocate = 200
 
 // TestBriefRunsAllocateNothing: once a plant was run for what is judged, it is so again without any allocation; what a sample allocates is in making its
 // numbers those of the model.
