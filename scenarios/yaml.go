@@ -99,15 +99,20 @@ func tooDeep(text string) int {
 
 const mostStrange = 1000 // keys; a file of which not even the sections are known is not read to its end
 
-// strangeKeys returns where the first key stands that begins in the first column and is not among the words, and how many there are.
+// strangeKeys returns where the first key stands that begins in the first column and is not among the words, and how many there are. What goes on from the line
+// before may begin anywhere.
 func strangeKeys(text string, words []string) (first, n int) {
+	goesOn := false
 	for at, rest := 0, text; rest != "" && n <= mostStrange; {
 		line, more, _ := strings.Cut(rest, "\n")
 		key, _, found := strings.Cut(line, ":")
-		if found && wordLike(key) && !slices.Contains(words, key) {
+		if found && !goesOn && wordLike(key) && !slices.Contains(words, key) {
 			if n++; n == 1 {
 				first = at
 			}
+		}
+		if trimmed := strings.TrimRight(line, " \t\r"); trimmed != "" {
+			goesOn = strings.ContainsRune("{[,", rune(trimmed[len(trimmed)-1]))
 		}
 		at += len(line) + 1
 		rest = more
