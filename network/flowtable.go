@@ -1,6 +1,9 @@
 package network
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // flowTable holds Q(Δp) of a line whose parts stand still, shared by all lines of the same parts: piecewise cubic Hermite in x = √|Δp|, cells
 // taken from the bits of x, 2^k cells an octave with k chosen octave by octave so that the relative error is under tol. Read-only once built;
@@ -49,7 +52,11 @@ func newFlowTable(c *chain, most, tol, gamma float64) *flowTable {
 		q, slope := c.solve(sign*t.low, 0)
 		bend := (slope - sign*q/t.low) / 2
 		t.still[side] = [2]float64{slope - 3*bend, bend / (t.low * t.low)}
-		b := tableBuilder{chain: c, sign: sign}
+		t.cells = slices.Grow(t.cells, usualCells)
+		t.octaves[side] = make([]octave, 0, n)
+		room := make([]float64, 4*builderRoom)
+		b := tableBuilder{chain: c, sign: sign, v: room[:0:builderRoom], m: room[builderRoom:builderRoom:2*builderRoom],
+			finer: room[2*builderRoom : 2*builderRoom : 3*builderRoom], slope: room[3*builderRoom : 3*builderRoom : 4*builderRoom]}
 		for o := range n {
 			x0 := math.Ldexp(1, tableBase+o)
 			t.octaves[side] = append(t.octaves[side], b.octave(t, x0, tol*math.Max(1, easeBelow*gamma/(4*x0*x0))))
@@ -61,6 +68,12 @@ func newFlowTable(c *chain, most, tol, gamma float64) *flowTable {
 	t.most = math.Max(forward, -back)
 	return t
 }
+
+// usualCells and builderRoom are what a table and its making take, as a rule: they grow where that is too little.
+const (
+	usualCells  = 256
+	builderRoom = 65
+)
 
 // easeBelow is the head, m, under which a flow may be off by more: a head moves levels by no more than itself.
 const easeBelow = 0.01

@@ -361,10 +361,14 @@ func (o *observer) peaks() {
 	}
 }
 
+// peakShare is the share of what a number has ranged over that an extreme between two looks must add to be looked for.
+const peakShare = 1e-7
+
 // refine looks for an extreme between a, the middle and b where the middle is beyond both ends.
 func (e *extreme) refine(a, b, va, vm, vb float64, f func(float64) float64) {
-	up := vm > va && vm > vb && vm-max(va, vb) > 1e-9*math.Abs(vm)
-	down := vm < va && vm < vb && min(va, vb)-vm > 1e-9*math.Abs(vm)
+	least := max(1e-9*math.Abs(vm), peakShare*(e.high-e.low))
+	up := vm > va && vm > vb && vm-max(va, vb) > least
+	down := vm < va && vm < vb && min(va, vb)-vm > least
 	if !up && !down || up && vm+(vm-math.Min(va, vb))/4 <= e.high || down && vm-(math.Max(va, vb)-vm)/4 >= e.low {
 		return
 	}
