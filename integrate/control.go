@@ -6,7 +6,8 @@ import "math"
 // error estimate plus one.
 type control struct {
 	q        float64
-	previous float64 // error of the last accepted step, 0 if there is none
+	previous float64 // logarithm of the error of the last accepted step
+	begun    bool    // there is one
 	rejected bool    // the last attempt was
 }
 
@@ -14,23 +15,24 @@ const (
 	safety   = 0.9
 	growBy   = 6.0
 	shrinkBy = 0.2
-	least    = 1e-4 // error below which the memory does not look
+	least    = -9.2 // logarithm of the error below which the memory does not look
 )
 
-func (c *control) restart() { c.previous, c.rejected = 0, false }
+func (c *control) restart() { c.begun, c.rejected = false, false }
 
 // accept returns the factor from a good step to the next.
 func (c *control) accept(e float64) float64 {
-	e = max(e, 1e-10)
-	factor := safety * math.Pow(e, -1/c.q)
-	if c.previous > 0 {
-		factor = safety * math.Pow(e, -0.7/c.q) * math.Pow(c.previous, 0.4/c.q)
+	log := math.Log(max(e, 1e-10))
+	grow := -log
+	if c.begun {
+		grow = 0.4*c.previous - 0.7*log
 	}
+	factor := safety * math.Exp(grow/c.q)
 	factor = min(max(factor, shrinkBy), growBy)
 	if c.rejected {
 		factor = min(factor, 1)
 	}
-	c.previous, c.rejected = max(e, least), false
+	c.previous, c.begun, c.rejected = max(log, least), true, false
 	return factor
 }
 

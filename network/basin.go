@@ -56,22 +56,21 @@ func (s *system) sortStations() {
 }
 
 // lookAtVessels sets the pressures at the floors, and the stations of all but those vessels that stand within the span of their basin; these others are
-// s.wide and s.odd.
+// s.wide and s.odd. It notes which vessels are bare.
 func (s *system) lookAtVessels(y []float64) {
+	floor, basins, deep, isBare := s.floor, s.basins, s.deep, s.isBare
+	bare := false
 	for _, i := range s.wide {
 		s.lookInto(int(i), y)
+		isBare[i] = y[i] < deep[i]
+		bare = bare || isBare[i]
 	}
 	s.odd = s.odd[:0]
-	floor, basins := s.floor, s.basins
-	deep, isBare, bare := s.deep[:len(floor)], s.isBare[:len(floor)], false
-	for i, d := range deep {
-		shallow := y[i] < d
-		isBare[i] = shallow
-		bare = bare || shallow
-	}
-	s.bare = bare
 	for _, i := range s.narrow {
 		b, v := &basins[i], y[i]
+		shallow := v < deep[i]
+		isBare[i] = shallow
+		bare = bare || shallow
 		if b.holds(v) {
 			floor[i] = b.press + b.byV*v
 			continue
@@ -80,6 +79,7 @@ func (s *system) lookAtVessels(y []float64) {
 		s.rebase(int(i), v)
 		s.odd = append(s.odd, i)
 	}
+	s.bare = bare
 }
 
 // lookInto sets the station of vessel i and the pressure at its floor.
