@@ -162,6 +162,41 @@ func TestDense(t *testing.T) {
 	}
 }
 
+// What is worked out for one unknown, half-way through the step, or after the solver has looked at its end, is what is worked out for all at once.
+func TestDenseByParts(t *testing.T) {
+	w := ivptest.Grid(4, pipe, false)
+	for _, m := range integrate.Methods() {
+		solver := func() (*integrate.Solver, *integrate.Dense, float64) {
+			s := integrate.NewSolver(w, integrate.Options{RTol: 1e-6, Method: m})
+			run(t, s, w.Start(), 500)
+			d := s.Dense()
+			return s, d, d.T0 + d.H/2
+		}
+		s, all, mid := solver()
+		y, z := make([]float64, len(w.Base)), make([]float64, 1)
+		s.Eval(mid, y)
+		s.EvalZ(mid, z)
+		s, parts, _ := solver()
+		s.Rates() // linearises at the end of the step
+		near := func(what string, got, want float64) {
+			if math.Abs(got-want) > 1e-13*math.Max(1, math.Abs(want)) {
+				t.Errorf("%s: %s %v, want %v", m.Name(), what, got, want)
+			}
+		}
+		near("integral", parts.OneZ(0, mid), z[0])
+		near("its rate", parts.RateZ(0, mid), all.RateZ(0, mid))
+		half, rate, rateZ := make([]float64, len(y)), make([]float64, len(y)), make([]float64, 1)
+		parts.Half(half, rate)
+		parts.HalfZ(rateZ)
+		near("rate half-way", rateZ[0], all.RateZ(0, mid))
+		for i := range y {
+			near("unknown", parts.One(i, mid), y[i])
+			near("unknown half-way", half[i], y[i])
+			near("rate half-way", rate[i], all.Rate(i, mid))
+		}
+	}
+}
+
 // A table whose result is not its last stage goes the general way.
 func TestGeneralTableau(t *testing.T) {
 	general := *integrate.Rodas4P
