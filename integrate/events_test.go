@@ -220,7 +220,7 @@ func TestRestartAtAnEventDoesNotFireAgain(t *testing.T) {
 // reading names the unknown that functions look at.
 type reading struct{ *functions }
 
-func (reading) Reads() []int32 { return []int32{0} }
+func (reading) Reads() ([]int32, bool) { return []int32{0}, false }
 
 func TestReaderFindsTheSame(t *testing.T) {
 	p := ball(1, 5)

@@ -5,9 +5,10 @@ import "math"
 // instant is the share of the time, or of the step if that is more, within which events count as one.
 const instant = 1e-12
 
-// Reader is an Events that names the unknowns its functions look at. Inside a step only those are set in y, which saves time where they are few.
+// Reader is an Events that names the unknowns its functions look at, or tells that they look at all. Inside a step only those are set in y, which saves time
+// where they are few.
 type Reader interface {
-	Reads() []int32
+	Reads() (unknowns []int32, all bool)
 }
 
 // tolerance returns the time within which events of the present step count as one.
@@ -58,12 +59,15 @@ func (s *Solver) findEvent(ev Events, t1 float64) (t float64, hit bool) {
 func (s *Solver) eventsAt(ev Events, t float64, v []float64) {
 	y := s.watch.y
 	if r, some := ev.(Reader); some {
-		for _, i := range r.Reads() {
-			y[i] = s.poly.One(int(i), t)
+		if reads, all := r.Reads(); !all {
+			for _, i := range reads {
+				y[i] = s.poly.One(int(i), t)
+			}
+			ev.Values(t, y, v)
+			return
 		}
-	} else {
-		s.Eval(t, y)
 	}
+	s.Eval(t, y)
 	ev.Values(t, y, v)
 }
 

@@ -20,15 +20,23 @@ func (sim *simulation) spillAt(i int, t float64) float64 { return sim.lookAt(i, 
 
 // flowAt returns the flow of line i at time t within the last step.
 func (sim *simulation) flowAt(i int, t float64) float64 {
-	s := sim.sys
+	s, d, y := sim.sys, sim.solver.Dense(), sim.obs.y
+	for _, c := range s.slot[i].cols {
+		if c >= 0 {
+			y[c] = d.One(int(c), t)
+		}
+	}
+	return s.lookAlong(i, t, y)
+}
+
+// lookAlong returns the flow of line i at (t, y); of y only what the line sees at its ends need be set, and its own flow where that is an unknown.
+func (s *system) lookAlong(i int, t float64, y []float64) float64 {
 	l := &s.lines[i]
-	s.y = sim.obs.y
-	for _, m := range []*mouth{&l.from, &l.to} {
+	s.y = y
+	for _, m := range [2]*mouth{&l.from, &l.to} {
 		switch m.kind {
 		case toVessel:
-			sim.lookAt(m.at, t)
-		case toTee:
-			s.y[s.teeRow+m.at] = sim.solver.EvalOne(s.teeRow+m.at, t)
+			s.lookInto(m.at, y)
 		case toWater:
 			b := &s.outside[m.at]
 			b.surface = b.start + b.rate*(t-s.t0)
@@ -38,7 +46,7 @@ func (sim *simulation) flowAt(i int, t float64) float64 {
 		l.locals[m.local].Opening = s.actuators[m.actuator].at(t)
 	}
 	if l.row >= 0 {
-		l.own = sim.solver.EvalOne(int(l.row), t)
+		l.own = y[l.row]
 	}
 	a, b := s.see(&l.from), s.see(&l.to)
 	l.evaluate(&a, &b, s.gamma)

@@ -74,8 +74,8 @@ func (p *probe) meet(s *system, o int) {
 
 func (m *mouth) outside() bool { return m.kind == toAir || m.kind == toWater || m.kind == toPressure }
 
-// cheap tells that the probe needs vessels' volumes only.
-func (p *probe) cheap() bool {
+// ofLevels tells that the condition is one of levels alone.
+func (p *probe) ofLevels() bool {
 	return p.subject == Level || p.subject == Emptied || p.subject == Difference
 }
 

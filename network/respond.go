@@ -42,7 +42,7 @@ func (w *watcher) addResponses() error {
 				value:  func(s *snapshot) float64 { return p.value(sim, s) },
 				active: func() bool { return !heard },
 				fire:   hear,
-				dir:    dir, deep: !p.cheap(), jumps: true,
+				dir:    dir, sees: p.views(sim.sys), levels: p.ofLevels(), jumps: true,
 			})
 		}
 	}

@@ -175,7 +175,7 @@ func (w *watcher) addEdges() error {
 				value:  func(s *snapshot) float64 { return p.value(sim, s) },
 				active: func() bool { _, came := sim.edges[e]; return !came },
 				fire:   func(t float64) { sim.edges[e] = t },
-				dir:    dir, deep: !p.cheap(), jumps: true,
+				dir:    dir, sees: p.views(sim.sys), levels: p.ofLevels(), jumps: true,
 			})
 		}
 	}

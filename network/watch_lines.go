@@ -14,11 +14,18 @@ func (w *watcher) addCrowns() {
 		for k := range l.crowns {
 			c := &l.crowns[k]
 			feeds := [2][]airPath{s.airPaths(i, &l.from), s.airPaths(i, &l.to)}
+			own := view{lines: []int32{int32(i)}}
+			fed := view{lines: []int32{int32(i)}}
+			for _, paths := range feeds {
+				for _, p := range paths {
+					fed.lines = append(fed.lines, int32(p.line))
+				}
+			}
 			w.triggers = append(w.triggers,
 				trigger{
 					value:  func(*snapshot) float64 { return s.airMargin(l, c, &feeds) },
 					active: func() bool { return c.primed && !s.vented(c) },
-					dir:    -1, deep: true, jumps: true,
+					dir:    -1, sees: fed, jumps: true,
 					fire: func(t float64) {
 						c.primed, c.rests = false, t+siphonRest
 						w.sim.control.schedule(timed{at: c.rests})
@@ -30,7 +37,7 @@ func (w *watcher) addCrowns() {
 				trigger{
 					value:  func(*snapshot) float64 { return s.sweep(l, c) },
 					active: func() bool { return !c.primed && !s.vented(c) && w.sim.t >= c.rests },
-					dir:    1, deep: true, jumps: true,
+					dir:    1, sees: own, jumps: true,
 					fire: func(t float64) {
 						c.primed = true
 						if f := w.sim.flag("siphon_primed", l.plan.Tag, t, "if that is not wanted, open a vent at the high point"); f != nil {

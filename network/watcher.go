@@ -13,8 +13,7 @@ type watcher struct {
 	triggers []trigger
 	begun    []func() // what forgets the last run
 	fixed    int      // triggers of the plan; those of one run come after
-	deep     bool     // some active trigger needs more than levels
-	any      bool     // some trigger is active
+	sees     *viewer  // what the active triggers look at
 	look     snapshot
 	f        []float64
 }
@@ -24,8 +23,9 @@ type trigger struct {
 	value  func(w *snapshot) float64
 	active func() bool
 	fire   func(t float64)
-	dir    int  // +1 rising, -1 falling, 0 both
-	deep   bool // needs more than levels
+	dir    int // +1 rising, -1 falling, 0 both
+	sees   view
+	levels bool // of levels alone: at its bound is past it when it is armed
 	jumps  bool // may be true at once, without crossing: looked at whenever something acted
 	on     bool // active in this segment
 }
@@ -33,7 +33,7 @@ type trigger struct {
 var _ integrate.Events = (*watcher)(nil)
 
 func newWatcher(sim *simulation) (*watcher, error) {
-	w := &watcher{sim: sim, look: sim.sys.newSnapshot(), f: make([]float64, sim.sys.n)}
+	w := &watcher{sim: sim, sees: newViewer(sim.sys), look: sim.sys.newSnapshot(), f: make([]float64, sim.sys.n)}
 	if err := w.addSteps(); err != nil {
 		return nil, err
 	}
@@ -87,7 +87,7 @@ func (w *watcher) addSteps() error {
 			value:  func(s *snapshot) float64 { return p.value(w.sim, s) },
 			active: func() bool { return c.waits(i) },
 			fire:   func(t float64) { c.trigger(i, t) },
-			dir:    dir, deep: !p.cheap(), jumps: true,
+			dir:    dir, sees: p.views(w.sim.sys), levels: p.ofLevels(), jumps: true,
 		})
 	}
 	return nil
@@ -107,6 +107,7 @@ func (w *watcher) addCorners() {
 				value:  func(s *snapshot) float64 { return s.level[i] - h },
 				active: func() bool { return true },
 				fire:   func(float64) {},
+				sees:   view{vessels: []int32{int32(i)}},
 			})
 		}
 	}
@@ -114,14 +115,17 @@ func (w *watcher) addCorners() {
 
 // arm chooses what is watched in the coming segment.
 func (w *watcher) arm() {
-	w.deep, w.any = false, false
+	w.sees.begin()
 	for i := range w.triggers {
 		t := &w.triggers[i]
-		t.on = t.active()
-		w.any = w.any || t.on
-		w.deep = w.deep || t.on && t.deep
+		if t.on = t.active(); t.on {
+			w.sees.add(w.sim.sys, &t.sees)
+		}
 	}
 }
+
+// Reads returns the unknowns that the functions look at.
+func (w *watcher) Reads() (unknowns []int32, all bool) { return w.sees.reads, w.sees.whole }
 
 // Len returns the number of functions.
 func (w *watcher) Len() int { return len(w.triggers) }
@@ -131,36 +135,13 @@ func (w *watcher) Direction(i int) int { return w.triggers[i].dir }
 
 // Values evaluates the functions.
 func (w *watcher) Values(t float64, y, v []float64) {
-	if w.any {
-		w.see(t, y)
-	}
+	w.sees.fill(w.sim, &w.look, t, y, w.f)
 	for i := range w.triggers {
 		if tr := &w.triggers[i]; tr.on {
 			v[i] = tr.value(&w.look)
 		} else {
 			v[i] = math.NaN()
 		}
-	}
-}
-
-// see fills the snapshot at (t, y) as far as the active triggers need it.
-func (w *watcher) see(t float64, y []float64) {
-	s := w.sim.sys
-	w.look.t = t
-	if !w.deep {
-		for i := range s.stations {
-			if b := &s.basins[i]; b.holds(y[i]) {
-				w.look.level[i] = b.at(y[i])
-			} else {
-				w.look.level[i], _ = s.stations[i].shape.Level(y[i])
-			}
-		}
-		return
-	}
-	w.sim.fill(&w.look, t, y, w.f)
-	d := w.sim.solver.Dense()
-	for i := range w.look.z {
-		w.look.z[i] = d.OneZ(i, t)
 	}
 }
 
@@ -174,25 +155,20 @@ func (w *watcher) fire(hit []int) {
 // settled looks at the plant just after something acted and fires what is true without having crossed anything: a condition that was true when it
 // was armed, or that came true at once with what acted. It says whether anything fired.
 func (w *watcher) settled() (fired bool) {
-	w.deep = false
-	any := false
+	w.sees.begin()
 	for i := range w.triggers {
 		t := &w.triggers[i]
-		t.on = t.jumps && t.active()
-		any = any || t.on
-		w.deep = w.deep || t.on && t.deep
+		if t.on = t.jumps && t.active(); t.on {
+			w.sees.add(w.sim.sys, &t.sees)
+		}
 	}
-	if !any {
-		return false
-	}
-	w.see(w.sim.t, w.sim.solver.Y())
-	copy(w.look.z, w.sim.solver.Z())
+	w.sees.fill(w.sim, &w.look, w.sim.t, w.sim.solver.Y(), w.f)
 	for i := range w.triggers {
 		t := &w.triggers[i]
 		if !t.on {
 			continue
 		}
-		if v := t.value(&w.look); v == 0 && !t.deep || v > 0 && t.dir > 0 || v < 0 && t.dir < 0 {
+		if v := t.value(&w.look); v == 0 && t.levels || v > 0 && t.dir > 0 || v < 0 && t.dir < 0 {
 			t.fire(w.sim.t)
 			fired = true
 		}
