@@ -206,7 +206,7 @@ func (s *system) Scale(y []float64, rtol float64, scale []float64) {
 		}
 	}
 	for i := s.teeRow; i < s.teeRow+len(s.teeAt); i++ {
-		scale[i] = s.gamma * math.Max(share*tol(1), rtol*(math.Abs(y[i]-s.atmosphere)/s.gamma-plainHead))
+		scale[i] = s.gamma * math.Max(math.Max(leastTee, share*tol(1)), rtol*(math.Abs(y[i]-s.atmosphere)/s.gamma-plainHead))
 		if t := &s.tees[i-s.teeRow]; t.ease > 0 && !t.slow { // where next to nothing flows a pressure means little
 			scale[i] = math.Max(scale[i], 1e6*rtol*stillFlow/t.ease)
 		}
@@ -229,6 +229,10 @@ const plainHead = 100
 
 // coarseTee is the error allowed in the head at a tee over that in a level of a metre in a coarse run: it drives flows at the time, and is forgotten.
 const coarseTee = 10
+
+// leastTee is the error, m, always allowed in the head at a tee: twice the head within which its lines are given other slopes than those of their laws
+// (roundCorner), so that no step is cut short there. Flows are integrated with errors of their own, and a head at a tee is forgotten with the step.
+const leastTee = 2 * corner * joinHead
 
 // coarse is the tolerance from which on a run is one of many, as of samples, and the last of a heel is as good as a metre.
 const coarse = 5e-6
