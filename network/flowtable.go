@@ -121,9 +121,15 @@ func (b *tableBuilder) octave(t *flowTable, x0, tol float64) octave {
 
 // cell returns the cubic of cell i of width w.
 func (b *tableBuilder) cell(i int, w float64) tableCell {
-	v0, v1, m0, m1 := b.v[i], b.v[i+1], b.m[i]*w, b.m[i+1]*w
+	return hermite(b.v[i], b.v[i+1], b.m[i]*w, b.m[i+1]*w)
+}
+
+// hermite returns the cubic in 0 ≤ u ≤ 1 with these values and slopes at its ends, and middle its value at ½.
+func hermite(v0, v1, m0, m1 float64) tableCell {
 	return tableCell{v0, m0, 3*(v1-v0) - 2*m0 - m1, 2*(v0-v1) + m0 + m1}
 }
+
+func middle(c *tableCell) float64 { return c[0] + (c[1]+(c[2]+c[3]/2)/2)/2 }
 
 // halve puts the law at the middles of the cells between the values at their ends, and returns the worst relative error of a cell there.
 func (b *tableBuilder) halve(x0, w float64) (worst float64) {
@@ -131,7 +137,7 @@ func (b *tableBuilder) halve(x0, w float64) (worst float64) {
 	last := len(b.v) - 1
 	for i := range last {
 		c := b.cell(i, w)
-		mid := c[0] + (c[1]+(c[2]+c[3]/2)/2)/2
+		mid := middle(&c)
 		v, m := b.law(x0+(float64(i)+0.5)*w, mid)
 		worst = math.Max(worst, math.Abs(mid/v-1))
 		b.finer, b.slope = append(b.finer, b.v[i], v), append(b.slope, b.m[i], m)

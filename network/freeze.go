@@ -31,6 +31,7 @@ func (s *system) begin(ch *Changes) {
 	for i := range s.lines {
 		l := &s.lines[i]
 		l.lastDp, l.lastQ, l.lastS = 0, 0, 0
+		l.cell.forget()
 		s.unfoul(l)
 		l.setLeak(math.Max(s.plan.Assume.CheckLeak, ch.CheckLeak))
 		for k := range l.locals {
@@ -123,7 +124,10 @@ func (s *system) freezeLine(l *line, t float64) {
 	l.moving = l.moving[:0]
 	for _, k := range l.acts {
 		a := &s.actuators[k]
-		l.locals[a.part].Opening = a.at(t)
+		if x := a.at(t); x != l.locals[a.part].Opening {
+			l.locals[a.part].Opening = x
+			l.cell.forget()
+		}
 		if r := a.rate(t); r != 0 && a.kind == aValve {
 			l.moving = append(l.moving, mover{part: l.inChain(a.part), local: a.part, actuator: int(k), rate: r})
 		}
@@ -131,6 +135,8 @@ func (s *system) freezeLine(l *line, t float64) {
 	l.chain.merged = false
 	if len(l.moving) == 0 {
 		l.chain.merge()
+	} else {
+		l.cell.forget()
 	}
 	l.shut = false
 	for i, f := range l.plan.Parts {

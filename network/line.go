@@ -37,7 +37,8 @@ type line struct {
 	join     float64   // Pa over which a one-way end takes up flow
 	reach    float64   // pressure that drives the flow, in bands
 	turn     float64   // its slope by the pressure between the ends
-	lastDp   float64   // warm start of the chain
+	cell     flowCell  // of its flow while its parts stand, where it has no table
+	lastDp   float64   // warm start of the chain while they move
 	lastQ    float64
 	lastS    float64
 
@@ -173,12 +174,15 @@ func crackOpen(drive, crack, band float64) (v, slope float64) {
 	return u * u * ((3-2*u)*top + (u-1)*band), u * (6*(1-u)*top/band + 3*u - 2)
 }
 
-// flowAt is the flow that the chain lets through at dp, by table or by solving.
+// flowAt is the flow that the chain lets through at dp, by table, by its cell or by solving.
 func (l *line) flowAt(dp float64) (q, slope float64) {
 	if l.table != nil {
 		if q, slope, ok := l.table.at(dp); ok {
 			return q, slope
 		}
+	}
+	if d := dp - l.zero; len(l.moving) == 0 && math.Abs(d) < absurdPressure {
+		return l.cell.at(&l.chain, d, l.zero)
 	}
 	guess := l.lastQ + l.lastS*(dp-l.lastDp)
 	if (guess < 0) != (dp-l.zero < 0) {

@@ -31,7 +31,7 @@ func (s *system) shareTables() {
 		}
 		groups[k] = append(groups[k], int32(i))
 	}
-	tol, most := math.Max(1e-10, math.Min(1e-7, s.rtol/10)), s.headOver()*s.gamma
+	tol, most := tableError(s.rtol), s.headOver()*s.gamma
 	for _, g := range groups {
 		if len(g) < manyAlike {
 			continue
@@ -44,6 +44,9 @@ func (s *system) shareTables() {
 		}
 	}
 }
+
+// tableError is the relative error allowed in a tabled flow.
+func tableError(rtol float64) float64 { return math.Max(1e-10, math.Min(1e-7, rtol/10)) }
 
 // trace is what a chain loses at a few flows: chains of different parts differ in it, as good as always.
 type trace [8]float64
