@@ -47,6 +47,8 @@ func (s *Solver) settle() error {
 				trial[i] = s.y[i] + d[i]
 			}
 		} else if !s.damped(d, trial, size) {
+			s.linear = false // the rates are those of the last trial
+			s.linearise()
 			break
 		}
 		copy(s.y, trial)
