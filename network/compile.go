@@ -211,7 +211,7 @@ func (s *system) compileLine(c *line, l *Line, k int) error {
 	if c.from.kind == toTee || c.to.kind == toTee {
 		c.gmin = weepage
 	}
-	c.chain.near, c.cell = nearEnough(s.rtol), newFlowCell(s.rtol, s.gamma)
+	c.chain.near, c.cell = nearEnough(s.rtol), flowCell{tol: tableError(s.rtol)}
 	s.setBand(c)
 	s.endLosses(c)
 	s.addFloors(c)

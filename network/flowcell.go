@@ -6,40 +6,34 @@ import "math"
 // pumps lose at no flow. Cells are halves of halves of an octave of x, the first whose middle is good to tol; which they are depends on the law alone, so that a flow
 // does not depend on what was asked before. It holds while the parts stand as they do.
 type flowCell struct {
-	tol, ease float64 // relative error, and that times the pressure over which it grows, Pa
-	back      bool
-	lo, hi    float64 // √Pa: the span of x; empty where nothing was asked yet
-	scale     float64 // 1/(hi − lo)
-	cube      tableCell
-	v, m      [2]float64 // |Q| at the ends and its slope by x
+	tol    float64 // relative error
+	back   bool
+	lo, hi float64 // √Pa: the span of x; empty where nothing was asked yet
+	scale  float64 // 1/(hi − lo)
+	cube   tableCell
+	v, m   [2]float64 // |Q| at the ends and its slope by x
 }
 
 // firstCellBits is the halvings of an octave that are hardly ever enough.
 const firstCellBits = 3
 
-// absurdPressure is beyond what any pump makes, Pa.
-const absurdPressure = 1e12
-
-func newFlowCell(rtol, gamma float64) flowCell {
-	tol := tableError(rtol)
-	return flowCell{tol: tol, ease: tol * easeBelow * gamma}
-}
+// leastTabled and mostTabled are the pressures, Pa, between which a flow is taken from a cell: under it, a micrometre of liquid, the cells would be many, and beyond
+// it is nothing that any pump makes.
+const (
+	leastTabled = 0.01
+	mostTabled  = 1e12
+)
 
 // forget makes it a cell that was not asked yet.
 func (t *flowCell) forget() { t.lo, t.hi = 0, 0 }
 
-// at returns the flow of the chain and ∂q/∂Δp at d = Δp − zero.
+// at returns the flow of the chain and ∂q/∂Δp at d = Δp − zero, leastTabled ≤ |d| ≤ mostTabled.
 func (t *flowCell) at(c *chain, d, zero float64) (q, slope float64) {
 	x := math.Sqrt(math.Abs(d))
 	if !(x >= t.lo && x < t.hi) || t.back != (d < 0) {
 		t.find(c, x, d < 0, zero)
 	}
-	k := &t.cube
-	if t.lo == 0 {
-		bend := k[1] * d * d
-		return d * (k[0] + bend), k[0] + 3*bend
-	}
-	u := (x - t.lo) * t.scale
+	u, k := (x-t.lo)*t.scale, &t.cube
 	q = k[0] + u*(k[1]+u*(k[2]+u*k[3]))
 	slope = (k[1] + u*(2*k[2]+3*u*k[3])) * t.scale * 0.5 / x
 	if t.back {
@@ -50,25 +44,18 @@ func (t *flowCell) at(c *chain, d, zero float64) (q, slope float64) {
 
 // find works out the cell of x.
 func (t *flowCell) find(c *chain, x float64, back bool, zero float64) {
-	low := math.Ldexp(1, tableBase)
-	if x < low {
-		t.back, t.lo, t.hi = back, 0, low
-		t.cube = t.still(c, low*low, zero)
-		return
-	}
 	_, e := math.Frexp(x)
 	octave := math.Ldexp(1, e-1)
 	w := math.Ldexp(octave, -firstCellBits)
 	lo := octave + w*math.Floor((x-octave)/w)
 	t.ends(c, lo, lo+w, back, zero)
-	tol := math.Max(t.tol, t.ease/(4*octave*octave))
 	for k := firstCellBits; ; k++ {
 		w = t.hi - t.lo
 		t.cube, t.scale = hermite(t.v[0], t.v[1], t.m[0]*w, t.m[1]*w), 1/w
 		mid := t.lo + w/2
 		guess := middle(&t.cube)
 		v, m := t.law(c, mid, zero, guess)
-		if k == mostCellBits || math.Abs(guess/v-1) < tol {
+		if k == mostCellBits || math.Abs(guess/v-1) < t.tol {
 			return
 		}
 		if x < mid {
@@ -81,7 +68,7 @@ func (t *flowCell) find(c *chain, x float64, back bool, zero float64) {
 
 // ends works out the law at both ends of a cell, from what is known of the last.
 func (t *flowCell) ends(c *chain, lo, hi float64, back bool, zero float64) {
-	known := t.hi > 0 && t.lo > 0 && t.back == back
+	known := t.hi > 0 && t.back == back
 	switch {
 	case known && t.hi == lo:
 		t.v[0], t.m[0] = t.v[1], t.m[1]
@@ -109,12 +96,4 @@ func (t *flowCell) law(c *chain, x, zero, guess float64) (v, slope float64) {
 	}
 	q, s := c.solve(zero+sign*x*x, sign*guess)
 	return sign * q, s * 2 * x
-}
-
-// still returns a, b of the flow d·(a + b·d²) for |d| up to low, Pa.
-func (t *flowCell) still(c *chain, low, zero float64) tableCell {
-	v, m := t.law(c, math.Sqrt(low), zero, 0)
-	slope := m / (2 * math.Sqrt(low))
-	bend := (slope - v/low) / 2
-	return tableCell{slope - 3*bend, bend / (low * low)}
 }

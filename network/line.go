@@ -181,8 +181,10 @@ func (l *line) flowAt(dp float64) (q, slope float64) {
 			return q, slope
 		}
 	}
-	if d := dp - l.zero; len(l.moving) == 0 && math.Abs(d) < absurdPressure {
-		return l.cell.at(&l.chain, d, l.zero)
+	if d := dp - l.zero; len(l.moving) == 0 {
+		if a := math.Abs(d); a >= leastTabled && a <= mostTabled {
+			return l.cell.at(&l.chain, d, l.zero)
+		}
 	}
 	guess := l.lastQ + l.lastS*(dp-l.lastDp)
 	if (guess < 0) != (dp-l.zero < 0) {
