@@ -94,6 +94,7 @@ func (t *flowCell) law(c *chain, x, zero, guess float64) (v, slope float64) {
 	if t.back {
 		sign = -1
 	}
-	q, s := c.solve(zero+sign*x*x, sign*guess)
-	return sign * q, s * 2 * x
+	q, _ := c.solve(zero+sign*x*x, sign*guess)
+	_, s := c.drop(q) // that of solve is of the flow before its last correction
+	return sign * q, 2 * x / s
 }

@@ -16,7 +16,7 @@ var golden = map[string][2]int{
 	"cellar_free":    {258, 68},
 	"day_tank":       {103, 9},
 	"equalisation":   {105, 12},
-	"hillside":       {530, 73},
+	"hillside":       {350, 63},
 	"ten_vessels":    {883, 175},
 }
 
