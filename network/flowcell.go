@@ -14,8 +14,11 @@ type flowCell struct {
 	v, m   [2]float64 // |Q| at the ends and its slope by x
 }
 
-// firstCellBits is the halvings of an octave that are hardly ever enough.
-const firstCellBits = 3
+// firstHalvings of an octave are hardly ever enough; after lastHalvings a corner of the law lies in the cell.
+const (
+	firstHalvings = 3
+	lastHalvings  = 16
+)
 
 // leastTabled and mostTabled are the pressures, Pa, between which a flow is taken from a cell: under it, a micrometre of liquid, the cells would be many, and beyond
 // it is nothing that any pump makes.
@@ -46,16 +49,17 @@ func (t *flowCell) at(c *chain, d, zero float64) (q, slope float64) {
 func (t *flowCell) find(c *chain, x float64, back bool, zero float64) {
 	_, e := math.Frexp(x)
 	octave := math.Ldexp(1, e-1)
-	w := math.Ldexp(octave, -firstCellBits)
+	w := math.Ldexp(octave, -firstHalvings)
 	lo := octave + w*math.Floor((x-octave)/w)
 	t.ends(c, lo, lo+w, back, zero)
-	for k := firstCellBits; ; k++ {
+	for k := firstHalvings; ; k++ {
 		w = t.hi - t.lo
 		t.cube, t.scale = hermite(t.v[0], t.v[1], t.m[0]*w, t.m[1]*w), 1/w
 		mid := t.lo + w/2
 		guess := middle(&t.cube)
 		v, m := t.law(c, mid, zero, guess)
-		if k == mostCellBits || math.Abs(guess/v-1) < t.tol {
+		off := math.Abs(guess-v) + math.Abs(steepness(&t.cube)-m*w)/4 // the slope tells of corners between the middle and the ends
+		if k == lastHalvings || off < t.tol*v {
 			return
 		}
 		if x < mid {

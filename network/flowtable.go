@@ -124,12 +124,13 @@ func (b *tableBuilder) cell(i int, w float64) tableCell {
 	return hermite(b.v[i], b.v[i+1], b.m[i]*w, b.m[i+1]*w)
 }
 
-// hermite returns the cubic in 0 ≤ u ≤ 1 with these values and slopes at its ends, and middle its value at ½.
+// hermite returns the cubic in 0 ≤ u ≤ 1 with these values and slopes at its ends, middle its value at ½ and steepness its slope there.
 func hermite(v0, v1, m0, m1 float64) tableCell {
 	return tableCell{v0, m0, 3*(v1-v0) - 2*m0 - m1, 2*(v0-v1) + m0 + m1}
 }
 
-func middle(c *tableCell) float64 { return c[0] + (c[1]+(c[2]+c[3]/2)/2)/2 }
+func middle(c *tableCell) float64    { return c[0] + (c[1]+(c[2]+c[3]/2)/2)/2 }
+func steepness(c *tableCell) float64 { return c[1] + c[2] + 0.75*c[3] }
 
 // halve puts the law at the middles of the cells between the values at their ends, and returns the worst relative error of a cell there.
 func (b *tableBuilder) halve(x0, w float64) (worst float64) {

@@ -181,7 +181,7 @@ func (l *line) flowAt(dp float64) (q, slope float64) {
 			return q, slope
 		}
 	}
-	if d := dp - l.zero; len(l.moving) == 0 {
+	if d := dp - l.zero; len(l.moving) == 0 && l.side == nil { // a side opening asks at two heads in turn
 		if a := math.Abs(d); a >= leastTabled && a <= mostTabled {
 			return l.cell.at(&l.chain, d, l.zero)
 		}

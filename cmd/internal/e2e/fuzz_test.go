@@ -92,7 +92,7 @@ func finite(t *testing.T, p *network.Plant, r *network.Result) {
 	for _, v := range p.Vessels {
 		full, _ := v.Shape.Volume(v.Shape.Height())
 		for i, level := range r.Series.Level[v.Tag] {
-			if w, _ := v.Shape.Volume(level); math.IsNaN(level) || w < -2e-7*full {
+			if w, _ := v.Shape.Volume(level); math.IsNaN(level) || w < -dip*full {
 				t.Fatalf("%s stands at %v m at %v s", v.Tag, level, r.Series.Time[i])
 			}
 		}
