@@ -24,6 +24,24 @@ type floor struct {
 	blend    float64 // share of the flow within which the limit sets in
 	active   bool
 	off      bool // not in this run
+
+	easyFlow, easyLoss float64 // m³/s and what the parts upstream lose at it, Pa, as they stand: a flow that was found to be admitted with some to spare
+}
+
+// loses tells that the parts upstream lose more than dp, Pa, at flow q. Their loss grows with the flow, so that one that is known serves for all that are less.
+func (f *floor) loses(l *line, q, dp float64) bool {
+	const spare = 1.05
+	if f.throat == nil && len(l.moving) == 0 {
+		if q <= f.easyFlow && f.easyLoss <= dp {
+			return false
+		}
+		if d, _ := f.up.drop(spare * q); d <= dp {
+			f.easyFlow, f.easyLoss = spare*q, d
+			return false
+		}
+	}
+	d, _ := f.up.drop(q)
+	return d > dp
 }
 
 // blend and steadyBlend are the shares of the flow within which a floor's limit sets in: as every limit, and behind a pump of a steady rate, which gives a
@@ -52,7 +70,7 @@ func (f *floor) hold(l *line, a, b *end, gamma float64) {
 	over := share*(up.phi-gamma*f.z-f.pressure) - lift
 	drive, turn := elements.Join(over, band)
 	q := math.Abs(l.q)
-	if d, _ := f.up.drop(q / (1 - f.blend)); d <= drive+lift {
+	if !f.loses(l, q/(1-f.blend), drive+lift) {
 		return
 	}
 	f.active = true

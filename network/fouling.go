@@ -56,7 +56,7 @@ func (s *system) unfoul(l *line) {
 
 // setLoss adds c, Pa/(m³/s)², to the losses of a clean line.
 func (s *system) setLoss(l *line, c float64) {
-	l.cell.forget()
+	l.stale = true
 	l.chain.fwd, l.chain.rev = l.clean.fwd+c, l.clean.rev+c
 	for i := range l.floors {
 		f := &l.floors[i]

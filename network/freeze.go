@@ -31,7 +31,7 @@ func (s *system) begin(ch *Changes) {
 	for i := range s.lines {
 		l := &s.lines[i]
 		l.lastDp, l.lastQ, l.lastS = 0, 0, 0
-		l.cell.forget()
+		l.stale = true
 		s.unfoul(l)
 		l.setLeak(math.Max(s.plan.Assume.CheckLeak, ch.CheckLeak))
 		for k := range l.locals {
@@ -126,26 +126,32 @@ func (s *system) freezeLine(l *line, t float64) {
 		a := &s.actuators[k]
 		if x := a.at(t); x != l.locals[a.part].Opening {
 			l.locals[a.part].Opening = x
-			l.cell.forget()
+			l.stale = true
 		}
 		if r := a.rate(t); r != 0 && a.kind == aValve {
 			l.moving = append(l.moving, mover{part: l.inChain(a.part), local: a.part, actuator: int(k), rate: r})
 		}
 	}
-	l.chain.merged = false
-	if len(l.moving) == 0 {
+	for i := range l.crowns {
+		s.freezeCrown(l, &l.crowns[i])
+	}
+	if !l.stale && len(l.moving) == 0 {
+		return
+	}
+	l.stale = len(l.moving) > 0
+	l.cell.forget()
+	l.inRange = [2]float64{}
+	for i := range l.floors {
+		l.floors[i].easyFlow = 0
+	}
+	if l.chain.merged = false; len(l.moving) == 0 {
 		l.chain.merge()
-	} else {
-		l.cell.forget()
 	}
 	l.shut = false
 	for i, f := range l.plan.Parts {
 		if sh, ok := f.Part.(elements.Shuts); ok && sh.Shut(&l.locals[i]) && !l.moves(i) {
 			l.shut = true
 		}
-	}
-	for i := range l.crowns {
-		s.freezeCrown(l, &l.crowns[i])
 	}
 	l.zero = 0
 	if !l.shut && l.sources {

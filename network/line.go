@@ -25,20 +25,22 @@ type line struct {
 	weirAt   *elements.Local
 	crestZ   float64 // m over datum, of the weir
 	side     *sideOpening
-	gmin     float64   // m³/(s·Pa), the weepage at a tee; else 0
-	stiff    float64   // m³/(s·Pa), added to its slopes when it is linearised
-	inertia  float64   // ρL/A of all parts, kg/m⁴; 0 for none
-	own      float64   // the flow itself where it is an unknown of the plant
-	bore     float64   // m, the narrowest, for velocities; 0 for none
-	area     float64   // m², of it
-	acts     []int32   // its actuators
-	clean    *unfouled // what it was before an upset fouled it; nil while it is clean
-	ranged   []int     // parts whose laws have a range
-	join     float64   // Pa over which a one-way end takes up flow
-	reach    float64   // pressure that drives the flow, in bands
-	turn     float64   // its slope by the pressure between the ends
-	cell     flowCell  // of its flow while its parts stand, where it has no table
-	lastDp   float64   // warm start of the chain while they move
+	gmin     float64    // m³/(s·Pa), the weepage at a tee; else 0
+	stiff    float64    // m³/(s·Pa), added to its slopes when it is linearised
+	inertia  float64    // ρL/A of all parts, kg/m⁴; 0 for none
+	own      float64    // the flow itself where it is an unknown of the plant
+	bore     float64    // m, the narrowest, for velocities; 0 for none
+	area     float64    // m², of it
+	acts     []int32    // its actuators
+	clean    *unfouled  // what it was before an upset fouled it; nil while it is clean
+	ranged   []int      // parts whose laws have a range
+	inRange  [2]float64 // m³/s: flows between which they are known to be within it
+	stale    bool       // its parts do not stand as they did when its chain was merged
+	join     float64    // Pa over which a one-way end takes up flow
+	reach    float64    // pressure that drives the flow, in bands
+	turn     float64    // its slope by the pressure between the ends
+	cell     flowCell   // of its flow while its parts stand, where it has no table
+	lastDp   float64    // warm start of the chain while they move
 	lastQ    float64
 	lastS    float64
 

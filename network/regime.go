@@ -97,8 +97,10 @@ func (o *observer) regimeOf(i int) {
 	o.mark(i, held, t, h && moving, 0)
 	if len(l.ranged) > 0 {
 		why := ""
-		if moving {
-			why = l.outsideRange(a.depth)
+		if moving && !(l.q >= l.inRange[0] && l.q <= l.inRange[1]) {
+			if why = l.outsideRange(a.depth); why == "" {
+				l.noteRange()
+			}
 		}
 		if o.mark(i, outside, t, why != "", math.Abs(l.q)); why != "" {
 			o.regimes[i][outside].why = why
@@ -154,6 +156,18 @@ func (l *line) outsideRange(depth float64) string {
 		}
 	}
 	return ""
+}
+
+// noteRange notes that its flow is within the ranges of its parts, and with it all between it and others of its direction that were; over a crest the head
+// counts as well.
+func (l *line) noteRange() {
+	switch {
+	case l.weir != nil:
+	case !(l.q*l.inRange[0] > 0):
+		l.inRange = [2]float64{l.q, l.q}
+	default:
+		l.inRange = [2]float64{math.Min(l.inRange[0], l.q), math.Max(l.inRange[1], l.q)}
+	}
 }
 
 // withinRange returns the greatest flow of a table, either way, if that and the least that counts are within the ranges of the line's parts; else 0.
