@@ -169,3 +169,15 @@ func TestMixedPlants(t *testing.T) {
 		t.Logf("%d: %+v", n, r.Work)
 	}
 }
+
+// TestTightTolerance: headers whose lines take up flow at their lips once kept a run at a tolerance of 1e-9 from ever coming to its end.
+func TestTightTolerance(t *testing.T) {
+	text := mixedOf(10)
+	usual, tight := run(t, text, how{}), run(t, text, how{tolerance: 1e-9})
+	if tight.Work.Steps > 5*usual.Work.Steps {
+		t.Errorf("%d steps, %d at the usual tolerance", tight.Work.Steps, usual.Work.Steps)
+	}
+	for tag, v := range usual.Vessels {
+		near(t, "end of "+tag, v.EndLevel, tight.Vessels[tag].EndLevel, 1e-4)
+	}
+}
