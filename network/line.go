@@ -35,7 +35,6 @@ type line struct {
 	clean    *unfouled  // what it was before an upset fouled it; nil while it is clean
 	ranged   []int      // parts whose laws have a range
 	inRange  [2]float64 // m³/s: flows between which they are known to be within it
-	stale    bool       // its parts do not stand as they did when its chain was merged
 	join     float64    // Pa over which a one-way end takes up flow
 	reach    float64    // pressure that drives the flow, in bands
 	turn     float64    // its slope by the pressure between the ends
@@ -58,6 +57,7 @@ type line struct {
 	pushT      float64
 
 	row     int32 // unknown of an inertial flow; -1
+	stale   bool  // its parts do not stand as they did when its chain was merged
 	oneWay  bool  // a check valve lets nothing back
 	shut    bool  // nothing passes, as the parts stand
 	parted  bool  // its flow is no unknown for the moment: its column has parted
