@@ -17,7 +17,7 @@ func (w *watcher) addFouling(upsets []*Upset) {
 				return f - u.After
 			},
 			active: func() bool { return !fired && u.After > 0 },
-			dir:    1, sees: view{integrals: []int32{int32(i)}},
+			dir:    1, sees: view{integrals: s.just(i)},
 			fire: func(float64) {
 				fired = true
 				s.foul(l, u.Value)

@@ -53,6 +53,10 @@ func (s *system) layout() {
 			s.m++
 		}
 	}
+	s.ids = make([]int32, max(s.n, s.m, len(s.actuators)))
+	for i := range s.ids {
+		s.ids[i] = int32(i)
+	}
 	s.mass = make([]bool, s.n)
 	for i := range s.mass {
 		s.mass[i] = i < s.teeRow || i >= s.flowRow

@@ -52,6 +52,7 @@ type system struct {
 	t0       float64   // start of the segment
 	y        []float64 // where Rates was called last
 	mass     []bool
+	ids      []int32 // 0, 1, 2 …
 	pat      sparse.Pattern
 	iPtr     []int32
 	iCol     []int32

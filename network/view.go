@@ -8,14 +8,20 @@ type view struct {
 	integrals []int32
 }
 
+// just is the list of one vessel, line or integral.
+func (s *system) just(i int) []int32 { return s.ids[i : i+1 : i+1] }
+
 // views returns what a condition looks at.
 func (p *probe) views(s *system) (v view) {
-	at := make([]int32, len(p.at))
-	for k, i := range p.at {
-		at[k] = int32(i)
-	}
-	for _, i := range p.outside {
-		at = append(at, int32(i))
+	var at []int32
+	if len(p.at) == 1 && p.outside == nil {
+		at = s.just(p.at[0])
+	} else {
+		for _, list := range [2][]int{p.at, p.outside} {
+			for _, i := range list {
+				at = append(at, int32(i))
+			}
+		}
 	}
 	switch p.subject {
 	case Level, Emptied, Difference, Pressure:

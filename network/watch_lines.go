@@ -14,8 +14,8 @@ func (w *watcher) addCrowns() {
 		for k := range l.crowns {
 			c := &l.crowns[k]
 			feeds := [2][]airPath{s.airPaths(i, &l.from), s.airPaths(i, &l.to)}
-			own := view{lines: []int32{int32(i)}}
-			fed := view{lines: []int32{int32(i)}}
+			own := view{lines: s.just(i)}
+			fed := own
 			for _, paths := range feeds {
 				for _, p := range paths {
 					fed.lines = append(fed.lines, int32(p.line))

@@ -44,7 +44,7 @@ func (w *watcher) addSwitch(a *actuator, sw elements.LevelSwitch, start bool) {
 		active: func() bool { return a.automatic() && (a.to > 0) != start && !a.chatters(w.sim.t) },
 		fire:   func(t float64) { w.turn(c, a, start, t) },
 		dir:    dir,
-		sees:   view{vessels: []int32{int32(v)}},
+		sees:   view{vessels: w.sim.sys.just(v)},
 	})
 }
 
@@ -72,7 +72,7 @@ func (w *watcher) addSuction(a *actuator) {
 		trigger{
 			value:  func(s *snapshot) float64 { return s.level[v] - low },
 			active: func() bool { return a.to > 0 },
-			dir:    -1, jumps: true, levels: true, sees: view{vessels: []int32{int32(v)}},
+			dir:    -1, jumps: true, levels: true, sees: view{vessels: w.sim.sys.just(v)},
 			fire: func(t float64) {
 				c.run(a, false, t)
 				a.dry = true
@@ -84,7 +84,7 @@ func (w *watcher) addSuction(a *actuator) {
 		trigger{
 			value:  func(s *snapshot) float64 { return s.level[v] - low - dryRestart },
 			active: func() bool { return a.dry },
-			dir:    1, sees: view{vessels: []int32{int32(v)}},
+			dir:    1, sees: view{vessels: w.sim.sys.just(v)},
 			fire: func(t float64) {
 				a.dry = false
 				if a.mode == elements.On {

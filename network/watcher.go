@@ -107,7 +107,7 @@ func (w *watcher) addCorners() {
 				value:  func(s *snapshot) float64 { return s.level[i] - h },
 				active: func() bool { return true },
 				fire:   func(float64) {},
-				sees:   view{vessels: []int32{int32(i)}},
+				sees:   view{vessels: w.sim.sys.just(i)},
 			})
 		}
 	}
