@@ -8,7 +8,7 @@ import (
 	"headfall/elements/quantity"
 )
 
-// regime is the spans of time in which a line is in some state worth a flag, as seen at the ends of steps.
+// regime is the spans of time in which a line is in some state worth a flag, looked at where steps end and timed within them.
 type regime [regimes]span
 
 type span struct {
@@ -66,50 +66,81 @@ func (s *system) calm(k int, q float64) bool {
 	return a <= flowing || a <= s.lines[p.line].table.within && phi-in.zero > in.bore+in.swirl*a
 }
 
+// states are what a line is in, with how far it is in it.
+type states struct {
+	in   [regimes]bool
+	size [regimes]float64
+	why  string // in whose words it is out of range
+}
+
 // regimeOf looks at line i.
 func (o *observer) regimeOf(i int) {
-	s, t := o.sim.sys, o.now.t
+	now := o.sim.sys.statesOf(i)
+	for k, in := range now.in {
+		if r := o.regimes[i]; in || r != nil && r[k].open {
+			o.mark(i, k, in, now.size[k])
+		}
+	}
+	if now.why != "" {
+		o.regimes[i][outside].why = now.why
+	}
+}
+
+// statesOf looks at line i as it was evaluated last.
+func (s *system) statesOf(i int) (v states) {
 	l := &s.lines[i]
 	a, b := s.see(&l.from), s.see(&l.to)
-	moving := math.Abs(l.q) > flowing
+	q := math.Abs(l.q)
+	moving := q > flowing
 	in, depth := &l.from.inlet, a.depth
 	if l.q < 0 {
 		in, depth = &l.to.inlet, b.depth
 	}
-	o.mark(i, airDrawn, t, moving && drawsAir(in, depth, math.Abs(l.q), s.plan.Gravity), depth)
-	o.mark(i, shallow, t, moving && s.shallow(in, depth, math.Abs(l.q)), depth)
-	enters := l.to.kind == toAir && !l.shut && !l.oneWay && a.phi+s.gamma*1e-3 < b.phi && s.reachesLiquid(&l.from)
-	o.mark(i, airEnters, t, enters, (b.phi-a.phi)/s.gamma)
+	set := func(kind int, on bool, size float64) { v.in[kind], v.size[kind] = on, size }
+	set(airDrawn, moving && drawsAir(in, depth, q, s.plan.Gravity), depth)
+	set(shallow, moving && s.shallow(in, depth, q), depth)
+	set(airEnters, l.to.kind == toAir && !l.shut && !l.oneWay && a.phi+s.gamma*1e-3 < b.phi && s.reachesLiquid(&l.from), (b.phi-a.phi)/s.gamma)
 	froude := 0.0
 	if l.bore > 0 {
-		froude = math.Abs(l.q) / l.area / math.Sqrt(s.plan.Gravity*l.bore)
+		froude = q / l.area / math.Sqrt(s.plan.Gravity*l.bore)
 	}
 	part := moving && froude < 1 && l.to.kind == toAir && l.long && s.falls(l)
-	o.mark(i, surging, t, part && froude >= ventsItself, froude)
-	o.mark(i, selfVent, t, part && froude < ventsItself, froude)
-	var c, h bool
+	set(surging, part && froude >= ventsItself, froude)
+	set(selfVent, part && froude < ventsItself, froude)
 	for k := range l.floors {
 		f := &l.floors[k]
-		c = c || f.active && f.throat != nil
-		h = h || f.active && f.throat == nil && f.vapour
+		v.in[choked] = v.in[choked] || moving && f.active && f.throat != nil
+		v.in[held] = v.in[held] || moving && f.active && f.throat == nil && f.vapour
 	}
-	o.mark(i, choked, t, c && moving, 0)
-	o.mark(i, held, t, h && moving, 0)
-	if len(l.ranged) > 0 {
-		why := ""
-		if moving && !(l.q >= l.inRange[0] && l.q <= l.inRange[1]) {
-			if why = l.outsideRange(a.depth); why == "" {
-				l.noteRange()
-			}
-		}
-		if o.mark(i, outside, t, why != "", math.Abs(l.q)); why != "" {
-			o.regimes[i][outside].why = why
-		}
+	if len(l.ranged) > 0 && moving {
+		v.why = l.outsideRange(a.depth)
+		set(outside, v.why != "", q)
 	}
-	if l.sources {
-		o.mark(i, offCurve, t, l.beyondCurve(), l.q)
-	}
+	set(offCurve, l.sources && l.beyondCurve(), l.q)
+	return v
 }
+
+// when returns the time within the step just taken at which line i entered a state, or left it, to a hundredth of a second.
+func (o *observer) when(i, kind int, in bool) float64 {
+	s, y, t0, t1 := o.sim.sys, o.sim.sys.y, o.prev.t, o.now.t
+	if !(t1-t0 > stateTime) {
+		return t1
+	}
+	for t1-t0 > stateTime {
+		t := t0 + (t1-t0)/2
+		o.sim.flowAt(i, t)
+		if s.statesOf(i).in[kind] == in {
+			t1 = t
+		} else {
+			t0 = t
+		}
+	}
+	s.lookAlong(i, o.now.t, y)
+	return t1
+}
+
+// stateTime is how well the times of states are known, s.
+const stateTime = 0.01
 
 // ventsItself is the pipe Froude number v/√(gD) under which a pipe to the open air vents itself; up to 1 it surges. Common practice for siphonic and drain
 // lines (e.g. P. D. Hills, Chem. Eng. 1983), from memory.
@@ -201,24 +232,21 @@ func (l *line) beyondCurve() bool {
 }
 
 // mark opens, extends or closes a span.
-func (o *observer) mark(i, kind int, t float64, on bool, size float64) {
+func (o *observer) mark(i, kind int, on bool, size float64) {
 	if o.regimes[i] == nil {
-		if !on {
-			return
-		}
 		o.regimes[i] = new(regime)
 	}
 	r := &o.regimes[i][kind]
 	switch {
 	case on && !r.open:
 		o.noted[i]++
-		r.open, r.seen, r.from, r.to, r.size = true, true, math.Min(o.prev.t, t), t, size
+		r.open, r.seen, r.from, r.to, r.size = true, true, o.when(i, kind, true), o.now.t, size
 	case on:
-		r.to = t
+		r.to = o.now.t
 		r.size = math.Max(r.size, size)
 	case r.open:
 		o.noted[i]--
-		r.open, r.to = false, t
+		r.open, r.to = false, o.when(i, kind, false)
 		o.raise(i, kind)
 	}
 }
