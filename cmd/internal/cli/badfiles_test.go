@@ -32,7 +32,7 @@ func badFiles(t *testing.T) []string {
 	return all
 }
 
-const allowed = 10 * time.Second // for a file of up to a megabyte: one second, on a machine that does nothing else
+const allowed = time.Minute // for what should take a second: it tells what does not end, on the busiest machine
 
 func TestBadFiles(t *testing.T) {
 	home, err := os.Getwd()
