@@ -55,7 +55,7 @@ func newFlowTable(c *chain, most, tol, gamma float64) *flowTable {
 		t.cells = slices.Grow(t.cells, usualCells)
 		t.octaves[side] = make([]octave, 0, n)
 		room := make([]float64, 4*builderRoom)
-		b := tableBuilder{chain: c, sign: sign, v: room[:0:builderRoom], m: room[builderRoom:builderRoom:2*builderRoom],
+		b := tableBuilder{chain: c, sign: sign, v: room[:0:builderRoom], m: room[builderRoom : builderRoom : 2*builderRoom],
 			finer: room[2*builderRoom : 2*builderRoom : 3*builderRoom], slope: room[3*builderRoom : 3*builderRoom : 4*builderRoom]}
 		for o := range n {
 			x0 := math.Ldexp(1, tableBase+o)
