@@ -21,7 +21,7 @@ const (
 	wildDraws      = 300
 	wildSteps      = 20000
 	wildUnfinished = 0
-	wildSecond     = 8
+	wildSecond     = 3
 	wildApart      = 2
 )
 
