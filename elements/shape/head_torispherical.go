@@ -77,12 +77,12 @@ func Torispherical(diameter, crown, knuckle, outlet float64) (Head, error) {
 	d.angle = math.Asin(c / (crown - knuckle))
 	d.joint = crown * c / (crown - knuckle)
 	d.depth = crown - math.Sqrt((crown-knuckle-c)*(crown-knuckle+c))
-	bore := outletOr(outlet, diameter)
-	if outlet == 0 {
-		bore = math.Min(bore, d.joint)
-	}
-	if d.tip = tipArea(bore); d.tip > circle(2*d.joint)*(1+1e-12) {
-		f.add("outlet %s is wider than the crown, %s", metres(bore), metres(2*d.joint))
+	d.tip = tipArea(outletOr(outlet, diameter))
+	switch crown := circle(2 * d.joint); {
+	case outlet == 0: // one that fits
+		d.tip = min(d.tip, tipArea(d.joint), crown)
+	case d.tip > crown*(1+1e-12):
+		f.add("outlet %s is wider than the crown, %s", metres(outlet), metres(2*d.joint))
 	}
 	if err := f.err("torispherical"); err != nil {
 		return nil, err
