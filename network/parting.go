@@ -117,7 +117,7 @@ func (sim *simulation) rests(c *liquidColumn) bool {
 	l := &s.lines[c.line]
 	turned := c.flow*l.own < 0
 	c.flow = l.own
-	if !turned || !l.carries() || l.shut || s.settler == nil || math.IsInf(s.lag(l), 1) {
+	if !turned || !l.carries() || l.shut || !s.answers(&l.from) && !s.answers(&l.to) {
 		return false
 	}
 	l.part()
@@ -211,12 +211,15 @@ func (s *system) easyColumn(l *line, least float64) bool {
 	}
 	stiff := 0.0
 	for _, m := range [2]*mouth{&l.from, &l.to} {
-		if m.kind == toTee && !s.tees[m.at].slow {
+		if s.answers(m) {
 			stiff += 1 / s.tees[m.at].direct
 		}
 	}
 	return l.inertia > rejoinedLag*least*stiff
 }
+
+// answers tells that a mouth is at a tee whose pressure follows from the balance of its flows.
+func (s *system) answers(m *mouth) bool { return m.kind == toTee && !s.tees[m.at].slow }
 
 // formBalances works out the slopes of the balances of the tees in the present state.
 func (s *system) formBalances() {
@@ -239,7 +242,7 @@ func (s *system) formBalances() {
 func (s *system) lag(l *line) float64 {
 	ends, c := [2]int32{-1, -1}, (*manifold)(nil)
 	for k, m := range [2]*mouth{&l.from, &l.to} {
-		if m.kind == toTee && !s.tees[m.at].slow {
+		if s.answers(m) {
 			at := s.settler.of[m.at]
 			c, ends[k] = &s.settler.manifolds[at[0]], at[1]
 		}
